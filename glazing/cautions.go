@@ -1,0 +1,232 @@
+package glazing
+
+import (
+	"fmt"
+	"math"
+	"slices"
+	"strings"
+
+	"panewright/thermal"
+)
+
+// A cautionRule is one caution: its code, when it applies in words, and a function that returns
+// its text for rating i of all ratings of a make-up, or "" where it does not apply. To add a
+// caution, add a row.
+type cautionRule struct {
+	code string
+	when string
+	text func(all []Rating, i int) string
+}
+
+// Thresholds of cautions. Where no source is named they are common practice, no source.
+const (
+	absorbingAlpha     = 0.5  // αe from which annealed glass is discussed
+	reflectedSun       = 0.15 // ρ outside from which reflected sun is discussed
+	conductingFilm     = 0.3  // corrected emissivity below which a face bears a conducting film
+	overheadTiltDeg    = 75
+	heavyKGM2          = 50
+	narrowGapMM        = 10
+	colourSignalsRa    = 80
+	blueDaylightB      = -10 // b* of transmission
+	glareTransmittance = 0.006
+	damageWorthSaying  = 0.05
+)
+
+func always(text string) func([]Rating, int) string {
+	return func([]Rating, int) string { return text }
+}
+
+// when returns text for the ratings that a condition holds for.
+func when(condition func(r *Rating) bool, text string) func([]Rating, int) string {
+	return func(all []Rating, i int) string {
+		if condition(&all[i]) {
+			return text
+		}
+		return ""
+	}
+}
+
+var cautionRules = []cautionRule{
+	{"not_certified", "always",
+		always("Calculated figures: neither a certified rating nor a maker's declaration.")},
+	{"centre_of_glass", "always",
+		always("Centre of the glass: edge seal, spacer, frame and fixings are not included.")},
+	{"local_codes", "always",
+		always("The local authority's rules and licensed practitioners decide what may be built.")},
+	{"barrier_and_load", "always",
+		always("Wind, snow, barrier load, impact, fire and security are not assessed.")},
+	{"edition", "always", func(all []Rating, i int) string {
+		return "Editions and coefficients used: " + all[i].Method.Editions() + ". Which editions a contract names is for the user to check."
+	}},
+	{"invented", "a pane's spectrum is marked invented", fromPanes(InventedOrigin,
+		"Invented data: the spectrum of %s describes no product and must not be specified.")},
+	{"modelled", "a pane's spectrum is marked modelled", fromPanes(ModelledOrigin,
+		"Modelled data: the spectrum of %s was computed, not measured.")},
+	{"missing_data", "U or g is unknown", func(all []Rating, i int) string {
+		r := &all[i]
+		switch {
+		case !r.U.Known && !r.G.Known && r.U.Why == r.G.Why:
+			return "No U-value and no g-value: " + r.U.Why + "."
+		case !r.U.Known:
+			return "No U-value: " + r.U.Why + "."
+		}
+		return ""
+	}},
+	{"emissivity_below_table", "a normal emissivity lies below the table of EN 12898", func(all []Rating, i int) string {
+		return facesWhere(&all[i], func(e Emissivity) bool {
+			if !e.Normal.Known {
+				return false
+			}
+			_, held := thermal.CorrectedEmissivity(e.Normal.Number)
+			return held
+		}, "The normal emissivity of %s lies below the table of EN 12898; the ratio of its end, 1.22, was held.")
+	}},
+	{"tilt_interpolated", "a tilt between 0, 45 and 90 degrees, heat flow up", tiltInterpolated},
+	{"tilt_vertical_g", "tilted, with a gap", func(all []Rating, i int) string {
+		r := &all[i]
+		if r.Makeup.Tilt.Vertical() || !r.U.Known || len(r.Gaps) == 0 {
+			return ""
+		}
+		hidden := *r.Ready
+		hidden.tilted = hidden.vertical
+		var upright Rating
+		if hidden.RateInto(&upright, r.State) != nil {
+			return ""
+		}
+		return fmt.Sprintf("U is that of the tilt of %.6g°; upright it is %.2f W/(m²·K). g is computed with the conductance of vertical gaps at every tilt, as EN 410 and ISO 9050 have it.",
+			r.Makeup.Tilt.Degrees(), upright.U.Number)
+	}},
+	{"annealed_absorbing", "αe of a pane above 0.5 in any tint, annealed or of unknown treatment", func(all []Rating, i int) string {
+		return panesWhere(all, func(r *Rating, k int) bool {
+			t := r.Makeup.Panes[k].Pane.HeatTreatment
+			return r.Absorptance[k].Known && r.Absorptance[k].Number > absorbingAlpha && (t == Annealed || t == UnknownTreatment || t == "")
+		}, "More than half of the sun is absorbed, in at least one tint, in %s, annealed or of unknown heat treatment: discuss thermal stress with a licensed engineer (common practice).")
+	}},
+	{"reflected_sun", "ρe or ρv outside above 0.15", when(func(r *Rating) bool {
+		return above(r.Solar.ReflectanceOutside, reflectedSun) || above(r.Light.ReflectanceOutside, reflectedSun)
+	}, "Reflects more than 0.15 of sun or light outwards: consider neighbours and traffic, above all where the facade is curved or inclined.")},
+	{"overhead", "tilt below 75 degrees", when(func(r *Rating) bool {
+		return r.Makeup.Tilt.Degrees() < overheadTiltDeg
+	}, "Overhead or sloped: a laminated inner pane and retention of fragments are usually required.")},
+	{"heat_soak", "toughened and not heat soaked", func(all []Rating, i int) string {
+		return panesWhere(all[i:i+1], func(r *Rating, k int) bool {
+			p := r.Makeup.Panes[k].Pane
+			return p.HeatTreatment == Toughened && !p.HeatSoaked
+		}, "Toughened glass may break from nickel sulphide inclusions: %s is not stated to be heat soaked (EN 14179).")
+	}},
+	{"climate_load", "three panes or more, or a gap below 10 mm with another", when(func(r *Rating) bool {
+		return len(r.Makeup.Panes) > 2 || slices.ContainsFunc(r.Makeup.Gaps, func(g Gap) bool { return g.WidthMM < narrowGapMM })
+	}, "Sealed gaps load their panes when temperature, weather and altitude change; not assessed here.")},
+	{"power_failure", "a pane switches", when(func(r *Rating) bool { return r.Makeup.Tintable() },
+		"Switchable: settle which tint is held without power, and view for escape and rescue.")},
+	{"electrical", "a pane switches", when(func(r *Rating) bool { return r.Makeup.Tintable() },
+		"Wiring, isolation, control and durability of switching panes (ISO 18543, ASTM E2141) are not covered.")},
+	{"glare_remains", "a pane switches, light transmittance above 0.006", when(func(r *Rating) bool {
+		return r.Makeup.Tintable() && r.Light.Transmittance.Known && r.Light.Transmittance.Number > glareTransmittance
+	}, "The sun's disc may still glare through this tint (above 0.006 light transmittance).")},
+	{"colour_signals", "Ra below 80 in this tint", when(func(r *Rating) bool {
+		return r.Ra.Known && r.Ra.Number < colourSignalsRa
+	}, "Ra below 80: colours, safety signs and signals may be misjudged.")},
+	{"colour_of_dark", "Ra of a light transmittance below 0.01", when(func(r *Rating) bool {
+		return r.Ra.Known && r.Light.Transmittance.Known && r.Light.Transmittance.Number < 0.01
+	}, "Ra at less than 0.01 light transmittance: computed, of little meaning.")},
+	{"blue_daylight", "b* of transmission below -10", when(func(r *Rating) bool {
+		return r.Transmitted.Why == "" && r.Transmitted.TwoDegree.B < blueDaylightB
+	}, "Daylight indoors turns blue in this tint.")},
+	{"uv_visible_damage", "damage-weighted transmittance above 0.05", when(func(r *Rating) bool {
+		return above(r.Damage, damageWorthSaying)
+	}, "Light damages too: a low UV transmittance does not protect museum objects by itself.")},
+	{"radio", "a face of emissivity below 0.3", when(func(r *Rating) bool {
+		return slices.ContainsFunc(r.Surfaces, func(e Emissivity) bool {
+			return e.Corrected.Known && e.Corrected.Number < conductingFilm
+		})
+	}, "A conducting film weakens radio and mobile reception indoors.")},
+	{"mass", "above 50 kg/m2", when(func(r *Rating) bool { return r.MassKGM2 > heavyKGM2 },
+		"One square metre weighs more than 50 kg: handling and replacement need planning.")},
+	{"bird", "always", always("Clear and mirroring glass kills birds: consider visible markings.")},
+}
+
+func above(v Value, limit float64) bool { return v.Known && v.Number > limit }
+
+// cautionsOf returns the cautions of rating i of all ratings of one make-up under one basis.
+func cautionsOf(all []Rating, i int) []Caution {
+	r := &all[i]
+	out := []Caution{}
+	for _, rule := range cautionRules {
+		if text := rule.text(all, i); text != "" {
+			out = append(out, Caution{rule.code, text})
+		}
+	}
+	out = append(out, r.Ready.spectral[r.State]...)
+	for k, p := range r.Makeup.Panes {
+		for _, c := range p.Pane.Tints[r.Ready.States[r.State].Tints[k]].Spectrum.Cautions {
+			if !slices.Contains(out, c) {
+				out = append(out, c)
+			}
+		}
+	}
+	return out
+}
+
+// MixedBasis is the caution of a page that shows more than one basis.
+var MixedBasis = Caution{"mixed_basis", "Figures under different bases stand here side by side: they follow different standards and must not be compared with a limit of another."}
+
+func fromPanes(o Origin, format string) func([]Rating, int) string {
+	return func(all []Rating, i int) string {
+		return panesWhere(all[i:i+1], func(r *Rating, k int) bool { return r.Makeup.Panes[k].Pane.Origin == o }, format)
+	}
+}
+
+// panesWhere names the panes for which a condition holds in any of the ratings, or returns "".
+func panesWhere(ratings []Rating, condition func(r *Rating, pane int) bool, format string) string {
+	var names []string
+	for k, p := range ratings[0].Makeup.Panes {
+		for i := range ratings {
+			if condition(&ratings[i], k) && !slices.Contains(names, p.Pane.ID) {
+				names = append(names, p.Pane.ID)
+			}
+		}
+	}
+	if names == nil {
+		return ""
+	}
+	return fmt.Sprintf(format, strings.Join(names, ", "))
+}
+
+// facesWhere names the faces for which a condition holds, or returns "".
+func facesWhere(r *Rating, condition func(Emissivity) bool, format string) string {
+	var names []string
+	for i, e := range r.Surfaces {
+		if condition(e) {
+			names = append(names, r.Makeup.faceName(i/2, i%2 == 1))
+		}
+	}
+	if names == nil {
+		return ""
+	}
+	return fmt.Sprintf(format, strings.Join(names, ", "))
+}
+
+func tiltInterpolated(all []Rating, i int) string {
+	r := &all[i]
+	deg := r.Makeup.Tilt.Degrees()
+	between := thermal.ConvectionBetween(deg, r.Makeup.HeatFlow)
+	if !r.U.Known || len(r.Gaps) == 0 || (between.Weight == 0 && deg <= 90) {
+		return ""
+	}
+	var text string
+	if between.Weight != 0 && !between.Still {
+		other := *r.Ready
+		other.tilted = between
+		var reading Rating
+		if other.RateInto(&reading, r.State) != nil || !reading.U.Known || math.IsNaN(reading.U.Number) {
+			return ""
+		}
+		text = fmt.Sprintf("EN 673 gives its constants for 0, 45 and 90°; at %.6g° A and n were interpolated. Interpolating the Nusselt number instead gives U %.2f and not %.2f W/(m²·K).",
+			deg, reading.U.Number, r.U.Number)
+	}
+	if deg > 90 {
+		text += fmt.Sprintf(" EN 673 knows no tilt beyond 90°; the gap was taken as at %.6g°, with the direction of heat that was given.", 180-deg)
+	}
+	return strings.TrimSpace(text)
+}

@@ -1,0 +1,348 @@
+// Package glazing rates make-ups: from the spectra of panes and the gaps between them it
+// computes light and solar transmittance and reflectance, colour, ultraviolet, solar heat gain,
+// emissivity and the U-value of the centre of the glass, for every tint, under a basis (a family
+// of standards used together).
+//
+// A make-up lists its panes from outside to inside; surfaces are numbered 1, 2, 3 … in the same
+// direction. A rating is calculated: it is not certified, nor a maker's declaration.
+//
+//	m := &glazing.Makeup{
+//		ID:    "D1",
+//		Panes: []glazing.Placed{{Pane: clear}, {Pane: lowE, Turned: true}},
+//		Gaps:  []glazing.Gap{{WidthMM: 16, Gas: argon}},
+//	}
+//	ratings, err := glazing.Rate(m, glazing.EN)
+//	// …
+//	fmt.Println(ratings[0].U.Number, ratings[0].G.Number)
+//
+// Everything here is pure: values in, values out. Methods, made-ready make-ups and panes may be
+// shared by goroutines; a Rating belongs to one.
+package glazing
+
+import (
+	"fmt"
+	"slices"
+	"strings"
+
+	"panewright/spectra"
+	"panewright/thermal"
+)
+
+// A Caution is a remark that travels with the figures: a short code and a sentence.
+type Caution = spectra.Caution
+
+// Value is a figure: a number if Known, else the reason for which there is none.
+type Value struct {
+	Number float64
+	Known  bool
+	Why    string
+}
+
+func known(v float64) Value    { return Value{Number: v, Known: true} }
+func unknown(why string) Value { return Value{Why: why} }
+func (v Value) orNot(why string) Value {
+	if why != "" {
+		return unknown(why)
+	}
+	return v
+}
+
+// HeatTreatment of a pane.
+type HeatTreatment string
+
+// The heat treatments.
+const (
+	UnknownTreatment HeatTreatment = "unknown"
+	Annealed         HeatTreatment = "annealed"
+	HeatStrengthened HeatTreatment = "heat-strengthened"
+	Toughened        HeatTreatment = "toughened"
+	DefaultGlassKGM3               = 2500 // density of soda-lime glass, kg/m³ (EN 572-1, from memory)
+)
+
+// Origin says where the spectrum of a pane comes from.
+type Origin string
+
+// The origins of spectra.
+const (
+	MeasuredOrigin Origin = "measured"
+	ModelledOrigin Origin = "modelled"
+	InventedOrigin Origin = "invented"
+)
+
+// A Pane is one sheet of glass or one laminate, with its films. Front is the face that looks
+// outside when the pane is not turned.
+type Pane struct {
+	ID            string
+	Plies         []Ply // outside to inside when not turned; one for a plain sheet
+	HeatTreatment HeatTreatment
+	HeatSoaked    bool
+	Origin        Origin
+	Tints         []Tint // at least one; a pane that does not switch has one, with no name
+	// TauInfrared is the transmittance in the thermal infrared of a sheet that is not opaque
+	// there. EN 673 cannot treat it: with such a pane U and g are unknown.
+	TauInfrared float64
+	Attributes  map[string]float64 // anything numeric of the user's
+}
+
+// A Ply is one layer of a pane, across which heat is conducted.
+type Ply struct {
+	Interlayer      bool
+	ThicknessMM     float64
+	ConductivityWMK float64
+	DensityKGM3     float64
+}
+
+// A Tint is one state of a pane.
+type Tint struct {
+	Name         string
+	ChargeMCCM2  Value // inserted charge density, mC/cm², if the user gave it
+	TemperatureC Value // of a thermochromic pane
+	Spectrum     spectra.Measured
+	Front, Back  Emissivity
+}
+
+// Emissivity of a face, with where it comes from.
+type Emissivity struct {
+	Normal        Value // at 283 K (EN 12898)
+	Corrected     Value // hemispherical by the table of EN 12898; enters U and g
+	Hemispherical Value // exact integral over angle, where the films are known
+	Source        string
+}
+
+// The sources of an emissivity.
+const (
+	EmissivityGiven       = "given"        // corrected, typed by the user
+	EmissivityGivenNormal = "given_normal" // normal, typed by the user
+	EmissivityInfrared    = "infrared"     // from infrared rows of the spectrum
+	EmissivityUnknown     = "unknown"
+)
+
+// GivenEmissivity is a corrected emissivity that the user knows, above 0 and up to 1.
+func GivenEmissivity(corrected float64) Emissivity {
+	return Emissivity{Corrected: known(corrected), Source: EmissivityGiven,
+		Normal: unknown("a corrected emissivity was given"), Hemispherical: unknown("the films are not known")}
+}
+
+// GivenNormalEmissivity is a normal emissivity that the user knows.
+func GivenNormalEmissivity(normal float64) Emissivity {
+	e := fromNormal(normal)
+	e.Source = EmissivityGivenNormal
+	return e
+}
+
+// InfraredEmissivity follows from the reflectance of a face from 5 to 50 µm (EN 12898).
+func InfraredEmissivity(reflectance spectra.Curve) Emissivity {
+	e := fromNormal(spectra.NormalEmissivity(reflectance))
+	e.Source = EmissivityInfrared
+	return e
+}
+
+func fromNormal(normal float64) Emissivity {
+	corrected, _ := thermal.CorrectedEmissivity(normal)
+	return Emissivity{Normal: known(normal), Corrected: known(corrected), Hemispherical: unknown("the films are not known")}
+}
+
+// NoEmissivity is that of a face of which nothing is known.
+func NoEmissivity() Emissivity {
+	why := unknown("no emissivity and no infrared rows were given")
+	return Emissivity{Normal: why, Corrected: why, Hemispherical: why, Source: EmissivityUnknown}
+}
+
+// Tilt of a glazing; the zero value is vertical.
+type Tilt struct{ fromVertical float64 }
+
+// TiltDeg returns the tilt of a glazing in degrees: 90 vertical, 0 horizontal with the outside
+// above.
+func TiltDeg(deg float64) Tilt { return Tilt{90 - deg} }
+
+// Degrees returns the tilt: 90 vertical, 0 horizontal with the outside above.
+func (t Tilt) Degrees() float64 { return 90 - t.fromVertical }
+
+// Vertical reports whether the tilt is 90°.
+func (t Tilt) Vertical() bool { return t.fromVertical == 0 }
+
+// A Makeup is a sequence of panes and gaps from outside to inside.
+type Makeup struct {
+	ID, Title string
+	Tilt      Tilt
+	HeatFlow  thermal.Flow // off vertical
+	Typed     []Typed      // carried to the schedule, marked as typed by the user
+	Panes     []Placed
+	Gaps      []Gap // one fewer than panes
+}
+
+// Typed is a value that the user typed in and that nothing here computes.
+type Typed struct{ Name, Text string }
+
+// Placed is a pane in its place.
+type Placed struct {
+	Pane   *Pane
+	Turned bool   // the back face looks outside
+	Tint   string // one fixed tint; SameTint; or "" for every tint in turn
+}
+
+// SameTint makes a pane follow the tint of the outermost pane that can switch.
+const SameTint = "same"
+
+// A Gap is the space between two panes.
+type Gap struct {
+	WidthMM float64
+	Gas     thermal.Mixture
+}
+
+// MaxPanes is the largest number of panes of a make-up.
+const MaxPanes = 8
+
+// Tintable reports whether the pane has named tints.
+func (p *Pane) Tintable() bool { return len(p.Tints) > 1 || p.Tints[0].Name != "" }
+
+// TintNames returns the names of the tints, in the order given.
+func (p *Pane) TintNames() []string {
+	var names []string
+	for _, t := range p.Tints {
+		names = append(names, t.Name)
+	}
+	return names
+}
+
+// ThicknessMM returns the thickness of the pane, interlayers included.
+func (p *Pane) ThicknessMM() float64 {
+	var sum float64
+	for _, y := range p.Plies {
+		sum += y.ThicknessMM
+	}
+	return sum
+}
+
+// MassKGM2 returns the mass of the pane in kg/m².
+func (p *Pane) MassKGM2() float64 {
+	var sum float64
+	for _, y := range p.Plies {
+		sum += float64(y.ThicknessMM * y.DensityKGM3 / 1000)
+	}
+	return sum
+}
+
+// Resistance returns the thermal resistance Σ d/λ of the plies in m²·K/W.
+func (p *Pane) Resistance() float64 {
+	var sum float64
+	for _, y := range p.Plies {
+		sum += y.ThicknessMM / (1000 * y.ConductivityWMK)
+	}
+	return sum
+}
+
+// Tintable reports whether any pane of the make-up has named tints.
+func (m *Makeup) Tintable() bool {
+	return slices.ContainsFunc(m.Panes, func(p Placed) bool { return p.Pane.Tintable() })
+}
+
+// BuildUp returns the sequence from outside to inside as the trade writes it: thickness and pane,
+// gap and gas.
+func (m *Makeup) BuildUp() string {
+	var parts []string
+	for i, p := range m.Panes {
+		if i > 0 {
+			g := m.Gaps[i-1]
+			parts = append(parts, fmt.Sprintf("%.6g mm %s", g.WidthMM, g.Gas))
+		}
+		s := p.Pane.ID
+		if p.Turned {
+			s += " (turned)"
+		}
+		if p.Tint != "" {
+			s += " (tint " + p.Tint + ")"
+		}
+		parts = append(parts, s)
+	}
+	return strings.Join(parts, " | ")
+}
+
+// A State is one combination of tints: for each pane the index of its tint.
+type State struct {
+	Name  string // of the tints of the panes that can switch, outside first, joined by "/"
+	Tints []int
+}
+
+// States returns every combination of tints of the make-up, the outermost pane's slowest. Panes
+// that follow another's tint are not named. It is an error if a fixed or followed tint does not
+// exist.
+func (m *Makeup) States() ([]State, error) {
+	states := []State{{Tints: make([]int, len(m.Panes))}}
+	leader := -1
+	for k, p := range m.Panes {
+		var choices []int
+		switch {
+		case p.Tint == SameTint && leader < 0:
+			return nil, fmt.Errorf("pane %d (%s) has tint: same, but no pane outside it can switch", k+1, p.Pane.ID)
+		case p.Tint == SameTint:
+			for i := range states {
+				name := m.Panes[leader].Pane.Tints[states[i].Tints[leader]].Name
+				at := slices.Index(p.Pane.TintNames(), name)
+				if at < 0 {
+					return nil, fmt.Errorf("pane %d (%s) has tint: same, but no tint %q as pane %d (%s) has", k+1, p.Pane.ID, name, leader+1, m.Panes[leader].Pane.ID)
+				}
+				states[i].Tints[k] = at
+			}
+			continue
+		case p.Tint != "":
+			at := slices.Index(p.Pane.TintNames(), p.Tint)
+			if at < 0 {
+				return nil, fmt.Errorf("pane %d (%s) has no tint %q", k+1, p.Pane.ID, p.Tint)
+			}
+			choices = []int{at}
+		default:
+			for i := range p.Pane.Tints {
+				choices = append(choices, i)
+			}
+		}
+		var next []State
+		for _, s := range states {
+			for _, c := range choices {
+				tints := slices.Clone(s.Tints)
+				tints[k] = c
+				name := s.Name
+				if p.Pane.Tintable() {
+					if name != "" {
+						name += "/"
+					}
+					name += p.Pane.Tints[c].Name
+				}
+				next = append(next, State{name, tints})
+			}
+		}
+		states = next
+		if leader < 0 && p.Pane.Tintable() {
+			leader = k
+		}
+		if len(states) > maxStates {
+			return nil, fmt.Errorf("more than %d combinations of tints; fix some with tint: NAME or tint: same", maxStates)
+		}
+	}
+	return states, nil
+}
+
+const maxStates = 4096
+
+// check refuses a make-up that no basis can rate.
+func (m *Makeup) check() error {
+	switch n := len(m.Panes); {
+	case n == 0:
+		return fmt.Errorf("make-up %s has no pane", m.ID)
+	case n > MaxPanes:
+		return fmt.Errorf("make-up %s has %d panes; at most %d", m.ID, n, MaxPanes)
+	case len(m.Gaps) != n-1:
+		return fmt.Errorf("make-up %s has %d panes and %d gaps; there is one gap between two panes", m.ID, n, len(m.Gaps))
+	}
+	for i, g := range m.Gaps {
+		if !(g.WidthMM > 0) {
+			return fmt.Errorf("make-up %s: gap %d is %g mm wide; a width is above 0", m.ID, i+1, g.WidthMM)
+		}
+	}
+	for i, p := range m.Panes {
+		if p.Pane == nil || len(p.Pane.Tints) == 0 || len(p.Pane.Plies) == 0 {
+			return fmt.Errorf("make-up %s: pane %d has no spectrum or no thickness", m.ID, i+1)
+		}
+	}
+	return nil
+}

@@ -1,0 +1,380 @@
+package glazing
+
+import (
+	"fmt"
+	"math"
+	"slices"
+	"strings"
+
+	"panewright/glazing/optics"
+	"panewright/spectra"
+	"panewright/spectra/colour"
+	"panewright/thermal"
+)
+
+// Options are what a user may put in the place of a basis's own choices.
+type Options struct {
+	Sun         *spectra.Weighting // replaces the solar weighting
+	OutsideWM2K float64            // he of U and g; 0 means the basis's own
+	InsideWM2K  float64            // hi of U and g; 0 means that it follows the room-side emissivity
+}
+
+// A Method is a basis made ready to calculate: its wavelengths, weights and coefficients. It is
+// made once and may be shared.
+type Method struct {
+	Basis   Basis
+	Options Options
+
+	grid  spectra.Grid
+	bands [bandCount]band
+	meter *colour.Meter
+}
+
+// band is one weighting on the method's grid.
+type band struct {
+	weighting spectra.Weighting
+	spectra.Placed
+}
+
+const (
+	light = iota
+	solar
+	uv
+	damage
+	damage700
+	skin
+	bandCount
+	// colours are weighed by the meter; this index serves their coverage alone
+	colours = bandCount
+)
+
+// NewMethod makes a basis ready.
+func NewMethod(b Basis, o Options) *Method {
+	m := &Method{Basis: b, Options: o}
+	weightings := [bandCount]spectra.Weighting{
+		light: b.light(), solar: b.solar(), uv: spectra.UV(),
+		damage: spectra.Damage(600), damage700: spectra.Damage(700), skin: spectra.Skin(),
+	}
+	if o.Sun != nil {
+		weightings[solar] = *o.Sun
+	}
+	lists := [][]float64{colour.Wavelengths()}
+	for _, w := range weightings {
+		lists = append(lists, w.NM)
+	}
+	m.grid = spectra.NewGrid(lists...)
+	for i, w := range weightings {
+		m.bands[i] = band{w, w.On(m.grid)}
+	}
+	m.meter = colour.NewMeter(m.grid)
+	return m
+}
+
+// Weightings returns the weightings of the method, light first, then solar.
+func (m *Method) Weightings() []spectra.Weighting {
+	var out []spectra.Weighting
+	for _, b := range m.bands {
+		out = append(out, b.weighting)
+	}
+	return out
+}
+
+// WavelengthsNM returns the wavelengths on which the method combines panes.
+func (m *Method) WavelengthsNM() []float64 { return m.grid.NM }
+
+// outside returns he of one of the basis's two sets of surfaces.
+func (m *Method) outside(s surfaces) float64 {
+	if m.Options.OutsideWM2K > 0 {
+		return m.Options.OutsideWM2K
+	}
+	return s.outside
+}
+
+// inside returns hi for a room-side emissivity, or unknown where that is needed and unknown.
+func (m *Method) inside(s surfaces, emissivity Value) Value {
+	if m.Options.InsideWM2K > 0 {
+		return known(m.Options.InsideWM2K)
+	}
+	if !emissivity.Known {
+		return unknown(emissivity.Why)
+	}
+	return known(s.inside(emissivity.Number))
+}
+
+// Ready is a make-up made ready to be rated by a method: the spectra of its panes on the
+// method's wavelengths, its tints and gaps. It may be shared by goroutines.
+type Ready struct {
+	Makeup *Makeup
+	Method *Method
+	States []State
+
+	sampled  [][]optics.Pane // by pane and tint, as placed
+	coverage []coverage      // by state
+	glass    []float64       // resistance of each pane, m²·K/W
+	gaps     [][]thermal.Gap // by state
+	thermal  []string        // by state: why U and g are unknown, or ""
+	inner    []Emissivity    // by state: of the room-side face
+	tilted   thermal.Convection
+	vertical thermal.Convection
+	mm, kg   float64
+	spectral [][]Caution // by state: what the spectra lack
+}
+
+// coverage says for each band, by quantity, why a figure is unknown: "" where it is known.
+type coverage [bandCount + 1]struct{ t, ro, ri string }
+
+// Ready makes a make-up ready. It is an error if the make-up is impossible; spectra that do not
+// reach far enough and faces of unknown emissivity are none: their figures come out unknown.
+func (m *Method) Ready(mk *Makeup) (*Ready, error) {
+	if err := mk.check(); err != nil {
+		return nil, err
+	}
+	states, err := mk.States()
+	if err != nil {
+		return nil, fmt.Errorf("make-up %s: %w", mk.ID, err)
+	}
+	r := &Ready{Makeup: mk, Method: m, States: states,
+		tilted:   thermal.ConvectionAt(mk.Tilt.Degrees(), mk.HeatFlow),
+		vertical: thermal.ConvectionAt(90, thermal.Up),
+	}
+	for _, p := range mk.Panes {
+		r.sampled = append(r.sampled, samplePane(p, m.grid))
+		r.glass = append(r.glass, p.Pane.Resistance())
+		r.mm += p.Pane.ThicknessMM()
+		r.kg += p.Pane.MassKGM2()
+	}
+	var gases []thermal.Gas
+	for _, g := range mk.Gaps {
+		r.mm += g.WidthMM
+		gases = append(gases, g.Gas.Properties())
+	}
+	for _, s := range states {
+		r.addState(s, gases)
+	}
+	return r, nil
+}
+
+// samplePane returns each tint of a pane on a grid, seen from outside as the pane is placed.
+func samplePane(p Placed, g spectra.Grid) []optics.Pane {
+	var out []optics.Pane
+	for i := range p.Pane.Tints {
+		s := &p.Pane.Tints[i].Spectrum
+		on := func(c spectra.Curve) []float64 {
+			values := make([]float64, g.Padded())
+			c.Sample(values[:g.Len()], g.NM)
+			return values
+		}
+		pane := optics.Pane{T: on(s.Tau), Ro: on(s.RhoFront), Ri: on(s.RhoBack)}
+		if p.Turned {
+			pane.Ro, pane.Ri = pane.Ri, pane.Ro
+		}
+		out = append(out, pane)
+	}
+	return out
+}
+
+// faces returns the emissivities of a placed pane's outer and inner face.
+func (p Placed) faces(tint int) (outer, inner Emissivity) {
+	t := &p.Pane.Tints[tint]
+	if p.Turned {
+		return t.Back, t.Front
+	}
+	return t.Front, t.Back
+}
+
+// faceName names a face for a message: "surface 2 (pane hall-6, back)".
+func (m *Makeup) faceName(pane int, inner bool) string {
+	p, number, side := m.Panes[pane], 2*pane+1, "front"
+	if inner {
+		number++
+	}
+	if inner != p.Turned {
+		side = "back"
+	}
+	return fmt.Sprintf("surface %d (pane %s, %s)", number, p.Pane.ID, side)
+}
+
+func (r *Ready) addState(s State, gases []thermal.Gas) {
+	m := r.Makeup
+	n := len(m.Panes)
+	gaps := make([]thermal.Gap, n-1)
+	why := ""
+	need := func(e Emissivity, pane int, inner bool) float64 {
+		if !e.Corrected.Known && why == "" {
+			why = "the emissivity of " + m.faceName(pane, inner) + " is not known"
+		}
+		return e.Corrected.Number
+	}
+	for k := range gaps {
+		_, outer := m.Panes[k].faces(s.Tints[k])
+		inner, _ := m.Panes[k+1].faces(s.Tints[k+1])
+		gaps[k] = thermal.Gap{WidthM: m.Gaps[k].WidthMM / 1000, Gas: gases[k],
+			Emissivity: [2]float64{need(outer, k, true), need(inner, k+1, false)}}
+	}
+	_, room := m.Panes[n-1].faces(s.Tints[n-1])
+	if !room.Corrected.Known {
+		room.Corrected.Why = "the emissivity of " + m.faceName(n-1, true) + " is not known"
+	}
+	for _, p := range m.Panes {
+		if p.Pane.TauInfrared > 0 && why == "" {
+			why = "pane " + p.Pane.ID + " lets infrared through (tau_ir); " + noBalance
+		}
+	}
+	if r.Method.Basis.balance {
+		why = noBalance
+	}
+	r.gaps, r.thermal, r.inner = append(r.gaps, gaps), append(r.thermal, why), append(r.inner, room)
+	r.spectral = append(r.spectral, nil)
+	r.coverage = append(r.coverage, r.cover(s))
+}
+
+// endTolerance is the share of a band's weight that may lie beyond an end of a spectrum, whose
+// last value is then held.
+const endTolerance = 0.001
+
+// cover says which figures the spectra of a state reach far enough for, and adds cautions where
+// an end is held or a figure stays unknown.
+func (r *Ready) cover(s State) coverage {
+	var c coverage
+	for i := range c {
+		w := r.Method.coverageOf(i)
+		var all string // of the first spectrum that does not reach
+		for k, p := range r.Makeup.Panes {
+			spectrum := p.Pane.Tints[s.Tints[k]].Spectrum
+			front, back := &c[i].ro, &c[i].ri
+			if p.Turned {
+				front, back = back, front
+			}
+			for _, x := range []struct {
+				what  string
+				curve spectra.Curve
+				why   *string
+			}{{"tau", spectrum.Tau, &c[i].t}, {"rho_front", spectrum.RhoFront, front}, {"rho_back", spectrum.RhoBack, back}} {
+				missing := r.reach(p.Pane.nameOf(s.Tints[k]), x.what, x.curve, w)
+				if missing == "" {
+					continue
+				}
+				if all == "" {
+					all = missing
+				}
+				*x.why = missing
+			}
+		}
+		if len(r.Makeup.Panes) > 1 && all != "" {
+			c[i].t, c[i].ro, c[i].ri = all, all, all
+		}
+	}
+	return c
+}
+
+// coverageOf returns the weighting of a band, or of colour.
+func (m *Method) coverageOf(i int) spectra.Weighting {
+	if i == colours {
+		return colour.Weighting()
+	}
+	return m.bands[i].weighting
+}
+
+// nameOf returns the pane's id, with its tint if it has one.
+func (p *Pane) nameOf(tint int) string {
+	if name := p.Tints[tint].Name; name != "" {
+		return p.ID + " (" + name + ")"
+	}
+	return p.ID
+}
+
+// reach says why a curve does not reach far enough for a weighting, or returns "". Where an end
+// is held, it adds a caution.
+func (r *Ready) reach(pane, what string, c spectra.Curve, w spectra.Weighting) string {
+	first, last := w.NM[0], w.NM[len(w.NM)-1]
+	below, above := w.Missing(c.First(), c.Last())
+	text := ""
+	for _, end := range []struct {
+		at, table, share float64
+		verb             string
+		short            bool
+	}{
+		{c.First(), first, below, "begins", c.First() > first},
+		{c.Last(), last, above, "ends", c.Last() < last},
+	} {
+		if !end.short {
+			continue
+		}
+		if end.share >= endTolerance {
+			text = fmt.Sprintf("%s of pane %s %s at %.6g nm; %s needs %.6g to %.6g nm", what, pane, end.verb, end.at, w.Name, first, last)
+			r.caution("missing_band", fmt.Sprintf("No figure for %s: %s.", w.Name, text))
+			continue
+		}
+		r.caution("extended", fmt.Sprintf("%s of pane %s %s at %.6g nm; its last value was held to %.6g nm for %s (%.2g %% of the weight).",
+			what, pane, end.verb, end.at, end.table, w.Name, 100*end.share))
+	}
+	return text
+}
+
+// caution adds a caution to the state being made, once.
+func (r *Ready) caution(code, text string) {
+	own := &r.spectral[len(r.spectral)-1]
+	if c := (Caution{code, text}); !slices.Contains(*own, c) {
+		*own = append(*own, c)
+	}
+}
+
+// Spectra are those of a make-up in one state: fractions of one at wavelengths in nm; NaN where
+// a pane's spectrum does not reach.
+type Spectra struct {
+	WavelengthNM          []float64
+	T                     []float64
+	RhoOutside, RhoInside []float64
+	Absorptance           [][]float64 // by pane
+}
+
+// Spectra returns the spectra of a state at the given wavelengths, ascending, in nm.
+func (r *Ready) Spectra(state int, nm []float64) Spectra {
+	grid := spectra.Grid{NM: nm}
+	var panes []optics.Pane
+	lo, hi := 0.0, math.Inf(1)
+	for k, p := range r.Makeup.Panes {
+		tint := r.States[state].Tints[k]
+		panes = append(panes, samplePane(p, grid)[tint])
+		s := p.Pane.Tints[tint].Spectrum
+		for _, c := range []spectra.Curve{s.Tau, s.RhoFront, s.RhoBack} {
+			lo, hi = max(lo, c.First()), min(hi, c.Last())
+		}
+	}
+	var stack optics.Stack
+	stack.Combine(panes)
+	n := grid.Len()
+	out := Spectra{WavelengthNM: nm, T: stack.T[:n], RhoOutside: stack.Ro[:n], RhoInside: stack.Ri[:n]}
+	for _, a := range stack.A {
+		out.Absorptance = append(out.Absorptance, a[:n])
+	}
+	for i, x := range nm {
+		if x >= lo && x <= hi {
+			continue
+		}
+		out.T[i], out.RhoOutside[i], out.RhoInside[i] = math.NaN(), math.NaN(), math.NaN()
+		for _, a := range out.Absorptance {
+			a[i] = math.NaN()
+		}
+	}
+	return out
+}
+
+// Editions returns the editions and coefficients of the method, as printed on every output.
+func (m *Method) Editions() string {
+	s := m.Basis.Editions
+	if m.Options.Sun != nil {
+		s += "; solar weighting: " + m.Options.Sun.Source
+	}
+	var c []string
+	if !m.Basis.balance {
+		c = append(c, fmt.Sprintf("he %.6g", m.outside(m.Basis.u)))
+		if m.Options.InsideWM2K > 0 {
+			c = append(c, fmt.Sprintf("hi %.6g", m.Options.InsideWM2K))
+		} else {
+			c = append(c, fmt.Sprintf("hi %.6g + %.6g ε/0.837", m.Basis.u.insideConvection, m.Basis.u.insideRadi))
+		}
+		s += "; " + strings.Join(c, ", ") + " W/(m²·K)"
+	}
+	return s
+}

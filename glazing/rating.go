@@ -1,0 +1,219 @@
+package glazing
+
+import (
+	"panewright/glazing/optics"
+	"panewright/spectra/colour"
+	"panewright/thermal"
+)
+
+// A Rating is all figures of one make-up, in one state, under one basis, with the intermediates
+// that lead to them. The figures are calculated; they are not a certified rating.
+type Rating struct {
+	Makeup *Makeup
+	Method *Method
+	Ready  *Ready
+	State  int
+	Tint   string
+
+	ThicknessMM, MassKGM2 float64
+
+	Light, Solar       Band
+	Absorptance        []Value // αe of each pane
+	SecondaryHeat      Value   // qi
+	G                  Value
+	ShadingCoefficient Value // g/0.87
+	LightToSolarGain   Value // τv/g
+
+	UV, Damage, Damage700, Skin Value
+
+	Ra                           Value
+	Transmitted, Outside, Inside Colours
+
+	Surfaces                  []Emissivity // 2 n faces, from outside
+	OutsideWM2K, InsideWM2K   Value        // of U
+	OutsideGWM2K, InsideGWM2K Value        // of g
+	U                         Value
+	GapsKnown                 bool
+	Gaps                      []thermal.GapState // at the make-up's tilt, as U has them
+	GapsG                     []thermal.GapState // of vertical gaps, as g has them
+	Heat                      thermal.SecondaryHeat
+
+	Cautions []Caution // filled by Rate and RateAll, not by RateInto
+
+	panes    []optics.Pane
+	stack    optics.Stack
+	absorbed []float64
+}
+
+// Band is a weighted transmittance and both reflectances.
+type Band struct{ Transmittance, ReflectanceOutside, ReflectanceInside Value }
+
+// Colours are a colour for the 2° and the 10° observer; unknown for the reason Why.
+type Colours struct {
+	TwoDegree, TenDegree colour.Lab
+	Why                  string
+}
+
+// Rate rates every state of a make-up under a basis, with cautions.
+func Rate(m *Makeup, b Basis) ([]Rating, error) {
+	ready, err := NewMethod(b, Options{}).Ready(m)
+	if err != nil {
+		return nil, err
+	}
+	return ready.RateAll()
+}
+
+// RateAll rates every state, with cautions.
+func (r *Ready) RateAll() ([]Rating, error) {
+	ratings := make([]Rating, len(r.States))
+	for i := range ratings {
+		if err := r.RateInto(&ratings[i], i); err != nil {
+			return nil, err
+		}
+	}
+	for i := range ratings {
+		ratings[i].Cautions = cautionsOf(ratings, i)
+	}
+	return ratings, nil
+}
+
+// darkest is the light transmittance below which a colour of transmission means nothing.
+const darkest = 1e-9
+
+// RateInto rates one state into dst, whose memory it reuses: once dst has served a make-up of as
+// many panes, nothing is allocated. Cautions are left empty.
+func (r *Ready) RateInto(dst *Rating, state int) error {
+	m, s := r.Method, r.States[state]
+	n := len(r.Makeup.Panes)
+	dst.Makeup, dst.Method, dst.Ready, dst.State, dst.Tint = r.Makeup, m, r, state, s.Name
+	dst.ThicknessMM, dst.MassKGM2 = r.mm, r.kg
+	dst.Cautions = nil
+
+	dst.panes = dst.panes[:0]
+	for k := range n {
+		dst.panes = append(dst.panes, r.sampled[k][s.Tints[k]])
+	}
+	dst.stack.Combine(dst.panes)
+	r.rateOptics(dst, &r.coverage[state])
+	return r.rateHeat(dst, state)
+}
+
+func (r *Ready) rateOptics(dst *Rating, c *coverage) {
+	m, k := r.Method, &dst.stack
+	bandOf := func(i int) Band {
+		return Band{
+			Transmittance:      known(m.bands[i].Mean(k.T)).orNot(c[i].t),
+			ReflectanceOutside: known(m.bands[i].Mean(k.Ro)).orNot(c[i].ro),
+			ReflectanceInside:  known(m.bands[i].Mean(k.Ri)).orNot(c[i].ri),
+		}
+	}
+	dst.Light, dst.Solar = bandOf(light), bandOf(solar)
+	dst.UV = known(m.bands[uv].Mean(k.T)).orNot(c[uv].t)
+	dst.Damage = known(m.bands[damage].Mean(k.T)).orNot(c[damage].t)
+	dst.Damage700 = known(m.bands[damage700].Mean(k.T)).orNot(c[damage700].t)
+	dst.Skin = known(m.bands[skin].Mean(k.T)).orNot(c[skin].t)
+
+	dst.Absorptance, dst.absorbed = dst.Absorptance[:0], dst.absorbed[:0]
+	why := c[solar].t
+	if why == "" {
+		why = c[solar].ro
+	}
+	for _, a := range k.A {
+		alpha := m.bands[solar].Mean(a)
+		dst.absorbed = append(dst.absorbed, alpha)
+		dst.Absorptance = append(dst.Absorptance, known(alpha).orNot(why))
+	}
+
+	see := func(values []float64, why string) Colours {
+		if why != "" {
+			return Colours{Why: why}
+		}
+		return Colours{TwoDegree: m.meter.Lab(colour.TwoDegree, values), TenDegree: m.meter.Lab(colour.TenDegree, values)}
+	}
+	dst.Transmitted = see(k.T, c[colours].t)
+	dst.Outside = see(k.Ro, c[colours].ro)
+	dst.Inside = see(k.Ri, c[colours].ri)
+	switch {
+	case c[colours].t != "":
+		dst.Ra = unknown(c[colours].t)
+	case m.bands[light].Mean(k.T) < darkest:
+		dst.Ra = unknown("no light is transmitted")
+	default:
+		dst.Ra = known(m.meter.RenderingIndex(k.T))
+	}
+}
+
+func (r *Ready) rateHeat(dst *Rating, state int) error {
+	m, n := r.Method, len(r.Makeup.Panes)
+	dst.Surfaces = dst.Surfaces[:0]
+	for k, p := range r.Makeup.Panes {
+		outer, inner := p.faces(r.States[state].Tints[k])
+		dst.Surfaces = append(dst.Surfaces, outer, inner)
+	}
+	gaps, why := r.gaps[state], r.thermal[state]
+	dst.Gaps, dst.GapsG = resized(dst.Gaps, n-1), resized(dst.GapsG, n-1)
+	dst.GapsKnown = why == ""
+	room := r.inner[state].Corrected
+	dst.OutsideWM2K, dst.InsideWM2K = known(m.outside(m.Basis.u)), m.inside(m.Basis.u, room)
+	dst.OutsideGWM2K, dst.InsideGWM2K = known(m.outside(m.Basis.g)), m.inside(m.Basis.g, room)
+	if m.Basis.balance {
+		dst.OutsideWM2K, dst.InsideWM2K = unknown(why), unknown(why)
+	}
+	if why == "" && !dst.InsideWM2K.Known {
+		why = dst.InsideWM2K.Why
+	}
+	if why != "" {
+		dst.U = unknown(why)
+		dst.SecondaryHeat, dst.G = unknown(why), unknown(why)
+		dst.ShadingCoefficient, dst.LightToSolarGain = unknown(why), unknown(why)
+		dst.Heat = thermal.SecondaryHeat{A0: 0, B: dst.Heat.B[:0], Conductances: dst.Heat.Conductances[:0]}
+		if dst.GapsKnown {
+			return thermal.SolveGaps(dst.Gaps, gaps, r.tilted)
+		}
+		return nil
+	}
+	if err := thermal.SolveGaps(dst.Gaps, gaps, r.tilted); err != nil {
+		return err
+	}
+	if r.tilted == r.vertical {
+		copy(dst.GapsG, dst.Gaps)
+	} else if err := thermal.SolveGaps(dst.GapsG, gaps, r.vertical); err != nil {
+		return err
+	}
+	var glass float64
+	for _, x := range r.glass {
+		glass += x
+	}
+	dst.U = known(thermal.U(dst.OutsideWM2K.Number, dst.InsideWM2K.Number, glass, dst.Gaps))
+	dst.Heat.Solve(dst.OutsideGWM2K.Number, dst.InsideGWM2K.Number, dst.absorbed, r.glass, dst.GapsG)
+
+	missing := ""
+	for _, v := range dst.Absorptance {
+		if !v.Known {
+			missing = v.Why
+			break
+		}
+	}
+	g := dst.Solar.Transmittance.Number + dst.Heat.Inward
+	dst.SecondaryHeat = known(dst.Heat.Inward).orNot(missing)
+	dst.G = known(g).orNot(missing)
+	dst.ShadingCoefficient = known(g / shadingReference).orNot(missing)
+	dst.LightToSolarGain = known(dst.Light.Transmittance.Number / g).orNot(missing)
+	if !dst.Light.Transmittance.Known {
+		dst.LightToSolarGain = unknown(dst.Light.Transmittance.Why)
+	} else if g <= 0 && missing == "" {
+		dst.LightToSolarGain = unknown("g is 0")
+	}
+	return nil
+}
+
+// shadingReference is g of the 3 to 4 mm clear float glass that shading coefficients refer to
+// (EN 410:2011, 5.7).
+const shadingReference = 0.87
+
+func resized(s []thermal.GapState, n int) []thermal.GapState {
+	if cap(s) < n {
+		return make([]thermal.GapState, n)
+	}
+	return s[:n]
+}

@@ -1,0 +1,385 @@
+package spectra
+
+import (
+	"bytes"
+	"encoding/csv"
+	"errors"
+	"fmt"
+	"io"
+	"math"
+	"slices"
+	"strconv"
+	"strings"
+)
+
+// MaxBytes is the size beyond which a spectrum file is refused.
+const MaxBytes = 64 << 20
+
+// A RowError says what is wrong with a spectrum file, where, and what would be right.
+type RowError struct {
+	File string
+	Line int     // 0 when the whole file is meant
+	NM   float64 // 0 when no wavelength is meant
+	Text string
+}
+
+func (e *RowError) Error() string {
+	s := e.File
+	if e.Line > 0 {
+		s += ":" + strconv.Itoa(e.Line)
+	}
+	if e.NM != 0 {
+		s += ": at " + short(e.NM) + " nm"
+	}
+	return s + ": " + e.Text
+}
+
+// Errors are all the faults found in one spectrum; it is never empty when returned.
+type Errors []*RowError
+
+func (e Errors) Error() string {
+	if len(e) == 1 {
+		return e[0].Error()
+	}
+	return fmt.Sprintf("%v (and %d more)", e[0], len(e)-1)
+}
+
+// Unwrap lets errors.As find each fault.
+func (e Errors) Unwrap() []error {
+	out := make([]error, len(e))
+	for i, x := range e {
+		out[i] = x
+	}
+	return out
+}
+
+// A Column is one quantity of a spectrum file: the curve, and for each point the line that it
+// was read from.
+type Column struct {
+	File string
+	Line []int
+	Curve
+}
+
+// Columns are the quantities of one spectrum file; a column that the file lacks is empty.
+type Columns struct {
+	Tau, RhoFront, RhoBack Column
+}
+
+// The heads that a spectrum file may have.
+const (
+	headNM       = "wavelength_nm"
+	headUM       = "wavelength_um"
+	headTau      = "tau"
+	headRhoFront = "rho_front"
+	headRhoBack  = "rho_back"
+)
+
+// ReadCSV reads a spectrum of a pane: a header row, columns in any order (wavelength_nm or
+// wavelength_um, tau, rho_front, rho_back; fractions of one), lines beginning with # as
+// comments, blank cells where a column stops. The file name serves errors only. It checks what
+// can be checked in each column; Join checks them together. An error is Errors, or that of r.
+func ReadCSV(r io.Reader, file string) (Columns, error) {
+	rows, err := readRows(r, file)
+	if err != nil {
+		return Columns{}, err
+	}
+	c := Columns{
+		Tau:      rows.column(headTau, fraction),
+		RhoFront: rows.column(headRhoFront, fraction),
+		RhoBack:  rows.column(headRhoBack, fraction),
+	}
+	for _, head := range rows.heads {
+		if !slices.Contains([]string{headNM, headUM, headTau, headRhoFront, headRhoBack}, head) {
+			rows.fail(rows.headLine, 0, "unknown column %q; a spectrum has wavelength_nm or wavelength_um, tau, rho_front, rho_back", head)
+		}
+	}
+	if c.Tau.Len()+c.RhoFront.Len()+c.RhoBack.Len() == 0 && len(rows.faults) == 0 {
+		rows.fail(rows.headLine, 0, "no column tau, rho_front or rho_back")
+	}
+	return c, rows.err()
+}
+
+// ReadSunCSV reads a solar spectrum: columns wavelength_nm or wavelength_um and irradiance, or
+// irradiance with its unit, such as irradiance_w_m2_nm (any unit per wavelength; only the shape
+// counts). It returns the weighting by the trapezoid rule within 300–2500 nm.
+func ReadSunCSV(r io.Reader, file string) (Weighting, error) {
+	rows, err := readRows(r, file)
+	if err != nil {
+		return Weighting{}, err
+	}
+	var c Column
+	for _, head := range rows.heads {
+		switch {
+		case head == headNM || head == headUM:
+		case strings.HasPrefix(head, "irradiance") && c.Len() == 0:
+			c = rows.column(head, notNegative)
+		default:
+			rows.fail(rows.headLine, 0, "unknown column %q; a sun has wavelength_nm or wavelength_um, and irradiance", head)
+		}
+	}
+	if err := rows.err(); err != nil {
+		return Weighting{}, err
+	}
+	w := Trapezoid(c.Curve, SolarFirstNM, SolarLastNM)
+	var total float64
+	for _, v := range w.Weight {
+		total += v
+	}
+	if total <= 0 || math.IsInf(total, 0) {
+		rows.fail(rows.headLine, 0, "the column irradiance adds to nothing between %d and %d nm", SolarFirstNM, SolarLastNM)
+		return Weighting{}, rows.err()
+	}
+	w.Name, w.Source = "solar", "the user's "+file+", trapezoid rule"
+	return w, nil
+}
+
+// rows is a file read as text: heads, and for each row its line and cells.
+type rows struct {
+	file     string
+	heads    []string
+	headLine int
+	line     []int
+	nm       []float64
+	cells    [][]string
+	faults   Errors
+}
+
+func (r *rows) fail(line int, nm float64, format string, args ...any) {
+	r.faults = append(r.faults, &RowError{r.file, line, nm, fmt.Sprintf(format, args...)})
+}
+
+func (r *rows) err() error {
+	if len(r.faults) == 0 {
+		return nil
+	}
+	return r.faults
+}
+
+// readRows reads header, wavelengths and cells, and checks the wavelengths. Faults that leave
+// the rows unreadable are returned; others are kept in faults.
+func readRows(in io.Reader, file string) (*rows, error) {
+	r := &rows{file: file}
+	text, err := io.ReadAll(io.LimitReader(in, MaxBytes+1))
+	if err != nil {
+		return nil, fmt.Errorf("%s: %w", file, err)
+	}
+	if problem := notText(text); problem != "" {
+		r.fail(0, 0, "%s", problem)
+		return nil, r.err()
+	}
+	text = bytes.TrimPrefix(text, []byte("\ufeff"))
+	if !bytes.ContainsRune(text, '\n') { // line ends of old files
+		text = bytes.ReplaceAll(text, []byte("\r"), []byte("\n"))
+	}
+	cr := csv.NewReader(bytes.NewReader(text))
+	cr.Comment, cr.FieldsPerRecord, cr.TrimLeadingSpace = '#', -1, true
+	for {
+		record, err := cr.Read()
+		if err == io.EOF {
+			break
+		}
+		if err != nil {
+			line := 0
+			if pe, ok := errors.AsType[*csv.ParseError](err); ok {
+				line, err = pe.Line, pe.Err
+			}
+			r.fail(line, 0, "not readable as CSV: %v", err)
+			return nil, r.err()
+		}
+		line, _ := cr.FieldPos(0)
+		for i := range record {
+			record[i] = strings.TrimSpace(record[i])
+		}
+		if r.heads == nil {
+			r.heads, r.headLine = record, line
+			continue
+		}
+		if strings.Join(record, "") == "" {
+			continue
+		}
+		if len(record) != len(r.heads) {
+			hint := ""
+			if len(record) > len(r.heads) {
+				hint = "; a decimal comma? write points"
+			}
+			r.fail(line, 0, "%d cells under %d columns%s", len(record), len(r.heads), hint)
+			continue
+		}
+		r.line, r.cells = append(r.line, line), append(r.cells, record)
+	}
+	if r.heads == nil {
+		r.fail(0, 0, "empty; a spectrum begins with a row of column heads such as wavelength_nm,tau,rho_front,rho_back")
+		return nil, r.err()
+	}
+	if err := r.readWavelengths(); err != nil {
+		return nil, err
+	}
+	return r, nil
+}
+
+// notText names the reason for which bytes cannot be a text in UTF-8, or returns "".
+func notText(b []byte) string {
+	switch {
+	case len(b) > MaxBytes:
+		return fmt.Sprintf("larger than %d MB; a spectrum has some hundred rows", MaxBytes>>20)
+	case bytes.HasPrefix(b, []byte{0xff, 0xfe}), bytes.HasPrefix(b, []byte{0xfe, 0xff}):
+		return "is UTF-16; save it as UTF-8"
+	case bytes.IndexByte(b, 0) >= 0:
+		return "is binary, or UTF-16; a spectrum is CSV text in UTF-8"
+	}
+	return ""
+}
+
+// minimumRows is how many rows a spectrum has at least.
+const minimumRows = 10
+
+// readWavelengths finds the wavelength column and checks that it ascends in the unit it names.
+func (r *rows) readWavelengths() error {
+	nmAt, umAt := slices.Index(r.heads, headNM), slices.Index(r.heads, headUM)
+	for i, head := range r.heads {
+		if head == "" {
+			r.fail(r.headLine, 0, "column %d has no head", i+1)
+		}
+		if slices.Index(r.heads, head) != i {
+			r.fail(r.headLine, 0, "column %q stands twice", head)
+		}
+	}
+	switch {
+	case nmAt >= 0 && umAt >= 0:
+		r.fail(r.headLine, 0, "both wavelength_nm and wavelength_um; give one")
+	case nmAt < 0 && umAt < 0 && strings.ContainsAny(strings.Join(r.heads, ","), ";\t"):
+		r.fail(r.headLine, 0, "columns are separated by semicolons or tabs; use commas, and points in numbers")
+	case nmAt < 0 && umAt < 0:
+		r.fail(r.headLine, 0, "no column wavelength_nm or wavelength_um; the first row must hold the column heads")
+	}
+	if len(r.faults) > 0 && (nmAt < 0) == (umAt < 0) {
+		return r.err()
+	}
+	at, scale := nmAt, 1.0
+	if nmAt < 0 {
+		at, scale = umAt, 1000
+	}
+	r.nm = make([]float64, len(r.cells))
+	last := 0.0
+	for i, cells := range r.cells {
+		v, problem := number(cells[at])
+		if problem == "" && v <= 0 {
+			problem = "a wavelength is above 0"
+		}
+		if problem != "" {
+			r.fail(r.line[i], 0, "wavelength %q: %s", clip(cells[at]), problem)
+			continue
+		}
+		r.nm[i] = toNM(v, scale)
+		switch {
+		case r.nm[i] == last:
+			r.fail(r.line[i], r.nm[i], "this wavelength stands twice")
+		case r.nm[i] < last:
+			r.fail(r.line[i], r.nm[i], "wavelengths must ascend; the row before has %s nm", short(last))
+		}
+		last = r.nm[i]
+	}
+	switch {
+	case len(r.cells) < minimumRows:
+		r.fail(0, 0, "%d rows; a spectrum has at least %d", len(r.cells), minimumRows)
+	case scale == 1 && last > 0 && last < 100:
+		r.fail(r.line[len(r.line)-1], 0, "the last wavelength is %s nm: µm in a column of nm? name it wavelength_um", short(last))
+	case scale == 1000 && last > 1e6:
+		r.fail(r.line[len(r.line)-1], 0, "the last wavelength is %s µm: nm in a column of µm? name it wavelength_nm", short(last/1000))
+	}
+	return nil
+}
+
+// toNM converts without leaving a trace of binary rounding: 0.55 µm is 550 nm.
+func toNM(v, scale float64) float64 {
+	if scale == 1 {
+		return v
+	}
+	nm := v * scale
+	if r := math.Round(nm*1e6) / 1e6; math.Abs(r-nm) < 1e-9*nm {
+		return r
+	}
+	return nm
+}
+
+// column reads the cells under a head; check returns what is wrong with a value, or "".
+func (r *rows) column(head string, check func(float64) string) Column {
+	at := slices.Index(r.heads, head)
+	c := Column{File: r.file}
+	if at < 0 {
+		return c
+	}
+	blank := 0 // line of the first blank cell since the column began
+	for i, cells := range r.cells {
+		cell := cells[at]
+		if cell == "" {
+			if c.Len() > 0 && blank == 0 {
+				blank = r.line[i]
+			}
+			continue
+		}
+		v, problem := number(cell)
+		if problem == "" {
+			problem = check(v)
+		}
+		if problem == "" && blank > 0 {
+			problem = fmt.Sprintf("the column has a blank cell at line %d and then goes on; cells may be blank only where a column stops", blank)
+			blank = 0
+		}
+		if problem != "" {
+			r.fail(r.line[i], r.nm[i], "%s %s: %s", head, clip(cell), problem)
+			continue
+		}
+		c.NM, c.Value, c.Line = append(c.NM, r.nm[i]), append(c.Value, v), append(c.Line, r.line[i])
+	}
+	return c
+}
+
+// number reads a plain decimal number; problem says why a cell is none.
+func number(cell string) (v float64, problem string) {
+	v, err := strconv.ParseFloat(cell, 64)
+	switch {
+	case strings.Contains(cell, ","):
+		return 0, "not a number; a decimal comma? write a point"
+	case cell == "":
+		return 0, "blank"
+	case math.IsNaN(v) || math.IsInf(v, 0):
+		return 0, "not a finite number"
+	case err != nil || strings.ContainsAny(cell, "xXpP_"):
+		return 0, "not a number"
+	}
+	return v, ""
+}
+
+// Slack is how far a fraction, or the sum of transmittance and reflectance, may lie outside
+// 0…1 and be set to the bound.
+const Slack = 0.002
+
+func fraction(v float64) string {
+	if v >= -Slack && v <= 1+Slack {
+		return ""
+	}
+	if v > 1 && v <= 100+100*Slack {
+		return "not in 0..1; fractions of one, not percent"
+	}
+	return "not in 0..1"
+}
+
+func notNegative(v float64) string {
+	if v < 0 {
+		return "below 0"
+	}
+	return ""
+}
+
+// short prints a number as briefly as it can be read back.
+func short(v float64) string { return strconv.FormatFloat(v, 'g', -1, 64) }
+
+// clip shortens a cell for a message.
+func clip(s string) string {
+	if r := []rune(s); len(r) > 40 {
+		return string(r[:40]) + "…"
+	}
+	return s
+}
