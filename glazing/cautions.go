@@ -154,7 +154,7 @@ func cautionsOf(all []Rating, i int) []Caution {
 	out := []Caution{}
 	for _, rule := range cautionRules {
 		if text := rule.text(all, i); text != "" {
-			out = append(out, Caution{rule.code, text})
+			out = append(out, Caution{Code: rule.code, Text: text})
 		}
 	}
 	out = append(out, r.Ready.spectral[r.State]...)
@@ -169,7 +169,7 @@ func cautionsOf(all []Rating, i int) []Caution {
 }
 
 // MixedBasis is the caution of a page that shows more than one basis.
-var MixedBasis = Caution{"mixed_basis", "Figures under different bases stand here side by side: they follow different standards and must not be compared with a limit of another."}
+var MixedBasis = Caution{Code: "mixed_basis", Text: "Figures under different bases stand here side by side: they follow different standards and must not be compared with a limit of another."}
 
 func fromPanes(o Origin, format string) func([]Rating, int) string {
 	return func(all []Rating, i int) string {

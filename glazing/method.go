@@ -314,7 +314,7 @@ func (r *Ready) reach(pane, what string, c spectra.Curve, w spectra.Weighting) s
 // caution adds a caution to the state being made, once.
 func (r *Ready) caution(code, text string) {
 	own := &r.spectral[len(r.spectral)-1]
-	if c := (Caution{code, text}); !slices.Contains(*own, c) {
+	if c := (Caution{Code: code, Text: text}); !slices.Contains(*own, c) {
 		*own = append(*own, c)
 	}
 }
