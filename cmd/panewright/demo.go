@@ -1,0 +1,37 @@
+package main
+
+import (
+	"errors"
+	"fmt"
+
+	"github.com/spf13/cobra"
+
+	"panewright/cmd/panewright/internal/demo"
+)
+
+func newDemo(s streams) *cobra.Command {
+	return &cobra.Command{
+		Use:   "demo [DIR]",
+		Short: "Write the demo project into a folder and rate it",
+		Long: `Writes the invented demo project into DIR (panewright-demo when absent), reads it
+back like any project, rates it and prints the schedule. Files that stand in DIR
+and differ are not overwritten.`,
+		Example: "  panewright demo\n  panewright demo /tmp/mill",
+		Args:    cobra.MaximumNArgs(1),
+		RunE: func(_ *cobra.Command, args []string) error {
+			dir := "panewright-demo"
+			if len(args) == 1 {
+				dir = args[0]
+			}
+			path, err := demo.Write(dir)
+			if changed, ok := errors.AsType[*demo.ChangedError](err); ok {
+				return changed
+			}
+			if err != nil {
+				return &outputError{"the demo project", err}
+			}
+			fmt.Fprintf(s.err, "wrote %s; rate it again with: panewright rate %s\n", path, path)
+			return runRate(s, path, selection{}, "table", "", "")
+		},
+	}
+}

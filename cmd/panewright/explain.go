@@ -1,0 +1,53 @@
+package main
+
+import (
+	"fmt"
+
+	"github.com/spf13/cobra"
+
+	"panewright/cmd/panewright/internal/table"
+)
+
+func newExplain(s streams) *cobra.Command {
+	var o selection
+	var output string
+	c := &cobra.Command{
+		Use:   "explain PROJECT --makeup ID",
+		Short: "Show the calculation of a make-up, every number put in",
+		Long: `Prints every intermediate of the U-value, of g and of one weighted sum, in the
+order of a hand calculation: symbol, formula, the formula with the numbers put
+in, value, unit and clause. Without --tint, a make-up that switches is shown in
+its first tint.`,
+		Example: `  panewright explain panewright-demo/project.yaml --makeup D1
+  panewright explain panewright-demo/project.yaml --makeup E1 --tint full --basis iso`,
+		Args: oneProject,
+		RunE: func(_ *cobra.Command, args []string) error {
+			if len(o.makeups) == 0 {
+				return fmt.Errorf("explain needs the make-up to explain: add --makeup ID")
+			}
+			r, err := rate(args[0], o)
+			if err != nil {
+				return err
+			}
+			if len(o.tints) == 0 {
+				r = firstTints(r)
+			}
+			return s.write(output, table.Explain(r))
+		},
+	}
+	o.flags(c)
+	outputFlag(c, &output)
+	return c
+}
+
+// firstTints keeps the first state of each make-up and basis.
+func firstTints(r table.Report) table.Report {
+	all := r.Ratings
+	r.Ratings = nil
+	for i := range all {
+		if all[i].State == 0 {
+			r.Ratings = append(r.Ratings, all[i])
+		}
+	}
+	return r
+}

@@ -1,0 +1,116 @@
+package table
+
+import (
+	"bytes"
+	"fmt"
+	"strconv"
+	"strings"
+
+	"github.com/jedib0t/go-pretty/v6/text"
+
+	"panewright/glazing"
+)
+
+// Explain returns the calculation of each rating of the report in the order of a hand
+// calculation, then all its figures and cautions.
+func Explain(r Report) []byte {
+	var b bytes.Buffer
+	heading(&b, r)
+	for i := range r.Ratings {
+		rating := &r.Ratings[i]
+		m := rating.Makeup
+		title := "Make-up " + m.ID
+		if m.Title != "" {
+			title += ", " + m.Title
+		}
+		if rating.Tint != "" {
+			title += ", tint " + rating.Tint
+		}
+		b.WriteByte('\n')
+		writeWrapped(&b, title, "  ")
+		writeWrapped(&b, m.BuildUp(), "  ")
+		writeWrapped(&b, fmt.Sprintf("tilt %.6g°; basis %s: %s", m.Tilt.Degrees(), rating.Method.Basis.Name, rating.Method.Editions()), "  ")
+		for _, c := range glazing.Working(rating) {
+			chapter(&b, c)
+		}
+		allFigures(&b, r.Figures, rating)
+		b.WriteString("\nCautions\n")
+		for _, c := range r.cautions(i) {
+			writeWrapped(&b, "- "+c.Text, "  ")
+		}
+	}
+	fmt.Fprintf(&b, "\nPanewright %s, input sha256\n%s\n", r.Version, r.Project.Digest)
+	return b.Bytes()
+}
+
+// chapter prints a part of the calculation. A step takes two or three lines:
+//
+//	hr  radiative conductance                                            EN 673 (4)
+//	    = 4·σ·Tm^3/(1/ε2 + 1/ε3 − 1)
+//	    = 4·5.67e-08·283^3/(1/0.837 + 1/0.837 − 1) = 3.69954 W/(m²·K)
+func chapter(b *bytes.Buffer, c glazing.Chapter) {
+	b.WriteByte('\n')
+	writeWrapped(b, c.Title, "  ")
+	if c.Note != "" {
+		writeWrapped(b, "  "+c.Note, "  ")
+	}
+	if c.Sum != nil {
+		weightedSum(b, c.Sum)
+	}
+	for _, s := range c.Steps {
+		head := "  " + text.Pad(s.Symbol, 6, ' ') + " " + s.Meaning
+		if gap := Width - text.StringWidth(head) - text.StringWidth(s.Clause); gap > 1 {
+			b.WriteString(strings.TrimRight(head+strings.Repeat(" ", gap)+s.Clause, " ") + "\n")
+		} else {
+			writeWrapped(b, head+"  "+s.Clause, "         ")
+		}
+		writeWrapped(b, "         = "+s.Formula, "           ")
+		result := s.Numbers + " = " + s.Printed()
+		if s.Numbers == s.Printed() {
+			result = s.Numbers
+		}
+		writeWrapped(b, strings.TrimRight("         = "+result+" "+s.Unit, " "), "           ")
+	}
+}
+
+// weightedSum prints the rows of a sum, two beside each other.
+func weightedSum(b *bytes.Buffer, s *glazing.WeightedSum) {
+	writeWrapped(b, "  W: "+s.Source, "  ")
+	half := (len(s.NM) + 1) / 2
+	const head = "  λ nm        τ         W       τ·W"
+	fmt.Fprintf(b, "%s    %s\n", head, head)
+	row := func(i int) string {
+		return fmt.Sprintf("%6s  %9s %9s %9s", strconv.FormatFloat(s.NM[i], 'g', -1, 64), strconv.FormatFloat(s.Value[i], 'g', 6, 64),
+			strconv.FormatFloat(s.Weight[i], 'g', 6, 64), strconv.FormatFloat(s.Value[i]*s.Weight[i], 'g', 6, 64))
+	}
+	for i := range half {
+		line := row(i)
+		if i+half < len(s.NM) {
+			line += "    " + row(i+half)
+		}
+		b.WriteString(line + "\n")
+	}
+}
+
+// allFigures prints every figure of a rating with symbol, value, unit and clause.
+func allFigures(b *bytes.Buffer, figures []glazing.Figure, r *glazing.Rating) {
+	b.WriteString("\nAll figures\n")
+	for _, f := range figures {
+		if f.Symbol == "" {
+			continue
+		}
+		for k := range f.Count(r) {
+			meaning := f.Meaning
+			switch f.Per {
+			case glazing.PerPane:
+				meaning += " " + strconv.Itoa(k+1)
+			case glazing.PerGap:
+				meaning += ", gap " + strconv.Itoa(k+1)
+			case glazing.PerSurface:
+				meaning += ", surface " + strconv.Itoa(k+1)
+			}
+			line := "  " + text.Pad(f.Symbol, 8, ' ') + text.Pad(meaning, 46, ' ') + text.AlignRight.Apply(f.Print(r, k), 7) + " " + f.Unit
+			b.WriteString(strings.TrimRight(line, " ") + "\n")
+		}
+	}
+}

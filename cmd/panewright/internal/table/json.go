@@ -1,0 +1,210 @@
+package table
+
+import (
+	"bytes"
+	"encoding/json"
+	"fmt"
+	"math"
+	"strconv"
+	"strings"
+
+	"panewright/glazing"
+)
+
+// JSON returns the report in the documented format: full precision, figures at the paths of
+// their keys, null where a figure is unknown, [] where a list is empty.
+func JSON(r Report) []byte {
+	top := newNode()
+	top.set(quoted(r.Version), "panewright")
+	top.set(quoted(r.Project.Title), "project")
+	for _, x := range []struct{ key, value string }{
+		{"author", r.Project.Author}, {"date", r.Project.Date}, {"client", r.Project.Client},
+	} {
+		if x.value != "" {
+			top.set(quoted(x.value), x.key)
+		}
+	}
+	top.set(quoted(r.Project.Digest), "input_sha256")
+	ratings := top.at("ratings")
+	ratings.list = true
+	for i := range r.Ratings {
+		r.rating(ratings.at(strconv.Itoa(i)), i)
+	}
+	var b bytes.Buffer
+	top.print(&b, 0)
+	b.WriteByte('\n')
+	return b.Bytes()
+}
+
+func (r Report) rating(n *node, i int) {
+	rating := &r.Ratings[i]
+	n.set(quoted(rating.Makeup.ID), "makeup")
+	n.set(quoted(rating.Tint), "tint")
+	n.set(quoted(rating.Method.Basis.Name), "basis")
+	n.set(figure(rating.Makeup.Tilt.Degrees()), "tilt_deg")
+	if rating.Makeup.Title != "" {
+		n.set(quoted(rating.Makeup.Title), "title")
+	}
+	panes := n.at("panes")
+	panes.list = true
+	for k, p := range rating.Makeup.Panes {
+		pane := panes.at(strconv.Itoa(k))
+		pane.set(quoted(p.Pane.ID), "pane")
+		pane.set(quoted(p.Pane.Tints[rating.Ready.States[rating.State].Tints[k]].Name), "tint")
+		pane.set(strconv.FormatBool(p.Turned), "turned")
+		pane.set(quoted(string(p.Pane.Origin)), "origin")
+	}
+	for _, f := range r.Figures {
+		path := strings.Split(f.Key, ".")
+		if f.Per != glazing.PerMakeup {
+			list := n
+			for _, key := range path {
+				if key == "#" {
+					break
+				}
+				list = list.at(key)
+			}
+			list.list = true
+		}
+		for k := range f.Count(rating) {
+			own := make([]string, len(path))
+			for j, key := range path {
+				own[j] = strings.ReplaceAll(key, "#", strconv.Itoa(k))
+			}
+			n.set(leaf(f, rating, k), own...)
+		}
+	}
+	if i < len(r.Spectra) {
+		spectra(n.at("spectra"), r.Spectra[i])
+	}
+	n.at("balances").list = true
+	cautions := n.at("cautions")
+	cautions.list = true
+	for k, c := range r.cautions(i) {
+		item := cautions.at(strconv.Itoa(k))
+		item.set(quoted(c.Code), "code")
+		item.set(quoted(c.Text), "text")
+	}
+	if len(rating.Makeup.Typed) > 0 {
+		typed := n.at("typed_by_user")
+		for _, t := range rating.Makeup.Typed {
+			typed.set(quoted(t.Text), t.Name)
+		}
+	}
+}
+
+func leaf(f glazing.Figure, r *glazing.Rating, k int) string {
+	if f.Text != nil {
+		return quoted(f.Text(r, k))
+	}
+	if v := f.Value(r, k); v.Known {
+		return figure(v.Number)
+	}
+	return "null"
+}
+
+func spectra(n *node, s glazing.Spectra) {
+	n.set(figures(s.WavelengthNM), "wavelength_nm")
+	n.set(figures(s.T), "tau")
+	n.set(figures(s.RhoOutside), "rho_outside")
+	n.set(figures(s.RhoInside), "rho_inside")
+	list := n.at("absorptance")
+	list.list = true
+	for k, a := range s.Absorptance {
+		list.set(figures(a), strconv.Itoa(k))
+	}
+}
+
+// node is a value of a JSON document whose keys keep the order in which they were set.
+type node struct {
+	keys []string
+	kids map[string]*node
+	list bool
+	leaf string
+}
+
+func newNode() *node { return &node{kids: map[string]*node{}} }
+
+// at returns the node under a key, which is made if it is not there.
+func (n *node) at(key string) *node {
+	if n.kids[key] == nil {
+		n.keys = append(n.keys, key)
+		n.kids[key] = newNode()
+	}
+	return n.kids[key]
+}
+
+// set puts a value, already written as JSON, at a path.
+func (n *node) set(value string, path ...string) {
+	for _, key := range path {
+		n = n.at(key)
+	}
+	n.leaf = value
+}
+
+// print writes the node; lists of plain values stand on one line.
+func (n *node) print(b *bytes.Buffer, depth int) {
+	if n.leaf != "" {
+		b.WriteString(n.leaf)
+		return
+	}
+	opening, closing := "{", "}"
+	if n.list {
+		opening, closing = "[", "]"
+	}
+	b.WriteString(opening)
+	inline := n.list
+	for _, key := range n.keys {
+		inline = inline && n.kids[key].leaf != "" && n.kids[key].leaf[0] != '['
+	}
+	for i, key := range n.keys {
+		if i > 0 {
+			b.WriteByte(',')
+		}
+		switch {
+		case !inline:
+			b.WriteString("\n" + strings.Repeat("  ", depth+1))
+		case i > 0:
+			b.WriteByte(' ')
+		}
+		if !n.list {
+			b.WriteString(quoted(key) + ": ")
+		}
+		n.kids[key].print(b, depth+1)
+	}
+	if !inline && len(n.keys) > 0 {
+		b.WriteString("\n" + strings.Repeat("  ", depth))
+	}
+	b.WriteString(closing)
+}
+
+// quoted writes a JSON string.
+func quoted(s string) string {
+	var b bytes.Buffer
+	e := json.NewEncoder(&b)
+	e.SetEscapeHTML(false)
+	if err := e.Encode(s); err != nil {
+		panic(fmt.Sprintf("table: %v", err)) // a string can always be written
+	}
+	return strings.TrimSuffix(b.String(), "\n")
+}
+
+// figure writes a number with all its digits, or null if it is none.
+func figure(v float64) string {
+	if math.IsNaN(v) || math.IsInf(v, 0) {
+		return "null"
+	}
+	out, err := json.Marshal(v)
+	if err != nil {
+		panic(fmt.Sprintf("table: %v", err)) // a finite number can always be written
+	}
+	return string(out)
+}
+
+func figures(list []float64) string {
+	parts := make([]string, len(list))
+	for i, v := range list {
+		parts[i] = figure(v)
+	}
+	return "[" + strings.Join(parts, ", ") + "]"
+}

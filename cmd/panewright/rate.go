@@ -1,0 +1,188 @@
+package main
+
+import (
+	"fmt"
+	"math"
+	"slices"
+	"strconv"
+	"strings"
+
+	"github.com/spf13/cobra"
+
+	"panewright/cmd/panewright/internal/table"
+	"panewright/glazing"
+	"panewright/glazing/project"
+)
+
+// selection is what part of a project to rate, and how to read it.
+type selection struct {
+	makeups, tints, bases []string
+	filesAnywhere         bool
+}
+
+func (o *selection) flags(c *cobra.Command) {
+	c.Flags().StringSliceVar(&o.makeups, "makeup", nil, "rate only this make-up (may be repeated)")
+	c.Flags().StringSliceVar(&o.tints, "tint", nil, "rate only this tint (may be repeated)")
+	c.Flags().StringSliceVar(&o.bases, "basis", nil, "rate under these bases instead of the project's: "+strings.Join(glazing.BasisNames(), ", "))
+	c.Flags().BoolVar(&o.filesAnywhere, "files-anywhere", false, "let the project name files outside its folder")
+}
+
+func outputFlag(c *cobra.Command, output *string) {
+	c.Flags().StringVarP(output, "output", "o", "", "write to this file instead of standard output")
+}
+
+func newRate(s streams) *cobra.Command {
+	var o selection
+	var as, spectra, output string
+	c := &cobra.Command{
+		Use:   "rate PROJECT",
+		Short: "Print the schedule of a project",
+		Long: `Rates every make-up of a project in every tint and prints the schedule.
+
+JSON has every figure with all its digits; null marks a figure that is not known,
+with the reason among the cautions.`,
+		Example: `  panewright rate panewright-demo/project.yaml
+  panewright rate panewright-demo/project.yaml --makeup E1 --tint full
+  panewright rate panewright-demo/project.yaml --basis en,iso --as json
+  panewright rate panewright-demo/project.yaml --as json --spectra 400,550,700`,
+		Args: oneProject,
+		RunE: func(_ *cobra.Command, args []string) error {
+			return runRate(s, args[0], o, as, spectra, output)
+		},
+	}
+	o.flags(c)
+	c.Flags().StringVar(&as, "as", "table", "table or json")
+	c.Flags().StringVar(&spectra, "spectra", "", "with --as json: spectra at these wavelengths in nm (400,550), or all")
+	outputFlag(c, &output)
+	return c
+}
+
+// oneProject wants the project file as the one argument.
+func oneProject(c *cobra.Command, args []string) error {
+	if len(args) != 1 {
+		return fmt.Errorf("%s needs one project file, such as: panewright %s panewright-demo/project.yaml", c.Name(), c.Name())
+	}
+	return nil
+}
+
+func runRate(s streams, path string, o selection, as, spectra, output string) error {
+	formats := []string{"table", "json"}
+	if !slices.Contains(formats, as) {
+		return fmt.Errorf("--as %s is not known; %s", short(as), project.DidYouMean(project.Nearest(as, formats), formats))
+	}
+	if spectra != "" && as != "json" {
+		return fmt.Errorf("--spectra prints spectra in JSON; add --as json")
+	}
+	r, err := rate(path, o)
+	if err != nil {
+		return err
+	}
+	if spectra != "" {
+		for i := range r.Ratings {
+			rating := &r.Ratings[i]
+			nm := rating.Method.WavelengthsNM()
+			if spectra != "all" {
+				if nm, err = wavelengths(spectra); err != nil {
+					return err
+				}
+			}
+			r.Spectra = append(r.Spectra, rating.Ready.Spectra(rating.State, nm))
+		}
+	}
+	if as == "json" {
+		return s.write(output, table.JSON(r))
+	}
+	return s.write(output, table.Schedule(r))
+}
+
+// rate reads a project and rates what is selected of it.
+func rate(path string, o selection) (table.Report, error) {
+	r := table.Report{Version: version, Figures: glazing.Figures()}
+	p, err := project.Load(path, project.Access{Anywhere: o.filesAnywhere})
+	if err != nil {
+		return r, err
+	}
+	r.Project = p
+	bases := p.Bases
+	if len(o.bases) > 0 {
+		bases = nil
+		for _, name := range o.bases {
+			b, err := glazing.BasisNamed(name)
+			if err != nil {
+				return r, fmt.Errorf("--basis: unknown basis %q; %s", short(name), project.DidYouMean(project.Nearest(name, glazing.BasisNames()), glazing.BasisNames()))
+			}
+			bases = append(bases, b)
+		}
+	}
+	makeups := p.Makeups
+	if len(o.makeups) > 0 {
+		makeups = nil
+		for _, id := range o.makeups {
+			m := p.Makeup(id)
+			if m == nil {
+				var known []string
+				for _, m := range p.Makeups {
+					known = append(known, m.ID)
+				}
+				return r, fmt.Errorf("--makeup: %s has no make-up %q; %s", path, short(id), project.DidYouMean(project.Nearest(id, known), known))
+			}
+			makeups = append(makeups, m)
+		}
+	}
+	var tints []string
+	for _, b := range bases {
+		method := p.Method(b)
+		for _, m := range makeups {
+			ratings, err := p.RateBy(method, m)
+			if err != nil {
+				return r, err
+			}
+			for i := range ratings {
+				tints = append(tints, ratings[i].Tint)
+				if len(o.tints) == 0 || slices.ContainsFunc(o.tints, func(t string) bool { return sameTint(t, ratings[i].Tint) }) {
+					r.Ratings = append(r.Ratings, ratings[i])
+				}
+			}
+		}
+	}
+	for _, t := range o.tints {
+		if !slices.ContainsFunc(tints, func(x string) bool { return sameTint(t, x) }) {
+			known := slices.DeleteFunc(tints, func(x string) bool { return x == "" })
+			if len(known) == 0 {
+				return r, fmt.Errorf("--tint %s: nothing that was selected switches", short(t))
+			}
+			return r, fmt.Errorf("--tint: no tint %q; %s", short(t), project.DidYouMean(project.Nearest(t, known), known))
+		}
+	}
+	return r, nil
+}
+
+// sameTint reports whether a tint that was asked for is that of a rating: its whole name, or the
+// name of each of its parts.
+func sameTint(asked, tint string) bool {
+	if asked == tint {
+		return true
+	}
+	for part := range strings.SplitSeq(tint, "/") {
+		if part != asked {
+			return false
+		}
+	}
+	return true
+}
+
+// wavelengths reads a list of wavelengths in nm, ascending.
+func wavelengths(list string) ([]float64, error) {
+	var out []float64
+	for word := range strings.SplitSeq(list, ",") {
+		v, err := strconv.ParseFloat(strings.TrimSpace(word), 64)
+		if err != nil || !(v > 0) || math.IsInf(v, 0) {
+			return nil, fmt.Errorf("--spectra: %q is no wavelength in nm; write 400,550 or all", short(word))
+		}
+		if len(out) > 0 && v <= out[len(out)-1] {
+			return nil, fmt.Errorf("--spectra: wavelengths ascend, and %s does not", short(word))
+		}
+		out = append(out, v)
+	}
+	return out, nil
+}

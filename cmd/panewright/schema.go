@@ -1,0 +1,25 @@
+package main
+
+import (
+	"github.com/spf13/cobra"
+
+	"panewright/glazing/project"
+)
+
+func newSchema(s streams) *cobra.Command {
+	var output string
+	c := &cobra.Command{
+		Use:   "schema",
+		Short: "Print the JSON Schema of the project file",
+		Long: `Prints the JSON Schema (draft 2020-12) of the project file, for editors that
+complete and check as you type. It comes from the same table of keys as the
+program's own check.`,
+		Example: "  panewright schema -o panewright.schema.json",
+		Args:    cobra.NoArgs,
+		RunE: func(*cobra.Command, []string) error {
+			return s.write(output, project.Schema())
+		},
+	}
+	outputFlag(c, &output)
+	return c
+}

@@ -1,0 +1,96 @@
+package project
+
+import (
+	"fmt"
+	"slices"
+	"strings"
+)
+
+// A Problem is one fault of a project file: where it is, at which key, and what would be right.
+type Problem struct {
+	File         string
+	Line, Column int // from 1; 0 when the whole file is meant
+	Key          string
+	Text         string
+}
+
+func (p *Problem) Error() string {
+	s := p.File
+	if p.Line > 0 {
+		s += fmt.Sprintf(":%d:%d", p.Line, p.Column)
+	}
+	if p.Key != "" {
+		return s + ": " + clip(p.Key) + ": " + p.Text
+	}
+	return s + ": " + p.Text
+}
+
+// Errors are all the faults found in a project and the files it names, in the order in which
+// they were found.
+type Errors []error
+
+func (e Errors) Error() string {
+	var lines []string
+	for _, x := range e {
+		lines = append(lines, x.Error())
+	}
+	return strings.Join(lines, "\n")
+}
+
+// Unwrap lets errors.As find each fault.
+func (e Errors) Unwrap() []error { return e }
+
+// Nearest returns those of the known names that are nearest to a misspelt one: those at the
+// least distance, counted in letters changed, added, dropped or swapped, if that is small.
+func Nearest(word string, names []string) []string {
+	best := max(2, len([]rune(word))/3) + 1
+	var near []string
+	for _, name := range names {
+		switch d := distance(strings.ToLower(word), strings.ToLower(name), best); {
+		case d < best:
+			best, near = d, []string{name}
+		case d == best && len(near) > 0:
+			near = append(near, name)
+		}
+	}
+	return near
+}
+
+// DidYouMean words the offer of the nearest names, or lists all of them where none is near.
+func DidYouMean(near, all []string) string {
+	if len(near) > 0 {
+		return "did you mean " + strings.Join(near, " or ") + "?"
+	}
+	if all = slices.Compact(slices.Sorted(slices.Values(all))); len(all) > 30 {
+		return "known are " + strings.Join(all[:30], ", ") + " and others"
+	}
+	return "known are " + strings.Join(all, ", ")
+}
+
+// distance is the number of single letters changed, added, dropped, or of neighbours swapped,
+// that lead from a to b; anything beyond limit is returned as limit + 1.
+func distance(a, b string, limit int) int {
+	x, y := []rune(a), []rune(b)
+	if d := len(x) - len(y); d > limit || -d > limit {
+		return limit + 1
+	}
+	before, last, row := make([]int, len(y)+1), make([]int, len(y)+1), make([]int, len(y)+1)
+	for j := range last {
+		last[j] = j
+	}
+	for i := 1; i <= len(x); i++ {
+		row[0] = i
+		for j := 1; j <= len(y); j++ {
+			change := last[j-1]
+			if x[i-1] != y[j-1] {
+				change++
+			}
+			row[j] = min(change, last[j]+1, row[j-1]+1)
+			if i > 1 && j > 1 && x[i-1] == y[j-2] && x[i-2] == y[j-1] {
+				row[j] = min(row[j], before[j-2]+1)
+			}
+		}
+		before, last, row = last, row, before
+	}
+	return min(last[len(y)], limit+1)
+}

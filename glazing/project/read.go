@@ -1,0 +1,493 @@
+package project
+
+import (
+	"bytes"
+	"errors"
+	"fmt"
+	"reflect"
+	"regexp"
+	"slices"
+	"strconv"
+	"strings"
+	"unicode"
+	"unicode/utf8"
+
+	"go.yaml.in/yaml/v4"
+)
+
+// position is a place in the project file, counted from 1.
+type position struct{ line, column int }
+
+// text, number, flag and names are values of the file, with their place.
+type (
+	text struct {
+		value string
+		given bool
+		at    position
+	}
+	number struct {
+		value float64
+		given bool
+		at    position
+	}
+	flag struct {
+		value, given bool
+		at           position
+	}
+	names struct {
+		values []text
+		given  bool
+		at     position
+	}
+)
+
+// object is the place of a map in the file, and whether something in it was refused: then what
+// it lacks or contradicts is not reported as well.
+type object struct {
+	At     position
+	Faulty bool
+}
+
+// or returns the number, or a default where the key is absent.
+func (n number) or(v float64) float64 {
+	if n.given {
+		return n.value
+	}
+	return v
+}
+
+// reader fills the spec types from YAML nodes and gathers every fault.
+type reader struct {
+	file   string
+	faults Errors
+	// incomplete holds the keys of which a value was refused or misspelt somewhere: what would
+	// stand there may be missed elsewhere, and that is not reported as well.
+	incomplete map[string]bool
+}
+
+func (r *reader) fail(at position, key, format string, args ...any) {
+	r.faults = append(r.faults, &Problem{File: r.file, Line: at.line, Column: at.column, Key: key, Text: fmt.Sprintf(format, args...)})
+}
+
+func place(n *yaml.Node) position { return position{n.Line, n.Column} }
+
+// maxProjectBytes is the size beyond which a project file is refused.
+const maxProjectBytes = 16 << 20
+
+// parse reads the text of a project file.
+func (r *reader) parse(content []byte) (*fileSpec, bool) {
+	if at, problem := notText(content); problem != "" {
+		r.fail(at, "", "%s", problem)
+		return nil, false
+	}
+	var doc yaml.Node
+	if err := yaml.Load(content, &doc); err != nil {
+		r.fail(yamlFault(err))
+		return nil, false
+	}
+	if len(doc.Content) == 0 {
+		r.fail(position{}, "", "is empty; a project begins with project: TITLE")
+		return nil, false
+	}
+	var spec fileSpec
+	r.object(doc.Content[0], reflect.ValueOf(&spec).Elem(), "")
+	return &spec, true
+}
+
+// notText says why content cannot be YAML in UTF-8, and where.
+func notText(b []byte) (position, string) {
+	switch {
+	case len(b) > maxProjectBytes:
+		return position{}, fmt.Sprintf("is larger than %d MB; a project file is a few kB", maxProjectBytes>>20)
+	case bytes.HasPrefix(b, []byte{0xff, 0xfe}), bytes.HasPrefix(b, []byte{0xfe, 0xff}):
+		return position{}, "is UTF-16; save it as UTF-8"
+	case bytes.IndexByte(b, 0) >= 0:
+		return position{}, "is binary, or UTF-16; a project is YAML text in UTF-8"
+	case len(bytes.TrimSpace(bytes.TrimPrefix(b, []byte("\ufeff")))) == 0:
+		return position{}, "is empty; a project begins with project: TITLE"
+	}
+	line, column := 1, 1
+	for rest := b; len(rest) > 0; {
+		c, size := utf8.DecodeRune(rest)
+		if c == utf8.RuneError && size == 1 {
+			return position{line, column}, "holds bytes that are not UTF-8; save it as UTF-8"
+		}
+		if c != '\n' && c != '\r' && c != '\t' && c != 0x85 && unicode.IsControl(c) {
+			return position{line, column}, fmt.Sprintf("holds the control character U+%04X", c)
+		}
+		if column++; c == '\n' {
+			line, column = line+1, 1
+		}
+		rest = rest[size:]
+	}
+	return position{}, ""
+}
+
+// yamlFault turns an error of the YAML library into the arguments of fail.
+func yamlFault(err error) (position, string, string, error) {
+	const format = "not readable as YAML: %v"
+	if le, ok := errors.AsType[*yaml.LoadError](err); ok {
+		message := strings.TrimPrefix(le.Message, "yaml: ")
+		switch {
+		case strings.Contains(message, "exceeded max depth"):
+			message = "lists or maps are nested too deeply"
+		case strings.Contains(message, "cannot start any token"):
+			message += " (a tab? indent with spaces)"
+		case strings.Contains(message, "multiple"):
+			message = "more than one document; a project is one, without ---"
+		case strings.Contains(message, "no documents"):
+			return position{}, "", "%v", errors.New("is empty; a project begins with project: TITLE")
+		}
+		return position{le.Mark.Line, le.Mark.Column}, "", format, errors.New(message)
+	}
+	return position{}, "", format, err
+}
+
+// plain refuses what YAML has and a project file does not: anchors, aliases, tags.
+func (r *reader) plain(n *yaml.Node, key string) bool {
+	switch {
+	case n.Kind == yaml.AliasNode || n.Anchor != "":
+		r.fail(place(n), key, "anchors and aliases are not used in a project; write the value out")
+	case n.Style&yaml.TaggedStyle != 0:
+		r.fail(place(n), key, "tags such as %s are not used in a project", clip(n.Tag))
+	default:
+		return true
+	}
+	return false
+}
+
+// object fills a struct from a map. It returns false where the node is no map.
+func (r *reader) object(n *yaml.Node, into reflect.Value, key string) bool {
+	called := called(into.Type())
+	if !r.plain(n, key) {
+		return false
+	}
+	if n.Kind != yaml.MappingNode {
+		r.fail(place(n), key, "%s is a map of keys and values, not %s", called, kindOf(n))
+		return false
+	}
+	before := len(r.faults)
+	known := keysOf(into.Type())
+	seen := map[string]bool{}
+	spoilt := map[string]bool{} // keys of which a misspelling stands there
+	for i := 0; i+1 < len(n.Content); i += 2 {
+		k, v := n.Content[i], n.Content[i+1]
+		if !r.plain(k, key) {
+			continue
+		}
+		if k.Kind != yaml.ScalarNode || k.Tag == "!!merge" {
+			r.fail(place(k), key, "a key of %s is a plain word", called)
+			continue
+		}
+		at := slices.IndexFunc(known, func(f reflect.StructField) bool { return f.Tag.Get("key") == k.Value })
+		if at < 0 {
+			near := Nearest(k.Value, keyNames(known))
+			for _, name := range near {
+				spoilt[name] = true
+			}
+			r.fail(place(k), k.Value, "unknown key in %s; %s", called, DidYouMean(near, keyNames(known)))
+			continue
+		}
+		if seen[k.Value] {
+			r.fail(place(k), k.Value, "stands twice in %s", called)
+			continue
+		}
+		seen[k.Value] = true
+		field := known[at]
+		if !r.value(v, into.FieldByIndex(field.Index), field) {
+			spoilt[k.Value] = true
+		}
+	}
+	for _, f := range known {
+		name := f.Tag.Get("key")
+		if f.Tag.Get("need") == "yes" && !seen[name] && !spoilt[name] {
+			r.fail(place(n), name, "is missing in %s: %s", called, f.Tag.Get("doc"))
+		}
+	}
+	for name := range spoilt {
+		r.incomplete[name] = true
+	}
+	ok := len(r.faults) == before
+	if o := into.FieldByName("object"); o.IsValid() {
+		into.FieldByName("At").Set(reflect.ValueOf(place(n)))
+		into.FieldByName("Faulty").SetBool(!ok)
+	}
+	return ok
+}
+
+// value fills one field. It returns false where the value was refused.
+func (r *reader) value(n *yaml.Node, into reflect.Value, f reflect.StructField) bool {
+	key := f.Tag.Get("key")
+	if !r.plain(n, key) {
+		return false
+	}
+	if n.Kind == yaml.ScalarNode && n.Tag == "!!null" {
+		r.fail(place(n), key, "has no value; give one, or leave the key out")
+		return false
+	}
+	target := into.Addr().Interface()
+	switch t := target.(type) {
+	case *text:
+		return r.text(n, t, f.Tag, key)
+	case *number:
+		return r.number(n, t, f.Tag, key)
+	case *flag:
+		return r.flag(n, t, key)
+	case *names:
+		return r.names(n, t, f.Tag, key)
+	}
+	switch into.Kind() {
+	case reflect.Pointer:
+		into.Set(reflect.New(into.Type().Elem()))
+		return r.object(n, into.Elem(), key)
+	case reflect.Slice:
+		return r.list(n, into, key)
+	case reflect.Map:
+		return r.dictionary(n, into, f)
+	}
+	panic("project: a field of " + f.Type.String() + " cannot be read")
+}
+
+// list fills a slice of structs.
+func (r *reader) list(n *yaml.Node, into reflect.Value, key string) bool {
+	if n.Kind != yaml.SequenceNode {
+		r.fail(place(n), key, "is a list (each item begins with -), not %s", kindOf(n))
+		return false
+	}
+	ok := true
+	for _, item := range n.Content {
+		e := reflect.New(into.Type().Elem()).Elem()
+		if item.Kind == yaml.ScalarNode && item.Tag == "!!null" {
+			r.fail(place(item), key, "has an empty item")
+			ok = false
+			continue
+		}
+		ok = r.object(item, e, key) && ok
+		into.Set(reflect.Append(into, e))
+	}
+	return ok
+}
+
+// dictionary fills a map from names to numbers, texts or structs.
+func (r *reader) dictionary(n *yaml.Node, into reflect.Value, f reflect.StructField) bool {
+	key := f.Tag.Get("key")
+	if n.Kind != yaml.MappingNode {
+		r.fail(place(n), key, "is a map of names and values, not %s", kindOf(n))
+		return false
+	}
+	into.Set(reflect.MakeMap(into.Type()))
+	before := len(r.faults)
+	for i := 0; i+1 < len(n.Content); i += 2 {
+		k, v := n.Content[i], n.Content[i+1]
+		if !r.plain(k, key) {
+			continue
+		}
+		name := k.Value
+		if k.Kind != yaml.ScalarNode || k.Tag == "!!merge" || k.Tag == "!!null" || name == "" {
+			r.fail(place(k), key, "a name is a plain word")
+			continue
+		}
+		if allowed := f.Tag.Get("one"); allowed != "" && !slices.Contains(strings.Fields(allowed), name) {
+			r.fail(place(k), name, "unknown in %s; %s", key, DidYouMean(Nearest(name, strings.Fields(allowed)), strings.Fields(allowed)))
+			continue
+		}
+		if into.MapIndex(reflect.ValueOf(name)).IsValid() {
+			r.fail(place(k), name, "stands twice in %s", key)
+			continue
+		}
+		e := reflect.New(into.Type().Elem()).Elem()
+		element := f
+		element.Tag = reflect.StructTag(`key:"` + name + `" ` + boundsOf(f.Tag))
+		if e.Kind() == reflect.Struct && called(e.Type()) != "" {
+			r.object(v, e, name)
+		} else {
+			r.value(v, e, element)
+		}
+		into.SetMapIndex(reflect.ValueOf(name), e)
+	}
+	return len(r.faults) == before
+}
+
+// boundsOf keeps those tags of a map that bound each of its numbers.
+func boundsOf(t reflect.StructTag) string {
+	var s string
+	for _, b := range []string{"above", "from", "below", "upto"} {
+		if v, ok := t.Lookup(b); ok {
+			s += b + `:"` + v + `" `
+		}
+	}
+	return s
+}
+
+// idPattern is 1 to 64 letters of any script, digits, points, underscores and hyphens, beginning
+// with a letter or a digit.
+const idPattern = `^[\p{L}\p{Nd}][\p{L}\p{M}\p{Nd}._-]{0,63}$`
+
+var idExpression = regexp.MustCompile(idPattern)
+
+func (r *reader) text(n *yaml.Node, into *text, tag reflect.StructTag, key string) bool {
+	if n.Kind != yaml.ScalarNode {
+		r.fail(place(n), key, "is a text, not %s", kindOf(n))
+		return false
+	}
+	value := n.Value
+	for _, c := range value {
+		if c != '\n' && c != '\t' && unicode.IsControl(c) {
+			r.fail(place(n), key, "holds the control character U+%04X", c)
+			return false
+		}
+	}
+	if strings.TrimSpace(value) == "" {
+		r.fail(place(n), key, "is blank; give a text, or leave the key out")
+		return false
+	}
+	if allowed := tag.Get("one"); allowed != "" && !slices.Contains(strings.Fields(allowed), value) {
+		r.fail(place(n), key, "%q is not known; %s", clip(value), DidYouMean(Nearest(value, strings.Fields(allowed)), strings.Fields(allowed)))
+		return false
+	}
+	if tag.Get("id") != "" && !idExpression.MatchString(value) {
+		r.fail(place(n), key, "%q is no id: 1 to 64 letters of any script, digits, . _ -, beginning with a letter or digit", clip(value))
+		return false
+	}
+	if tag.Get("id") == "tint" && value == "same" {
+		r.fail(place(n), key, "a tint cannot be called same: that word makes a pane follow another")
+		return false
+	}
+	*into = text{value, true, place(n)}
+	return true
+}
+
+// numberExpression is a decimal number; leading zeros, which some programs read as octal, are
+// refused.
+var numberExpression = regexp.MustCompile(`^[-+]?(0|[1-9][0-9]*|0?\.[0-9]+|(0|[1-9][0-9]*)\.[0-9]*)([eE][-+]?[0-9]+)?$`)
+
+func (r *reader) number(n *yaml.Node, into *number, tag reflect.StructTag, key string) bool {
+	refuse := func(format string, args ...any) bool {
+		r.fail(place(n), key, format, args...)
+		return false
+	}
+	if n.Kind != yaml.ScalarNode {
+		return refuse("is a number, not %s", kindOf(n))
+	}
+	s := n.Value
+	if n.Style&(yaml.SingleQuotedStyle|yaml.DoubleQuotedStyle|yaml.LiteralStyle|yaml.FoldedStyle) != 0 {
+		return refuse("%q is a text; write the number without quotes", clip(s))
+	}
+	if !numberExpression.MatchString(s) {
+		switch {
+		case regexp.MustCompile(`^[-+]?[0-9]+,[0-9]+$`).MatchString(s):
+			return refuse("%q is not a number; write a decimal point", clip(s))
+		case regexp.MustCompile(`^[-+]?0[0-9]`).MatchString(s):
+			return refuse("%q begins with a zero; write the number without it", clip(s))
+		}
+		return refuse("%q is not a number; write it with digits and a point, in the unit that the key names", clip(s))
+	}
+	v, err := strconv.ParseFloat(s, 64)
+	if err != nil {
+		return refuse("%q is too large for a number", clip(s))
+	}
+	if b := bound(tag, "above"); b != nil && v <= *b {
+		return refuse("%s is not above %s", clip(s), short(*b))
+	}
+	if b := bound(tag, "from"); b != nil && v < *b {
+		return refuse("%s is below %s", clip(s), short(*b))
+	}
+	if b := bound(tag, "below"); b != nil && v >= *b {
+		return refuse("%s is not below %s", clip(s), short(*b))
+	}
+	if b := bound(tag, "upto"); b != nil && v > *b {
+		return refuse("%s is above %s", clip(s), short(*b))
+	}
+	*into = number{v, true, place(n)}
+	return true
+}
+
+func (r *reader) flag(n *yaml.Node, into *flag, key string) bool {
+	if n.Kind != yaml.ScalarNode || (n.Value != "true" && n.Value != "false") || n.Tag != "!!bool" {
+		r.fail(place(n), key, "is true or false, not %s", kindOf(n))
+		return false
+	}
+	*into = flag{n.Value == "true", true, place(n)}
+	return true
+}
+
+// names reads one name or a list of names.
+func (r *reader) names(n *yaml.Node, into *names, tag reflect.StructTag, key string) bool {
+	items := []*yaml.Node{n}
+	if n.Kind == yaml.SequenceNode {
+		items = n.Content
+	}
+	if len(items) == 0 {
+		r.fail(place(n), key, "is an empty list; name one at least, or leave the key out")
+		return false
+	}
+	*into = names{given: true, at: place(n)}
+	ok := true
+	for _, item := range items {
+		var t text
+		if item.Kind == yaml.ScalarNode && item.Tag == "!!null" {
+			r.fail(place(item), key, "has an empty item")
+			ok = false
+			continue
+		}
+		if !r.plain(item, key) || !r.text(item, &t, tag, key) {
+			ok = false
+			continue
+		}
+		if slices.ContainsFunc(into.values, func(x text) bool { return x.value == t.value }) {
+			r.fail(place(item), key, "%q stands twice", clip(t.value))
+			ok = false
+			continue
+		}
+		into.values = append(into.values, t)
+	}
+	return ok
+}
+
+// kindOf names what a node is, for messages.
+func kindOf(n *yaml.Node) string {
+	switch n.Kind {
+	case yaml.MappingNode:
+		return "a map"
+	case yaml.SequenceNode:
+		return "a list"
+	}
+	return strconv.Quote(clip(n.Value))
+}
+
+// keysOf returns the fields of a spec type that have a key.
+func keysOf(t reflect.Type) []reflect.StructField {
+	var out []reflect.StructField
+	for f := range t.Fields() {
+		if f.Tag.Get("key") != "" {
+			out = append(out, f)
+		}
+	}
+	return out
+}
+
+func keyNames(fields []reflect.StructField) []string {
+	var out []string
+	for _, f := range fields {
+		out = append(out, f.Tag.Get("key"))
+	}
+	return out
+}
+
+// called says what an object of a spec type is: "a pane".
+func called(t reflect.Type) string {
+	if f, ok := t.FieldByName("_"); ok {
+		return f.Tag.Get("called")
+	}
+	return ""
+}
+
+func short(v float64) string { return strconv.FormatFloat(v, 'g', -1, 64) }
+
+// clip shortens a text of the user's for a message.
+func clip(s string) string {
+	if r := []rune(s); len(r) > 60 {
+		return string(r[:60]) + "…"
+	}
+	return s
+}
