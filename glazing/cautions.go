@@ -59,9 +59,9 @@ var cautionRules = []cautionRule{
 		return "Editions and coefficients used: " + all[i].Method.Editions() + ". Which editions a contract names is for the user to check."
 	}},
 	{"invented", "a pane's spectrum is marked invented", fromPanes(InventedOrigin,
-		"Invented data: the spectrum of %s describes no product and must not be specified.")},
+		"Invented spectra stand behind these figures: they describe no product and must not be specified.")},
 	{"modelled", "a pane's spectrum is marked modelled", fromPanes(ModelledOrigin,
-		"Modelled data: the spectrum of %s was computed, not measured.")},
+		"Modelled spectra stand behind these figures: they were computed, not measured.")},
 	{"missing_data", "U or g is unknown", func(all []Rating, i int) string {
 		r := &all[i]
 		switch {
@@ -171,10 +171,11 @@ func cautionsOf(all []Rating, i int) []Caution {
 // MixedBasis is the caution of a page that shows more than one basis.
 var MixedBasis = Caution{Code: "mixed_basis", Text: "Figures under different bases stand here side by side: they follow different standards and must not be compared with a limit of another."}
 
-func fromPanes(o Origin, format string) func([]Rating, int) string {
-	return func(all []Rating, i int) string {
-		return panesWhere(all[i:i+1], func(r *Rating, k int) bool { return r.Makeup.Panes[k].Pane.Origin == o }, format)
-	}
+// fromPanes returns text where the spectrum of a pane has an origin.
+func fromPanes(o Origin, text string) func([]Rating, int) string {
+	return when(func(r *Rating) bool {
+		return slices.ContainsFunc(r.Makeup.Panes, func(p Placed) bool { return p.Pane.Origin == o })
+	}, text)
 }
 
 // panesWhere names the panes for which a condition holds in any of the ratings, or returns "".

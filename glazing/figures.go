@@ -27,7 +27,7 @@ type Figure struct {
 	Places  int  // decimals as printed
 	Small   bool // three decimals below 0.05
 	BasisU  bool // decimals of a U-value, which depend on the basis
-	Column  bool // a column of the schedule
+	Column  int  // place among the columns of the schedule, from 1; 0 for none
 	Per     Per
 	Clause  string // where the standard defines it; numbers of clauses are from memory
 	Meaning string
@@ -56,21 +56,21 @@ func opticalFigures() []Figure {
 		solarRho = "EN 410, 5.4.4; ISO 9050, 3.5"
 	)
 	return []Figure{
-		{Key: "thickness_mm", Alias: "thickness", Symbol: "d", Unit: "mm", Places: 1, Column: true,
+		{Key: "thickness_mm", Alias: "thickness", Symbol: "d", Unit: "mm", Places: 1, Column: 10,
 			Meaning: "thickness of panes and gaps", Value: whole(func(r *Rating) Value { return known(r.ThicknessMM) })},
-		{Key: "mass_kg_m2", Alias: "mass", Symbol: "m", Unit: "kg/m²", Places: 1, Column: true, Clause: "EN 572-1",
+		{Key: "mass_kg_m2", Alias: "mass", Symbol: "m", Unit: "kg/m²", Places: 1, Column: 11, Clause: "EN 572-1",
 			Meaning: "mass per area", Value: whole(func(r *Rating) Value { return known(r.MassKGM2) })},
 
-		{Key: "light.transmittance", Alias: "light", Symbol: "τv", Places: 2, Small: true, Column: true, Clause: light410,
+		{Key: "light.transmittance", Alias: "light", Symbol: "τv", Places: 2, Small: true, Column: 1, Clause: light410,
 			Meaning: "light transmittance", Value: whole(func(r *Rating) Value { return r.Light.Transmittance })},
-		{Key: "light.reflectance_outside", Alias: "light_outside", Symbol: "ρv", Places: 2, Small: true, Column: true, Clause: lightRho,
+		{Key: "light.reflectance_outside", Alias: "light_outside", Symbol: "ρv", Places: 2, Small: true, Column: 2, Clause: lightRho,
 			Meaning: "light reflectance, outside", Value: whole(func(r *Rating) Value { return r.Light.ReflectanceOutside })},
-		{Key: "light.reflectance_inside", Alias: "light_inside", Symbol: "ρv′", Places: 2, Small: true, Column: true, Clause: lightRho,
+		{Key: "light.reflectance_inside", Alias: "light_inside", Symbol: "ρv′", Places: 2, Small: true, Column: 3, Clause: lightRho,
 			Meaning: "light reflectance, inside", Value: whole(func(r *Rating) Value { return r.Light.ReflectanceInside })},
 
-		{Key: "solar.transmittance", Alias: "solar", Symbol: "τe", Places: 2, Small: true, Column: true, Clause: solar410,
+		{Key: "solar.transmittance", Alias: "solar", Symbol: "τe", Places: 2, Small: true, Column: 4, Clause: solar410,
 			Meaning: "solar direct transmittance", Value: whole(func(r *Rating) Value { return r.Solar.Transmittance })},
-		{Key: "solar.reflectance_outside", Alias: "solar_outside", Symbol: "ρe", Places: 2, Small: true, Column: true, Clause: solarRho,
+		{Key: "solar.reflectance_outside", Alias: "solar_outside", Symbol: "ρe", Places: 2, Small: true, Column: 5, Clause: solarRho,
 			Meaning: "solar direct reflectance, outside", Value: whole(func(r *Rating) Value { return r.Solar.ReflectanceOutside })},
 		{Key: "solar.reflectance_inside", Alias: "solar_inside", Symbol: "ρe′", Places: 2, Small: true, Clause: solarRho,
 			Meaning: "solar direct reflectance, inside", Value: whole(func(r *Rating) Value { return r.Solar.ReflectanceInside })},
@@ -85,16 +85,16 @@ func opticalFigures() []Figure {
 			}},
 		{Key: "solar.secondary_heat_inward", Alias: "qi", Symbol: "qi", Places: 2, Small: true, Clause: "EN 410, 5.4.6; ISO 9050, 3.5",
 			Meaning: "secondary heat towards the inside", Value: whole(func(r *Rating) Value { return r.SecondaryHeat })},
-		{Key: "solar.g", Alias: "g", Symbol: "g", Places: 2, Small: true, Column: true, Clause: "EN 410, 5.4.1; ISO 9050, 3.5",
+		{Key: "solar.g", Alias: "g", Symbol: "g", Places: 2, Small: true, Column: 6, Clause: "EN 410, 5.4.1; ISO 9050, 3.5",
 			Meaning: "total solar energy transmittance τe + qi", Value: whole(func(r *Rating) Value { return r.G })},
-		{Key: "solar.shading_coefficient", Alias: "shading", Symbol: "SC", Places: 2, Small: true, Column: true, Clause: "EN 410, 5.7",
+		{Key: "solar.shading_coefficient", Alias: "shading", Symbol: "SC", Places: 2, Small: true, Clause: "EN 410, 5.7",
 			Meaning: "shading coefficient g/0.87", Value: whole(func(r *Rating) Value { return r.ShadingCoefficient })},
-		{Key: "solar.light_to_solar_gain", Alias: "light_to_solar", Symbol: "τv/g", Places: 2, Column: true, Clause: "common practice, no source",
+		{Key: "solar.light_to_solar_gain", Alias: "light_to_solar", Symbol: "τv/g", Places: 2, Clause: "common practice, no source",
 			Meaning: "light to solar gain", Value: whole(func(r *Rating) Value { return r.LightToSolarGain })},
 
-		{Key: "uv.transmittance", Alias: "uv", Symbol: "τuv", Places: 2, Small: true, Column: true, Clause: "EN 410, 5.5; ISO 9050, 3.6",
+		{Key: "uv.transmittance", Alias: "uv", Symbol: "τuv", Places: 2, Small: true, Column: 9, Clause: "EN 410, 5.5; ISO 9050, 3.6",
 			Meaning: "ultraviolet transmittance, 300-380 nm", Value: whole(func(r *Rating) Value { return r.UV })},
-		{Key: "uv.damage_weighted", Alias: "damage", Symbol: "τdf", Places: 2, Small: true, Column: true, Clause: "ISO 9050, 3.7; CIE 89/3",
+		{Key: "uv.damage_weighted", Alias: "damage", Symbol: "τdf", Places: 2, Small: true, Clause: "ISO 9050, 3.7; CIE 89/3",
 			Meaning: "damage-weighted transmittance, 300-600 nm", Value: whole(func(r *Rating) Value { return r.Damage })},
 		{Key: "uv.damage_weighted_700", Alias: "damage_700", Symbol: "τdf,700", Places: 2, Small: true, Clause: "CIE 89/3",
 			Meaning: "damage-weighted transmittance, 300-700 nm", Value: whole(func(r *Rating) Value { return r.Damage700 })},
@@ -104,7 +104,7 @@ func opticalFigures() []Figure {
 }
 
 func colourFigures() []Figure {
-	list := []Figure{{Key: "colour.ra", Alias: "ra", Symbol: "Ra", Places: 0, Column: true, Clause: "EN 410, 5.6; CIE 13.3",
+	list := []Figure{{Key: "colour.ra", Alias: "ra", Symbol: "Ra", Places: 0, Column: 8, Clause: "EN 410, 5.6; CIE 13.3",
 		Meaning: "general colour rendering index", Value: whole(func(r *Rating) Value { return r.Ra })}}
 	for _, c := range []struct {
 		key, alias, of string
@@ -179,7 +179,7 @@ func thermalFigures() []Figure {
 			Meaning: "outside surface coefficient", Value: whole(func(r *Rating) Value { return r.OutsideWM2K })},
 		Figure{Key: "inside.coefficient_w_m2k", Alias: "hi", Symbol: "hi", Unit: "W/(m²·K)", Places: 1, Clause: "EN 673, 7; ISO 10292",
 			Meaning: "inside surface coefficient", Value: whole(func(r *Rating) Value { return r.InsideWM2K })},
-		Figure{Key: "u_w_m2k", Alias: "u", Symbol: "Ug", Unit: "W/(m²·K)", BasisU: true, Column: true, Clause: "EN 673, 5.1; ISO 10292",
+		Figure{Key: "u_w_m2k", Alias: "u", Symbol: "Ug", Unit: "W/(m²·K)", BasisU: true, Column: 7, Clause: "EN 673, 5.1; ISO 10292",
 			Meaning: "U-value of the centre of the glass", Value: whole(func(r *Rating) Value { return r.U })},
 	)
 }

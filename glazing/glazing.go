@@ -238,7 +238,7 @@ func (m *Makeup) Tintable() bool {
 }
 
 // BuildUp returns the sequence from outside to inside as the trade writes it: thickness and pane,
-// gap and gas.
+// gap and gas. Spaces within a part are no-break spaces.
 func (m *Makeup) BuildUp() string {
 	var parts []string
 	for i, p := range m.Panes {
@@ -254,6 +254,9 @@ func (m *Makeup) BuildUp() string {
 			s += " (tint " + p.Tint + ")"
 		}
 		parts = append(parts, s)
+	}
+	for i := range parts {
+		parts[i] = strings.ReplaceAll(parts[i], " ", "\u00a0")
 	}
 	return strings.Join(parts, " | ")
 }

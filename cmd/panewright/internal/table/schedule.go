@@ -30,6 +30,7 @@ func Schedule(r Report) []byte {
 		r.block(&b, name)
 	}
 	r.buildUps(&b)
+	r.origins(&b)
 	r.symbols(&b)
 	r.cautionList(&b)
 	fmt.Fprintf(&b, "\nPanewright %s, input sha256\n%s\n", r.Version, r.Project.Digest)
@@ -93,40 +94,55 @@ func (r Report) block(b *bytes.Buffer, basis string) {
 		names = append(names, newColumn("tint", tints))
 	}
 	var figures []column
-	for _, f := range r.Figures {
-		if !f.Column || f.Per != glazing.PerMakeup {
-			continue
-		}
+	for _, f := range r.columns() {
 		var cells []string
 		for _, row := range rows {
 			cells = append(cells, f.Print(row, 0))
 		}
 		figures = append(figures, newColumn(f.Symbol, cells))
 	}
+	total := -gutter
+	for _, c := range append(slices.Clone(names), figures...) {
+		total += c.width + gutter
+	}
+	space := gutter
+	if total > Width && total-len(figures)-len(names)+1 <= Width {
+		space = 1 // then it fits without a fold
+	}
 	for len(figures) > 0 {
 		n, width := 0, 0
 		for _, c := range names {
-			width += c.width + gutter
+			width += c.width + space
 		}
 		for n < len(figures) && (n == 0 || width+figures[n].width <= Width) {
-			width += figures[n].width + gutter
+			width += figures[n].width + space
 			n++
 		}
 		b.WriteByte('\n')
-		render(b, append(slices.Clone(names), figures[:n]...), len(names))
+		render(b, append(slices.Clone(names), figures[:n]...), len(names), space)
 		figures = figures[n:]
 	}
 }
 
+// gutter is the space between columns; where a table fits only so, it is 1.
 const gutter = 2
 
+// columns returns the figures that the schedule shows, in their places.
+func (r Report) columns() []glazing.Figure {
+	list := slices.DeleteFunc(slices.Clone(r.Figures), func(f glazing.Figure) bool {
+		return f.Column == 0 || f.Per != glazing.PerMakeup
+	})
+	slices.SortStableFunc(list, func(a, b glazing.Figure) int { return a.Column - b.Column })
+	return list
+}
+
 // render prints columns side by side; those after the names are right-aligned.
-func render(b *bytes.Buffer, columns []column, names int) {
+func render(b *bytes.Buffer, columns []column, names, space int) {
 	t := pretty.NewWriter()
 	t.SetOutputMirror(nil)
 	style := pretty.StyleDefault
 	style.Options = pretty.OptionsNoBordersAndSeparators
-	style.Box = pretty.BoxStyle{PaddingRight: strings.Repeat(" ", gutter)}
+	style.Box = pretty.BoxStyle{PaddingRight: strings.Repeat(" ", space)}
 	style.Format.Header = text.FormatDefault
 	t.SetStyle(style)
 	var head pretty.Row
@@ -180,20 +196,40 @@ func (r Report) buildUps(b *bytes.Buffer) {
 	}
 }
 
+// origins prints where the spectra come from.
+func (r Report) origins(b *bytes.Buffer) {
+	var parts []string
+	for _, o := range []glazing.Origin{glazing.MeasuredOrigin, glazing.ModelledOrigin, glazing.InventedOrigin} {
+		var ids []string
+		for i := range r.Ratings {
+			for _, p := range r.Ratings[i].Makeup.Panes {
+				if p.Pane.Origin == o && !slices.Contains(ids, p.Pane.ID) {
+					ids = append(ids, p.Pane.ID)
+				}
+			}
+		}
+		if ids != nil {
+			parts = append(parts, string(o)+": "+strings.Join(ids, ", "))
+		}
+	}
+	if parts != nil {
+		b.WriteString("\nSpectra\n")
+		writeWrapped(b, strings.Join(parts, "; "), "  ")
+	}
+}
+
 // symbols prints what the columns mean.
 func (r Report) symbols(b *bytes.Buffer) {
 	if len(r.Ratings) == 0 {
 		return
 	}
 	var parts []string
-	for _, f := range r.Figures {
-		if f.Column && f.Per == glazing.PerMakeup {
-			s := f.Symbol + " " + f.Meaning
-			if f.Unit != "" {
-				s += ", " + f.Unit
-			}
-			parts = append(parts, s)
+	for _, f := range r.columns() {
+		s := f.Symbol + " " + f.Meaning
+		if f.Unit != "" {
+			s += ", " + f.Unit
 		}
+		parts = append(parts, s)
 	}
 	b.WriteString("\nSymbols\n")
 	writeWrapped(b, strings.Join(parts, "; ")+"; – not known.", "")
@@ -203,73 +239,94 @@ func (r Report) symbols(b *bytes.Buffer) {
 func (r Report) cautionList(b *bytes.Buffer) {
 	type entry struct {
 		glazing.Caution
-		of []string
+		of []int
 	}
 	var list []*entry
 	for i := range r.Ratings {
-		name := r.Ratings[i].Makeup.ID
-		if r.Ratings[i].Tint != "" {
-			name += " " + r.Ratings[i].Tint
-		}
 		for _, c := range r.cautions(i) {
+			if c.Code == "edition" {
+				continue // stands above each table
+			}
 			at := slices.IndexFunc(list, func(e *entry) bool { return e.Caution == c })
 			if at < 0 {
 				list = append(list, &entry{Caution: c})
 				at = len(list) - 1
 			}
-			list[at].of = append(list[at].of, name)
+			list[at].of = append(list[at].of, i)
 		}
 	}
 	if list == nil {
 		return
 	}
 	b.WriteString("\nCautions\n")
-	slices.SortStableFunc(list, func(x, y *entry) int { // what holds for all comes first
-		return b2i(len(x.of) < len(r.Ratings)) - b2i(len(y.of) < len(r.Ratings))
-	})
-	for _, e := range list {
-		if e.Code == "edition" {
-			continue // stands above each table
+	for _, all := range []bool{true, false} { // what holds for all comes first
+		for _, e := range list {
+			switch {
+			case all != (len(e.of) == len(r.Ratings)):
+			case all:
+				writeWrapped(b, "- "+e.Text, "  ")
+			default:
+				writeWrapped(b, "- "+e.Text+" ["+r.names(e.of)+"]", "  ")
+			}
 		}
-		s := "- " + e.Text
-		if len(e.of) < len(r.Ratings) {
-			s += " [" + strings.Join(slices.Compact(e.of), ", ") + "]"
-		}
-		writeWrapped(b, s, "  ")
 	}
 }
 
-func b2i(b bool) int {
-	if b {
-		return 1
+// names lists ratings by make-up, and by tint where not all tints of a make-up are meant.
+func (r Report) names(of []int) string {
+	var parts []string
+	for k, i := range of {
+		rating := &r.Ratings[i]
+		same := func(j int) bool { return r.Ratings[j].Makeup == rating.Makeup }
+		if k > 0 && same(of[k-1]) {
+			continue
+		}
+		meant, all := 0, 0
+		var tints []string
+		for j := range r.Ratings {
+			if !same(j) {
+				continue
+			}
+			all++
+			if slices.Contains(of, j) {
+				meant++
+				if t := r.Ratings[j].Tint; !slices.Contains(tints, t) {
+					tints = append(tints, t)
+				}
+			}
+		}
+		name := rating.Makeup.ID
+		if meant < all && rating.Tint != "" {
+			name += " " + strings.Join(tints, " + ")
+		}
+		parts = append(parts, name)
 	}
-	return 0
+	return strings.Join(slices.Compact(parts), ", ")
 }
 
 // writeWrapped writes text folded at the page's width, with an indent for the lines after the
-// first.
+// first. A no-break space holds its neighbours together.
 func writeWrapped(b *bytes.Buffer, s, indent string) {
 	lead := s[:len(s)-len(strings.TrimLeft(s, " "))]
-	width, line := 0, lead
-	width = text.StringWidth(lead)
+	room := Width - max(len(lead), len(indent))
+	line := lead
 	empty := true
-	flush := func() {
-		b.WriteString(strings.TrimRight(line, " ") + "\n")
-		line, width, empty = indent, text.StringWidth(indent), true
-	}
-	for _, word := range strings.Fields(s) {
-		for _, piece := range strings.Split(text.WrapHard(word, Width-len(indent)-len(lead)), "\n") {
-			w := text.StringWidth(piece)
-			if !empty && width+1+w > Width {
-				flush()
+	for _, word := range strings.FieldsFunc(s, func(c rune) bool { return c == ' ' || c == '\n' || c == '\t' }) {
+		if text.StringWidth(word) > room { // too long to hold together
+			word = text.WrapHard(strings.ReplaceAll(word, "\u00a0", " "), room)
+		}
+		for piece := range strings.SplitSeq(word, "\n") {
+			if !empty && text.StringWidth(line)+1+text.StringWidth(piece) > Width {
+				b.WriteString(strings.ReplaceAll(line, "\u00a0", " ") + "\n")
+				line, empty = indent, true
 			}
 			if !empty {
-				line, width = line+" ", width+1
+				line += " "
 			}
-			line, width, empty = line+piece, width+w, false
+			line, empty = line+piece, false
 		}
 	}
 	if !empty {
-		flush()
+		b.WriteString(strings.ReplaceAll(line, "\u00a0", " ") + "\n")
 	}
 }
