@@ -27,7 +27,8 @@ type Stack struct {
 	T, Ro, Ri []float64
 	A         [][]float64
 
-	// of the panes outside gap k: transmittance, inner reflectance, and 1/D with pane k+1
+	// Of the panes 0…k: transmittance and inner reflectance, for k from 1 to the last but one;
+	// and 1/D of gap k.
 	outerT, outerRi, inverse [][]float64
 	outward                  []float64 // radiation outward in the gap being left, for one unit from outside
 }
@@ -73,24 +74,32 @@ func (s *Stack) Combine(panes []Pane) {
 		return
 	}
 	t, ro, ri := panes[0].T, panes[0].Ro, panes[0].Ri
-	for k, p := range panes[1:] {
-		copy(s.outerT[k], t)
-		copy(s.outerRi[k], ri)
-		add(s.T, s.Ro, s.Ri, s.inverse[k], t, ro, ri, p.T, p.Ro, p.Ri)
-		t, ro, ri = s.T, s.Ro, s.Ri
-	}
-	p := panes[last]
-	absorbInnermost(s.A[last], s.outward, s.outerT[last-1], s.inverse[last-1], p.T, p.Ro)
-	for k := last - 1; k > 0; k-- {
+	for k := 1; k <= last; k++ {
+		toT, toRi := s.T, s.Ri
+		if k < last {
+			toT, toRi = s.outerT[k], s.outerRi[k]
+		}
 		p := panes[k]
-		absorbMiddle(s.A[k], s.outward, s.outerT[k-1], s.outerRi[k-1], s.inverse[k-1], p.T, p.Ro, p.Ri)
+		add(toT, s.Ro, toRi, s.inverse[k-1], t, ro, ri, p.T, p.Ro, p.Ri)
+		t, ro, ri = toT, s.Ro, toRi
 	}
-	p = panes[0]
-	absorbOutermost(s.A[0], s.outward, p.T, p.Ro, p.Ri)
+	for k := last; k > 0; k-- {
+		p := panes[k]
+		t, ri := panes[0].T, panes[0].Ri // of the panes outside pane k
+		if k > 1 {
+			t, ri = s.outerT[k-1], s.outerRi[k-1]
+		}
+		if k == last {
+			absorbInnermost(s.A[k], s.outward, t, s.inverse[k-1], p.T, p.Ro)
+		} else {
+			absorbMiddle(s.A[k], s.outward, t, ri, s.inverse[k-1], p.T, p.Ro, p.Ri)
+		}
+	}
+	absorbOutermost(s.A[0], s.outward, panes[0].T, panes[0].Ro, panes[0].Ri)
 }
 
-// add writes the combination of an outer part 1 and an inner part 2, and 1/D. The results may
-// lie in the memory of part 1. One division a point.
+// add writes the combination of an outer part 1 and an inner part 2, and 1/D. ro may lie in the
+// memory of ro1. One division a point.
 func add(t, ro, ri, inverse, t1, ro1, ri1, t2, ro2, ri2 []float64) {
 	n := len(t)
 	ro, ri, inverse = ro[:n], ri[:n], inverse[:n]
