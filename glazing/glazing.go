@@ -59,6 +59,12 @@ const (
 	DefaultGlassKGM3               = 2500 // density of soda-lime glass, kg/m³ (EN 572-1, from memory)
 )
 
+// The properties of soda-lime glass that stand where none are given.
+const (
+	GlassKGM3 = 2500                      // density, kg/m³ (EN 572-1, from memory)
+	GlassWMK  = thermal.GlassConductivity // conductivity, W/(m·K) (EN 673)
+)
+
 // Origin says where the spectrum of a pane comes from.
 type Origin string
 
@@ -165,11 +171,20 @@ func (t Tilt) Vertical() bool { return t.fromVertical == 0 }
 type Makeup struct {
 	ID, Title string
 	Tilt      Tilt
-	HeatFlow  thermal.Flow // off vertical
-	Typed     []Typed      // carried to the schedule, marked as typed by the user
+	HeatFlow  HeatFlow // off vertical
+	Typed     []Typed  // carried to the schedule, marked as typed by the user
 	Panes     []Placed
 	Gaps      []Gap // one fewer than panes
 }
+
+// HeatFlow is the direction of heat through a make-up that is not vertical; the zero value is up.
+type HeatFlow = thermal.Flow
+
+// The directions of heat flow.
+const (
+	FlowUp   = thermal.Up
+	FlowDown = thermal.Down
+)
 
 // Typed is a value that the user typed in and that nothing here computes.
 type Typed struct{ Name, Text string }
@@ -189,6 +204,12 @@ type Gap struct {
 	WidthMM float64
 	Gas     thermal.Mixture
 }
+
+// Filling makes a gas filling from fractions by volume that add to 1; see thermal.Mix.
+func Filling(fractions map[string]float64) (thermal.Mixture, error) { return thermal.Mix(fractions) }
+
+// Gases returns the names of the gases that a gap may be filled with.
+func Gases() []string { return thermal.GasNames() }
 
 // MaxPanes is the largest number of panes of a make-up.
 const MaxPanes = 8

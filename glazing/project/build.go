@@ -10,7 +10,6 @@ import (
 
 	"panewright/glazing"
 	"panewright/spectra"
-	"panewright/thermal"
 )
 
 // builder turns the spec types into panes and make-ups, and reports what only shows when keys
@@ -139,8 +138,8 @@ func (b *builder) pane(s *paneSpec) *glazing.Pane {
 		fail(s.At, "plies", "stand beside conductivity_w_mk or density_kg_m3 of the pane; give those of each ply")
 	}
 	if s.Thickness.given {
-		p.Plies = []glazing.Ply{{ThicknessMM: s.Thickness.value, ConductivityWMK: s.Conductivity.or(thermal.GlassConductivity),
-			DensityKGM3: s.Density.or(glazing.DefaultGlassKGM3)}}
+		p.Plies = []glazing.Ply{{ThicknessMM: s.Thickness.value, ConductivityWMK: s.Conductivity.or(glazing.GlassWMK),
+			DensityKGM3: s.Density.or(glazing.GlassKGM3)}}
 	}
 	for _, y := range s.Plies {
 		if y.Glass.given == y.Interlayer.given {
@@ -189,7 +188,7 @@ func plyOf(y plySpec) glazing.Ply {
 			ConductivityWMK: y.Conductivity.or(interlayerWMK), DensityKGM3: y.Density.or(interlayerKGM3)}
 	}
 	return glazing.Ply{ThicknessMM: y.Glass.value,
-		ConductivityWMK: y.Conductivity.or(thermal.GlassConductivity), DensityKGM3: y.Density.or(glazing.DefaultGlassKGM3)}
+		ConductivityWMK: y.Conductivity.or(glazing.GlassWMK), DensityKGM3: y.Density.or(glazing.GlassKGM3)}
 }
 
 // inherit gives each tint the emissivities of its pane where it has none of its own.
@@ -321,7 +320,7 @@ func (b *builder) measured(s *tintSpec, faulty bool) (spectra.Measured, bool) {
 func (b *builder) makeup(s *makeupSpec, specs []paneSpec, panes []*glazing.Pane) *glazing.Makeup {
 	m := &glazing.Makeup{ID: s.ID.value, Title: s.Title.value, Tilt: glazing.TiltDeg(s.Tilt.or(90))}
 	if s.HeatFlow.value == "down" {
-		m.HeatFlow = thermal.Down
+		m.HeatFlow = glazing.FlowDown
 	}
 	for _, name := range slices.SortedFunc(maps.Keys(s.Typed), func(x, y string) int {
 		a, b := s.Typed[x].at, s.Typed[y].at
@@ -421,7 +420,7 @@ func (b *builder) gap(m *glazing.Makeup, e *elementSpec) {
 		b.fail(e.Gap.at, "gas", "is missing: a gap has a gas, such as {air: 1} or {argon: 0.9, air: 0.1}")
 	default:
 		fractions := map[string]float64{}
-		known := thermal.GasNames()
+		known := glazing.Gases()
 		for name, f := range e.Gas {
 			fractions[name] = f.value
 		}
@@ -431,7 +430,7 @@ func (b *builder) gap(m *glazing.Makeup, e *elementSpec) {
 				return
 			}
 		}
-		mixture, err := thermal.Mix(fractions)
+		mixture, err := glazing.Filling(fractions)
 		if err != nil {
 			b.fail(e.At, "gas", "%v", err)
 			return

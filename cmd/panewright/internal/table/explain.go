@@ -77,16 +77,16 @@ func chapter(b *bytes.Buffer, c glazing.Chapter) {
 func weightedSum(b *bytes.Buffer, s *glazing.WeightedSum) {
 	writeWrapped(b, "  W: "+s.Source, "  ")
 	half := (len(s.NM) + 1) / 2
-	const head = "  λ nm        τ         W       τ·W"
-	fmt.Fprintf(b, "%s    %s\n", head, head)
+	const head = " nm           τ           W         τ·W"
+	fmt.Fprintf(b, "%s  %s\n", head, head)
 	row := func(i int) string {
-		return fmt.Sprintf("%6s  %9s %9s %9s", strconv.FormatFloat(s.NM[i], 'g', -1, 64), strconv.FormatFloat(s.Value[i], 'g', 6, 64),
-			strconv.FormatFloat(s.Weight[i], 'g', 6, 64), strconv.FormatFloat(s.Value[i]*s.Weight[i], 'g', 6, 64))
+		digits := func(v float64, n int) string { return strconv.FormatFloat(v, 'g', n, 64) }
+		return fmt.Sprintf("%3s%12s%12s%12s", digits(s.NM[i], -1), digits(s.Value[i], 6), digits(s.Weight[i], 6), digits(s.Value[i]*s.Weight[i], 5))
 	}
 	for i := range half {
 		line := row(i)
 		if i+half < len(s.NM) {
-			line += "    " + row(i+half)
+			line += "  " + row(i+half)
 		}
 		b.WriteString(line + "\n")
 	}
