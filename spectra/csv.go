@@ -139,15 +139,18 @@ type rows struct {
 	file     string
 	heads    []string
 	headLine int
-	line     []int
-	nm       []float64
-	cells    [][]string
+	line     []int     // of each row
+	nm       []float64 // of each row
+	cells    []string  // row after row
 	faults   Errors
 }
 
 func (r *rows) fail(line int, nm float64, format string, args ...any) {
 	r.faults = append(r.faults, &RowError{r.file, line, nm, fmt.Sprintf(format, args...)})
 }
+
+// cell returns the text of a row under a head.
+func (r *rows) cell(row, column int) string { return r.cells[row*len(r.heads)+column] }
 
 func (r *rows) err() error {
 	if len(r.faults) == 0 {
@@ -173,7 +176,7 @@ func readRows(in io.Reader, file string) (*rows, error) {
 		text = bytes.ReplaceAll(text, []byte("\r"), []byte("\n"))
 	}
 	cr := csv.NewReader(bytes.NewReader(text))
-	cr.Comment, cr.FieldsPerRecord, cr.TrimLeadingSpace = '#', -1, true
+	cr.Comment, cr.FieldsPerRecord, cr.TrimLeadingSpace, cr.ReuseRecord = '#', -1, true, true
 	for {
 		record, err := cr.Read()
 		if err == io.EOF {
@@ -192,10 +195,10 @@ func readRows(in io.Reader, file string) (*rows, error) {
 			record[i] = strings.TrimSpace(record[i])
 		}
 		if r.heads == nil {
-			r.heads, r.headLine = record, line
+			r.heads, r.headLine = slices.Clone(record), line
 			continue
 		}
-		if strings.Join(record, "") == "" {
+		if !slices.ContainsFunc(record, func(cell string) bool { return cell != "" }) {
 			continue
 		}
 		if len(record) != len(r.heads) {
@@ -206,7 +209,7 @@ func readRows(in io.Reader, file string) (*rows, error) {
 			r.fail(line, 0, "%d cells under %d columns%s", len(record), len(r.heads), hint)
 			continue
 		}
-		r.line, r.cells = append(r.line, line), append(r.cells, record)
+		r.line, r.cells = append(r.line, line), append(r.cells, record...)
 	}
 	if r.heads == nil {
 		r.fail(0, 0, "empty; a spectrum begins with a row of column heads such as wavelength_nm,tau,rho_front,rho_back")
@@ -260,15 +263,16 @@ func (r *rows) readWavelengths() error {
 	if nmAt < 0 {
 		at, scale = umAt, 1000
 	}
-	r.nm = make([]float64, len(r.cells))
+	r.nm = make([]float64, len(r.line))
 	last := 0.0
-	for i, cells := range r.cells {
-		v, problem := number(cells[at])
+	for i := range r.line {
+		cell := r.cell(i, at)
+		v, problem := number(cell)
 		if problem == "" && v <= 0 {
 			problem = "a wavelength is above 0"
 		}
 		if problem != "" {
-			r.fail(r.line[i], 0, "wavelength %q: %s", clip(cells[at]), problem)
+			r.fail(r.line[i], 0, "wavelength %q: %s", clip(cell), problem)
 			continue
 		}
 		r.nm[i] = toNM(v, scale)
@@ -281,8 +285,8 @@ func (r *rows) readWavelengths() error {
 		last = r.nm[i]
 	}
 	switch {
-	case len(r.cells) < minimumRows:
-		r.fail(0, 0, "%d rows; a spectrum has at least %d", len(r.cells), minimumRows)
+	case len(r.line) < minimumRows:
+		r.fail(0, 0, "%d rows; a spectrum has at least %d", len(r.line), minimumRows)
 	case scale == 1 && last > 0 && last < 100:
 		r.fail(r.line[len(r.line)-1], 0, "the last wavelength is %s nm: µm in a column of nm? name it wavelength_um", short(last))
 	case scale == 1000 && last > 1e6:
@@ -310,9 +314,11 @@ func (r *rows) column(head string, check func(float64) string) Column {
 	if at < 0 {
 		return c
 	}
+	n := len(r.line)
+	c.NM, c.Value, c.Line = make([]float64, 0, n), make([]float64, 0, n), make([]int, 0, n)
 	blank := 0 // line of the first blank cell since the column began
-	for i, cells := range r.cells {
-		cell := cells[at]
+	for i := range r.line {
+		cell := r.cell(i, at)
 		if cell == "" {
 			if c.Len() > 0 && blank == 0 {
 				blank = r.line[i]
@@ -338,18 +344,34 @@ func (r *rows) column(head string, check func(float64) string) Column {
 
 // number reads a plain decimal number; problem says why a cell is none.
 func number(cell string) (v float64, problem string) {
-	v, err := strconv.ParseFloat(cell, 64)
-	switch {
-	case strings.Contains(cell, ","):
-		return 0, "not a number; a decimal comma? write a point"
-	case cell == "":
-		return 0, "blank"
-	case math.IsNaN(v) || math.IsInf(v, 0):
-		return 0, "not a finite number"
-	case err != nil || strings.ContainsAny(cell, "xXpP_"):
+	plain := cell != ""
+	for i := range len(cell) {
+		switch c := cell[i]; {
+		case c >= '0' && c <= '9', c == '.', c == '-', c == '+', c == 'e', c == 'E':
+		default:
+			plain = false
+		}
+	}
+	if plain {
+		v, err := strconv.ParseFloat(cell, 64)
+		switch {
+		case err == nil:
+			return v, ""
+		case math.IsInf(v, 0):
+			return 0, "not a finite number"
+		}
 		return 0, "not a number"
 	}
-	return v, ""
+	v, err := strconv.ParseFloat(cell, 64)
+	switch {
+	case cell == "":
+		return 0, "blank"
+	case strings.Contains(cell, ","):
+		return 0, "not a number; a decimal comma? write a point"
+	case err == nil && (math.IsNaN(v) || math.IsInf(v, 0)):
+		return 0, "not a finite number"
+	}
+	return 0, "not a number"
 }
 
 // Slack is how far a fraction, or the sum of transmittance and reflectance, may lie outside

@@ -28,9 +28,14 @@ type streams struct{ out, err io.Writer }
 
 // run executes the command line and returns the exit code.
 func run(args []string, s streams) int {
+	out := &checkedWriter{w: s.out}
+	s.out = out
 	root := newRoot(s)
 	root.SetArgs(args)
 	err := root.Execute()
+	if failed := out.failure(); failed != nil {
+		err = failed // the command library ignores it when it prints help
+	}
 	if err == nil {
 		return exitDone
 	}
@@ -70,21 +75,14 @@ declaration. Local authorities and licensed practitioners decide.`,
 		},
 	}
 	root.SetVersionTemplate("panewright {{.Version}}\n")
-	checked := &checkedWriter{w: s.out}
-	root.SetOut(checked)
+	root.SetOut(s.out)
 	root.SetErr(s.err)
 	root.CompletionOptions.DisableDefaultCmd = true
 	root.AddCommand(newDemo(s), newRate(s), newExplain(s), newSchema(s))
-	root.PersistentPostRunE = func(*cobra.Command, []string) error { return checked.err }
-	help := root.HelpFunc()
-	root.SetHelpFunc(func(c *cobra.Command, args []string) {
-		help(c, args)
-	})
 	return root
 }
 
-// checkedWriter remembers that a write failed: the help and version of the command library
-// ignore it.
+// checkedWriter remembers that a write failed.
 type checkedWriter struct {
 	w   io.Writer
 	err error
@@ -93,9 +91,16 @@ type checkedWriter struct {
 func (c *checkedWriter) Write(b []byte) (int, error) {
 	n, err := c.w.Write(b)
 	if err != nil && c.err == nil {
-		c.err = &outputError{"standard output", err}
+		c.err = err
 	}
 	return n, err
+}
+
+func (c *checkedWriter) failure() error {
+	if c.err == nil {
+		return nil
+	}
+	return &outputError{"standard output", c.err}
 }
 
 // An outputError says that an output could not be written.
@@ -146,22 +151,49 @@ func short(s string) string {
 	return s
 }
 
-// write writes a result to standard output, or, if a path is given, to that file: under a
-// temporary name in the same folder first, so that nothing half-written is left.
+// write writes a result to standard output, or, if a path is given, to that file.
 func (s streams) write(path string, content []byte) error {
 	if path == "" {
-		if _, err := s.out.Write(content); err != nil {
+		_, err := s.out.Write(content)
+		if err != nil {
 			return &outputError{"standard output", err}
 		}
 		return nil
 	}
-	f, err := os.CreateTemp(filepath.Dir(path), "."+filepath.Base(path)+".*")
-	if err != nil {
+	if err := writeFile(path, content); err != nil {
 		return &outputError{path, err}
 	}
+	return nil
+}
+
+// writeFile writes a file under a temporary name in its folder and renames it, so that nothing
+// half-written is left. What is no regular file, such as a pipe or a terminal, is written to.
+func writeFile(path string, content []byte) (err error) {
+	mode := os.FileMode(0o644)
+	switch info, err := os.Stat(path); {
+	case err != nil:
+	case info.IsDir():
+		return errors.New("is a folder")
+	case !info.Mode().IsRegular():
+		return os.WriteFile(path, content, mode)
+	default:
+		mode = info.Mode().Perm()
+		if real, err := filepath.EvalSymlinks(path); err == nil {
+			path = real // a link stays, and what it leads to is replaced
+		}
+	}
+	f, err := os.CreateTemp(filepath.Dir(path), ".panewright-*")
+	if err != nil {
+		return err
+	}
+	defer func() {
+		if err != nil {
+			os.Remove(f.Name())
+		}
+	}()
 	_, err = f.Write(content)
 	if err == nil {
-		err = f.Chmod(0o644)
+		err = f.Chmod(mode)
 	}
 	if err == nil {
 		err = f.Sync()
@@ -172,9 +204,5 @@ func (s streams) write(path string, content []byte) error {
 	if err == nil {
 		err = os.Rename(f.Name(), path)
 	}
-	if err != nil {
-		os.Remove(f.Name())
-		return &outputError{path, err}
-	}
-	return nil
+	return err
 }

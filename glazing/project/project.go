@@ -12,6 +12,7 @@ package project
 
 import (
 	"path/filepath"
+	"reflect"
 
 	"panewright/glazing"
 	"panewright/spectra"
@@ -49,7 +50,7 @@ func Load(path string, a Access) (*Project, error) {
 
 // read reads a project from its content and a source of the files that it names.
 func read(file string, content []byte, from source) (*Project, error) {
-	r := &reader{file: file, incomplete: map[string]bool{}}
+	r := &reader{file: file, incomplete: map[string]bool{}, keys: map[reflect.Type][]specKey{}}
 	spec, ok := r.parse(content)
 	if !ok {
 		return nil, r.faults

@@ -5,7 +5,6 @@ import (
 	"errors"
 	"fmt"
 	"reflect"
-	"regexp"
 	"slices"
 	"strconv"
 	"strings"
@@ -63,6 +62,13 @@ type reader struct {
 	// incomplete holds the keys of which a value was refused or misspelt somewhere: what would
 	// stand there may be missed elsewhere, and that is not reported as well.
 	incomplete map[string]bool
+	keys       map[reflect.Type][]specKey // of each spec type, once looked up
+}
+
+// specKey is one key of a spec type.
+type specKey struct {
+	name  string
+	field reflect.StructField
 }
 
 func (r *reader) fail(at position, key, format string, args ...any) {
@@ -167,7 +173,11 @@ func (r *reader) object(n *yaml.Node, into reflect.Value, key string) bool {
 		return false
 	}
 	before := len(r.faults)
-	known := keysOf(into.Type())
+	known, ok := r.keys[into.Type()]
+	if !ok {
+		known = keysOf(into.Type())
+		r.keys[into.Type()] = known
+	}
 	seen := map[string]bool{}
 	spoilt := map[string]bool{} // keys of which a misspelling stands there
 	for i := 0; i+1 < len(n.Content); i += 2 {
@@ -179,7 +189,7 @@ func (r *reader) object(n *yaml.Node, into reflect.Value, key string) bool {
 			r.fail(place(k), key, "a key of %s is a plain word", called)
 			continue
 		}
-		at := slices.IndexFunc(known, func(f reflect.StructField) bool { return f.Tag.Get("key") == k.Value })
+		at := slices.IndexFunc(known, func(f specKey) bool { return f.name == k.Value })
 		if at < 0 {
 			near := Nearest(k.Value, keyNames(known))
 			for _, name := range near {
@@ -193,21 +203,20 @@ func (r *reader) object(n *yaml.Node, into reflect.Value, key string) bool {
 			continue
 		}
 		seen[k.Value] = true
-		field := known[at]
+		field := known[at].field
 		if !r.value(v, into.FieldByIndex(field.Index), field) {
 			spoilt[k.Value] = true
 		}
 	}
 	for _, f := range known {
-		name := f.Tag.Get("key")
-		if f.Tag.Get("need") == "yes" && !seen[name] && !spoilt[name] {
-			r.fail(place(n), name, "is missing in %s: %s", called, f.Tag.Get("doc"))
+		if f.field.Tag.Get("need") == "yes" && !seen[f.name] && !spoilt[f.name] {
+			r.fail(place(n), f.name, "is missing in %s: %s", called, f.field.Tag.Get("doc"))
 		}
 	}
 	for name := range spoilt {
 		r.incomplete[name] = true
 	}
-	ok := len(r.faults) == before
+	ok = len(r.faults) == before
 	if o := into.FieldByName("object"); o.IsValid() {
 		into.FieldByName("At").Set(reflect.ValueOf(place(n)))
 		into.FieldByName("Faulty").SetBool(!ok)
@@ -320,10 +329,22 @@ func boundsOf(t reflect.StructTag) string {
 }
 
 // idPattern is 1 to 64 letters of any script, digits, points, underscores and hyphens, beginning
-// with a letter or a digit.
+// with a letter or a digit; isID is the same in code.
 const idPattern = `^[\p{L}\p{Nd}][\p{L}\p{M}\p{Nd}._-]{0,63}$`
 
-var idExpression = regexp.MustCompile(idPattern)
+func isID(s string) bool {
+	n := 0
+	for _, c := range s {
+		switch {
+		case unicode.IsLetter(c), unicode.IsDigit(c):
+		case n > 0 && (c == '.' || c == '_' || c == '-' || unicode.IsMark(c)):
+		default:
+			return false
+		}
+		n++
+	}
+	return n >= 1 && n <= 64
+}
 
 func (r *reader) text(n *yaml.Node, into *text, tag reflect.StructTag, key string) bool {
 	if n.Kind != yaml.ScalarNode {
@@ -345,7 +366,7 @@ func (r *reader) text(n *yaml.Node, into *text, tag reflect.StructTag, key strin
 		r.fail(place(n), key, "%q is not known; %s", clip(value), DidYouMean(Nearest(value, strings.Fields(allowed)), strings.Fields(allowed)))
 		return false
 	}
-	if tag.Get("id") != "" && !idExpression.MatchString(value) {
+	if tag.Get("id") != "" && !isID(value) {
 		r.fail(place(n), key, "%q is no id: 1 to 64 letters of any script, digits, . _ -, beginning with a letter or digit", clip(value))
 		return false
 	}
@@ -357,9 +378,21 @@ func (r *reader) text(n *yaml.Node, into *text, tag reflect.StructTag, key strin
 	return true
 }
 
-// numberExpression is a decimal number; leading zeros, which some programs read as octal, are
+// isNumber reports whether a text is a decimal number as a project writes it: digits with at
+// most one point, an exponent perhaps. Leading zeros, which some programs read as octal, are
 // refused.
-var numberExpression = regexp.MustCompile(`^[-+]?(0|[1-9][0-9]*|0?\.[0-9]+|(0|[1-9][0-9]*)\.[0-9]*)([eE][-+]?[0-9]+)?$`)
+func isNumber(s string) bool {
+	s = strings.TrimPrefix(strings.TrimPrefix(s, "-"), "+")
+	mantissa, exponent, has := strings.Cut(strings.ToLower(s), "e")
+	if has && !isDigits(strings.TrimPrefix(strings.TrimPrefix(exponent, "-"), "+")) {
+		return false
+	}
+	whole, fraction, _ := strings.Cut(mantissa, ".")
+	return whole+fraction != "" && (whole == "" || isDigits(whole)) && (fraction == "" || isDigits(fraction)) &&
+		!(len(whole) > 1 && whole[0] == '0')
+}
+
+func isDigits(s string) bool { return s != "" && strings.Trim(s, "0123456789") == "" }
 
 func (r *reader) number(n *yaml.Node, into *number, tag reflect.StructTag, key string) bool {
 	refuse := func(format string, args ...any) bool {
@@ -373,11 +406,11 @@ func (r *reader) number(n *yaml.Node, into *number, tag reflect.StructTag, key s
 	if n.Style&(yaml.SingleQuotedStyle|yaml.DoubleQuotedStyle|yaml.LiteralStyle|yaml.FoldedStyle) != 0 {
 		return refuse("%q is a text; write the number without quotes", clip(s))
 	}
-	if !numberExpression.MatchString(s) {
+	if !isNumber(s) {
 		switch {
-		case regexp.MustCompile(`^[-+]?[0-9]+,[0-9]+$`).MatchString(s):
+		case isNumber(strings.Replace(s, ",", ".", 1)):
 			return refuse("%q is not a number; write a decimal point", clip(s))
-		case regexp.MustCompile(`^[-+]?0[0-9]`).MatchString(s):
+		case isNumber(strings.TrimLeft(s, "0")):
 			return refuse("%q begins with a zero; write the number without it", clip(s))
 		}
 		return refuse("%q is not a number; write it with digits and a point, in the unit that the key names", clip(s))
@@ -456,20 +489,20 @@ func kindOf(n *yaml.Node) string {
 }
 
 // keysOf returns the fields of a spec type that have a key.
-func keysOf(t reflect.Type) []reflect.StructField {
-	var out []reflect.StructField
+func keysOf(t reflect.Type) []specKey {
+	var out []specKey
 	for f := range t.Fields() {
-		if f.Tag.Get("key") != "" {
-			out = append(out, f)
+		if name := f.Tag.Get("key"); name != "" {
+			out = append(out, specKey{name, f})
 		}
 	}
 	return out
 }
 
-func keyNames(fields []reflect.StructField) []string {
+func keyNames(keys []specKey) []string {
 	var out []string
-	for _, f := range fields {
-		out = append(out, f.Tag.Get("key"))
+	for _, k := range keys {
+		out = append(out, k.name)
 	}
 	return out
 }

@@ -79,11 +79,10 @@ func schemaOf(t reflect.Type, tag reflect.StructTag) *schema {
 		return s
 	}
 	s.Type, s.Additional, s.Properties = "object", false, map[string]*schema{}
-	for _, f := range keysOf(t) {
-		key := f.Tag.Get("key")
-		s.Properties[key] = schemaOf(f.Type, f.Tag)
-		if f.Tag.Get("need") == "yes" {
-			s.Required = append(s.Required, key)
+	for _, k := range keysOf(t) {
+		s.Properties[k.name] = schemaOf(k.field.Type, k.field.Tag)
+		if k.field.Tag.Get("need") == "yes" {
+			s.Required = append(s.Required, k.name)
 		}
 	}
 	return s

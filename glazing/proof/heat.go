@@ -8,9 +8,6 @@ import (
 	"panewright/thermal"
 )
 
-// vertical is the tilt of a check that names none.
-const vertical = 90
-
 // grey returns a pane whose spectrum is the same at every wavelength.
 func grey(thicknessMM, tau, rho, front, back float64) *glazing.Pane {
 	flat := func(v float64) spectra.Curve {
@@ -35,7 +32,8 @@ func sheet(thicknessMM float64) []glazing.Ply {
 // Optical figures of a pane where a check asks for none that depends on them.
 const anyTau, anyRho = 0.8, 0.1
 
-// makeup reads panes_mm, gaps_mm, gas, emissivity, tilt_deg and heat_flow.
+// makeup reads panes_mm, gaps_mm, gas, emissivity, and where given tilt_deg with heat_flow; it
+// is vertical otherwise.
 func makeup(in *inputs) *glazing.Makeup {
 	panes, faces := in.numbers("panes_mm"), in.numbers("emissivity")
 	if len(faces) != 2*len(panes) {

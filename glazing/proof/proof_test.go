@@ -55,8 +55,8 @@ func TestMovedFigureFails(t *testing.T) {
 	}
 }
 
-// Every input moves its figure or is refused: a check with one input more or one fewer has an
-// error and no figure.
+// A check with one input more or one fewer has an error and does not pass: no kind ignores an
+// input, and none assumes one.
 func TestInputsAreNeeded(t *testing.T) {
 	for _, c := range checks.All() {
 		more := c
@@ -86,7 +86,7 @@ func TestInputsAreNeeded(t *testing.T) {
 }
 
 // The slab neither makes nor loses light: without absorption all of it leaves, by the sum of
-// the series in closed form (2n/(n²+1) passes); an opaque sheet reflects as one face does.
+// the series in closed form (2n/(n²+1) is let through); an opaque sheet reflects as one face does.
 func TestSlab(t *testing.T) {
 	for _, n := range []float64{1, 1.3, 1.52, 2.4} {
 		tau, rho := slab(n, 0, 550, 6)

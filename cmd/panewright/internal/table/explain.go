@@ -59,7 +59,7 @@ func chapter(b *bytes.Buffer, c glazing.Chapter) {
 	}
 	for _, s := range c.Steps {
 		head := "  " + text.Pad(s.Symbol, 6, ' ') + " " + s.Meaning
-		if gap := Width - text.StringWidth(head) - text.StringWidth(s.Clause); gap > 1 {
+		if gap := Width - width(head) - width(s.Clause); gap > 1 {
 			b.WriteString(strings.TrimRight(head+strings.Repeat(" ", gap)+s.Clause, " ") + "\n")
 		} else {
 			writeWrapped(b, head+"  "+s.Clause, "         ")

@@ -63,10 +63,10 @@ type column struct {
 }
 
 func newColumn(head string, cells []string) column {
-	c := column{head, cells, text.StringWidth(head)}
+	c := column{head, cells, width(head)}
 	for _, cell := range cells {
 		for line := range strings.SplitSeq(cell, "\n") {
-			c.width = max(c.width, text.StringWidth(line))
+			c.width = max(c.width, width(line))
 		}
 	}
 	return c
@@ -309,24 +309,35 @@ func (r Report) names(of []int) string {
 func writeWrapped(b *bytes.Buffer, s, indent string) {
 	lead := s[:len(s)-len(strings.TrimLeft(s, " "))]
 	room := Width - max(len(lead), len(indent))
-	line := lead
-	empty := true
+	b.WriteString(lead)
+	at, empty := len(lead), true // the column, and whether the line holds no word yet
 	for _, word := range strings.FieldsFunc(s, func(c rune) bool { return c == ' ' || c == '\n' || c == '\t' }) {
-		if text.StringWidth(word) > room { // too long to hold together
+		if width(word) > room { // too long to hold together
 			word = text.WrapHard(strings.ReplaceAll(word, "\u00a0", " "), room)
 		}
 		for piece := range strings.SplitSeq(word, "\n") {
-			if !empty && text.StringWidth(line)+1+text.StringWidth(piece) > Width {
-				b.WriteString(strings.ReplaceAll(line, "\u00a0", " ") + "\n")
-				line, empty = indent, true
+			w := width(piece)
+			if !empty && at+1+w > Width {
+				b.WriteString("\n" + indent)
+				at, empty = len(indent), true
 			}
 			if !empty {
-				line += " "
+				b.WriteByte(' ')
+				at++
 			}
-			line, empty = line+piece, false
+			b.WriteString(strings.ReplaceAll(piece, "\u00a0", " "))
+			at, empty = at+w, false
 		}
 	}
-	if !empty {
-		b.WriteString(strings.ReplaceAll(line, "\u00a0", " ") + "\n")
+	b.WriteByte('\n')
+}
+
+// width is how many columns a text takes.
+func width(s string) int {
+	for i := range len(s) {
+		if s[i] < ' ' || s[i] > '~' {
+			return text.StringWidth(s)
+		}
 	}
+	return len(s)
 }

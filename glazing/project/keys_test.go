@@ -1,0 +1,395 @@
+package project
+
+import (
+	"bytes"
+	"encoding/json"
+	"errors"
+	"fmt"
+	"io/fs"
+	"os"
+	"reflect"
+	"slices"
+	"strings"
+	"testing"
+
+	"github.com/santhosh-tekuri/jsonschema/v6"
+	"go.yaml.in/yaml/v4"
+)
+
+// spectrumOf returns a spectrum file of constant columns, 300 to 2500 nm.
+func spectrumOf(cells string) string {
+	text := "wavelength_nm,tau,rho_front,rho_back\n"
+	for nm := 300; nm < 780; nm += 10 {
+		text += fmt.Sprintf("%d,%s\n", nm, cells)
+	}
+	for nm := 780; nm < 2500; nm += 50 {
+		text += fmt.Sprintf("%d,%s\n", nm, cells)
+	}
+	return text + "2500," + cells + "\n"
+}
+
+// memory is a source of files that are not on a disk.
+func memory(files map[string]string) source {
+	return func(name string) ([]byte, error) {
+		content, ok := files[name]
+		if !ok {
+			return nil, fmt.Errorf("open %s: %w", name, fs.ErrNotExist)
+		}
+		return []byte(content), nil
+	}
+}
+
+// A spot is a key of a document: its place, and the kind of object it belongs to.
+type spot struct {
+	line, column int
+	key          string
+	object       reflect.Type
+}
+
+// document writes a project file from the spec types and keeps the place of each key.
+type document struct {
+	lines []string
+	spots []spot
+	count map[reflect.Type]int // objects written so far
+}
+
+// apart lists, for objects of which some keys exclude each other, the keys that each of several
+// objects leaves out. Other types have one object.
+var apart = map[reflect.Type][][]string{
+	reflect.TypeFor[materialSpec](): {{"n", "k", "nk"}, {"model", "carriers_cm3", "mobility_cm2_v_s", "effective_mass", "eps_infinity", "nk"},
+		{"model", "carriers_cm3", "mobility_cm2_v_s", "effective_mass", "eps_infinity", "n", "k"}},
+	reflect.TypeFor[paneSpec](): {
+		{"plies", "spectra", "tints", "emissivity_normal_front", "emissivity_normal_back", "glass", "coatings"},
+		{"thickness_mm", "conductivity_w_mk", "density_kg_m3", "spectrum", "tints", "emissivity_front", "emissivity_back", "glass", "coatings"},
+		{"plies", "spectrum", "spectra", "emissivity_normal_front", "emissivity_normal_back", "glass", "coatings"},
+		{"plies", "spectrum", "spectra", "tints", "emissivity_front", "emissivity_back", "emissivity_normal_front", "emissivity_normal_back"},
+	},
+	reflect.TypeFor[plySpec]():       {{"interlayer_mm"}, {"glass_mm"}},
+	reflect.TypeFor[tintSpec]():      {{"spectra", "emissivity_normal_front", "emissivity_normal_back"}, {"spectrum", "emissivity_front", "emissivity_back"}},
+	reflect.TypeFor[conditionSpec](): {{"outside_convection_w_m2k"}, {"wind_m_s"}},
+	reflect.TypeFor[elementSpec](): {
+		{"gap_mm", "gas", "vacuum"}, {"pane", "turned", "tint", "vacuum"}, {"gap_mm", "gas", "vacuum", "tint"},
+		{"pane", "turned", "tint", "gas"}, {"gap_mm", "gas", "vacuum", "tint"},
+	},
+}
+
+// typedValues are the values of keys for which any number or text will not do.
+var typedValues = map[string]string{
+	"tau": "a.csv", "rho_front": "a.csv", "rho_back": "a.csv", "infrared_front": "ir.csv", "infrared_back": "ir.csv",
+	"spectrum": "a.csv", "sun": "sun.csv", "nk": "nk.csv",
+	"pane": "pane-3", "material": "material-1", "glass": "glass-1", "figure": "u", "makeups": "[makeup-1]", "condition": "condition-1",
+	"thickness_mm": "4", "glass_mm": "4", "interlayer_mm": "0.76", "gap_mm": "16", "outside_c": "-10", "inside_c": "20",
+}
+
+func (d *document) add(indent, key, value string, object reflect.Type) {
+	if object != nil {
+		d.spots = append(d.spots, spot{len(d.lines) + 1, len(indent) + 1, key, object})
+	}
+	d.lines = append(d.lines, strings.TrimRight(indent+key+": "+value, " "))
+}
+
+// object writes an object of a spec type; sibling counts those of its list from 0.
+func (d *document) object(t reflect.Type, first, indent string, sibling int) {
+	d.count[t]++
+	id := d.count[t]
+	var left []string
+	if variants := apart[t]; variants != nil {
+		left = variants[sibling]
+	}
+	name := strings.TrimSuffix(strings.ToLower(t.Name()), "spec")
+	for _, f := range keysOf(t) {
+		key := f.Tag.Get("key")
+		if slices.Contains(left, key) {
+			continue
+		}
+		start := indent
+		if first != "" {
+			start, first = first, ""
+		}
+		value := ""
+		if f.Type.Kind() != reflect.Slice {
+			value = typedValues[key]
+		}
+		switch {
+		case key == "id":
+			value = fmt.Sprintf("%s-%d", name, id)
+		case key == "tint" && t == reflect.TypeFor[tintSpec]():
+			value = fmt.Sprintf("state-%d", id)
+		case key == "tint" && t == reflect.TypeFor[elementSpec]():
+			value = "state-1"
+		case value != "":
+		case f.Tag.Get("one") != "" && f.Type.Kind() != reflect.Map:
+			value = strings.Fields(f.Tag.Get("one"))[0]
+		case f.Type == reflect.TypeFor[number]():
+			value = within(f.Tag)
+		case f.Type == reflect.TypeFor[flag]():
+			value = "true"
+		case f.Type == reflect.TypeFor[text]():
+			value = "some words"
+		}
+		d.add(start, key, value, t)
+		deeper := indent + "  "
+		switch {
+		case value != "":
+		case f.Type.Kind() == reflect.Slice:
+			for n := range max(1, len(apart[f.Type.Elem()])) {
+				d.object(f.Type.Elem(), deeper+"- ", deeper+"  ", n)
+			}
+		case f.Type.Kind() == reflect.Pointer:
+			d.object(f.Type.Elem(), "", deeper, 0)
+		case key == "gas":
+			d.add(deeper, "air", "1", nil)
+		case f.Type.Kind() == reflect.Map:
+			switch f.Type.Elem() {
+			case reflect.TypeFor[number](), reflect.TypeFor[text]():
+				d.add(deeper, "words", "38", nil)
+			default:
+				d.add(deeper, strings.Fields(f.Tag.Get("one"))[0], "", nil)
+				d.object(f.Type.Elem(), "", deeper+"  ", 0)
+			}
+		default:
+			panic("no value for " + key)
+		}
+	}
+}
+
+// within returns a number that the bounds of a key allow.
+func within(tag reflect.StructTag) string {
+	for _, v := range []float64{0.5, 1, 5, 50} {
+		above, from, below, upto := bound(tag, "above"), bound(tag, "from"), bound(tag, "below"), bound(tag, "upto")
+		if (above == nil || v > *above) && (from == nil || v >= *from) && (below == nil || v < *below) && (upto == nil || v <= *upto) {
+			return short(v)
+		}
+	}
+	panic("no number is within the bounds of " + string(tag))
+}
+
+func (d *document) text() string { return strings.Join(d.lines, "\n") + "\n" }
+
+// misspelt returns the document with one key replaced.
+func (d *document) misspelt(s spot, wrong string) string {
+	lines := slices.Clone(d.lines)
+	line := lines[s.line-1]
+	lines[s.line-1] = line[:s.column-1] + wrong + line[s.column-1+len(s.key):]
+	return strings.Join(lines, "\n") + "\n"
+}
+
+// complete is a document in which every key of the key table occurs.
+func complete() *document {
+	d := &document{count: map[reflect.Type]int{}}
+	d.object(reflect.TypeFor[fileSpec](), "", "", 0)
+	return d
+}
+
+func completeFiles() source {
+	infrared := "wavelength_um,rho_front,rho_back\n"
+	for um := 5; um <= 50; um++ {
+		infrared += fmt.Sprintf("%d,0.1,0.9\n", um)
+	}
+	sun := "wavelength_nm,irradiance\n"
+	for nm := 300; nm <= 2500; nm += 200 {
+		sun += fmt.Sprintf("%d,1\n", nm)
+	}
+	return memory(map[string]string{"a.csv": spectrumOf("0.7,0.2,0.1"), "ir.csv": infrared, "sun.csv": sun})
+}
+
+// misspellings returns a key with one letter dropped, doubled, swapped with the next, or replaced.
+func misspellings(key string) []string {
+	seen := map[string]bool{key: true, "": true}
+	var out []string
+	for i := range key {
+		swapped := key
+		if i+1 < len(key) {
+			swapped = key[:i] + key[i+1:i+2] + key[i:i+1] + key[i+2:]
+		}
+		for _, wrong := range []string{key[:i] + key[i+1:], key[:i+1] + key[i:], swapped, key[:i] + "q" + key[i+1:]} {
+			if !seen[wrong] {
+				seen[wrong] = true
+				out = append(out, wrong)
+			}
+		}
+	}
+	return out
+}
+
+// faultsOf reads a project and returns its faults.
+func faultsOf(text string, from source) Errors {
+	_, err := read("p.yaml", []byte(text), from)
+	var faults Errors
+	if err != nil && !errors.As(err, &faults) {
+		panic(err)
+	}
+	return faults
+}
+
+// Every key of the format, misspelt by a letter, is reported where it stands, with the right key
+// on offer, and nothing is said to be missing for it. Neither does the schema let it pass.
+func TestEveryKeyMisspelt(t *testing.T) {
+	d := complete()
+	used := map[string]bool{}
+	for _, s := range d.spots {
+		used[s.object.Name()+"."+s.key] = true
+	}
+	for _, of := range specTypes(reflect.TypeFor[fileSpec](), nil) {
+		for _, f := range keysOf(of) {
+			if !used[of.Name()+"."+f.Tag.Get("key")] {
+				t.Errorf("the complete document lacks %s of %s", f.Tag.Get("key"), called(of))
+			}
+		}
+	}
+	from := completeFiles()
+	before := map[string]bool{} // what the right document is told: of the later versions, no more
+	for _, f := range faultsOf(d.text(), from) {
+		if before[textOf(f)] = true; !strings.Contains(f.Error(), notYet) {
+			t.Errorf("the complete document has a fault: %v", f)
+		}
+	}
+	compiled := compileSchema(t)
+	if err := compiled.Validate(jsonValue(t, d.text())); err != nil {
+		t.Errorf("the schema refuses the complete document: %v", err)
+	}
+	if t.Failed() {
+		t.Fatal(d.text())
+	}
+	count := 0
+	for _, s := range d.spots {
+		valid := keyNames(keysOf(s.object))
+		wrongs := slices.DeleteFunc(misspellings(s.key), func(w string) bool { return slices.Contains(valid, w) })
+		if len(wrongs) == 0 {
+			t.Errorf("no misspelling of %q was tried", s.key)
+		}
+		if testing.Short() {
+			wrongs = wrongs[:min(4, len(wrongs))]
+		}
+		for _, wrong := range wrongs {
+			count++
+			text := d.misspelt(s, wrong)
+			found := false
+			for _, f := range faultsOf(text, from) {
+				p, ok := errors.AsType[*Problem](f)
+				switch {
+				case ok && p.Key == s.key && strings.Contains(p.Text, "is missing"):
+					t.Errorf("%s misspelt as %s: %v", s.key, wrong, f)
+				case ok && p.Line == s.line && p.Column == s.column && p.Key == wrong:
+					_, offer, _ := strings.Cut(p.Text, "did you mean ")
+					if !slices.Contains(strings.Split(strings.TrimSuffix(offer, "?"), " or "), s.key) {
+						t.Errorf("%s misspelt as %s: the right key is not offered: %v", s.key, wrong, f)
+					}
+					found = true
+				case !before[textOf(f)] && !strings.Contains(f.Error(), notYet):
+					t.Errorf("%s misspelt as %s: a fault that only follows from it: %v", s.key, wrong, f)
+				}
+			}
+			if !found {
+				t.Errorf("%s misspelt as %s in line %d, column %d: not reported there, but: %v", s.key, wrong, s.line, s.column, faultsOf(text, from))
+			}
+			if err := compiled.Validate(jsonValue(t, text)); err == nil {
+				t.Errorf("the schema accepts %s for %s in %s", wrong, s.key, called(s.object))
+			}
+		}
+	}
+	if count < 2*len(d.spots) {
+		t.Errorf("%d misspellings of %d keys tried", count, len(d.spots))
+	}
+}
+
+// textOf returns a fault without its place.
+func textOf(err error) string {
+	if p, ok := errors.AsType[*Problem](err); ok {
+		return p.Key + ": " + p.Text
+	}
+	return err.Error()
+}
+
+// specTypes returns the struct types that have keys, from one downwards.
+func specTypes(t reflect.Type, found []reflect.Type) []reflect.Type {
+	for t.Kind() == reflect.Pointer || t.Kind() == reflect.Slice || t.Kind() == reflect.Map {
+		t = t.Elem()
+	}
+	if t.Kind() != reflect.Struct || len(keysOf(t)) == 0 || slices.Contains(found, t) {
+		return found
+	}
+	found = append(found, t)
+	for _, f := range keysOf(t) {
+		found = specTypes(f.Type, found)
+	}
+	return found
+}
+
+func compileSchema(t *testing.T) *jsonschema.Schema {
+	t.Helper()
+	value, err := jsonschema.UnmarshalJSON(bytes.NewReader(Schema()))
+	if err != nil {
+		t.Fatal(err)
+	}
+	c := jsonschema.NewCompiler()
+	if err := c.AddResource("project.json", value); err != nil {
+		t.Fatal(err)
+	}
+	compiled, err := c.Compile("project.json")
+	if err != nil {
+		t.Fatal(err)
+	}
+	return compiled
+}
+
+// jsonValue turns YAML into the values that JSON has.
+func jsonValue(t *testing.T, text string) any {
+	t.Helper()
+	var v any
+	if err := yaml.Load([]byte(text), &v); err != nil {
+		t.Fatal(err)
+	}
+	encoded, err := json.Marshal(v)
+	if err != nil {
+		t.Fatal(err)
+	}
+	value, err := jsonschema.UnmarshalJSON(bytes.NewReader(encoded))
+	if err != nil {
+		t.Fatal(err)
+	}
+	return value
+}
+
+const demoFolder = "../../cmd/panewright/internal/demo/files"
+
+func TestSchemaAcceptsDemo(t *testing.T) {
+	content, err := os.ReadFile(demoFolder + "/project.yaml")
+	if err != nil {
+		t.Fatal(err)
+	}
+	compiled := compileSchema(t)
+	if err := compiled.Validate(jsonValue(t, string(content))); err != nil {
+		t.Error(err)
+	}
+	for _, change := range [][2]string{
+		{"thickness_mm: 6", "thickness_mm: 0"},
+		{"thickness_mm: 6", "thickness_mm: thick"},
+		{"thickness_mm: 6", "thickness_mm: 201"},
+		{"emissivity_front: 0.837", "emissivity_front: 1.1"},
+		{"heat_soaked: true", "heat_soaked: 1"},
+		{"heat_treatment: toughened", "heat_treatment: tempered"},
+		{"basis: en", "basis: din"},
+		{"basis: en", "basis: []"},
+		{"argon: 0.90", "argon: 1.9"},
+		{"tilt_deg: 30", "tilt_deg: -1"},
+		{"id: mill-clear-6", "id: -mill"},
+		{"id: mill-clear-6", "id: mill clear"},
+		{"project: Heron", "title: Heron"},
+		{"outside_to_inside:", "typed: {acoustic: [1]}\n    outside_to_inside:"},
+	} {
+		text := strings.Replace(string(content), change[0], change[1], 1)
+		if text == string(content) {
+			t.Fatalf("the demo has no %q", change[0])
+		}
+		if compiled.Validate(jsonValue(t, text)) == nil {
+			t.Errorf("the schema accepts %q", change[1])
+		}
+		if faults := faultsOf(text, folder(demoFolder, false)); len(faults) == 0 {
+			t.Errorf("the reader accepts %q", change[1])
+		}
+	}
+	if _, err := Load(demoFolder+"/project.yaml", Access{}); err != nil {
+		t.Error(err)
+	}
+}
