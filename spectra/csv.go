@@ -91,7 +91,7 @@ func ReadCSV(r io.Reader, file string) (Columns, error) {
 	}
 	for _, head := range rows.heads {
 		if !slices.Contains([]string{headNM, headUM, headTau, headRhoFront, headRhoBack}, head) {
-			rows.fail(rows.headLine, 0, "unknown column %q; a spectrum has wavelength_nm or wavelength_um, tau, rho_front, rho_back", head)
+			rows.fail(rows.headLine, 0, "unknown column %q; a spectrum has wavelength_nm or wavelength_um, tau, rho_front, rho_back", clip(head))
 		}
 	}
 	if c.Tau.Len()+c.RhoFront.Len()+c.RhoBack.Len() == 0 && len(rows.faults) == 0 {
@@ -115,7 +115,7 @@ func ReadSunCSV(r io.Reader, file string) (Weighting, error) {
 		case strings.HasPrefix(head, "irradiance") && c.Len() == 0:
 			c = rows.column(head, notNegative)
 		default:
-			rows.fail(rows.headLine, 0, "unknown column %q; a sun has wavelength_nm or wavelength_um, and irradiance", head)
+			rows.fail(rows.headLine, 0, "unknown column %q; a sun has wavelength_nm or wavelength_um, and irradiance", clip(head))
 		}
 	}
 	if err := rows.err(); err != nil {
@@ -245,7 +245,7 @@ func (r *rows) readWavelengths() error {
 			r.fail(r.headLine, 0, "column %d has no head", i+1)
 		}
 		if slices.Index(r.heads, head) != i {
-			r.fail(r.headLine, 0, "column %q stands twice", head)
+			r.fail(r.headLine, 0, "column %q stands twice", clip(head))
 		}
 	}
 	switch {

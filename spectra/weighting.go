@@ -64,10 +64,10 @@ func (w Weighting) until(limit float64) Weighting {
 func Trapezoid(c Curve, lo, hi float64) Weighting {
 	inner := c.cut(lo, hi)
 	nm, value := slices.Clone(inner.NM), slices.Clone(inner.Value)
-	if c.First() < lo && (len(nm) == 0 || nm[0] > lo) {
+	if c.First() < lo && c.Last() > lo && (len(nm) == 0 || nm[0] > lo) {
 		nm, value = slices.Insert(nm, 0, lo), slices.Insert(value, 0, c.At(lo))
 	}
-	if c.Last() > hi && (len(nm) == 0 || nm[len(nm)-1] < hi) {
+	if c.Last() > hi && c.First() < hi && (len(nm) == 0 || nm[len(nm)-1] < hi) {
 		nm, value = append(nm, hi), append(value, c.At(hi))
 	}
 	w := Weighting{NM: nm, Weight: make([]float64, len(nm))}

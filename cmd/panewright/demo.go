@@ -11,8 +11,9 @@ import (
 
 func newDemo(s streams) *cobra.Command {
 	return &cobra.Command{
-		Use:   "demo [DIR]",
-		Short: "Write the demo project into a folder and rate it",
+		Use:                   "demo [DIR]",
+		DisableFlagsInUseLine: true,
+		Short:                 "Write the demo project into a folder and rate it",
 		Long: `Writes the invented demo project into DIR (panewright-demo when absent), reads it
 back like any project, rates it and prints the schedule. Files that stand in DIR
 and differ are not overwritten.`,

@@ -12,8 +12,9 @@ func newExplain(s streams) *cobra.Command {
 	var o selection
 	var output string
 	c := &cobra.Command{
-		Use:   "explain PROJECT --makeup ID",
-		Short: "Show the calculation of a make-up, every number put in",
+		Use:                   "explain PROJECT --makeup ID [options]",
+		DisableFlagsInUseLine: true,
+		Short:                 "Show the calculation of a make-up, every number put in",
 		Long: `Prints every intermediate of the U-value, of g and of one weighted sum, in the
 order of a hand calculation: symbol, formula, the formula with the numbers put
 in, value, unit and clause. Without --tint, a make-up that switches is shown in

@@ -21,26 +21,27 @@ type selection struct {
 }
 
 func (o *selection) flags(c *cobra.Command) {
-	c.Flags().StringSliceVar(&o.makeups, "makeup", nil, "rate only this make-up (may be repeated)")
-	c.Flags().StringSliceVar(&o.tints, "tint", nil, "rate only this tint (may be repeated)")
-	c.Flags().StringSliceVar(&o.bases, "basis", nil, "rate under these bases instead of the project's: "+strings.Join(glazing.BasisNames(), ", "))
+	c.Flags().StringSliceVar(&o.makeups, "makeup", nil, "rate only make-up `ID` (may be repeated)")
+	c.Flags().StringSliceVar(&o.tints, "tint", nil, "rate only tint `NAME` (may be repeated)")
+	c.Flags().StringSliceVar(&o.bases, "basis", nil, "rate under bases `NAME,NAME` instead of the project's: "+strings.Join(glazing.BasisNames(), ", "))
 	c.Flags().BoolVar(&o.filesAnywhere, "files-anywhere", false, "let the project name files outside its folder")
 }
 
 func outputFlag(c *cobra.Command, output *string) {
-	c.Flags().StringVarP(output, "output", "o", "", "write to this file instead of standard output")
+	c.Flags().StringVarP(output, "output", "o", "", "write to `FILE` instead of standard output")
 }
 
 func newRate(s streams) *cobra.Command {
 	var o selection
 	var as, spectra, output string
 	c := &cobra.Command{
-		Use:   "rate PROJECT",
-		Short: "Print the schedule of a project",
+		Use:                   "rate PROJECT [options]",
+		DisableFlagsInUseLine: true,
+		Short:                 "Print the schedule of a project",
 		Long: `Rates every make-up of a project in every tint and prints the schedule.
 
-JSON has every figure with all its digits; null marks a figure that is not known,
-with the reason among the cautions.`,
+JSON has every figure with all its digits; null marks a figure that is not
+known, with the reason among the cautions.`,
 		Example: `  panewright rate panewright-demo/project.yaml
   panewright rate panewright-demo/project.yaml --makeup E1 --tint full
   panewright rate panewright-demo/project.yaml --basis en,iso --as json
@@ -51,8 +52,8 @@ with the reason among the cautions.`,
 		},
 	}
 	o.flags(c)
-	c.Flags().StringVar(&as, "as", "table", "table or json")
-	c.Flags().StringVar(&spectra, "spectra", "", "with --as json: spectra at these wavelengths in nm (400,550), or all")
+	c.Flags().StringVar(&as, "as", "table", "print as `FORMAT`: table or json")
+	c.Flags().StringVar(&spectra, "spectra", "", "with --as json: spectra at the wavelengths `NM,NM`, or all")
 	outputFlag(c, &output)
 	return c
 }

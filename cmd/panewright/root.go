@@ -9,6 +9,7 @@ import (
 	"strings"
 
 	"github.com/spf13/cobra"
+	"github.com/spf13/pflag"
 
 	"panewright/glazing/project"
 )
@@ -48,8 +49,9 @@ func run(args []string, s streams) int {
 
 func newRoot(s streams) *cobra.Command {
 	root := &cobra.Command{
-		Use:   "panewright",
-		Short: "Rate glazing make-ups from the spectra of their panes",
+		Use:                   "panewright",
+		DisableFlagsInUseLine: true,
+		Short:                 "Rate glazing make-ups from the spectra of their panes",
 		Long: `Panewright computes, for every tint of a make-up, light and solar transmittance
 and reflectance, colour, ultraviolet, solar heat gain (g), emissivity and the
 U-value of the centre of the glass, and shows its working.
@@ -67,19 +69,70 @@ declaration. Local authorities and licensed practitioners decide.`,
 			if len(args) == 0 {
 				return c.Help()
 			}
-			var known []string
-			for _, x := range c.Commands() {
-				known = append(known, x.Name())
-			}
-			return fmt.Errorf("unknown command %q; %s", short(args[0]), project.DidYouMean(project.Nearest(args[0], known), known))
+			return unknownCommand(c, args[0])
 		},
 	}
 	root.SetVersionTemplate("panewright {{.Version}}\n")
 	root.SetOut(s.out)
 	root.SetErr(s.err)
 	root.CompletionOptions.DisableDefaultCmd = true
+	root.SetUsageTemplate(usage)
+	root.SetFlagErrorFunc(flagError)
 	root.AddCommand(newDemo(s), newRate(s), newExplain(s), newSchema(s))
+	root.SetHelpCommand(newHelp())
 	return root
+}
+
+// usage is how a command's use is printed, 80 columns wide.
+const usage = `Usage:
+  {{.UseLine}}{{if .HasAvailableSubCommands}} COMMAND{{end}}
+{{- if .HasExample}}
+
+Examples:
+{{.Example}}{{end}}
+{{- if .HasAvailableSubCommands}}
+
+Commands:{{range .Commands}}{{if (or .IsAvailableCommand (eq .Name "help"))}}
+  {{rpad .Name .NamePadding}} {{.Short}}{{end}}{{end}}{{end}}
+{{- if .HasAvailableLocalFlags}}
+
+Options:
+{{.LocalFlags.FlagUsagesWrapped 80 | trimTrailingWhitespaces}}{{end}}
+`
+
+// newHelp is the command library's help, but for a command that does not exist.
+func newHelp() *cobra.Command {
+	return &cobra.Command{
+		Use:   "help [COMMAND]",
+		Short: "Print the help of a command",
+		RunE: func(c *cobra.Command, args []string) error {
+			about, rest, err := c.Root().Find(args)
+			if err != nil || len(rest) > 0 {
+				return unknownCommand(c.Root(), args[0])
+			}
+			return about.Help()
+		},
+	}
+}
+
+func unknownCommand(root *cobra.Command, name string) error {
+	var known []string
+	for _, x := range root.Commands() {
+		known = append(known, x.Name())
+	}
+	return fmt.Errorf("unknown command %q; %s", short(name), project.DidYouMean(project.Nearest(name, known), known))
+}
+
+// flagError offers the options nearest to one that is not known.
+func flagError(c *cobra.Command, err error) error {
+	unknown, ok := errors.AsType[*pflag.NotExistError](err)
+	if !ok {
+		return err
+	}
+	known := []string{"--help"}
+	c.Flags().VisitAll(func(f *pflag.Flag) { known = append(known, "--"+f.Name) })
+	name := "--" + unknown.GetSpecifiedName()
+	return fmt.Errorf("unknown option %s; %s", short(name), project.DidYouMean(project.Nearest(name, known), known))
 }
 
 // checkedWriter remembers that a write failed.

@@ -9,8 +9,9 @@ import (
 func newSchema(s streams) *cobra.Command {
 	var output string
 	c := &cobra.Command{
-		Use:   "schema",
-		Short: "Print the JSON Schema of the project file",
+		Use:                   "schema [options]",
+		DisableFlagsInUseLine: true,
+		Short:                 "Print the JSON Schema of the project file",
 		Long: `Prints the JSON Schema (draft 2020-12) of the project file, for editors that
 complete and check as you type. It comes from the same table of keys as the
 program's own check.`,

@@ -37,13 +37,9 @@ func (b *builder) project(s *fileSpec) *Project {
 	if s.Sun.given {
 		p.sun, p.Cautions = b.sun(s.Sun, p.Cautions)
 	}
-	for _, m := range s.Materials {
-		b.fail(m.At, "materials", "a film material %s", notYet)
-	}
 	ids := map[string]position{}
 	for _, g := range s.Glasses {
 		b.unique(ids, g.ID, "glass or pane")
-		b.fail(g.At, "glasses", "a glass by its optical constants %s; give a pane's spectrum", notYet)
 	}
 	for i := range s.Panes {
 		b.unique(ids, s.Panes[i].ID, "glass or pane")
@@ -107,13 +103,8 @@ func (b *builder) pane(s *paneSpec) *glazing.Pane {
 		}
 		ok = false
 	}
-	if s.Glass.given || len(s.Coatings) > 0 {
-		at, key := s.Glass.at, "glass"
-		if !s.Glass.given {
-			at, key = s.At, "coatings"
-		}
-		b.fail(at, key, "a pane modelled from glass and films %s; give its spectrum", notYet)
-		return nil
+	if s.modelled() {
+		return nil // place refuses it where a make-up uses it
 	}
 	p := &glazing.Pane{ID: s.ID.value, HeatTreatment: glazing.HeatTreatment(s.HeatTreatment.value), HeatSoaked: s.HeatSoaked.value,
 		Origin: glazing.Origin(s.Origin.value), TauInfrared: s.TauInfrared.value}
@@ -175,6 +166,9 @@ func (b *builder) pane(s *paneSpec) *glazing.Pane {
 	}
 	return p
 }
+
+// modelled reports whether the pane is given by glass and films and not by a spectrum.
+func (s *paneSpec) modelled() bool { return s.Glass.given || len(s.Coatings) > 0 }
 
 // Defaults of an interlayer; common practice for polyvinyl butyral, no source.
 const (
@@ -391,7 +385,11 @@ func (b *builder) place(m *glazing.Makeup, e *elementSpec, specs []paneSpec, pan
 				b.fail(e.Tint.at, "tint", "pane %s does not switch", e.Pane.value)
 			}
 		}
-	} else if !slices.ContainsFunc(specs, func(s paneSpec) bool { return s.ID.value == e.Pane.value }) && !b.incomplete["id"] {
+	} else if i := slices.IndexFunc(specs, func(s paneSpec) bool { return s.ID.value == e.Pane.value }); i >= 0 {
+		if specs[i].modelled() {
+			b.fail(e.Pane.at, "pane", "%s is modelled from glass and films, which %s; give the pane a spectrum", e.Pane.value, notYet)
+		}
+	} else if !b.incomplete["id"] {
 		var known []string
 		for _, s := range specs {
 			known = append(known, s.ID.value)
