@@ -10,6 +10,7 @@ import (
 	"slices"
 	"strconv"
 	"strings"
+	"unicode"
 )
 
 // MaxBytes is the size beyond which a spectrum file is refused.
@@ -90,7 +91,7 @@ func ReadCSV(r io.Reader, file string) (Columns, error) {
 		RhoBack:  rows.column(headRhoBack, fraction),
 	}
 	for _, head := range rows.heads {
-		if !slices.Contains([]string{headNM, headUM, headTau, headRhoFront, headRhoBack}, head) {
+		if head != "" && !slices.Contains([]string{headNM, headUM, headTau, headRhoFront, headRhoBack}, head) {
 			rows.fail(rows.headLine, 0, "unknown column %q; a spectrum has wavelength_nm or wavelength_um, tau, rho_front, rho_back", clip(head))
 		}
 	}
@@ -285,7 +286,7 @@ func (r *rows) readWavelengths() error {
 		last = r.nm[i]
 	}
 	switch {
-	case len(r.line) < minimumRows:
+	case len(r.line) < minimumRows && len(r.faults) == 0:
 		r.fail(0, 0, "%d rows; a spectrum has at least %d", len(r.line), minimumRows)
 	case scale == 1 && last > 0 && last < 100:
 		r.fail(r.line[len(r.line)-1], 0, "the last wavelength is %s nm: µm in a column of nm? name it wavelength_um", short(last))
@@ -398,8 +399,14 @@ func notNegative(v float64) string {
 // short prints a number as briefly as it can be read back.
 func short(v float64) string { return strconv.FormatFloat(v, 'g', -1, 64) }
 
-// clip shortens a cell for a message.
+// clip shortens a cell for a message, and takes out what would steer a terminal.
 func clip(s string) string {
+	s = strings.Map(func(c rune) rune {
+		if unicode.IsControl(c) {
+			return unicode.ReplacementChar
+		}
+		return c
+	}, s)
 	if r := []rune(s); len(r) > 40 {
 		return string(r[:40]) + "…"
 	}

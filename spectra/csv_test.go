@@ -9,6 +9,7 @@ import (
 	"slices"
 	"strings"
 	"testing"
+	"unicode"
 
 	"pgregory.net/rapid"
 )
@@ -66,6 +67,9 @@ func checkFaults(t *testing.T, err error, want [][]string) {
 			break
 		}
 		message := faults[i].Error()
+		if strings.ContainsFunc(message, unicode.IsControl) {
+			t.Errorf("message %q would send control characters to a terminal", message)
+		}
 		if !strings.HasPrefix(message, words[0]) {
 			t.Errorf("message %q does not begin with %q", message, words[0])
 		}
@@ -178,6 +182,8 @@ func TestReadCSVRefuses(t *testing.T) {
 		{"underscore", withLine(2, "300,0.8,0.1,0_1"), [][]string{{"pane.csv:2: at 300 nm: rho_back 0_1: not a number"}}},
 		{"a word", withLine(2, "300,high,0.1,0.15"), [][]string{{"pane.csv:2: at 300 nm: tau high: not a number"}}},
 		{"a long word is clipped", withLine(2, "300,"+strings.Repeat("é", 5000)+",0.1,0.15"), [][]string{{"pane.csv:2: at 300 nm: tau é", "…: not a number"}}},
+		{"control characters", withLine(2, "300,\x1b[31mred,0.1,0.15"), [][]string{{"pane.csv:2: at 300 nm: tau ", "[31mred: not a number"}}},
+		{"control characters in a head", withLine(1, "wavelength_nm,tau,rho_front,\x1b[31m"), [][]string{{"pane.csv:1: unknown column", "[31m"}}},
 		{"blank cell in the middle", withLine(7, "350,,0.1,0.15"), [][]string{{"pane.csv:8: at 360 nm: tau 0.8: ", "blank cell at line 7", "only where a column stops"}}},
 
 		{"not sorted", withLine(4, "305,0.8,0.1,0.15"), [][]string{{"pane.csv:4: at 305 nm: wavelengths must ascend", "310 nm"}}},

@@ -4,6 +4,7 @@ import (
 	"errors"
 	"strings"
 	"testing"
+	"unicode"
 )
 
 func FuzzReadCSV(f *testing.F) {
@@ -81,7 +82,8 @@ func FuzzReadCSV(f *testing.F) {
 	})
 }
 
-// checkMessages wants every fault to say something, and not at any length.
+// checkMessages wants every fault to say something that a terminal can show, and not at any
+// length.
 func checkMessages(t *testing.T, err error) {
 	t.Helper()
 	var faults Errors
@@ -89,8 +91,8 @@ func checkMessages(t *testing.T, err error) {
 		t.Fatalf("%T: %v", err, err)
 	}
 	for _, f := range faults {
-		if text := f.Error(); len(text) > 1500 || len(f.Text) == 0 {
-			t.Fatalf("a message of %d bytes: %.200s", len(text), text)
+		if text := f.Error(); len(text) > 1500 || len(f.Text) == 0 || strings.ContainsFunc(text, unicode.IsControl) {
+			t.Fatalf("a message of %d bytes: %.200q", len(text), text)
 		}
 	}
 }

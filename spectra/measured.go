@@ -1,8 +1,11 @@
 package spectra
 
 import (
+	"cmp"
 	"fmt"
 	"math"
+	"slices"
+	"strconv"
 	"strings"
 )
 
@@ -65,11 +68,7 @@ func Join(c Columns, infraredFront, infraredBack Column) (Measured, error) {
 	if len(faults) > 0 {
 		return Measured{}, faults
 	}
-	if bounded.n > 0 {
-		m.Cautions = append(m.Cautions, Caution{"set_to_bound", fmt.Sprintf(
-			"%s: values up to %g outside 0..1, or transmittance and reflectance adding to more than 1, were set to the bound in %s.",
-			c.Tau.File, Slack, bounded)})
-	}
+	m.Cautions = append(m.Cautions, bounded.cautions()...)
 	if text := coarse(c.Tau); text != "" {
 		m.Cautions = append(m.Cautions, Caution{"coarse_steps", c.Tau.File + ": " + text})
 	}
@@ -79,34 +78,46 @@ func Join(c Columns, infraredFront, infraredBack Column) (Measured, error) {
 // below returns the points below limit nm, and the point at it.
 func (c Curve) below(limit float64) Curve { return c.cut(0, limit) }
 
-// rowList collects the lines of rows for a message: the first few and a count.
-type rowList struct {
-	lines []int
-	n     int
+// rowList collects rows for a message: files and lines, each once.
+type rowList struct{ rows []fileLine }
+
+type fileLine struct {
+	file string
+	line int
 }
 
-func (l *rowList) add(line int) {
-	for _, x := range l.lines {
-		if x == line {
-			return
+func (l *rowList) add(file string, line int) { l.rows = append(l.rows, fileLine{file, line}) }
+
+// listed is how many lines of a file a message names.
+const listed = 8
+
+// cautions names the lines of each file: the first few and a count.
+func (l *rowList) cautions() (out []Caution) {
+	slices.SortStableFunc(l.rows, func(a, b fileLine) int {
+		return cmp.Or(strings.Compare(a.file, b.file), a.line-b.line)
+	})
+	for rest := slices.Compact(l.rows); len(rest) > 0; {
+		n := 1
+		for n < len(rest) && rest[n].file == rest[0].file {
+			n++
 		}
-	}
-	if l.n++; len(l.lines) < 8 {
-		l.lines = append(l.lines, line)
-	}
-}
-
-func (l *rowList) String() string {
-	var s []string
-	for _, x := range l.lines {
-		s = append(s, fmt.Sprint(x))
-	}
-	out := "line " + strings.Join(s, ", ")
-	if l.n > 1 {
-		out = "lines " + strings.Join(s, ", ")
-	}
-	if l.n > len(l.lines) {
-		out += fmt.Sprintf(" and %d more", l.n-len(l.lines))
+		lines := "line "
+		if n > 1 {
+			lines = "lines "
+		}
+		for i, row := range rest[:min(n, listed)] {
+			if i > 0 {
+				lines += ", "
+			}
+			lines += strconv.Itoa(row.line)
+		}
+		if n > listed {
+			lines += fmt.Sprintf(" and %d more", n-listed)
+		}
+		out = append(out, Caution{"set_to_bound", fmt.Sprintf(
+			"%s: values up to %g outside 0..1, or transmittance and reflectance adding to more than 1 by as much, were set to the bound in %s.",
+			rest[0].file, Slack, lines)})
+		rest = rest[n:]
 	}
 	return out
 }
@@ -117,29 +128,39 @@ func bound(c Column, changed *rowList) Column {
 	for i, v := range c.Value {
 		out.Value[i] = min(max(v, 0), 1)
 		if out.Value[i] != v {
-			changed.add(c.Line[i])
+			changed.add(c.File, c.Line[i])
 		}
 	}
 	return out
 }
 
-// sumToOne checks τ + ρ ≤ 1 at the wavelengths of ρ within those of τ, and takes an excess
-// within Slack off ρ.
+// sumToOne checks τ + ρ ≤ 1 at the wavelengths of both, where both are given, and takes an
+// excess within Slack off.
 func sumToOne(tau, rho Column, name string, changed *rowList) (faults Errors) {
-	values := make([]float64, rho.Len())
-	tau.Sample(values, rho.NM)
-	for i, nm := range rho.NM {
-		if nm < tau.First() || nm > tau.Last() {
-			continue
+	// most returns what point i may be at most, 1 less the other, or 1 where the other is not given.
+	most := func(at Column, i int, other Curve) float64 {
+		nm := at.NM[i]
+		if nm < other.First() || nm > other.Last() {
+			return 1
 		}
-		switch sum := values[i] + rho.Value[i]; {
-		case sum > 1+Slack+1e-12:
-			faults = append(faults, &RowError{rho.File, rho.Line[i], nm,
+		v := other.At(nm)
+		if sum := at.Value[i] + v; sum > 1+Slack+1e-12 {
+			faults = append(faults, &RowError{at.File, at.Line[i], nm,
 				fmt.Sprintf("tau + %s is %.4f; transmittance and reflectance add to at most 1", name, sum)})
-		case sum > 1:
-			rho.Value[i] = 1 - values[i]
-			changed.add(rho.Line[i])
 		}
+		return 1 - v
+	}
+	lower := func(c Column, other Curve) {
+		for i := range c.NM {
+			if m := most(c, i, other); c.Value[i] > m {
+				c.Value[i] = m
+				changed.add(c.File, c.Line[i])
+			}
+		}
+	}
+	lower(rho, tau.Curve)
+	if !slices.Equal(tau.NM, rho.NM) { // a peak may lie between two points of the other
+		lower(tau, rho.Curve)
 	}
 	return faults
 }
@@ -157,12 +178,13 @@ func infrared(rho, own Column, face string, changed *rowList, cautions *[]Cautio
 		}
 		return Curve{}, nil
 	}
-	line := rho.Line[rho.Len()-1]
+	line := rho.Line[rho.Len()-1] // of the last row, and of the first of the infrared
+	firstLine := rho.Line[rho.Len()-c.Len()]
 	switch {
 	case c.Last() < infraredLeastNM:
 		return Curve{}, &RowError{rho.File, line, c.Last(), "infrared rows of the " + face + " must reach 25 µm at least (5 to 50 µm give emissivity); drop them or measure on"}
 	case c.First() > infraredStartNM:
-		return Curve{}, &RowError{rho.File, line, c.First(), "infrared rows of the " + face + " must begin at 5.5 µm or before (5 to 50 µm give emissivity)"}
+		return Curve{}, &RowError{rho.File, firstLine, c.First(), "infrared rows of the " + face + " must begin at 5.5 µm or before (5 to 50 µm give emissivity)"}
 	case c.Last() < infraredLastNM:
 		*cautions = append(*cautions, Caution{"extended", fmt.Sprintf(
 			"%s: infrared rows of the %s stop at %s µm; the last value was held to 50 µm.", rho.File, face, short(c.Last()/1000))})

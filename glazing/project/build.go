@@ -70,6 +70,7 @@ func (b *builder) unique(ids map[string]position, id text, what string) {
 	}
 	if first, ok := ids[id.value]; ok {
 		b.fail(id.at, "id", "%q is the id of another %s, in line %d", clip(id.value), what, first.line)
+		b.incomplete["id"] = true
 		return
 	}
 	ids[id.value] = id.at
@@ -301,9 +302,10 @@ func (b *builder) measured(s *tintSpec, faulty bool) (spectra.Measured, bool) {
 	}
 	m, err := spectra.Join(all, front, back)
 	if err != nil {
-		if name := all.Tau.File; b.failed[name] == nil {
+		files := strings.Join([]string{all.Tau.File, all.RhoFront.File, all.RhoBack.File, front.File, back.File}, "\n")
+		if b.failed[files] == nil { // panes may share a spectrum; its faults are said once
 			b.spectrumFaults(err)
-			b.failed[name] = err
+			b.failed[files] = err
 		}
 		return spectra.Measured{}, false
 	}

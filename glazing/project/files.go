@@ -137,9 +137,7 @@ type named struct {
 }
 
 func (l *fileSet) bytesOf(t text) ([]byte, error) {
-	if !slices.ContainsFunc(l.named, func(n named) bool { return n.name == t.value }) {
-		l.named = append(l.named, named{t.at, t.value})
-	}
+	l.named = append(l.named, named{t.at, t.value})
 	if content, ok := l.content[t.value]; ok {
 		return content, nil
 	}
@@ -161,21 +159,25 @@ func (l *fileSet) digest(project []byte) string {
 		}
 		return a.at.column - b.at.column
 	})
+	seen := map[string]bool{}
 	for _, n := range l.named {
-		h.Write(l.content[n.name])
+		if !seen[n.name] {
+			h.Write(l.content[n.name])
+		}
+		seen[n.name] = true
 	}
 	return hex.EncodeToString(h.Sum(nil))
 }
 
 // spectrum reads the columns of a spectrum file, once. A fault of the file is reported once.
 func (l *fileSet) spectrum(r *reader, t text, key string) (spectra.Columns, bool) {
+	content, err := l.bytesOf(t)
 	if c, ok := l.columns[t.value]; ok {
 		return c, true
 	}
 	if l.failed[t.value] != nil {
 		return spectra.Columns{}, false
 	}
-	content, err := l.bytesOf(t)
 	if err == nil {
 		var c spectra.Columns
 		if c, err = spectra.ReadCSV(bytes.NewReader(content), t.value); err == nil {

@@ -32,8 +32,8 @@ type fileSpec struct {
 
 type surfacesSpec struct {
 	_       struct{} `called:"coefficients"`
-	Outside number   `key:"he_w_m2k" above:"0" upto:"1000" doc:"outside surface coefficient, W/(m²·K)"`
-	Inside  number   `key:"hi_w_m2k" above:"0" upto:"1000" doc:"inside surface coefficient, W/(m²·K); absent, it follows the room-side emissivity"`
+	Outside number   `key:"he_w_m2k" above:"0" from:"0.1" upto:"1000" doc:"outside surface coefficient, W/(m²·K)"`
+	Inside  number   `key:"hi_w_m2k" above:"0" from:"0.1" upto:"1000" doc:"inside surface coefficient, W/(m²·K); absent, it follows the room-side emissivity"`
 }
 
 type materialSpec struct {
@@ -55,18 +55,18 @@ type glassSpec struct {
 	object
 	ID           text   `key:"id" need:"yes" id:"yes" doc:"name by which panes use it"`
 	NK           text   `key:"nk" need:"yes" file:"yes" doc:"CSV of wavelength_um or wavelength_nm, n, k"`
-	Conductivity number `key:"conductivity_w_mk" above:"0" doc:"W/(m·K), 1.0 when absent"`
-	Density      number `key:"density_kg_m3" above:"0" doc:"kg/m³, 2500 when absent"`
+	Conductivity number `key:"conductivity_w_mk" above:"0" from:"0.001" upto:"1000" doc:"W/(m·K), 1.0 when absent"`
+	Density      number `key:"density_kg_m3" above:"0" from:"1" upto:"30000" doc:"kg/m³, 2500 when absent"`
 }
 
 type paneSpec struct {
 	_ struct{} `called:"a pane"`
 	object
 	ID              text              `key:"id" need:"yes" id:"yes" doc:"name by which make-ups use it"`
-	Thickness       number            `key:"thickness_mm" above:"0" upto:"200" doc:"thickness of a plain pane"`
+	Thickness       number            `key:"thickness_mm" above:"0" from:"0.001" upto:"200" doc:"thickness of a plain pane"`
 	Plies           []plySpec         `key:"plies" doc:"layers of a laminate instead of thickness_mm, outside to inside when not turned"`
-	Conductivity    number            `key:"conductivity_w_mk" above:"0" doc:"W/(m·K), 1.0 when absent"`
-	Density         number            `key:"density_kg_m3" above:"0" doc:"kg/m³, 2500 when absent"`
+	Conductivity    number            `key:"conductivity_w_mk" above:"0" from:"0.001" upto:"1000" doc:"W/(m·K), 1.0 when absent"`
+	Density         number            `key:"density_kg_m3" above:"0" from:"1" upto:"30000" doc:"kg/m³, 2500 when absent"`
 	HeatTreatment   text              `key:"heat_treatment" one:"annealed heat-strengthened toughened unknown" doc:"unknown when absent"`
 	HeatSoaked      flag              `key:"heat_soaked" doc:"true if heat soaked (EN 14179)"`
 	Origin          text              `key:"origin" one:"measured modelled invented" doc:"where the spectrum comes from; measured when absent"`
@@ -86,10 +86,10 @@ type paneSpec struct {
 type plySpec struct {
 	_ struct{} `called:"a ply"`
 	object
-	Glass        number `key:"glass_mm" above:"0" upto:"200" doc:"thickness of a glass ply"`
-	Interlayer   number `key:"interlayer_mm" above:"0" upto:"200" doc:"thickness of an interlayer"`
-	Conductivity number `key:"conductivity_w_mk" above:"0" doc:"W/(m·K); glass 1.0, interlayer 0.22 when absent"`
-	Density      number `key:"density_kg_m3" above:"0" doc:"kg/m³; glass 2500, interlayer 1070 when absent"`
+	Glass        number `key:"glass_mm" above:"0" from:"0.001" upto:"200" doc:"thickness of a glass ply"`
+	Interlayer   number `key:"interlayer_mm" above:"0" from:"0.001" upto:"200" doc:"thickness of an interlayer"`
+	Conductivity number `key:"conductivity_w_mk" above:"0" from:"0.001" upto:"1000" doc:"W/(m·K); glass 1.0, interlayer 0.22 when absent"`
+	Density      number `key:"density_kg_m3" above:"0" from:"1" upto:"30000" doc:"kg/m³; glass 2500, interlayer 1070 when absent"`
 }
 
 type spectraSpec struct {
@@ -151,7 +151,7 @@ type elementSpec struct {
 	Pane   text              `key:"pane" id:"yes" doc:"id of a pane"`
 	Turned flag              `key:"turned" doc:"true if the back face looks outside"`
 	Tint   text              `key:"tint" id:"yes" doc:"a fixed tint, or same to follow the outermost pane that switches"`
-	Gap    number            `key:"gap_mm" above:"0" upto:"1000" doc:"width of a gap"`
+	Gap    number            `key:"gap_mm" above:"0" from:"0.01" upto:"1000" doc:"width of a gap"`
 	Gas    map[string]number `key:"gas" from:"0" upto:"1" doc:"fractions by volume: air, argon, krypton, xenon, sf6; they add to 1"`
 	Vacuum *vacuumSpec       `key:"vacuum" doc:"an evacuated gap, instead of gas"`
 }

@@ -81,6 +81,26 @@ var typedValues = map[string]string{
 	"thickness_mm": "4", "glass_mm": "4", "interlayer_mm": "0.76", "gap_mm": "16", "outside_c": "-10", "inside_c": "20",
 }
 
+// fieldsOf returns the fields of a spec type that are keys of the format.
+func fieldsOf(t reflect.Type) []reflect.StructField {
+	var out []reflect.StructField
+	for f := range t.Fields() {
+		if f.Tag.Get("key") != "" {
+			out = append(out, f)
+		}
+	}
+	return out
+}
+
+// namesOf returns the keys of a spec type.
+func namesOf(t reflect.Type) []string {
+	var out []string
+	for _, f := range fieldsOf(t) {
+		out = append(out, f.Tag.Get("key"))
+	}
+	return out
+}
+
 func (d *document) add(indent, key, value string, object reflect.Type) {
 	if object != nil {
 		d.spots = append(d.spots, spot{len(d.lines) + 1, len(indent) + 1, key, object})
@@ -97,7 +117,7 @@ func (d *document) object(t reflect.Type, first, indent string, sibling int) {
 		left = variants[sibling]
 	}
 	name := strings.TrimSuffix(strings.ToLower(t.Name()), "spec")
-	for _, f := range keysOf(t) {
+	for _, f := range fieldsOf(t) {
 		key := f.Tag.Get("key")
 		if slices.Contains(left, key) {
 			continue
@@ -231,7 +251,7 @@ func TestEveryKeyMisspelt(t *testing.T) {
 		used[s.object.Name()+"."+s.key] = true
 	}
 	for _, of := range specTypes(reflect.TypeFor[fileSpec](), nil) {
-		for _, f := range keysOf(of) {
+		for _, f := range fieldsOf(of) {
 			if !used[of.Name()+"."+f.Tag.Get("key")] {
 				t.Errorf("the complete document lacks %s of %s", f.Tag.Get("key"), called(of))
 			}
@@ -253,7 +273,7 @@ func TestEveryKeyMisspelt(t *testing.T) {
 	}
 	count := 0
 	for _, s := range d.spots {
-		valid := keyNames(keysOf(s.object))
+		valid := namesOf(s.object)
 		wrongs := slices.DeleteFunc(misspellings(s.key), func(w string) bool { return slices.Contains(valid, w) })
 		if len(wrongs) == 0 {
 			t.Errorf("no misspelling of %q was tried", s.key)
@@ -306,11 +326,11 @@ func specTypes(t reflect.Type, found []reflect.Type) []reflect.Type {
 	for t.Kind() == reflect.Pointer || t.Kind() == reflect.Slice || t.Kind() == reflect.Map {
 		t = t.Elem()
 	}
-	if t.Kind() != reflect.Struct || len(keysOf(t)) == 0 || slices.Contains(found, t) {
+	if t.Kind() != reflect.Struct || len(fieldsOf(t)) == 0 || slices.Contains(found, t) {
 		return found
 	}
 	found = append(found, t)
-	for _, f := range keysOf(t) {
+	for _, f := range fieldsOf(t) {
 		found = specTypes(f.Type, found)
 	}
 	return found

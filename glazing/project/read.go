@@ -137,7 +137,7 @@ func yamlFault(err error) (position, string, string, error) {
 		switch {
 		case strings.Contains(message, "exceeded max depth"):
 			message = "lists or maps are nested too deeply"
-		case strings.Contains(message, "cannot start any token"):
+		case strings.Contains(message, "cannot start any token"), strings.Contains(message, "tab character"):
 			message += " (a tab? indent with spaces)"
 		case strings.Contains(message, "multiple"):
 			message = "more than one document; a project is one, without ---"
@@ -296,6 +296,10 @@ func (r *reader) dictionary(n *yaml.Node, into reflect.Value, f reflect.StructFi
 			r.fail(place(k), key, "a name is a plain word")
 			continue
 		}
+		if c, found := control(name); found {
+			r.fail(place(k), key, "a name holds the control character U+%04X", c)
+			continue
+		}
 		if allowed := f.Tag.Get("one"); allowed != "" && !slices.Contains(strings.Fields(allowed), name) {
 			r.fail(place(k), name, "unknown in %s; %s", key, DidYouMean(Nearest(name, strings.Fields(allowed)), strings.Fields(allowed)))
 			continue
@@ -352,11 +356,9 @@ func (r *reader) text(n *yaml.Node, into *text, tag reflect.StructTag, key strin
 		return false
 	}
 	value := n.Value
-	for _, c := range value {
-		if c != '\n' && c != '\t' && unicode.IsControl(c) {
-			r.fail(place(n), key, "holds the control character U+%04X", c)
-			return false
-		}
+	if c, found := control(strings.NewReplacer("\n", "", "\t", "").Replace(value)); found {
+		r.fail(place(n), key, "holds the control character U+%04X", c)
+		return false
 	}
 	if strings.TrimSpace(value) == "" {
 		r.fail(place(n), key, "is blank; give a text, or leave the key out")
@@ -477,6 +479,16 @@ func (r *reader) names(n *yaml.Node, into *names, tag reflect.StructTag, key str
 	return ok
 }
 
+// control returns the first control character of a text, if there is one.
+func control(s string) (rune, bool) {
+	for _, c := range s {
+		if unicode.IsControl(c) {
+			return c, true
+		}
+	}
+	return 0, false
+}
+
 // kindOf names what a node is, for messages.
 func kindOf(n *yaml.Node) string {
 	switch n.Kind {
@@ -517,8 +529,14 @@ func called(t reflect.Type) string {
 
 func short(v float64) string { return strconv.FormatFloat(v, 'g', -1, 64) }
 
-// clip shortens a text of the user's for a message.
+// clip shortens a text of the user's for a message, and takes out what would steer a terminal.
 func clip(s string) string {
+	s = strings.Map(func(c rune) rune {
+		if unicode.IsControl(c) {
+			return unicode.ReplacementChar
+		}
+		return c
+	}, s)
 	if r := []rune(s); len(r) > 60 {
 		return string(r[:60]) + "…"
 	}
