@@ -184,6 +184,25 @@ func thermalFigures() []Figure {
 	)
 }
 
+// Named reports whether a name that somebody typed is the figure's: its alias, or its key with
+// any number in the place of "#".
+func (f Figure) Named(name string) bool {
+	if name == f.Alias && name != "" {
+		return true
+	}
+	have, want := strings.Split(name, "."), strings.Split(f.Key, ".")
+	if len(have) != len(want) {
+		return false
+	}
+	for i, part := range want {
+		n, err := strconv.Atoi(have[i])
+		if number := err == nil && n >= 1; have[i] != part && !(part == "#" && number) {
+			return false
+		}
+	}
+	return true
+}
+
 // Count returns how many times the figure occurs in a rating.
 func (f Figure) Count(r *Rating) int {
 	switch f.Per {

@@ -195,6 +195,9 @@ func readRows(in io.Reader, file string) (*rows, error) {
 		for i := range record {
 			record[i] = strings.TrimSpace(record[i])
 		}
+		if strings.HasPrefix(record[0], "#") {
+			continue // a comment after a blank, or in quotes as spreadsheets write it
+		}
 		if r.heads == nil {
 			r.heads, r.headLine = slices.Clone(record), line
 			continue
@@ -290,8 +293,8 @@ func (r *rows) readWavelengths() error {
 		r.fail(0, 0, "%d rows; a spectrum has at least %d", len(r.line), minimumRows)
 	case scale == 1 && last > 0 && last < 100:
 		r.fail(r.line[len(r.line)-1], 0, "the last wavelength is %s nm: µm in a column of nm? name it wavelength_um", short(last))
-	case scale == 1000 && last > 1e6:
-		r.fail(r.line[len(r.line)-1], 0, "the last wavelength is %s µm: nm in a column of µm? name it wavelength_nm", short(last/1000))
+	case scale == 1000 && r.nm[0] > 1e5:
+		r.fail(r.line[0], 0, "the first wavelength is %s µm: nm in a column of µm? name it wavelength_nm", short(r.nm[0]/1000))
 	}
 	return nil
 }

@@ -203,7 +203,7 @@ func TestReadCSVRefuses(t *testing.T) {
 				fmt.Fprintf(&s, "%d,0.8,0.1,0.15\n", nm)
 			}
 			return s.String()
-		}(), [][]string{{"pane.csv:13: the last wavelength is 2500 µm", "name it wavelength_nm"}}},
+		}(), [][]string{{"pane.csv:2: the first wavelength is 300 µm", "name it wavelength_nm"}}},
 		{"two faults, both said", strings.Replace(withLine(3, "310,80,0.1,0.15"), "400,0.8", "400,NaN", 1),
 			[][]string{{"pane.csv:3: ", "percent"}, {"pane.csv:12: ", "finite"}}},
 		{"the line counts comments", "# one\n# two\n" + withLine(3, "310,80,0.1,0.15"), [][]string{{"pane.csv:5: at 310 nm"}}},

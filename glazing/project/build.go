@@ -55,7 +55,11 @@ func (b *builder) project(s *fileSpec) *Project {
 		}
 	}
 	b.conditions(s.Conditions)
-	b.limits(s.Limits)
+	b.limits(s.Limits, s.Makeups)
+	if len(s.Limits) > 0 {
+		p.Cautions = append(p.Cautions, glazing.Caution{Code: "limits_not_checked",
+			Text: "The project's limits were read and not checked: this version does not check limits."})
+	}
 	if len(s.Conditions) > 0 {
 		p.Cautions = append(p.Cautions, glazing.Caution{Code: "conditions_not_rated",
 			Text: "The project's conditions were read and not rated: they need the detailed heat balance of ISO 15099, which this version does not have."})
@@ -426,7 +430,7 @@ func (b *builder) gap(m *glazing.Makeup, e *elementSpec) {
 		}
 		for _, name := range slices.Sorted(maps.Keys(e.Gas)) {
 			if !slices.Contains(known, name) {
-				b.fail(e.Gas[name].at, "gas", "unknown gas %q; %s", clip(name), DidYouMean(Nearest(name, known), known))
+				b.fail(e.Gas[name].name, "gas", "unknown gas %q; %s", clip(name), DidYouMean(Nearest(name, known), known))
 				return
 			}
 		}
@@ -454,8 +458,24 @@ func (b *builder) conditions(list []conditionSpec) {
 }
 
 // limits checks what the tags cannot.
-func (b *builder) limits(list []limitSpec) {
+func (b *builder) limits(list []limitSpec, makeups []makeupSpec) {
+	var ids []string
+	for _, m := range makeups {
+		ids = append(ids, m.ID.value)
+	}
 	for _, l := range list {
+		if l.Figure.given && !slices.ContainsFunc(glazing.Figures(), func(f glazing.Figure) bool { return f.Named(l.Figure.value) }) {
+			var known []string
+			for _, f := range glazing.Figures() {
+				known = append(known, f.Key, f.Alias)
+			}
+			b.fail(l.Figure.at, "figure", "unknown figure %q; %s", clip(l.Figure.value), DidYouMean(Nearest(l.Figure.value, known), known))
+		}
+		for _, m := range l.Makeups.values {
+			if !slices.Contains(ids, m.value) && !b.incomplete["id"] && !b.incomplete["makeups"] {
+				b.fail(m.at, "makeups", "unknown make-up %q; %s", clip(m.value), DidYouMean(Nearest(m.value, ids), ids))
+			}
+		}
 		switch {
 		case l.Faulty:
 		case !l.AtMost.given && !l.AtLeast.given:

@@ -28,6 +28,7 @@ type (
 		value float64
 		given bool
 		at    position
+		name  position // of its name, in a map from names to numbers
 	}
 	flag struct {
 		value, given bool
@@ -88,7 +89,7 @@ func (r *reader) parse(content []byte) (*fileSpec, bool) {
 	}
 	var doc yaml.Node
 	if err := yaml.Load(content, &doc); err != nil {
-		r.fail(yamlFault(err))
+		r.fail(yamlFault(content, err))
 		return nil, false
 	}
 	if len(doc.Content) == 0 {
@@ -130,7 +131,7 @@ func notText(b []byte) (position, string) {
 }
 
 // yamlFault turns an error of the YAML library into the arguments of fail.
-func yamlFault(err error) (position, string, string, error) {
+func yamlFault(content []byte, err error) (position, string, string, error) {
 	const format = "not readable as YAML: %v"
 	if le, ok := errors.AsType[*yaml.LoadError](err); ok {
 		message := strings.TrimPrefix(le.Message, "yaml: ")
@@ -140,13 +141,29 @@ func yamlFault(err error) (position, string, string, error) {
 		case strings.Contains(message, "cannot start any token"), strings.Contains(message, "tab character"):
 			message += " (a tab? indent with spaces)"
 		case strings.Contains(message, "multiple"):
-			message = "more than one document; a project is one, without ---"
+			line := bytes.Count(content[:secondDocument(content)], []byte("\n")) + 1
+			return position{line, 1}, "", "%v", errors.New("a second document begins here; a project is one, without ---")
 		case strings.Contains(message, "no documents"):
 			return position{}, "", "%v", errors.New("is empty; a project begins with project: TITLE")
 		}
 		return position{le.Mark.Line, le.Mark.Column}, "", format, errors.New(message)
 	}
 	return position{}, "", format, err
+}
+
+// secondDocument returns where the line is that begins a second document.
+func secondDocument(content []byte) int {
+	at, begun := 0, false
+	for line := range bytes.Lines(content) {
+		switch text := bytes.TrimSpace(line); {
+		case bytes.HasPrefix(line, []byte("---")) && begun:
+			return at
+		case len(text) > 0 && text[0] != '#' && text[0] != '%':
+			begun = true
+		}
+		at += len(line)
+	}
+	return 0
 }
 
 // plain refuses what YAML has and a project file does not: anchors, aliases, tags.
@@ -315,6 +332,9 @@ func (r *reader) dictionary(n *yaml.Node, into reflect.Value, f reflect.StructFi
 			r.object(v, e, name)
 		} else {
 			r.value(v, e, element)
+			if x, ok := e.Addr().Interface().(*number); ok {
+				x.name = place(k)
+			}
 		}
 		into.SetMapIndex(reflect.ValueOf(name), e)
 	}
@@ -355,12 +375,12 @@ func (r *reader) text(n *yaml.Node, into *text, tag reflect.StructTag, key strin
 		r.fail(place(n), key, "is a text, not %s", kindOf(n))
 		return false
 	}
-	value := n.Value
+	value := strings.TrimSpace(n.Value)
 	if c, found := control(strings.NewReplacer("\n", "", "\t", "").Replace(value)); found {
 		r.fail(place(n), key, "holds the control character U+%04X", c)
 		return false
 	}
-	if strings.TrimSpace(value) == "" {
+	if value == "" {
 		r.fail(place(n), key, "is blank; give a text, or leave the key out")
 		return false
 	}
@@ -433,7 +453,7 @@ func (r *reader) number(n *yaml.Node, into *number, tag reflect.StructTag, key s
 	if b := bound(tag, "upto"); b != nil && v > *b {
 		return refuse("%s is above %s", clip(s), short(*b))
 	}
-	*into = number{v, true, place(n)}
+	*into = number{value: v, given: true, at: place(n)}
 	return true
 }
 
