@@ -49,9 +49,34 @@ func put(v float64) string { return strconv.FormatFloat(v, 'g', 9, 64) }
 func Working(r *Rating) []Chapter {
 	var out []Chapter
 	out = append(out, workLight(r), workStack(r), workSolar(r))
-	if !r.U.Known {
-		return append(out, Chapter{Title: "U-value and g-value", Note: "not known: " + r.U.Why})
+	if r.U.Known {
+		out = append(out, workHeat(r)...)
+	} else {
+		out = append(out, Chapter{Title: "U-value and g-value", Note: "not known: " + r.U.Why})
 	}
+	if r.Method.Basis.Name != EN.Name {
+		toISO(out)
+	}
+	return out
+}
+
+// toISO names the ISO standards in the place of the EN ones, whose formulas they share.
+func toISO(chapters []Chapter) {
+	for _, c := range chapters {
+		for i := range c.Steps {
+			switch s := &c.Steps[i]; {
+			case strings.HasPrefix(s.Clause, "EN 673"):
+				s.Clause = "ISO 10292"
+			case strings.HasPrefix(s.Clause, "EN 410"):
+				s.Clause = "ISO 9050"
+			}
+		}
+	}
+}
+
+// workHeat writes out U and g.
+func workHeat(r *Rating) []Chapter {
+	var out []Chapter
 	out = append(out, workEmissivity(r))
 	for k := range r.Gaps {
 		out = append(out, workGap(r, k, r.Gaps, r.Ready.tilted, ""))

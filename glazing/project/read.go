@@ -1,15 +1,12 @@
 package project
 
 import (
-	"bytes"
-	"errors"
 	"fmt"
 	"reflect"
 	"slices"
 	"strconv"
 	"strings"
 	"unicode"
-	"unicode/utf8"
 
 	"go.yaml.in/yaml/v4"
 )
@@ -77,94 +74,6 @@ func (r *reader) fail(at position, key, format string, args ...any) {
 }
 
 func place(n *yaml.Node) position { return position{n.Line, n.Column} }
-
-// maxProjectBytes is the size beyond which a project file is refused.
-const maxProjectBytes = 16 << 20
-
-// parse reads the text of a project file.
-func (r *reader) parse(content []byte) (*fileSpec, bool) {
-	if at, problem := notText(content); problem != "" {
-		r.fail(at, "", "%s", problem)
-		return nil, false
-	}
-	var doc yaml.Node
-	if err := yaml.Load(content, &doc); err != nil {
-		r.fail(yamlFault(content, err))
-		return nil, false
-	}
-	if len(doc.Content) == 0 {
-		r.fail(position{}, "", "is empty; a project begins with project: TITLE")
-		return nil, false
-	}
-	var spec fileSpec
-	r.object(doc.Content[0], reflect.ValueOf(&spec).Elem(), "")
-	return &spec, true
-}
-
-// notText says why content cannot be YAML in UTF-8, and where.
-func notText(b []byte) (position, string) {
-	switch {
-	case len(b) > maxProjectBytes:
-		return position{}, fmt.Sprintf("is larger than %d MB; a project file is a few kB", maxProjectBytes>>20)
-	case bytes.HasPrefix(b, []byte{0xff, 0xfe}), bytes.HasPrefix(b, []byte{0xfe, 0xff}):
-		return position{}, "is UTF-16; save it as UTF-8"
-	case bytes.IndexByte(b, 0) >= 0:
-		return position{}, "is binary, or UTF-16; a project is YAML text in UTF-8"
-	case len(bytes.TrimSpace(bytes.TrimPrefix(b, []byte("\ufeff")))) == 0:
-		return position{}, "is empty; a project begins with project: TITLE"
-	}
-	line, column := 1, 1
-	for rest := b; len(rest) > 0; {
-		c, size := utf8.DecodeRune(rest)
-		if c == utf8.RuneError && size == 1 {
-			return position{line, column}, "holds bytes that are not UTF-8; save it as UTF-8"
-		}
-		if c != '\n' && c != '\r' && c != '\t' && c != 0x85 && unicode.IsControl(c) {
-			return position{line, column}, fmt.Sprintf("holds the control character U+%04X", c)
-		}
-		if column++; c == '\n' {
-			line, column = line+1, 1
-		}
-		rest = rest[size:]
-	}
-	return position{}, ""
-}
-
-// yamlFault turns an error of the YAML library into the arguments of fail.
-func yamlFault(content []byte, err error) (position, string, string, error) {
-	const format = "not readable as YAML: %v"
-	if le, ok := errors.AsType[*yaml.LoadError](err); ok {
-		message := strings.TrimPrefix(le.Message, "yaml: ")
-		switch {
-		case strings.Contains(message, "exceeded max depth"):
-			message = "lists or maps are nested too deeply"
-		case strings.Contains(message, "cannot start any token"), strings.Contains(message, "tab character"):
-			message += " (a tab? indent with spaces)"
-		case strings.Contains(message, "multiple"):
-			line := bytes.Count(content[:secondDocument(content)], []byte("\n")) + 1
-			return position{line, 1}, "", "%v", errors.New("a second document begins here; a project is one, without ---")
-		case strings.Contains(message, "no documents"):
-			return position{}, "", "%v", errors.New("is empty; a project begins with project: TITLE")
-		}
-		return position{le.Mark.Line, le.Mark.Column}, "", format, errors.New(message)
-	}
-	return position{}, "", format, err
-}
-
-// secondDocument returns where the line is that begins a second document.
-func secondDocument(content []byte) int {
-	at, begun := 0, false
-	for line := range bytes.Lines(content) {
-		switch text := bytes.TrimSpace(line); {
-		case bytes.HasPrefix(line, []byte("---")) && begun:
-			return at
-		case len(text) > 0 && text[0] != '#' && text[0] != '%':
-			begun = true
-		}
-		at += len(line)
-	}
-	return 0
-}
 
 // plain refuses what YAML has and a project file does not: anchors, aliases, tags.
 func (r *reader) plain(n *yaml.Node, key string) bool {
