@@ -101,11 +101,8 @@ func (r *Ready) RateInto(dst *Rating, state int) error {
 func (r *Ready) rateOptics(dst *Rating, c *coverage) {
 	m, k := r.Method, &dst.stack
 	bandOf := func(i int) Band {
-		return Band{
-			Transmittance:      known(m.bands[i].Mean(k.T)).orNot(c[i].t),
-			ReflectanceOutside: known(m.bands[i].Mean(k.Ro)).orNot(c[i].ro),
-			ReflectanceInside:  known(m.bands[i].Mean(k.Ri)).orNot(c[i].ri),
-		}
+		t, ro, ri := m.bands[i].Means(k.T, k.Ro, k.Ri)
+		return Band{known(t).orNot(c[i].t), known(ro).orNot(c[i].ro), known(ri).orNot(c[i].ri)}
 	}
 	dst.Light, dst.Solar = bandOf(light), bandOf(solar)
 	dst.UV = known(m.bands[uv].Mean(k.T)).orNot(c[uv].t)

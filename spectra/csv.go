@@ -200,6 +200,8 @@ func readRows(in io.Reader, file string) (*rows, error) {
 		}
 		if r.heads == nil {
 			r.heads, r.headLine = slices.Clone(record), line
+			lines := bytes.Count(text, []byte("\n"))
+			r.line, r.cells = make([]int, 0, lines), make([]string, 0, lines*len(record))
 			continue
 		}
 		if !slices.ContainsFunc(record, func(cell string) bool { return cell != "" }) {

@@ -169,6 +169,7 @@ func TestConvection(t *testing.T) {
 		{0, Up, 1e4, 0.16 * math.Pow(1e4, 0.28), "horizontal"},
 		{67.5, Up, 1e4, 0.0675 * math.Pow(1e4, 0.345), "half-way between 45 and 90°: both constants at their mean"},
 		{22.5, Up, 1e4, 0.13 * math.Pow(1e4, 0.295), "half-way between 0 and 45°"},
+		{90.5, Up, 1e4, (0.035 + 0.065/90) * math.Pow(1e4, 0.38-0.07/90), "just beyond vertical, as 89.5°"},
 		{180, Up, 1e4, 0.16 * math.Pow(1e4, 0.28), "beyond 90° as 180 − tilt"},
 		{90, Up, 10, 1, "at least 1"},
 		{90, Down, 1e4, 0.035 * math.Pow(1e4, 0.38), "vertical has no down"},
@@ -178,6 +179,9 @@ func TestConvection(t *testing.T) {
 		if got := ConvectionAt(tt.tilt, tt.flow).Nusselt(tt.ra); math.Abs(got-tt.want) > 1e-12*tt.want {
 			t.Errorf("%s: Nu %.9f, want %.9f (EN 673:2011)", tt.about, got, tt.want)
 		}
+	}
+	if got := ConvectionBetween(67.5, Up).Nusselt(4000); got != (0.10*math.Exp(0.31*math.Log(4000))+1)/2 {
+		t.Errorf("the other reading, where the vertical one does not convect: Nu %.9f, want the mean of it and 1", got)
 	}
 	between := ConvectionBetween(67.5, Up).Nusselt(1e4)
 	want := (0.10*math.Pow(1e4, 0.31) + 0.035*math.Pow(1e4, 0.38)) / 2

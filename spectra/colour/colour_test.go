@@ -96,3 +96,24 @@ func fluorescent(t *testing.T) map[string][]float64 {
 	}
 	return out
 }
+
+// The primaries of sRGB (IEC 61966-2-1) in XYZ and in L*a*b* against D65 are printed in many
+// textbooks and conversion tables (from memory); L* of the dark end is 903.3·Y/Yn (CIE 15:2004).
+func TestLab(t *testing.T) {
+	white := XYZ{95.047, 100, 108.883}
+	for _, tt := range []struct {
+		name string
+		XYZ
+		want Lab
+	}{
+		{"red", XYZ{41.2456, 21.2673, 1.9334}, Lab{53.2408, 80.0925, 67.2032}},
+		{"green", XYZ{35.7576, 71.5152, 11.9192}, Lab{87.7347, -86.1827, 83.1793}},
+		{"blue", XYZ{18.0437, 7.2175, 95.0304}, Lab{32.2970, 79.1875, -107.8602}},
+		{"nearly black", white.times(0.005), Lab{903.3 * 0.005, 0, 0}},
+	} {
+		got := tt.Lab(white)
+		if math.Abs(got.L-tt.want.L) > 5e-4 || math.Abs(got.A-tt.want.A) > 5e-4 || math.Abs(got.B-tt.want.B) > 5e-4 {
+			t.Errorf("%s: %.4f, want %v", tt.name, got, tt.want)
+		}
+	}
+}
