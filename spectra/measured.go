@@ -137,23 +137,19 @@ func bound(c Column, changed *rowList) Column {
 // sumToOne checks τ + ρ ≤ 1 at the wavelengths of both, where both are given, and takes an
 // excess within Slack off.
 func sumToOne(tau, rho Column, name string, changed *rowList) (faults Errors) {
-	// most returns what point i may be at most, 1 less the other, or 1 where the other is not given.
-	most := func(at Column, i int, other Curve) float64 {
-		nm := at.NM[i]
-		if nm < other.First() || nm > other.Last() {
-			return 1
-		}
-		v := other.At(nm)
-		if sum := at.Value[i] + v; sum > 1+Slack+1e-12 {
-			faults = append(faults, &RowError{at.File, at.Line[i], nm,
-				fmt.Sprintf("tau + %s is %.4f; transmittance and reflectance add to at most 1", name, sum)})
-		}
-		return 1 - v
-	}
+	// lower takes off c what exceeds 1 together with the other, at the points of c.
 	lower := func(c Column, other Curve) {
-		for i := range c.NM {
-			if m := most(c, i, other); c.Value[i] > m {
-				c.Value[i] = m
+		values := make([]float64, c.Len())
+		other.Sample(values, c.NM)
+		for i, nm := range c.NM {
+			sum := c.Value[i] + values[i]
+			switch {
+			case nm < other.First() || nm > other.Last():
+			case sum > 1+Slack+1e-12:
+				faults = append(faults, &RowError{c.File, c.Line[i], nm,
+					fmt.Sprintf("tau + %s is %.4f; transmittance and reflectance add to at most 1", name, sum)})
+			case sum > 1:
+				c.Value[i] = 1 - values[i]
 				changed.add(c.File, c.Line[i])
 			}
 		}

@@ -74,9 +74,9 @@ func readProjectFile(path string) ([]byte, error) {
 	return readRegular(f, maxProjectBytes)
 }
 
-// folder returns the files of a folder as a source. Without anywhere, a name may not lead out of
-// the folder, not by a symbolic link either.
-func folder(dir string, anywhere bool) source {
+// folder returns the files of a folder as a source, and a function to call when no more is read.
+// Without anywhere, a name may not lead out of the folder, not by a symbolic link either.
+func folder(dir string, anywhere bool) (from source, done func()) {
 	if anywhere {
 		return func(name string) ([]byte, error) {
 			path := filepath.FromSlash(name)
@@ -92,6 +92,13 @@ func folder(dir string, anywhere bool) source {
 			}
 			defer f.Close()
 			return readRegular(f, spectra.MaxBytes)
+		}, func() {}
+	}
+	var root *os.Root
+	var rootErr error
+	done = func() {
+		if root != nil {
+			root.Close()
 		}
 	}
 	return func(name string) ([]byte, error) {
@@ -99,11 +106,12 @@ func folder(dir string, anywhere bool) source {
 		if !filepath.IsLocal(path) {
 			return nil, errors.New("leads out of the project's folder; copy the file there, or allow it with --files-anywhere")
 		}
-		root, err := os.OpenRoot(dir)
-		if err != nil {
-			return nil, reason(err)
+		if root == nil && rootErr == nil {
+			root, rootErr = os.OpenRoot(dir)
 		}
-		defer root.Close()
+		if rootErr != nil {
+			return nil, reason(rootErr)
+		}
 		info, err := root.Stat(path)
 		switch {
 		case errors.Is(err, fs.ErrNotExist):
@@ -119,7 +127,7 @@ func folder(dir string, anywhere bool) source {
 		}
 		defer f.Close()
 		return readRegular(f, spectra.MaxBytes)
-	}
+	}, done
 }
 
 // fileSet reads each named file once and remembers the order in which the project names them.

@@ -405,9 +405,11 @@ func TestSchemaAcceptsDemo(t *testing.T) {
 		if compiled.Validate(jsonValue(t, text)) == nil {
 			t.Errorf("the schema accepts %q", change[1])
 		}
-		if faults := faultsOf(text, folder(demoFolder, false)); len(faults) == 0 {
+		from, done := folder(demoFolder, false)
+		if faults := faultsOf(text, from); len(faults) == 0 {
 			t.Errorf("the reader accepts %q", change[1])
 		}
+		done()
 	}
 	if _, err := Load(demoFolder+"/project.yaml", Access{}); err != nil {
 		t.Error(err)

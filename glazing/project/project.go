@@ -45,7 +45,9 @@ func Load(path string, a Access) (*Project, error) {
 	if err != nil {
 		return nil, Errors{&Problem{File: path, Text: err.Error()}}
 	}
-	return read(path, content, folder(filepath.Dir(path), a.Anywhere))
+	from, done := folder(filepath.Dir(path), a.Anywhere)
+	defer done()
+	return read(path, content, from)
 }
 
 // read reads a project from its content and a source of the files that it names.

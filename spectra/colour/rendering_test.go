@@ -5,9 +5,10 @@ import (
 	"testing"
 )
 
-// The chromaticities of the phases of daylight are those of CIE 15:2004, table T.1, and the factors those of Wyszecki and Stiles, Color Science, 1982, table 3(3.3.4) (both from
-// memory): nominal temperature times 1.4388/1.4380. The printed factors come from chromaticities
-// rounded to four decimals, which moves M2 by up to 0.006.
+// The chromaticities of the phases of daylight are those of CIE 15:2004, table T.1, and the
+// factors those of Wyszecki and Stiles, Color Science, 1982 (both from memory), for the nominal
+// temperature times 1.4388/1.4380. The printed factors come from chromaticities rounded to four
+// decimals, which moves M2 by up to 0.006.
 func TestDaylight(t *testing.T) {
 	for _, tt := range []struct {
 		name         string
