@@ -134,10 +134,12 @@ func parse(name, text string) (*Table, error) {
 		}
 		t.Labels = append(t.Labels, cells[0])
 		for i, cell := range cells {
-			v, err := strconv.ParseFloat(cell, 64)
-			if err != nil {
-				v = math.NaN()
-				if cell != "" && i > 0 {
+			v := math.NaN()
+			if cell != "" {
+				x, err := strconv.ParseFloat(cell, 64)
+				if err == nil {
+					v = x
+				} else if i > 0 {
 					return nil, fmt.Errorf("%s: line %d: %q is not a number", name, n+1, cell)
 				}
 			}

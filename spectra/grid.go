@@ -39,9 +39,12 @@ func (w Weighting) On(g Grid) Placed {
 	last, _ := slices.BinarySearch(g.NM, w.NM[len(w.NM)-1])
 	p := Placed{From: first &^ 3}
 	p.Weight = make([]float64, (last-p.From+1+3)&^3)
+	at := first
 	for i, nm := range w.NM {
-		at, ok := slices.BinarySearch(g.NM, nm)
-		if !ok {
+		for at < len(g.NM) && g.NM[at] < nm {
+			at++
+		}
+		if at == len(g.NM) || g.NM[at] != nm {
 			panic("spectra: grid lacks a wavelength of the weighting " + w.Name)
 		}
 		p.Weight[at-p.From] = w.Weight[i]

@@ -134,6 +134,9 @@ func bound(c Column, changed *rowList) Column {
 	return out
 }
 
+// binary is what binary arithmetic may add to a sum of decimal fractions.
+const binary = 1e-12
+
 // sumToOne checks τ + ρ ≤ 1 at the wavelengths of both, where both are given, and takes an
 // excess within Slack off.
 func sumToOne(tau, rho Column, name string, changed *rowList) (faults Errors) {
@@ -145,12 +148,14 @@ func sumToOne(tau, rho Column, name string, changed *rowList) (faults Errors) {
 			sum := c.Value[i] + values[i]
 			switch {
 			case nm < other.First() || nm > other.Last():
-			case sum > 1+Slack+1e-12:
+			case sum > 1+Slack+binary:
 				faults = append(faults, &RowError{c.File, c.Line[i], nm,
 					fmt.Sprintf("tau + %s is %.4f; transmittance and reflectance add to at most 1", name, sum)})
 			case sum > 1:
 				c.Value[i] = 1 - values[i]
-				changed.add(c.File, c.Line[i])
+				if sum > 1+binary {
+					changed.add(c.File, c.Line[i])
+				}
 			}
 		}
 	}
