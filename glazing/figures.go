@@ -245,7 +245,7 @@ func (f Figure) places(r *Rating, v float64) int {
 // numbers put just below itself still counts as one.
 func Round(v float64, places int) float64 {
 	scale := math.Pow10(places)
-	return math.Copysign(math.Floor(math.Abs(v)*scale+0.5+1e-9), v) / scale
+	return math.Copysign(math.Floor(float64(math.Abs(v)*scale)+0.5+1e-9), v) / scale
 }
 
 // PrintRounded prints a number rounded to a number of decimals; a rounded zero has no sign.

@@ -148,7 +148,7 @@ func absorbMiddle(a, outward, outerT, outerRi, inverse, t, ro, ri []float64) {
 	t, ro, ri = t[:n], ro[:n], ri[:n]
 	for i := range n {
 		back := outward[i]
-		through := t[i] * back
+		through := float64(t[i] * back)
 		in := (outerT[i] + float64(outerRi[i]*through)) * inverse[i]
 		a[i] = float64(in*(1-t[i]-ro[i])) + float64(back*(1-t[i]-ri[i]))
 		outward[i] = float64(in*ro[i]) + through

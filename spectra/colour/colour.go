@@ -119,7 +119,7 @@ func (m *Meter) Lab(o Observer, values []float64) Lab {
 // Lab converts to L*a*b* against a white (CIE 15:2004, 8.2.1).
 func (c XYZ) Lab(white XYZ) Lab {
 	fx, fy, fz := cubeRoot(c.X/white.X), cubeRoot(c.Y/white.Y), cubeRoot(c.Z/white.Z)
-	return Lab{L: 116*fy - 16, A: 500 * (fx - fy), B: 200 * (fy - fz)}
+	return Lab{L: float64(116*fy) - 16, A: 500 * (fx - fy), B: 200 * (fy - fz)}
 }
 
 // cubeRoot is f of CIE 15:2004 (8.6): the cube root, continued linearly below (24/116)³.
@@ -128,7 +128,7 @@ func cubeRoot(t float64) float64 {
 	if t > edge*edge*edge {
 		return math.Cbrt(t)
 	}
-	return 841.0/108*t + 16.0/116
+	return float64(841.0/108*t) + 16.0/116
 }
 
 // RenderingIndex returns Ra of D65 after a transmittance given over the whole padded grid, with

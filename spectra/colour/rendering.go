@@ -10,13 +10,13 @@ import (
 type uv struct{ u, v float64 }
 
 func (c XYZ) uv() uv {
-	d := c.X + 15*c.Y + 3*c.Z
+	d := c.X + float64(15*c.Y) + float64(3*c.Z)
 	return uv{4 * c.X / d, 6 * c.Y / d}
 }
 
 // cd returns the coefficients of the chromatic adaptation of CIE 13.3-1995, 5.7.
 func (p uv) cd() (c, d float64) {
-	return (4 - p.u - 10*p.v) / p.v, (1.708*p.v + 0.404 - 1.481*p.u) / p.v
+	return (4 - p.u - float64(10*p.v)) / p.v, (float64(1.708*p.v) + 0.404 - float64(1.481*p.u)) / p.v
 }
 
 // reference13 is a reference illuminant of CIE 13.3 with the samples seen under it.
@@ -31,7 +31,7 @@ type uvw struct{ u, v, w float64 }
 
 // space returns U*V*W* of a chromaticity and Y against a white (CIE 13.3-1995, 5.8).
 func space(p, white uv, y float64) uvw {
-	w := 25*math.Cbrt(y) - 17
+	w := float64(25*math.Cbrt(y)) - 17
 	return uvw{13 * w * (p.u - white.u), 13 * w * (p.v - white.v), w}
 }
 
@@ -53,14 +53,14 @@ func (r reference13) index(test XYZ, seen [samples]XYZ) float64 {
 	var sum float64
 	for i, s := range seen {
 		ci, di := s.uv().cd()
-		a, b := r.c/c*ci, r.d/d*di
+		a, b := float64(r.c/c*ci), float64(r.d/d*di)
 		adapted := uv{
-			u: (10.872 + 0.404*a - 4*b) / (16.518 + 1.481*a - b),
-			v: 5.520 / (16.518 + 1.481*a - b),
+			u: (10.872 + float64(0.404*a) - float64(4*b)) / (16.518 + float64(1.481*a) - b),
+			v: 5.520 / (16.518 + float64(1.481*a) - b),
 		} // CIE 13.3-1995, 5.7
 		k, ref := space(adapted, r.white, s.Y*scale), r.samples[i]
 		du, dv, dw := k.u-ref.u, k.v-ref.v, k.w-ref.w
-		sum += 100 - 4.6*math.Sqrt(du*du+dv*dv+dw*dw)
+		sum += 100 - float64(4.6*math.Sqrt(float64(du*du)+float64(dv*dv)+float64(dw*dw)))
 	}
 	return sum / samples
 }
@@ -122,7 +122,7 @@ func daylight(kelvin float64) []float64 {
 	s0, s1, s2 := onObserver("s0"), onObserver("s1"), onObserver("s2")
 	out := make([]float64, len(s0))
 	for i := range out {
-		out[i] = s0[i] + m1*s1[i] + m2*s2[i]
+		out[i] = s0[i] + float64(m1*s1[i]) + float64(m2*s2[i])
 	}
 	return out
 }
