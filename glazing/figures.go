@@ -75,7 +75,7 @@ func opticalFigures() []Figure {
 		{Key: "solar.reflectance_inside", Alias: "solar_inside", Symbol: "ρe′", Places: 2, Small: true, Clause: solarRho,
 			Meaning: "solar direct reflectance, inside", Value: whole(func(r *Rating) Value { return r.Solar.ReflectanceInside })},
 		{Key: "solar.absorptance.#", Alias: "absorptance", Symbol: "αe", Places: 2, Small: true, Per: PerPane, Clause: "EN 410, 5.4.5",
-			Meaning: "solar absorptance of a pane", Value: func(r *Rating, i int) Value { return r.Absorptance[i] }},
+			Meaning: "solar absorptance", Value: func(r *Rating, i int) Value { return r.Absorptance[i] }},
 		{Key: "solar.conductances_w_m2k.#", Alias: "conductance", Symbol: "Λ", Unit: "W/(m²·K)", Places: 3, Per: PerGap, Clause: "EN 410, 5.4.6",
 			Meaning: "conductance between two panes, as g uses it", Value: func(r *Rating, i int) Value {
 				if i < len(r.Heat.Conductances) {
@@ -111,15 +111,15 @@ func colourFigures() []Figure {
 		ten            bool
 		get            func(r *Rating) Colours
 	}{
-		{"transmitted", "transmitted", "light transmitted", false, func(r *Rating) Colours { return r.Transmitted }},
-		{"reflected_outside", "outside", "light reflected outside", false, func(r *Rating) Colours { return r.Outside }},
-		{"reflected_inside", "inside", "light reflected inside", false, func(r *Rating) Colours { return r.Inside }},
-		{"transmitted_10deg", "transmitted10", "light transmitted, 10° observer", true, func(r *Rating) Colours { return r.Transmitted }},
-		{"reflected_outside_10deg", "outside10", "light reflected outside, 10° observer", true, func(r *Rating) Colours { return r.Outside }},
-		{"reflected_inside_10deg", "inside10", "light reflected inside, 10° observer", true, func(r *Rating) Colours { return r.Inside }},
+		{"transmitted", "transmitted", "transmitted", false, func(r *Rating) Colours { return r.Transmitted }},
+		{"reflected_outside", "outside", "reflected outside", false, func(r *Rating) Colours { return r.Outside }},
+		{"reflected_inside", "inside", "reflected inside", false, func(r *Rating) Colours { return r.Inside }},
+		{"transmitted_10deg", "transmitted10", "transmitted, 10° observer", true, func(r *Rating) Colours { return r.Transmitted }},
+		{"reflected_outside_10deg", "outside10", "reflected outside, 10° observer", true, func(r *Rating) Colours { return r.Outside }},
+		{"reflected_inside_10deg", "inside10", "reflected inside, 10° observer", true, func(r *Rating) Colours { return r.Inside }},
 	} {
 		for axis, a := range []struct{ name, symbol, meaning string }{
-			{"l", "L*", "lightness L* of "}, {"a", "a*", "a* (green to red) of "}, {"b", "b*", "b* (blue to yellow) of "},
+			{"l", "L*", "lightness, "}, {"a", "a*", "green to red, "}, {"b", "b*", "blue to yellow, "},
 		} {
 			list = append(list, Figure{
 				Key: "colour." + c.key + "." + a.name, Alias: a.name + "_" + c.alias, Symbol: a.symbol, Places: 1,
@@ -159,12 +159,12 @@ func thermalFigures() []Figure {
 		places                                    int
 		get                                       func(r *Rating, i int) float64
 	}{
-		{"conductance_w_m2k", "gap_conductance", "hs", "W/(m²·K)", "conductance of a gap", "EN 673, 5.1", 3, func(r *Rating, i int) float64 { return r.Gaps[i].Total }},
-		{"radiative_w_m2k", "gap_radiative", "hr", "W/(m²·K)", "radiative conductance of a gap", "EN 673, 5.2", 3, func(r *Rating, i int) float64 { return r.Gaps[i].Radiative }},
-		{"convective_w_m2k", "gap_convective", "hg", "W/(m²·K)", "gas conductance of a gap", "EN 673, 5.3", 3, func(r *Rating, i int) float64 { return r.Gaps[i].Convective }},
-		{"nusselt", "nusselt", "Nu", "", "Nusselt number of a gap", "EN 673, 5.3", 3, func(r *Rating, i int) float64 { return r.Gaps[i].Nusselt }},
-		{"rayleigh", "rayleigh", "Gr·Pr", "", "Rayleigh number of a gap", "EN 673, 5.3", 0, func(r *Rating, i int) float64 { return r.Gaps[i].Rayleigh }},
-		{"temperature_drop_k", "drop", "ΔT", "K", "temperature drop over a gap", "EN 673, 5.3", 2, func(r *Rating, i int) float64 { return float64(r.Gaps[i].Drop) }},
+		{"conductance_w_m2k", "gap_conductance", "hs", "W/(m²·K)", "conductance", "EN 673, 5.1", 3, func(r *Rating, i int) float64 { return r.Gaps[i].Total }},
+		{"radiative_w_m2k", "gap_radiative", "hr", "W/(m²·K)", "radiative conductance", "EN 673, 5.2", 3, func(r *Rating, i int) float64 { return r.Gaps[i].Radiative }},
+		{"convective_w_m2k", "gap_convective", "hg", "W/(m²·K)", "gas conductance", "EN 673, 5.3", 3, func(r *Rating, i int) float64 { return r.Gaps[i].Convective }},
+		{"nusselt", "nusselt", "Nu", "", "Nusselt number", "EN 673, 5.3", 3, func(r *Rating, i int) float64 { return r.Gaps[i].Nusselt }},
+		{"rayleigh", "rayleigh", "Gr·Pr", "", "Rayleigh number", "EN 673, 5.3", 0, func(r *Rating, i int) float64 { return r.Gaps[i].Rayleigh }},
+		{"temperature_drop_k", "drop", "ΔT", "K", "temperature drop", "EN 673, 5.3", 2, func(r *Rating, i int) float64 { return float64(r.Gaps[i].Drop) }},
 	} {
 		list = append(list, Figure{Key: "gaps.#." + g.key, Alias: g.alias, Symbol: g.symbol, Unit: g.unit, Places: g.places, Per: PerGap,
 			Clause: g.clause, Meaning: g.meaning, Value: func(r *Rating, i int) Value {

@@ -296,7 +296,7 @@ func workU(r *Rating) Chapter {
 	glass := workGlass(r)
 	total := resistance(he, hi, &glass, r.Gaps, 1/r.U.Number, "EN 673 (1), (2)")
 	return Chapter{Title: "U-value of the centre of the glass",
-		Note: fmt.Sprintf("U rounded to %d decimal(s): %s W/(m²·K)", r.Method.Basis.uPlaces, PrintRounded(r.U.Number, r.Method.Basis.uPlaces)),
+		Note: "rounded as EN 673 rounds: " + PrintRounded(r.U.Number, r.Method.Basis.uPlaces) + " W/(m²·K)",
 		Steps: []Step{outer(r, he), inner(r, r.Method.Basis.u, hi), glass, total,
 			{Symbol: "U", Meaning: "thermal transmittance", Formula: "1/R", Numbers: "1/" + put(total.Value), Value: r.U.Number, Unit: "W/(m²·K)", Clause: "EN 673 (1)"}}}
 }

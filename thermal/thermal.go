@@ -20,9 +20,6 @@ import (
 	"math"
 )
 
-// Kelvin is an absolute temperature.
-type Kelvin float64
-
 // Delta is a difference of two temperatures, in K.
 type Delta float64
 

@@ -103,13 +103,13 @@ func allFigures(b *bytes.Buffer, figures []glazing.Figure, r *glazing.Rating) {
 			meaning := f.Meaning
 			switch f.Per {
 			case glazing.PerPane:
-				meaning += " " + strconv.Itoa(k+1)
+				meaning += ", pane " + strconv.Itoa(k+1)
 			case glazing.PerGap:
 				meaning += ", gap " + strconv.Itoa(k+1)
 			case glazing.PerSurface:
 				meaning += ", surface " + strconv.Itoa(k+1)
 			}
-			line := "  " + text.Pad(f.Symbol, 8, ' ') + text.Pad(meaning, 46, ' ') + text.AlignRight.Apply(f.Print(r, k), 7) + " " + f.Unit
+			line := "  " + text.Pad(f.Symbol, 8, ' ') + text.Pad(meaning, 54, ' ') + text.AlignRight.Apply(f.Print(r, k), 7) + " " + f.Unit
 			b.WriteString(strings.TrimRight(line, " ") + "\n")
 		}
 	}

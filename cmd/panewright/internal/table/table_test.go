@@ -58,7 +58,7 @@ func TestAddedFigureAppears(t *testing.T) {
 		}
 	}
 	explained := string(Explain(r))
-	for _, want := range []string{"an invented figure", "one a pane 2"} {
+	for _, want := range []string{"an invented figure", "one a pane, pane 2"} {
 		if !strings.Contains(explained, want) {
 			t.Errorf("explain lacks %q", want)
 		}
