@@ -8,8 +8,8 @@ import (
 	"panewright/thermal"
 )
 
-// A Basis is a family of standards used together. The rows of bases are all there are; to add
-// one, add a row.
+// A Basis is a family of standards used together. To add one, add a variable below and name it in
+// Bases.
 type Basis struct {
 	Name     string
 	Editions string // as printed on every output
@@ -17,6 +17,7 @@ type Basis struct {
 	solar    func() spectra.Weighting
 	u, g     surfaces // of the U-value and of the secondary heat
 	uPlaces  int      // decimals of a printed U-value
+	rounding string   // the standard that rounds U so
 	// balance: U and g come from the detailed heat balance of ISO 15099.
 	balance bool
 }
@@ -24,8 +25,8 @@ type Basis struct {
 // surfaces are the coefficients of a basis: he, and hi = convection + radiation·ε/0.837, in
 // W/(m²·K).
 type surfaces struct {
-	outside                      float64
-	insideConvection, insideRadi float64
+	outside                           float64
+	insideConvection, insideRadiation float64
 }
 
 // The bases.
@@ -33,15 +34,15 @@ var (
 	EN = Basis{
 		Name: "en", Editions: "EN 410:2011, EN 673:2011, EN 12898",
 		light: spectra.LightEN410, solar: spectra.SolarEN410,
-		u: surfaces{25, 3.6, 4.1}, g: surfaces{25, 3.6, 4.1}, uPlaces: 1,
+		u: surfaces{25, 3.6, 4.1}, g: surfaces{25, 3.6, 4.1}, uPlaces: 1, rounding: "EN 673",
 	}
 	ISO = Basis{
 		Name: "iso", Editions: "ISO 9050:2003, ISO 10292, EN 12898",
 		light: spectra.LightEN410, solar: spectra.SolarEN410,
-		u: surfaces{23, 3.6, 4.4}, g: surfaces{23, 3.6, 4.4}, uPlaces: 1,
+		u: surfaces{23, 3.6, 4.4}, g: surfaces{23, 3.6, 4.4}, uPlaces: 1, rounding: "ISO 10292",
 	}
 	NA = Basis{
-		Name: "na", Editions: "CIE D65 at 5 nm, ASTM G173-03 global tilt (choice of column from memory), EN 12898",
+		Name: "na", Editions: "CIE D65 at 5 nm, ASTM G173-03 global tilt (choice of column from memory), UV, damage and skin by EN 410:2011, EN 12898",
 		light: spectra.LightCIE, solar: spectra.SolarG173, uPlaces: 2, balance: true,
 	}
 	ISO15099 = Basis{
@@ -74,7 +75,7 @@ func BasisNamed(name string) (Basis, error) {
 
 // inside returns hi for a room-side corrected emissivity.
 func (s surfaces) inside(emissivity float64) float64 {
-	return thermal.Inside(s.insideConvection, s.insideRadi, emissivity)
+	return thermal.Inside(s.insideConvection, s.insideRadiation, emissivity)
 }
 
 const noBalance = "needs the detailed heat balance of ISO 15099, which this version does not have"

@@ -62,16 +62,6 @@ var cautionRules = []cautionRule{
 		"Invented spectra stand behind these figures: they describe no product and must not be specified.")},
 	{"modelled", "a pane's spectrum is marked modelled", fromPanes(ModelledOrigin,
 		"Modelled spectra stand behind these figures: they were computed, not measured.")},
-	{"missing_data", "U or g is unknown", func(all []Rating, i int) string {
-		r := &all[i]
-		switch {
-		case !r.U.Known && !r.G.Known && r.U.Why == r.G.Why:
-			return "No U-value and no g-value: " + r.U.Why + "."
-		case !r.U.Known:
-			return "No U-value: " + r.U.Why + "."
-		}
-		return ""
-	}},
 	{"emissivity_below_table", "a normal emissivity lies below the table of EN 12898", func(all []Rating, i int) string {
 		return facesWhere(&all[i], func(e Emissivity) bool {
 			if !e.Normal.Known {
@@ -93,10 +83,10 @@ var cautionRules = []cautionRule{
 		if hidden.RateInto(&upright, r.State) != nil {
 			return ""
 		}
-		return fmt.Sprintf("U is that of the tilt of %.6g°; upright it is %.2f W/(m²·K). g is computed with the conductance of vertical gaps at every tilt, as EN 410 and ISO 9050 have it.",
-			r.Makeup.Tilt.Degrees(), upright.U.Number)
+		return fmt.Sprintf("U is that of the tilt of %.6g°; upright it is %s W/(m²·K). g is computed with the conductance of vertical gaps at every tilt, as EN 410 and ISO 9050 have it.",
+			r.Makeup.Tilt.Degrees(), PrintRounded(upright.U.Number, 2))
 	}},
-	{"annealed_absorbing", "αe of a pane above 0.5 in any tint, annealed or of unknown treatment", func(all []Rating, i int) string {
+	{"annealed_absorbing", "αe above 0.5 in any tint, annealed or treatment unknown", func(all []Rating, i int) string {
 		return panesWhere(all, func(r *Rating, k int) bool {
 			t := r.Makeup.Panes[k].Pane.HeatTreatment
 			return r.Absorptance[k].Known && r.Absorptance[k].Number > absorbingAlpha && (t == Annealed || t == UnknownTreatment || t == "")
@@ -105,8 +95,8 @@ var cautionRules = []cautionRule{
 	{"reflected_sun", "ρe or ρv outside above 0.15", when(func(r *Rating) bool {
 		return above(r.Solar.ReflectanceOutside, reflectedSun) || above(r.Light.ReflectanceOutside, reflectedSun)
 	}, "Reflects more than 0.15 of sun or light outwards: consider neighbours and traffic, above all where the facade is curved or inclined.")},
-	{"overhead", "tilt below 75 degrees", when(func(r *Rating) bool {
-		return r.Makeup.Tilt.Degrees() < overheadTiltDeg
+	{"overhead", "more than 15 degrees off vertical, either way", when(func(r *Rating) bool {
+		return math.Abs(90-r.Makeup.Tilt.Degrees()) > 90-overheadTiltDeg
 	}, "Overhead or sloped: a laminated inner pane and retention of fragments are usually required.")},
 	{"heat_soak", "toughened and not heat soaked", func(all []Rating, i int) string {
 		return panesWhere(all[i:i+1], func(r *Rating, k int) bool {
@@ -114,7 +104,7 @@ var cautionRules = []cautionRule{
 			return p.HeatTreatment == Toughened && !p.HeatSoaked
 		}, "Toughened glass may break from nickel sulphide inclusions: %s is not stated to be heat soaked (EN 14179).")
 	}},
-	{"climate_load", "three panes or more, or a gap below 10 mm with another", when(func(r *Rating) bool {
+	{"climate_load", "three panes or more, or a gap below 10 mm", when(func(r *Rating) bool {
 		return len(r.Makeup.Panes) > 2 || slices.ContainsFunc(r.Makeup.Gaps, func(g Gap) bool { return g.WidthMM < narrowGapMM })
 	}, "Sealed gaps load their panes when temperature, weather and altitude change; not assessed here.")},
 	{"power_failure", "a pane switches", when(func(r *Rating) bool { return r.Makeup.Tintable() },
@@ -158,12 +148,50 @@ func cautionsOf(all []Rating, i int) []Caution {
 		}
 	}
 	out = append(out, r.Ready.spectral[r.State]...)
+	out = append(out, reasons(r, out)...)
 	for k, p := range r.Makeup.Panes {
 		for _, c := range p.Pane.Tints[r.Ready.States[r.State].Tints[k]].Spectrum.Cautions {
 			if !slices.Contains(out, c) {
 				out = append(out, c)
 			}
 		}
+	}
+	return out
+}
+
+// reasons returns why figures are unknown, where no caution says so already. The emissivities that
+// a given one leaves open are none.
+func reasons(r *Rating, said []Caution) (out []Caution) {
+	figures := map[string][]string{} // by reason
+	var order []string
+	for _, f := range Figures() {
+		if f.Value == nil || f.Symbol == "εn" || f.Symbol == "εh" {
+			continue
+		}
+		for k := range f.Count(r) {
+			v := f.Value(r, k)
+			if v.Known || slices.ContainsFunc(said, func(c Caution) bool { return strings.Contains(c.Text, v.Why) }) {
+				continue
+			}
+			if figures[v.Why] == nil {
+				order = append(order, v.Why)
+			}
+			if !slices.Contains(figures[v.Why], f.Symbol) {
+				figures[v.Why] = append(figures[v.Why], f.Symbol)
+			}
+		}
+	}
+	for _, why := range order {
+		out = append(out, Caution{Code: "missing_data", Text: "No figure for " + strings.Join(figures[why], ", ") + ": " + why + "."})
+	}
+	return out
+}
+
+// CautionCodes returns the code of each caution that depends on the figures, and when it applies.
+func CautionCodes() [][2]string {
+	var out [][2]string
+	for _, r := range cautionRules {
+		out = append(out, [2]string{r.code, r.when})
 	}
 	return out
 }
@@ -223,8 +251,8 @@ func tiltInterpolated(all []Rating, i int) string {
 		if other.RateInto(&reading, r.State) != nil || !reading.U.Known || math.IsNaN(reading.U.Number) {
 			return ""
 		}
-		text = fmt.Sprintf("EN 673 gives its constants for 0, 45 and 90°; at %.6g° A and n were interpolated. Interpolating the Nusselt number instead gives U %.2f and not %.2f W/(m²·K).",
-			deg, reading.U.Number, r.U.Number)
+		text = fmt.Sprintf("EN 673 gives its constants for 0, 45 and 90°; at %.6g° A and n were interpolated. Interpolating the Nusselt number instead gives U %s and not %s W/(m²·K).",
+			deg, PrintRounded(reading.U.Number, 2), PrintRounded(r.U.Number, 2))
 	}
 	if deg > 90 {
 		text += fmt.Sprintf(" EN 673 knows no tilt beyond 90°; the gap was taken as at %.6g°, with the direction of heat that was given.", 180-deg)

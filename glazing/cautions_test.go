@@ -70,7 +70,7 @@ func TestThresholds(t *testing.T) {
 		{"τv 0.01005", func(m *Makeup) { optics(m, 0.01005, 0.1) }, nil},
 		{"εn 0.0299 below the table", func(m *Makeup) { m.Panes[0].Pane.Tints[0].Front = GivenNormalEmissivity(0.0299) }, []string{"emissivity_below_table", "radio"}},
 		{"εn 0.0301 within the table", func(m *Makeup) { m.Panes[0].Pane.Tints[0].Front = GivenNormalEmissivity(0.0301) }, []string{"radio"}},
-		{"no emissivity", func(m *Makeup) { m.Panes[0].Pane.Tints[0].Back = NoEmissivity() }, []string{"missing_data"}},
+		{"no emissivity", func(m *Makeup) { m.Panes[0].Pane.Tints[0].Back = NoEmissivity() }, []string{"missing_data", "missing_data"}},
 		{"tilted double at 45°", func(m *Makeup) { double(m, 16); m.Tilt = TiltDeg(45) }, []string{"overhead", "tilt_vertical_g", "colour_of_dark"}},
 		{"tilted double at 60°", func(m *Makeup) { double(m, 16); m.Tilt = TiltDeg(60) }, []string{"overhead", "tilt_vertical_g", "tilt_interpolated", "colour_of_dark"}},
 		{"double at 100°", func(m *Makeup) { double(m, 16); m.Tilt = TiltDeg(100) }, []string{"tilt_vertical_g", "tilt_interpolated", "colour_of_dark"}},

@@ -104,7 +104,7 @@ func opticalFigures() []Figure {
 }
 
 func colourFigures() []Figure {
-	list := []Figure{{Key: "colour.ra", Alias: "ra", Symbol: "Ra", Places: 0, Column: 8, Clause: "EN 410, 5.6; CIE 13.3",
+	list := []Figure{{Key: "colour.ra", Alias: "ra", Symbol: "Ra", Places: 0, Column: 8, Clause: "EN 410, 5.6; ISO 9050; CIE 13.3",
 		Meaning: "general colour rendering index", Value: whole(func(r *Rating) Value { return r.Ra })}}
 	for _, c := range []struct {
 		key, alias, of string

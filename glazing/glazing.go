@@ -56,7 +56,6 @@ const (
 	Annealed         HeatTreatment = "annealed"
 	HeatStrengthened HeatTreatment = "heat-strengthened"
 	Toughened        HeatTreatment = "toughened"
-	DefaultGlassKGM3               = 2500 // density of soda-lime glass, kg/m³ (EN 572-1, from memory)
 )
 
 // The properties of soda-lime glass that stand where none are given.
@@ -84,8 +83,8 @@ type Pane struct {
 	HeatSoaked    bool
 	Origin        Origin
 	Tints         []Tint // at least one; a pane that does not switch has one, with no name
-	// TauInfrared is the transmittance in the thermal infrared of a sheet that is not opaque
-	// there. EN 673 cannot treat it: with such a pane U and g are unknown.
+	// TauInfrared is the transmittance in the thermal infrared, if the user gave it, of a sheet
+	// that is not opaque there. EN 673 cannot treat it: with such a pane U and g are unknown.
 	TauInfrared float64
 	Attributes  map[string]float64 // anything numeric of the user's
 }
@@ -136,9 +135,10 @@ func GivenNormalEmissivity(normal float64) Emissivity {
 	return e
 }
 
-// InfraredEmissivity follows from the reflectance of a face from 5 to 50 µm (EN 12898).
-func InfraredEmissivity(reflectance spectra.Curve) Emissivity {
-	e := fromNormal(spectra.NormalEmissivity(reflectance))
+// InfraredEmissivity follows from the reflectance of a face from 5 to 50 µm (EN 12898), and from
+// the transmittance of a sheet that is not opaque there.
+func InfraredEmissivity(reflectance, transmittance spectra.Curve) Emissivity {
+	e := fromNormal(spectra.NormalEmissivity(reflectance, transmittance))
 	e.Source = EmissivityInfrared
 	return e
 }
@@ -155,17 +155,25 @@ func NoEmissivity() Emissivity {
 }
 
 // Tilt of a glazing; the zero value is vertical.
-type Tilt struct{ fromVertical float64 }
+type Tilt struct {
+	deg   float64
+	given bool
+}
 
 // TiltDeg returns the tilt of a glazing in degrees: 90 vertical, 0 horizontal with the outside
 // above.
-func TiltDeg(deg float64) Tilt { return Tilt{90 - deg} }
+func TiltDeg(deg float64) Tilt { return Tilt{deg, true} }
 
 // Degrees returns the tilt: 90 vertical, 0 horizontal with the outside above.
-func (t Tilt) Degrees() float64 { return 90 - t.fromVertical }
+func (t Tilt) Degrees() float64 {
+	if t.given {
+		return t.deg
+	}
+	return 90
+}
 
 // Vertical reports whether the tilt is 90°.
-func (t Tilt) Vertical() bool { return t.fromVertical == 0 }
+func (t Tilt) Vertical() bool { return t.Degrees() == 90 }
 
 // A Makeup is a sequence of panes and gaps from outside to inside.
 type Makeup struct {
@@ -224,6 +232,23 @@ func (p *Pane) TintNames() []string {
 		names = append(names, t.Name)
 	}
 	return names
+}
+
+// TintNamed returns the index of a tint, or -1. Where no tint is called clear or full, clear is
+// that of the highest and full that of the lowest light transmittance.
+func (p *Pane) TintNamed(name string) int {
+	if at := slices.Index(p.TintNames(), name); at >= 0 || (name != "clear" && name != "full") || !p.Tintable() {
+		return at
+	}
+	light := spectra.LightEN410()
+	best, at := 0.0, -1
+	for i := range p.Tints {
+		tau := light.Mean(p.Tints[i].Spectrum.Tau)
+		if at < 0 || (name == "clear" && tau > best) || (name == "full" && tau < best) {
+			best, at = tau, i
+		}
+	}
+	return at
 }
 
 // ThicknessMM returns the thickness of the pane, interlayers included.
@@ -310,7 +335,7 @@ func (m *Makeup) States() ([]State, error) {
 			}
 			continue
 		case p.Tint != "":
-			at := slices.Index(p.Pane.TintNames(), p.Tint)
+			at := p.Pane.TintNamed(p.Tint)
 			if at < 0 {
 				return nil, fmt.Errorf("pane %d (%s) has no tint %q", k+1, p.Pane.ID, p.Tint)
 			}
@@ -362,10 +387,18 @@ func (m *Makeup) check() error {
 		if !(g.WidthMM > 0) {
 			return fmt.Errorf("make-up %s: gap %d is %g mm wide; a width is above 0", m.ID, i+1, g.WidthMM)
 		}
+		if len(g.Gas) == 0 {
+			return fmt.Errorf("make-up %s: gap %d has no gas", m.ID, i+1)
+		}
 	}
 	for i, p := range m.Panes {
 		if p.Pane == nil || len(p.Pane.Tints) == 0 || len(p.Pane.Plies) == 0 {
 			return fmt.Errorf("make-up %s: pane %d has no spectrum or no thickness", m.ID, i+1)
+		}
+		for _, y := range p.Pane.Plies {
+			if !(y.ThicknessMM > 0 && y.ConductivityWMK > 0) {
+				return fmt.Errorf("make-up %s: pane %d (%s) has a ply without thickness or conductivity", m.ID, i+1, p.Pane.ID)
+			}
 		}
 	}
 	return nil

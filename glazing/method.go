@@ -53,7 +53,7 @@ func NewMethod(b Basis, o Options) *Method {
 	m := &Method{Basis: b, Options: o}
 	weightings := [bandCount]spectra.Weighting{
 		light: b.light(), solar: b.solar(), uv: spectra.UV(),
-		damage: spectra.Damage(600), damage700: spectra.Damage(700), skin: spectra.Skin(),
+		damage: spectra.Damage(), damage700: spectra.Damage700(), skin: spectra.Skin(),
 	}
 	if o.Sun != nil {
 		weightings[solar] = *o.Sun
@@ -70,16 +70,8 @@ func NewMethod(b Basis, o Options) *Method {
 	return m
 }
 
-// Weightings returns the weightings of the method, light first, then solar.
-func (m *Method) Weightings() []spectra.Weighting {
-	var out []spectra.Weighting
-	for _, b := range m.bands {
-		out = append(out, b.weighting)
-	}
-	return out
-}
-
-// WavelengthsNM returns the wavelengths on which the method combines panes.
+// WavelengthsNM returns the wavelengths on which the method combines panes; it must not be
+// written to.
 func (m *Method) WavelengthsNM() []float64 { return m.grid.NM }
 
 // outside returns he of one of the basis's two sets of surfaces.
@@ -138,7 +130,11 @@ func (m *Method) Ready(mk *Makeup) (*Ready, error) {
 		vertical: thermal.ConvectionAt(90, thermal.Up),
 	}
 	for _, p := range mk.Panes {
-		r.sampled = append(r.sampled, samplePane(p, m.grid))
+		var tints []optics.Pane
+		for i := range p.Pane.Tints {
+			tints = append(tints, p.sample(i, m.grid))
+		}
+		r.sampled = append(r.sampled, tints)
 		r.glass = append(r.glass, p.Pane.Resistance())
 		r.mm += p.Pane.ThicknessMM()
 		r.kg += p.Pane.MassKGM2()
@@ -154,23 +150,19 @@ func (m *Method) Ready(mk *Makeup) (*Ready, error) {
 	return r, nil
 }
 
-// samplePane returns each tint of a pane on a grid, seen from outside as the pane is placed.
-func samplePane(p Placed, g spectra.Grid) []optics.Pane {
-	var out []optics.Pane
-	for i := range p.Pane.Tints {
-		s := &p.Pane.Tints[i].Spectrum
-		on := func(c spectra.Curve) []float64 {
-			values := make([]float64, g.Padded())
-			c.Sample(values[:g.Len()], g.NM)
-			return values
-		}
-		pane := optics.Pane{T: on(s.Tau), Ro: on(s.RhoFront), Ri: on(s.RhoBack)}
-		if p.Turned {
-			pane.Ro, pane.Ri = pane.Ri, pane.Ro
-		}
-		out = append(out, pane)
+// sample returns one tint of a placed pane on a grid, seen from outside.
+func (p Placed) sample(tint int, g spectra.Grid) optics.Pane {
+	s := &p.Pane.Tints[tint].Spectrum
+	on := func(c spectra.Curve) []float64 {
+		values := make([]float64, g.Padded())
+		c.Sample(values[:g.Len()], g.NM)
+		return values
 	}
-	return out
+	pane := optics.Pane{T: on(s.Tau), Ro: on(s.RhoFront), Ri: on(s.RhoBack)}
+	if p.Turned {
+		pane.Ro, pane.Ri = pane.Ri, pane.Ro
+	}
+	return pane
 }
 
 // faces returns the emissivities of a placed pane's outer and inner face.
@@ -198,10 +190,10 @@ func (r *Ready) addState(s State, gases []thermal.Gas) {
 	m := r.Makeup
 	n := len(m.Panes)
 	gaps := make([]thermal.Gap, n-1)
-	why := ""
+	var blank []string // faces of unknown emissivity
 	need := func(e Emissivity, pane int, inner bool) float64 {
-		if !e.Corrected.Known && why == "" {
-			why = "the emissivity of " + m.faceName(pane, inner) + " is not known"
+		if !e.Corrected.Known {
+			blank = append(blank, m.faceName(pane, inner))
 		}
 		return e.Corrected.Number
 	}
@@ -212,12 +204,20 @@ func (r *Ready) addState(s State, gases []thermal.Gas) {
 			Emissivity: [2]float64{need(outer, k, true), need(inner, k+1, false)}}
 	}
 	_, room := m.Panes[n-1].faces(s.Tints[n-1])
-	if !room.Corrected.Known {
-		room.Corrected.Why = "the emissivity of " + m.faceName(n-1, true) + " is not known"
+	why := ""
+	if blank != nil {
+		if !room.Corrected.Known && r.Method.Options.InsideWM2K == 0 {
+			blank = append(blank, m.faceName(n-1, true))
+		}
+		why = "no emissivity is known of " + strings.Join(blank, ", ")
 	}
-	for _, p := range m.Panes {
-		if p.Pane.TauInfrared > 0 && why == "" {
-			why = "pane " + p.Pane.ID + " lets infrared through (tau_ir); " + noBalance
+	if !room.Corrected.Known {
+		room.Corrected.Why = "no emissivity is known of " + m.faceName(n-1, true)
+	}
+	for k, p := range m.Panes {
+		if p.Pane.TauInfrared > 0 || spectra.InfraredMean(p.Pane.Tints[s.Tints[k]].Spectrum.InfraredTau) > opaque {
+			why = "pane " + p.Pane.ID + " lets infrared through; " + noBalance
+			break
 		}
 	}
 	if r.Method.Basis.balance {
@@ -228,6 +228,10 @@ func (r *Ready) addState(s State, gases []thermal.Gas) {
 	r.coverage = append(r.coverage, r.cover(s))
 }
 
+// opaque is the infrared transmittance up to which a sheet counts as opaque; common practice, no
+// source.
+const opaque = 0.005
+
 // endTolerance is the share of a band's weight that may lie beyond an end of a spectrum, whose
 // last value is then held.
 const endTolerance = 0.001
@@ -236,35 +240,44 @@ const endTolerance = 0.001
 // an end is held or a figure stays unknown.
 func (r *Ready) cover(s State) coverage {
 	var c coverage
+	last := len(r.Makeup.Panes) - 1
 	for i := range c {
 		w := r.Method.coverageOf(i)
-		var all string // of the first spectrum that does not reach
 		for k, p := range r.Makeup.Panes {
-			spectrum := p.Pane.Tints[s.Tints[k]].Spectrum
-			front, back := &c[i].ro, &c[i].ri
+			spectrum := &p.Pane.Tints[s.Tints[k]].Spectrum
+			outer, inner := spectrum.RhoFront, spectrum.RhoBack
 			if p.Turned {
-				front, back = back, front
+				outer, inner = inner, outer
 			}
-			for _, x := range []struct {
-				what  string
-				curve spectra.Curve
-				why   *string
-			}{{"tau", spectrum.Tau, &c[i].t}, {"rho_front", spectrum.RhoFront, front}, {"rho_back", spectrum.RhoBack, back}} {
-				missing := r.reach(p.Pane.nameOf(s.Tints[k]), x.what, x.curve, w)
-				if missing == "" {
-					continue
-				}
-				if all == "" {
-					all = missing
-				}
-				*x.why = missing
+			// A figure needs the transmittance of the panes that its radiation passes, and the
+			// reflectances of the faces that it meets.
+			t := []spectra.Curve{spectrum.Tau}
+			var ro, ri []spectra.Curve
+			if k > 0 {
+				t = append(t, outer)
+				ri = append(ri, spectrum.Tau, outer)
 			}
-		}
-		if len(r.Makeup.Panes) > 1 && all != "" {
-			c[i].t, c[i].ro, c[i].ri = all, all, all
+			if k < last {
+				t = append(t, inner)
+				ro = append(ro, spectrum.Tau, inner)
+			}
+			ro, ri = append(ro, outer), append(ri, inner)
+			name := p.Pane.nameOf(s.Tints[k])
+			first(&c[i].t, r.reach(name, w, t))
+			if i == light || i == solar || i == colours { // of the others only transmission is a figure
+				first(&c[i].ro, r.reach(name, w, ro))
+				first(&c[i].ri, r.reach(name, w, ri))
+			}
 		}
 	}
 	return c
+}
+
+// first keeps the first text that is not blank.
+func first(text *string, more string) {
+	if *text == "" {
+		*text = more
+	}
 }
 
 // coverageOf returns the weighting of a band, or of colour.
@@ -283,30 +296,28 @@ func (p *Pane) nameOf(tint int) string {
 	return p.ID
 }
 
-// reach says why a curve does not reach far enough for a weighting, or returns "". Where an end
-// is held, it adds a caution.
-func (r *Ready) reach(pane, what string, c spectra.Curve, w spectra.Weighting) string {
-	first, last := w.NM[0], w.NM[len(w.NM)-1]
-	below, above := w.Missing(c.First(), c.Last())
+// reach says why curves of a pane do not reach far enough for a weighting, or returns "". Where
+// an end is held, it adds a caution.
+func (r *Ready) reach(pane string, w spectra.Weighting, curves []spectra.Curve) string {
+	from, to := curves[0].First(), curves[0].Last()
+	for _, c := range curves[1:] {
+		from, to = max(from, c.First()), min(to, c.Last())
+	}
+	start, end := w.NM[0], w.NM[len(w.NM)-1]
+	below, above := w.Missing(from, to)
 	text := ""
-	for _, end := range []struct {
+	for _, x := range []struct {
 		at, table, share float64
-		verb             string
-		short            bool
-	}{
-		{c.First(), first, below, "begins", c.First() > first},
-		{c.Last(), last, above, "ends", c.Last() < last},
-	} {
-		if !end.short {
-			continue
-		}
-		if end.share >= endTolerance {
-			text = fmt.Sprintf("%s of pane %s %s at %.6g nm; %s needs %.6g to %.6g nm", what, pane, end.verb, end.at, w.Name, first, last)
+		verb, which      string
+	}{{from, start, below, "begins", "first"}, {to, end, above, "ends", "last"}} {
+		switch {
+		case x.share >= endTolerance:
+			text = fmt.Sprintf("the spectrum of pane %s %s at %.6g nm; %s needs %.6g to %.6g nm", pane, x.verb, x.at, w.Name, start, end)
 			r.caution("missing_band", fmt.Sprintf("No figure for %s: %s.", w.Name, text))
-			continue
+		case x.share > 0:
+			r.caution("extended", fmt.Sprintf("The spectrum of pane %s %s at %.6g nm; its %s value was held to %.6g nm for %s (%.2g %% of the weight).",
+				pane, x.verb, x.at, x.which, x.table, w.Name, 100*x.share))
 		}
-		r.caution("extended", fmt.Sprintf("%s of pane %s %s at %.6g nm; its last value was held to %.6g nm for %s (%.2g %% of the weight).",
-			what, pane, end.verb, end.at, end.table, w.Name, 100*end.share))
 	}
 	return text
 }
@@ -335,7 +346,7 @@ func (r *Ready) Spectra(state int, nm []float64) Spectra {
 	lo, hi := 0.0, math.Inf(1)
 	for k, p := range r.Makeup.Panes {
 		tint := r.States[state].Tints[k]
-		panes = append(panes, samplePane(p, grid)[tint])
+		panes = append(panes, p.sample(tint, grid))
 		s := p.Pane.Tints[tint].Spectrum
 		for _, c := range []spectra.Curve{s.Tau, s.RhoFront, s.RhoBack} {
 			lo, hi = max(lo, c.First()), min(hi, c.Last())
@@ -364,7 +375,7 @@ func (r *Ready) Spectra(state int, nm []float64) Spectra {
 func (m *Method) Editions() string {
 	s := m.Basis.Editions
 	if m.Options.Sun != nil {
-		s += "; solar weighting: " + m.Options.Sun.Source
+		s += "; solar weighting: " + m.Options.Sun.Source + "; UV, damage and skin keep the sun of EN 410:2011"
 	}
 	var c []string
 	if !m.Basis.balance {
@@ -372,7 +383,7 @@ func (m *Method) Editions() string {
 		if m.Options.InsideWM2K > 0 {
 			c = append(c, fmt.Sprintf("hi %.6g", m.Options.InsideWM2K))
 		} else {
-			c = append(c, fmt.Sprintf("hi %.6g + %.6g ε/0.837", m.Basis.u.insideConvection, m.Basis.u.insideRadi))
+			c = append(c, fmt.Sprintf("hi %.6g + %.6g ε/0.837", m.Basis.u.insideConvection, m.Basis.u.insideRadiation))
 		}
 		s += "; " + strings.Join(c, ", ") + " W/(m²·K)"
 	}

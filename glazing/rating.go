@@ -7,36 +7,41 @@ import (
 )
 
 // A Rating is all figures of one make-up, in one state, under one basis, with the intermediates
-// that lead to them. The figures are calculated; they are not a certified rating.
+// that lead to them. Transmittances, reflectances and absorptances are fractions of one, at
+// normal incidence, for radiation from outside unless said. The figures are calculated; they are
+// not a certified rating.
 type Rating struct {
 	Makeup *Makeup
 	Method *Method
 	Ready  *Ready
-	State  int
-	Tint   string
+	State  int    // index into Ready.States
+	Tint   string // its name
 
-	ThicknessMM, MassKGM2 float64
+	ThicknessMM, MassKGM2 float64 // of panes and gaps; of panes, kg/m²
 
-	Light, Solar       Band
-	Absorptance        []Value // αe of each pane
-	SecondaryHeat      Value   // qi
-	G                  Value
-	ShadingCoefficient Value // g/0.87
-	LightToSolarGain   Value // τv/g
+	Light              Band    // τv, ρv, ρv′ (EN 410, 5.2 and 5.3)
+	Solar              Band    // τe, ρe, ρe′ (EN 410, 5.4.3 and 5.4.4)
+	Absorptance        []Value // αe of each pane, from outside (EN 410, 5.4.5)
+	SecondaryHeat      Value   // qi (EN 410, 5.4.6)
+	G                  Value   // g = τe + qi (EN 410, 5.4.1)
+	ShadingCoefficient Value   // g/0.87 (EN 410, 5.7)
+	LightToSolarGain   Value   // τv/g
 
-	UV, Damage, Damage700, Skin Value
+	UV                Value // τuv, 300–380 nm (EN 410, 5.5)
+	Damage, Damage700 Value // damage-weighted transmittance to 600 and to 700 nm (CIE 89/3)
+	Skin              Value // skin-weighted transmittance (ISO 9050)
 
-	Ra                           Value
-	Transmitted, Outside, Inside Colours
+	Ra                           Value   // of transmission (CIE 13.3)
+	Transmitted, Outside, Inside Colours // of transmission, and of the reflections on both sides
 
-	Surfaces                  []Emissivity // 2 n faces, from outside
-	OutsideWM2K, InsideWM2K   Value        // of U
-	OutsideGWM2K, InsideGWM2K Value        // of g
-	U                         Value
-	GapsKnown                 bool
-	Gaps                      []thermal.GapState // at the make-up's tilt, as U has them
-	GapsG                     []thermal.GapState // of vertical gaps, as g has them
-	Heat                      thermal.SecondaryHeat
+	Surfaces                  []Emissivity          // of the 2 n faces, from outside
+	OutsideWM2K, InsideWM2K   Value                 // he and hi of U, W/(m²·K)
+	OutsideGWM2K, InsideGWM2K Value                 // he and hi of g, W/(m²·K)
+	U                         Value                 // of the centre of the glass, W/(m²·K) (EN 673)
+	GapsKnown                 bool                  // whether the gaps' figures are; else U.Why tells why not
+	Gaps                      []thermal.GapState    // at the make-up's tilt, as U has them
+	GapsG                     []thermal.GapState    // of vertical gaps, as g has them
+	Heat                      thermal.SecondaryHeat // what leads to qi
 
 	Cautions []Caution // filled by Rate and RateAll, not by RateInto
 
@@ -76,9 +81,6 @@ func (r *Ready) RateAll() ([]Rating, error) {
 	}
 	return ratings, nil
 }
-
-// darkest is the light transmittance below which a colour of transmission means nothing.
-const darkest = 1e-9
 
 // RateInto rates one state into dst, whose memory it reuses: once dst has served a make-up of as
 // many panes, nothing is allocated. Cautions are left empty.
@@ -133,7 +135,7 @@ func (r *Ready) rateOptics(dst *Rating, c *coverage) {
 	switch {
 	case c[colours].t != "":
 		dst.Ra = unknown(c[colours].t)
-	case m.bands[light].Mean(k.T) < darkest:
+	case !(m.meter.XYZ(colour.TwoDegree, k.T).Y > 0):
 		dst.Ra = unknown("no light is transmitted")
 	default:
 		dst.Ra = known(m.meter.RenderingIndex(k.T))
@@ -154,19 +156,14 @@ func (r *Ready) rateHeat(dst *Rating, state int) error {
 	dst.OutsideWM2K, dst.InsideWM2K = known(m.outside(m.Basis.u)), m.inside(m.Basis.u, room)
 	dst.OutsideGWM2K, dst.InsideGWM2K = known(m.outside(m.Basis.g)), m.inside(m.Basis.g, room)
 	if m.Basis.balance {
-		dst.OutsideWM2K, dst.InsideWM2K = unknown(why), unknown(why)
-	}
-	if why == "" && !dst.InsideWM2K.Known {
-		why = dst.InsideWM2K.Why
+		none := unknown(why)
+		dst.OutsideWM2K, dst.InsideWM2K, dst.OutsideGWM2K, dst.InsideGWM2K = none, none, none, none
 	}
 	if why != "" {
-		dst.U = unknown(why)
-		dst.SecondaryHeat, dst.G = unknown(why), unknown(why)
-		dst.ShadingCoefficient, dst.LightToSolarGain = unknown(why), unknown(why)
-		dst.Heat = thermal.SecondaryHeat{A0: 0, B: dst.Heat.B[:0], Conductances: dst.Heat.Conductances[:0]}
-		if dst.GapsKnown {
-			return thermal.SolveGaps(dst.Gaps, gaps, r.tilted)
-		}
+		clear(dst.Gaps)
+		clear(dst.GapsG)
+		dst.Heat = thermal.SecondaryHeat{B: dst.Heat.B[:0], Conductances: dst.Heat.Conductances[:0]}
+		dst.noHeat(why)
 		return nil
 	}
 	if err := thermal.SolveGaps(dst.Gaps, gaps, r.tilted); err != nil {
@@ -181,8 +178,13 @@ func (r *Ready) rateHeat(dst *Rating, state int) error {
 	for _, x := range r.glass {
 		glass += x
 	}
-	dst.U = known(thermal.U(dst.OutsideWM2K.Number, dst.InsideWM2K.Number, glass, dst.Gaps))
 	dst.Heat.Solve(dst.OutsideGWM2K.Number, dst.InsideGWM2K.Number, dst.absorbed, r.glass, dst.GapsG)
+	if !dst.InsideWM2K.Known { // conductances do not need it
+		dst.Heat = thermal.SecondaryHeat{B: dst.Heat.B[:0], Conductances: dst.Heat.Conductances}
+		dst.noHeat(dst.InsideWM2K.Why)
+		return nil
+	}
+	dst.U = known(thermal.U(dst.OutsideWM2K.Number, dst.InsideWM2K.Number, glass, dst.Gaps))
 
 	missing := ""
 	for _, v := range dst.Absorptance {
@@ -202,6 +204,31 @@ func (r *Ready) rateHeat(dst *Rating, state int) error {
 		dst.LightToSolarGain = unknown("g is 0")
 	}
 	return nil
+}
+
+// InTint reports whether the rating is of a tint that somebody named: by its whole name, or by
+// that of each pane that switches and follows no other; clear and full are understood as
+// TintNamed does.
+func (r *Rating) InTint(name string) bool {
+	if name == r.Tint {
+		return true
+	}
+	any := false
+	for k, p := range r.Makeup.Panes {
+		if !p.Pane.Tintable() || p.Tint == SameTint {
+			continue
+		}
+		if any = true; p.Pane.TintNamed(name) != r.Ready.States[r.State].Tints[k] {
+			return false
+		}
+	}
+	return any
+}
+
+// noHeat leaves U, and what follows from heat, unknown.
+func (r *Rating) noHeat(why string) {
+	none := unknown(why)
+	r.U, r.SecondaryHeat, r.G, r.ShadingCoefficient, r.LightToSolarGain = none, none, none, none, none
 }
 
 // shadingReference is g of the 3 to 4 mm clear float glass that shading coefficients refer to

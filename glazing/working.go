@@ -2,6 +2,8 @@ package glazing
 
 import (
 	"fmt"
+	"math"
+	"slices"
 	"strconv"
 	"strings"
 
@@ -54,7 +56,7 @@ func Working(r *Rating) []Chapter {
 	} else {
 		out = append(out, Chapter{Title: "U-value and g-value", Note: "not known: " + r.U.Why})
 	}
-	if r.Method.Basis.Name != EN.Name {
+	if n := r.Method.Basis.Name; n == ISO.Name || n == ISO15099.Name {
 		toISO(out)
 	}
 	return out
@@ -67,8 +69,12 @@ func toISO(chapters []Chapter) {
 			switch s := &c.Steps[i]; {
 			case strings.HasPrefix(s.Clause, "EN 673"):
 				s.Clause = "ISO 10292"
+			case strings.HasPrefix(s.Clause, "EN 410, 5.2"):
+				s.Clause = "ISO 9050, 3.3"
+			case strings.HasPrefix(s.Clause, "EN 410, 5.3"):
+				s.Clause = "ISO 9050, 3.4"
 			case strings.HasPrefix(s.Clause, "EN 410"):
-				s.Clause = "ISO 9050"
+				s.Clause = "ISO 9050, 3.5"
 			}
 		}
 	}
@@ -94,7 +100,10 @@ func workLight(r *Rating) Chapter {
 	b := r.Method.bands[light]
 	s := &WeightedSum{Symbol: "τv", Source: b.weighting.Source, NM: b.weighting.NM, Weight: b.weighting.Weight,
 		Sum: b.Sum(r.stack.T), Total: b.Total}
-	s.Value = r.Ready.Spectra(r.State, s.NM).T
+	for _, nm := range s.NM {
+		at, _ := slices.BinarySearch(r.Method.grid.NM, nm)
+		s.Value = append(s.Value, r.stack.T[at])
+	}
 	c := Chapter{Title: "Light transmittance, one weighted sum written out", Sum: s}
 	if !r.Light.Transmittance.Known {
 		return Chapter{Title: c.Title, Note: "not known: " + r.Light.Transmittance.Why}
@@ -109,7 +118,6 @@ const atNM = 550
 
 func workStack(r *Rating) Chapter {
 	c := Chapter{Title: fmt.Sprintf("The panes combined, at %d nm", atNM)}
-	grid := []float64{atNM}
 	type pane struct{ t, ro, ri float64 }
 	var panes []pane
 	for k, p := range r.Makeup.Panes {
@@ -120,8 +128,8 @@ func workStack(r *Rating) Chapter {
 		}
 		panes = append(panes, x)
 	}
-	s := r.Ready.Spectra(r.State, grid)
-	if !(s.T[0] == s.T[0]) {
+	s := r.Ready.Spectra(r.State, []float64{atNM})
+	if math.IsNaN(s.T[0]) {
 		c.Note = "not known: a spectrum does not reach this wavelength"
 		return c
 	}
@@ -212,7 +220,7 @@ func workGap(r *Rating, k int, states []thermal.GapState, convection thermal.Con
 		{Symbol: "λ", Meaning: "conductivity", Formula: table, Numbers: mixed(conductivity), Value: g.Gas.ConductivityWMK, Unit: "W/(m·K)", Clause: "EN 673, 6.2"},
 		{Symbol: "c", Meaning: "heat capacity", Formula: table, Numbers: mixed(capacity), Value: g.Gas.HeatCapacityJKGK, Unit: "J/(kg·K)", Clause: "EN 673, 6.2"},
 	}
-	drop := Step{Symbol: "ΔT", Meaning: "temperature drop", Formula: "15 K", Numbers: put(thermal.TotalDrop), Value: float64(s.Drop), Unit: "K", Clause: "EN 673, 5.3"}
+	drop := Step{Symbol: "ΔT", Meaning: "temperature drop", Formula: "of the standard", Numbers: put(thermal.TotalDrop), Value: float64(s.Drop), Unit: "K", Clause: "EN 673, 5.3"}
 	if len(states) > 1 {
 		var all []string
 		for i := range states {
@@ -227,12 +235,12 @@ func workGap(r *Rating, k int, states []thermal.GapState, convection thermal.Con
 			Value:   s.Grashof, Clause: "EN 673 (7)"},
 		Step{Symbol: "Pr", Meaning: "Prandtl number", Formula: "µ·c/λ",
 			Numbers: put(g.Gas.ViscosityPaS) + "·" + put(g.Gas.HeatCapacityJKGK) + "/" + put(g.Gas.ConductivityWMK), Value: s.Prandtl, Clause: "EN 673 (8)"},
-		Step{Symbol: "Ra", Meaning: "Rayleigh number", Formula: "Gr·Pr", Numbers: put(s.Grashof) + "·" + put(s.Prandtl), Value: s.Rayleigh, Clause: "EN 673 (6)"},
+		Step{Symbol: "Gr·Pr", Meaning: "Rayleigh number", Formula: "Gr·Pr", Numbers: put(s.Grashof) + "·" + put(s.Prandtl), Value: s.Rayleigh, Clause: "EN 673 (6)"},
 	)
-	nu := Step{Symbol: "Nu", Meaning: "Nusselt number", Formula: "max(1, A·Ra^n)", Value: s.Nusselt, Clause: "EN 673 (6)",
+	nu := Step{Symbol: "Nu", Meaning: "Nusselt number", Formula: "max(1, A·(Gr·Pr)^n)", Value: s.Nusselt, Clause: "EN 673 (6)",
 		Numbers: fmt.Sprintf("max(1, %s·%s^%s)", put(convection.First.A), put(s.Rayleigh), put(convection.First.N))}
 	if convection.Still {
-		nu.Formula, nu.Numbers = "1, for heat flows down", "1"
+		nu.Formula, nu.Numbers = "1, as heat flows down", "1"
 	}
 	hg := fmt.Sprintf("%s·%s/%s", put(s.Nusselt), put(g.Gas.ConductivityWMK), put(g.WidthM))
 	c.Steps = append(steps, nu,
@@ -246,20 +254,20 @@ func workGap(r *Rating, k int, states []thermal.GapState, convection thermal.Con
 }
 
 // inner writes out hi of one of the basis's two sets of surfaces.
-func inner(r *Rating, s surfaces, value float64) Step {
-	step := Step{Symbol: "hi", Meaning: "inside surface coefficient", Value: value, Unit: "W/(m²·K)", Clause: "EN 673, 7"}
+func inner(r *Rating, s surfaces, value float64, clause string) Step {
+	step := Step{Symbol: "hi", Meaning: "inside surface coefficient", Value: value, Unit: "W/(m²·K)", Clause: clause}
 	if r.Method.Options.InsideWM2K > 0 {
 		step.Formula, step.Numbers = "typed by the user", put(value)
 		return step
 	}
 	last := 2 * len(r.Makeup.Panes)
-	step.Formula = fmt.Sprintf("%s + %s·ε%d/0.837", put(s.insideConvection), put(s.insideRadi), last)
-	step.Numbers = fmt.Sprintf("%s + %s·%s/%s", put(s.insideConvection), put(s.insideRadi), put(r.Ready.inner[r.State].Corrected.Number), put(thermal.GlassEmissivity))
+	step.Formula = fmt.Sprintf("%s + %s·ε%d/0.837", put(s.insideConvection), put(s.insideRadiation), last)
+	step.Numbers = fmt.Sprintf("%s + %s·%s/%s", put(s.insideConvection), put(s.insideRadiation), put(r.Ready.inner[r.State].Corrected.Number), put(thermal.GlassEmissivity))
 	return step
 }
 
-func outer(r *Rating, value float64) Step {
-	step := Step{Symbol: "he", Meaning: "outside surface coefficient", Formula: "of the basis", Numbers: put(value), Value: value, Unit: "W/(m²·K)", Clause: "EN 673, 7"}
+func outer(r *Rating, value float64, clause string) Step {
+	step := Step{Symbol: "he", Meaning: "outside surface coefficient", Formula: "of the basis", Numbers: put(value), Value: value, Unit: "W/(m²·K)", Clause: clause}
 	if r.Method.Options.OutsideWM2K > 0 {
 		step.Formula = "typed by the user"
 	}
@@ -296,8 +304,8 @@ func workU(r *Rating) Chapter {
 	glass := workGlass(r)
 	total := resistance(he, hi, &glass, r.Gaps, 1/r.U.Number, "EN 673 (1), (2)")
 	return Chapter{Title: "U-value of the centre of the glass",
-		Note: "rounded as EN 673 rounds: " + PrintRounded(r.U.Number, r.Method.Basis.uPlaces) + " W/(m²·K)",
-		Steps: []Step{outer(r, he), inner(r, r.Method.Basis.u, hi), glass, total,
+		Note: "rounded as " + r.Method.Basis.rounding + " rounds: " + PrintRounded(r.U.Number, r.Method.Basis.uPlaces) + " W/(m²·K)",
+		Steps: []Step{outer(r, he, "EN 673, 7"), inner(r, r.Method.Basis.u, hi, "EN 673, 7"), glass, total,
 			{Symbol: "U", Meaning: "thermal transmittance", Formula: "1/R", Numbers: "1/" + put(total.Value), Value: r.U.Number, Unit: "W/(m²·K)", Clause: "EN 673 (1)"}}}
 }
 
@@ -308,8 +316,8 @@ func workG(r *Rating) Chapter {
 		return c
 	}
 	he, hi, n := r.OutsideGWM2K.Number, r.InsideGWM2K.Number, len(r.Makeup.Panes)
-	c.Steps = []Step{outer(r, he), inner(r, r.Method.Basis.g, hi)}
 	gaps, clause := r.GapsG, "EN 410, 5.4.6"
+	c.Steps = []Step{outer(r, he, clause), inner(r, r.Method.Basis.g, hi, clause)}
 	glass := workGlass(r)
 	of := &glass
 	if n == 1 {
@@ -334,7 +342,7 @@ func workG(r *Rating) Chapter {
 		c.Steps = append(c.Steps, Step{Symbol: fmt.Sprintf("Λ%d", k), Meaning: "conductance between two panes", Formula: formula,
 			Numbers: fmt.Sprintf("1/(%s + 1/%s + %s)", put(before), put(gaps[k-1].Total), put(after)), Value: r.Heat.Conductances[k-1], Unit: "W/(m²·K)", Clause: clause})
 	}
-	c.Steps = append(c.Steps, Step{Symbol: "a0", Meaning: "absorbed sun times the resistance of surface and glass outside it",
+	c.Steps = append(c.Steps, Step{Symbol: "a0", Meaning: "absorbed sun times resistance outside it",
 		Formula: "Σ αe·(1/he + glass outside the pane)", Numbers: a0, Value: r.Heat.A0, Unit: "m²·K/W", Clause: clause})
 	numerator := put(r.Heat.A0)
 	for k, b := range r.Heat.B {

@@ -5,8 +5,8 @@
 //
 // Each table is one file under tables/, embedded, that begins with its title, source, edition,
 // units, standing and how the figures were verified. Standing is "read" where the figures were
-// read from the source or from copies that agree, and "from memory" where they were recalled
-// and then checked as stated. A table is parsed when it is first asked for; its slices are
+// read from the source or from copies that agree, "from memory" where they were recalled
+// and then checked as stated, and "computed" where they follow from others. A table is parsed when it is first asked for; its slices are
 // shared and must not be written to.
 package reference
 
@@ -29,6 +29,7 @@ var notices string
 // The tables, each parsed on first use.
 var (
 	EN410Weights          = lazily("en410_weights")          // light_pct, solar, uv over wavelength_nm
+	DamageWeights         = lazily("damage_weights")         // damage, damage_700, skin over wavelength_nm
 	Daylight              = lazily("daylight")               // d65, s0, s1, s2 over wavelength_nm
 	Observers             = lazily("observers")              // x2, y2, z2, x10, y10, z10 over wavelength_nm
 	RenderingSamples      = lazily("rendering_samples")      // sample1 … sample8 over wavelength_nm
@@ -45,7 +46,7 @@ func Notices() string { return notices }
 // All returns every table, in the order in which they are listed above.
 func All() []*Table {
 	return []*Table{
-		EN410Weights(), Daylight(), Observers(), RenderingSamples(), SolarG173(),
+		EN410Weights(), DamageWeights(), Daylight(), Observers(), RenderingSamples(), SolarG173(),
 		EmissivityWavelengths(), EmissivityRatio(), GasesEN673(), SodaLimeGlass(),
 	}
 }
@@ -57,7 +58,7 @@ type Table struct {
 	Source   string // publication and table
 	Edition  string
 	Units    string // of each column
-	Standing string // "read" or "from memory"
+	Standing string // "read", "from memory" or "computed"
 	Verified string // how the figures were checked
 
 	Columns []string // heads; the first column is the key of a row

@@ -29,8 +29,8 @@ func TestTables(t *testing.T) {
 				t.Errorf("%s: a heading is blank", x.Name)
 			}
 		}
-		if x.Standing != "read" && x.Standing != "from memory" {
-			t.Errorf("%s: standing is %q, want \"read\" or \"from memory\"", x.Name, x.Standing)
+		if x.Standing != "read" && x.Standing != "from memory" && x.Standing != "computed" {
+			t.Errorf("%s: standing is %q, want \"read\", \"from memory\" or \"computed\"", x.Name, x.Standing)
 		}
 		if key := x.Columns[0]; key != "gas" {
 			if key != "normal_emissivity" && !strings.HasPrefix(key, "wavelength_") {
@@ -435,6 +435,7 @@ func binned(nm []float64, changed map[float64]float64) []float64 {
 // that the table names. A seal guards against a slip of the hand and proves nothing else. It is
 // renewed only together with a renewed comparison of the whole table.
 var seals = map[string]string{
+	"damage_weights":         "b31aee622d621852999f66a0c03bf576516c43acaa141c849250a404e6a6d1f1",
 	"daylight":               "fa25996cc3152c9298b1b5f457ababd89ae06a8e825bbf797803898871c50265",
 	"emissivity_ratio":       "4976e465d4334348aeea92f4f5c2278866c1e3278d4ef65582fd7023db03ae90",
 	"emissivity_wavelengths": "932d60dc8fdc440d69b577f4fb4e2941b4cb6290ab8c91e0c97cf7d304c6aedc",

@@ -173,6 +173,10 @@ func readRows(in io.Reader, file string) (*rows, error) {
 		return nil, r.err()
 	}
 	text = bytes.TrimPrefix(text, []byte("\ufeff"))
+	if bytes.HasPrefix(bytes.TrimSpace(text), []byte("##TITLE")) {
+		r.fail(0, 0, "is JCAMP-DX, which is not in this version; export CSV")
+		return nil, r.err()
+	}
 	if !bytes.ContainsRune(text, '\n') { // line ends of old files
 		text = bytes.ReplaceAll(text, []byte("\r"), []byte("\n"))
 	}
@@ -200,6 +204,10 @@ func readRows(in io.Reader, file string) (*rows, error) {
 		}
 		if r.heads == nil {
 			r.heads, r.headLine = slices.Clone(record), line
+			if problem := notHeads(record); problem != "" {
+				r.fail(line, 0, "%s", problem)
+				return nil, r.err()
+			}
 			lines := bytes.Count(text, []byte("\n"))
 			r.line, r.cells = make([]int, 0, lines), make([]string, 0, lines*len(record))
 			continue
@@ -212,7 +220,7 @@ func readRows(in io.Reader, file string) (*rows, error) {
 			if len(record) > len(r.heads) {
 				hint = "; a decimal comma? write points"
 			}
-			r.fail(line, 0, "%d cells under %d columns%s", len(record), len(r.heads), hint)
+			r.fail(line, 0, "%d cells under %d column heads%s", len(record), len(r.heads), hint)
 			continue
 		}
 		r.line, r.cells = append(r.line, line), append(r.cells, record...)
@@ -225,6 +233,22 @@ func readRows(in io.Reader, file string) (*rows, error) {
 		return nil, err
 	}
 	return r, nil
+}
+
+// maxColumns is how many columns are looked at at all.
+const maxColumns = 64
+
+// notHeads says why a first row cannot hold the heads of columns, or returns "".
+func notHeads(record []string) string {
+	switch _, problem := number(record[0]); {
+	case len(record) > maxColumns:
+		return fmt.Sprintf("%d columns; a spectrum has four", len(record))
+	case strings.ContainsAny(strings.Join(record, ","), ";\t"):
+		return "columns are separated by semicolons or tabs; use commas, and points in numbers"
+	case problem == "":
+		return "the first row must hold the column heads, such as wavelength_nm,tau,rho_front,rho_back"
+	}
+	return ""
 }
 
 // notText names the reason for which bytes cannot be a text in UTF-8, or returns "".
@@ -257,8 +281,6 @@ func (r *rows) readWavelengths() error {
 	switch {
 	case nmAt >= 0 && umAt >= 0:
 		r.fail(r.headLine, 0, "both wavelength_nm and wavelength_um; give one")
-	case nmAt < 0 && umAt < 0 && strings.ContainsAny(strings.Join(r.heads, ","), ";\t"):
-		r.fail(r.headLine, 0, "columns are separated by semicolons or tabs; use commas, and points in numbers")
 	case nmAt < 0 && umAt < 0:
 		r.fail(r.headLine, 0, "no column wavelength_nm or wavelength_um; the first row must hold the column heads")
 	}
@@ -306,7 +328,7 @@ func toNM(v, scale float64) float64 {
 	if scale == 1 {
 		return v
 	}
-	nm := v * scale
+	nm := float64(v * scale)
 	if r := math.Round(nm*1e6) / 1e6; math.Abs(r-nm) < 1e-9*nm {
 		return r
 	}
@@ -334,6 +356,9 @@ func (r *rows) column(head string, check func(float64) string) Column {
 		v, problem := number(cell)
 		if problem == "" {
 			problem = check(v)
+		}
+		if r.nm[i] > SolarLastNM { // the column may stop in the solar range and go on in the infrared
+			blank = 0
 		}
 		if problem == "" && blank > 0 {
 			problem = fmt.Sprintf("the column has a blank cell at line %d and then goes on; cells may be blank only where a column stops", blank)
@@ -372,6 +397,8 @@ func number(cell string) (v float64, problem string) {
 	switch {
 	case cell == "":
 		return 0, "blank"
+	case strings.HasSuffix(cell, "%"):
+		return 0, "not a number; fractions of one, not percent"
 	case strings.Contains(cell, ","):
 		return 0, "not a number; a decimal comma? write a point"
 	case err == nil && (math.IsNaN(v) || math.IsInf(v, 0)):

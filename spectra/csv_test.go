@@ -148,7 +148,7 @@ func TestReadCSVRefuses(t *testing.T) {
 		{"comments alone", "# nothing\n\n", [][]string{{"pane.csv: empty"}}},
 		{"head alone", goodLines()[0] + "\n", [][]string{{"pane.csv: 0 rows", "at least 10"}}},
 		{"nine rows", nine, [][]string{{"pane.csv: 9 rows", "at least 10"}}},
-		{"no head", strings.Join(goodLines()[1:], "\n"), [][]string{{"pane.csv:1: no column wavelength_nm or wavelength_um", "column heads"}}},
+		{"no head", strings.Join(goodLines()[1:], "\n"), [][]string{{"pane.csv:1: the first row must hold the column heads", "column heads"}}},
 		{"semicolons", strings.ReplaceAll(good(same), ",", ";"), [][]string{{"pane.csv:1: ", "semicolons or tabs", "use commas"}}},
 		{"both wavelengths", good(func(i int, line string) string {
 			if i == 0 {
@@ -165,9 +165,9 @@ func TestReadCSVRefuses(t *testing.T) {
 		{"quote within a cell", withLine(4, `320,0.8",0.1,0.15`), [][]string{{"pane.csv:4: not readable as CSV"}}},
 
 		{"decimal comma, quoted", withLine(3, `310,"0,8",0.1,0.15`), [][]string{{"pane.csv:3: at 310 nm: tau 0,8: ", "decimal comma", "write a point"}}},
-		{"decimal comma, not quoted", withLine(3, `310,0,8,0,1,0,15`), [][]string{{"pane.csv:3: 7 cells under 4 columns", "decimal comma", "points"}}},
+		{"decimal comma, not quoted", withLine(3, `310,0,8,0,1,0,15`), [][]string{{"pane.csv:3: 7 cells under 4 column heads", "decimal comma", "points"}}},
 		{"decimal comma in a wavelength", withLine(3, `"310,5",0.8,0.1,0.15`), [][]string{{"pane.csv:3: wavelength \"310,5\": ", "decimal comma"}}},
-		{"a cell too few", withLine(3, "310,0.8,0.1"), [][]string{{"pane.csv:3: 3 cells under 4 columns"}}},
+		{"a cell too few", withLine(3, "310,0.8,0.1"), [][]string{{"pane.csv:3: 3 cells under 4 column heads"}}},
 		{"percent", withLine(6, "340,80,0.1,0.15"), [][]string{{"pane.csv:6: at 340 nm: tau 80: ", "0..1", "fractions of one, not percent"}}},
 		{"minus", withLine(6, "340,0.8,-0.1,0.15"), [][]string{{"pane.csv:6: at 340 nm: rho_front -0.1: not in 0..1"}}},
 		{"beyond percent", withLine(6, "340,0.8,0.1,640"), [][]string{{"pane.csv:6: at 340 nm: rho_back 640: not in 0..1"}}},
@@ -231,7 +231,7 @@ func TestReadCSVDecimalCommaThroughout(t *testing.T) {
 	_, err := readAndJoin(strings.NewReader(text))
 	var want [][]string
 	for line := 2; line <= 12; line++ {
-		want = append(want, []string{fmt.Sprintf("pane.csv:%d: 7 cells under 4 columns", line), "decimal comma"})
+		want = append(want, []string{fmt.Sprintf("pane.csv:%d: 7 cells under 4 column heads", line), "decimal comma"})
 	}
 	checkFaults(t, err, want)
 }

@@ -75,7 +75,7 @@ func FuzzReadCSV(f *testing.F) {
 			}
 		}
 		if m.InfraredFront.Len() > 0 {
-			if e := NormalEmissivity(m.InfraredFront); !(e >= -1e-12 && e <= 1) {
+			if e := NormalEmissivity(m.InfraredFront, m.InfraredTau); !(e >= -1e-12 && e <= 1) {
 				t.Fatalf("normal emissivity %v", e)
 			}
 		}

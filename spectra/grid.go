@@ -107,6 +107,15 @@ func dot(w, v []float64) float64 {
 	return (s0 + s1) + (s2 + s3)
 }
 
+// total returns Σ v in the same four lanes, for any number of values.
+func total(v []float64) float64 {
+	var s [4]float64
+	for i, x := range v {
+		s[i%4] += x
+	}
+	return (s[0] + s[1]) + (s[2] + s[3])
+}
+
 // Triple is three weightings over the same span of a grid, such as the three colour-matching
 // functions, summed together; each sum equals that of its Placed bit for bit.
 type Triple struct {

@@ -9,12 +9,13 @@ import (
 	"strings"
 )
 
-// Measured is the spectrum of one pane in one tint: transmittance and both reflectances below
-// 5 µm, and the reflectances of the faces beyond, from which emissivity follows. Front is the
+// Measured is the spectrum of one pane in one tint: transmittance and both reflectances up to
+// 2500 nm, and the reflectances of the faces beyond, from which emissivity follows. Front is the
 // face that looks outside when the pane is not turned.
 type Measured struct {
 	Tau, RhoFront, RhoBack      Curve
 	InfraredFront, InfraredBack Curve // reflectance from 5 µm on; empty where not measured
+	InfraredTau                 Curve // transmittance from 5 µm on; empty where not measured, as of glass
 	Cautions                    []Caution
 }
 
@@ -42,11 +43,11 @@ func Join(c Columns, infraredFront, infraredBack Column) (Measured, error) {
 		name string
 		col  *Column
 	}{{headTau, &c.Tau}, {headRhoFront, &c.RhoFront}, {headRhoBack, &c.RhoBack}} {
-		switch n := x.col.below(InfraredFirstNM).Len(); {
+		switch n := x.col.solar().Len(); {
 		case x.col.Len() == 0:
 			faults = append(faults, &RowError{File: x.col.File, Text: "no column " + x.name + ", or nothing in it"})
 		case n < minimumRows:
-			faults = append(faults, &RowError{File: x.col.File, Text: fmt.Sprintf("%d values of %s below 5 µm; at least %d are needed", n, x.name, minimumRows)})
+			faults = append(faults, &RowError{File: x.col.File, Text: fmt.Sprintf("%d values of %s up to 2500 nm; at least %d are needed", n, x.name, minimumRows)})
 		}
 	}
 	if len(faults) > 0 {
@@ -57,7 +58,7 @@ func Join(c Columns, infraredFront, infraredBack Column) (Measured, error) {
 	front, back := bound(c.RhoFront, bounded), bound(c.RhoBack, bounded)
 	faults = append(faults, sumToOne(tau, front, headRhoFront, bounded)...)
 	faults = append(faults, sumToOne(tau, back, headRhoBack, bounded)...)
-	m.Tau, m.RhoFront, m.RhoBack = tau.below(InfraredFirstNM), front.below(InfraredFirstNM), back.below(InfraredFirstNM)
+	m.Tau, m.RhoFront, m.RhoBack = tau.solar(), front.solar(), back.solar()
 	var err *RowError
 	if m.InfraredFront, err = infrared(front, infraredFront, "front", bounded, &m.Cautions); err != nil {
 		faults = append(faults, err)
@@ -68,15 +69,30 @@ func Join(c Columns, infraredFront, infraredBack Column) (Measured, error) {
 	if len(faults) > 0 {
 		return Measured{}, faults
 	}
+	if c := tau.cut(InfraredFirstNM, math.Inf(1)); c.Last() > InfraredFirstNM {
+		m.InfraredTau = c
+	}
 	m.Cautions = append(m.Cautions, bounded.cautions()...)
-	if text := coarse(c.Tau); text != "" {
-		m.Cautions = append(m.Cautions, Caution{"coarse_steps", c.Tau.File + ": " + text})
+	for _, col := range []Column{c.Tau, c.RhoFront, c.RhoBack} {
+		if text := coarse(col.solar()); text != "" {
+			caution := Caution{"coarse_steps", col.File + ": " + text}
+			if !slices.Contains(m.Cautions, caution) {
+				m.Cautions = append(m.Cautions, caution)
+			}
+		}
 	}
 	return m, nil
 }
 
-// below returns the points below limit nm, and the point at it.
-func (c Curve) below(limit float64) Curve { return c.cut(0, limit) }
+// solar returns the points up to 2500 nm; where none stands there, the next as well if it is no
+// more than a usual step away. Points from there to 5 µm serve nothing.
+func (c Curve) solar() Curve {
+	s := c.cut(0, SolarLastNM)
+	if n := s.Len(); n < c.Len() && s.Last() < SolarLastNM && c.NM[n] <= SolarLastNM+stepSolarNM {
+		return Curve{c.NM[:n+1], c.Value[:n+1]}
+	}
+	return s
+}
 
 // rowList collects rows for a message: files and lines, each once.
 type rowList struct{ rows []fileLine }
@@ -194,9 +210,9 @@ func infrared(rho, own Column, face string, changed *rowList, cautions *[]Cautio
 }
 
 // coarse says where steps are too wide for the standards' tables, or returns "".
-func coarse(c Column) string {
+func coarse(c Curve) string {
 	widest := map[bool]float64{}
-	for i := 1; i < c.Len() && c.NM[i-1] < SolarLastNM && c.NM[i] <= InfraredFirstNM; i++ {
+	for i := 1; i < c.Len(); i++ {
 		visible := c.NM[i-1] < stepEdgeNM
 		widest[visible] = max(widest[visible], c.NM[i]-c.NM[i-1])
 	}

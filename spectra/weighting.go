@@ -26,17 +26,13 @@ func (w Weighting) Mean(c Curve) float64 {
 
 // Missing returns the shares of the weight, from 0 to 1, that lie below first and above last nm.
 func (w Weighting) Missing(first, last float64) (below, above float64) {
-	var total float64
-	for i, nm := range w.NM {
-		total += w.Weight[i]
-		if nm < first {
-			below += w.Weight[i]
-		}
-		if nm > last {
-			above += w.Weight[i]
-		}
+	from, _ := slices.BinarySearch(w.NM, first)
+	to := from
+	for to < len(w.NM) && w.NM[to] <= last {
+		to++
 	}
-	return below / total, above / total
+	all := total(w.Weight)
+	return total(w.Weight[:from]) / all, total(w.Weight[to:]) / all
 }
 
 // times returns the weighting with each weight multiplied by f(nm).
@@ -45,16 +41,6 @@ func (w Weighting) times(f func(nm float64) float64) Weighting {
 	for i, nm := range w.NM {
 		out.Weight[i] = float64(w.Weight[i] * f(nm))
 	}
-	return out
-}
-
-// until ends the weighting at limit nm, which is one of its wavelengths: of the last bin, which
-// reaches from mid-point to mid-point, only the part below the limit remains.
-func (w Weighting) until(limit float64) Weighting {
-	n := slices.Index(w.NM, limit)
-	out := Weighting{Name: w.Name, Source: w.Source, NM: w.NM[:n+1], Weight: slices.Clone(w.Weight[:n+1])}
-	lower, upper := w.NM[n]-w.NM[n-1], w.NM[n+1]-w.NM[n]
-	out.Weight[n] *= lower / (lower + upper)
 	return out
 }
 
@@ -119,12 +105,15 @@ func UV() Weighting {
 	return table(reference.EN410Weights(), "uv", "uv", "EN 410:2011 table 3 = ISO 9050:2003 table 3")
 }
 
-// Damage returns the weights of damage-weighted transmittance, S·Δλ·exp(−0.012 λ) from 300 nm to
-// the limit: 600 nm (ISO 9050:2003) or 700 nm (CIE 89/3:1990).
-func Damage(limitNM float64) Weighting {
-	w := SolarEN410().until(limitNM).times(DamageWeight)
-	w.Name, w.Source = "damage", "CIE 89/3 action with the sun of EN 410:2011 table 2"
-	return w
+// Damage returns the weights of damage-weighted transmittance, S·Δλ·exp(−0.012 λ) from 300 to
+// 600 nm (ISO 9050:2003).
+func Damage() Weighting {
+	return table(reference.DamageWeights(), "damage", "damage", "CIE 89/3 action with the sun of EN 410:2011, 300-600 nm")
+}
+
+// Damage700 returns the same from 300 to 700 nm (CIE 89/3:1990).
+func Damage700() Weighting {
+	return table(reference.DamageWeights(), "damage_700", "damage to 700 nm", "CIE 89/3 action with the sun of EN 410:2011, 300-700 nm")
 }
 
 // DamageWeight returns the relative power of radiation of the given wavelength in nm to fade and
@@ -134,9 +123,7 @@ func DamageWeight(nm float64) float64 { return math.Exp(-0.012 * (nm - 300)) }
 // Skin returns the weights of skin-weighted transmittance, S·Δλ times the erythema action, from
 // 300 to 400 nm (ISO 9050:2003).
 func Skin() Weighting {
-	w := SolarEN410().until(400).times(ErythemaWeight)
-	w.Name, w.Source = "skin", "erythema action of McKinlay and Diffey 1987 with the sun of EN 410:2011 table 2"
-	return w
+	return table(reference.DamageWeights(), "skin", "skin", "erythema action of McKinlay and Diffey 1987 with the sun of EN 410:2011")
 }
 
 // ErythemaWeight returns the relative power of radiation of the given wavelength in nm to redden
@@ -160,14 +147,19 @@ func table(t *reference.Table, column, name, source string) Weighting {
 	return Weighting{Name: name, Source: source, NM: nm, Weight: weight}
 }
 
-// NormalEmissivity returns the normal emissivity at 283 K of an opaque face from its infrared
-// reflectance, 5 to 50 µm: one less the mean of the reflectance at the thirty wavelengths of
-// EN 12898.
-func NormalEmissivity(infrared Curve) float64 {
+// NormalEmissivity returns the normal emissivity at 283 K of a face from its infrared reflectance,
+// 5 to 50 µm: one less the mean of the reflectance at the thirty wavelengths of EN 12898. The
+// standard's faces are opaque; of a sheet that is not, the transmittance is taken off as well.
+func NormalEmissivity(reflectance, transmittance Curve) float64 {
+	return 1 - InfraredMean(reflectance) - InfraredMean(transmittance)
+}
+
+// InfraredMean returns the mean of a curve at the thirty wavelengths of EN 12898.
+func InfraredMean(c Curve) float64 {
 	um := reference.EmissivityWavelengths().Column("wavelength_um")
-	var sum float64
-	for _, x := range um {
-		sum += infrared.At(toNM(x, 1000))
+	values := make([]float64, len(um))
+	for i, x := range um {
+		values[i] = c.At(toNM(x, 1000))
 	}
-	return 1 - sum/float64(len(um))
+	return total(values) / float64(len(um))
 }

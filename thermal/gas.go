@@ -2,6 +2,7 @@ package thermal
 
 import (
 	"fmt"
+	"maps"
 	"math"
 	"slices"
 	"strings"
@@ -74,7 +75,7 @@ func Mix(fractions map[string]float64) (Mixture, error) {
 		sum += f
 	}
 	if len(m) != len(fractions) {
-		for name := range fractions {
+		for _, name := range slices.Sorted(maps.Keys(fractions)) {
 			if !slices.Contains(GasNames(), name) {
 				return nil, fmt.Errorf("unknown gas %q; known are %s", name, strings.Join(GasNames(), ", "))
 			}

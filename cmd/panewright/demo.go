@@ -11,17 +11,22 @@ import (
 
 func newDemo(s streams) *cobra.Command {
 	return &cobra.Command{
+		Args:                  cobra.ArbitraryArgs,
 		Use:                   "demo [DIR]",
 		DisableFlagsInUseLine: true,
 		Short:                 "Write the demo project into a folder and rate it",
-		Long: `Writes the invented demo project into DIR (panewright-demo when absent), reads it
-back like any project, rates it and prints the schedule. Files that stand in DIR
-and differ are not overwritten.`,
-		Example: "  panewright demo\n  panewright demo /tmp/mill",
-		Args:    cobra.MaximumNArgs(1),
+		Long: `Writes the invented demo project into DIR (panewright-demo when absent), reads
+it back like any project, rates it and prints the schedule. Files that stand in
+DIR and differ are not overwritten.`,
+		Example: "  panewright demo\n  panewright demo mill",
 		RunE: func(_ *cobra.Command, args []string) error {
 			dir := "panewright-demo"
-			if len(args) == 1 {
+			switch {
+			case len(args) > 1:
+				return fmt.Errorf("demo writes into one folder; %d were given", len(args))
+			case len(args) == 1 && args[0] == "":
+				return errors.New("demo needs the name of a folder")
+			case len(args) == 1:
 				dir = args[0]
 			}
 			path, err := demo.Write(dir)

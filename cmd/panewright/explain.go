@@ -20,7 +20,7 @@ order of a hand calculation: symbol, formula, the formula with the numbers put
 in, value, unit and clause. Without --tint, a make-up that switches is shown in
 its first tint.`,
 		Example: `  panewright explain panewright-demo/project.yaml --makeup D1
-  panewright explain panewright-demo/project.yaml --makeup E1 --tint full --basis iso`,
+  panewright explain panewright-demo/project.yaml --makeup E1 --tint full`,
 		Args: oneProject,
 		RunE: func(_ *cobra.Command, args []string) error {
 			if len(o.makeups) == 0 {
@@ -32,6 +32,9 @@ its first tint.`,
 			}
 			if len(o.tints) == 0 {
 				r = firstTints(r)
+			}
+			if err := keepInputs(output, r.Project); err != nil {
+				return err
 			}
 			return s.write(output, table.Explain(r))
 		},

@@ -1,10 +1,12 @@
 package main
 
 import (
-	"bytes"
 	"encoding/json"
-	"os"
+	"errors"
+	"os/exec"
 	"path/filepath"
+	"slices"
+	"strconv"
 	"strings"
 	"testing"
 
@@ -35,21 +37,24 @@ func exits(ts *testscript.TestScript, neg bool, args []string) {
 	if neg || len(args) < 1 {
 		ts.Fatalf("usage: exits CODE ARGUMENT…")
 	}
-	var out, err bytes.Buffer
-	was, werr := os.Getwd()
-	ts.Check(werr)
-	ts.Check(os.Chdir(ts.Getenv("WORK")))
-	defer func() { ts.Check(os.Chdir(was)) }()
-	code := run(args[1:], streams{out: &out, err: &err})
-	if got := string(rune('0' + code)); got != args[0] {
-		ts.Fatalf("panewright %s exits %s, want %s\n%s", strings.Join(args[1:], " "), got, args[0], err.String())
+	code := 0
+	if err := ts.Exec("panewright", args[1:]...); err != nil {
+		exit, ok := errors.AsType[*exec.ExitError](err)
+		if !ok {
+			ts.Fatalf("%v", err)
+		}
+		code = exit.ExitCode()
 	}
-	if code != 0 && out.Len() > 0 {
-		ts.Fatalf("panewright %s fails and yet prints\n%s", strings.Join(args[1:], " "), out.String())
+	out, remarks := ts.ReadFile("stdout"), ts.ReadFile("stderr")
+	if got := strconv.Itoa(code); got != args[0] {
+		ts.Fatalf("panewright %s exits %s, want %s\n%s", strings.Join(args[1:], " "), got, args[0], remarks)
+	}
+	if code != 0 && out != "" {
+		ts.Fatalf("panewright %s fails and yet prints\n%s", strings.Join(args[1:], " "), out)
 	}
 	for _, bad := range []string{"goroutine ", "panic:", ".go:"} {
-		if strings.Contains(err.String(), bad) {
-			ts.Fatalf("panewright %s prints %q", strings.Join(args[1:], " "), err.String())
+		if strings.Contains(remarks, bad) {
+			ts.Fatalf("panewright %s prints %q", strings.Join(args[1:], " "), remarks)
 		}
 	}
 }
@@ -63,17 +68,24 @@ func narrow(ts *testscript.TestScript, _ bool, args []string) {
 	}
 }
 
-// figuresEqual asserts that two JSON files hold the same ratings: figures a.json b.json
+// figuresEqual asserts that the ratings of the first JSON file are those of the others together,
+// to the letter: figures all.json one.json another.json
 func figuresEqual(ts *testscript.TestScript, _ bool, args []string) {
-	var parts []string
-	for _, name := range args {
+	ratings := func(name string) (list []string) {
 		var doc struct {
-			Ratings json.RawMessage `json:"ratings"`
+			Ratings []json.RawMessage `json:"ratings"`
 		}
 		ts.Check(json.Unmarshal([]byte(ts.ReadFile(name)), &doc))
-		parts = append(parts, string(doc.Ratings))
+		for _, r := range doc.Ratings {
+			list = append(list, string(r))
+		}
+		return list
 	}
-	if parts[0] != parts[1] {
-		ts.Fatalf("%s and %s hold different ratings", args[0], args[1])
+	var parts []string
+	for _, name := range args[1:] {
+		parts = append(parts, ratings(name)...)
+	}
+	if all := ratings(args[0]); !slices.Equal(all, parts) {
+		ts.Fatalf("%s does not hold the ratings of %v", args[0], args[1:])
 	}
 }

@@ -3,6 +3,7 @@ package main
 import (
 	"fmt"
 	"math"
+	"os"
 	"slices"
 	"strconv"
 	"strings"
@@ -60,7 +61,7 @@ known, with the reason among the cautions.`,
 
 // oneProject wants the project file as the one argument.
 func oneProject(c *cobra.Command, args []string) error {
-	if len(args) != 1 {
+	if len(args) != 1 || args[0] == "" {
 		return fmt.Errorf("%s needs one project file, such as: panewright %s panewright-demo/project.yaml", c.Name(), c.Name())
 	}
 	return nil
@@ -90,10 +91,30 @@ func runRate(s streams, path string, o selection, as, spectra, output string) er
 			r.Spectra = append(r.Spectra, rating.Ready.Spectra(rating.State, nm))
 		}
 	}
+	if err := keepInputs(output, r.Project); err != nil {
+		return err
+	}
 	if as == "json" {
 		return s.write(output, table.JSON(r))
 	}
 	return s.write(output, table.Schedule(r))
+}
+
+// keepInputs refuses to write over the project or a file that it names.
+func keepInputs(output string, p *project.Project) error {
+	if output == "" {
+		return nil
+	}
+	out, err := os.Stat(output)
+	if err != nil {
+		return nil // nothing is there
+	}
+	for _, name := range p.Files {
+		if in, err := os.Stat(name); err == nil && os.SameFile(in, out) {
+			return fmt.Errorf("-o %s is a file that the project is read from; name another", short(output))
+		}
+	}
+	return nil
 }
 
 // rate reads a project and rates what is selected of it.
@@ -107,10 +128,14 @@ func rate(path string, o selection) (table.Report, error) {
 	bases := p.Bases
 	if len(o.bases) > 0 {
 		bases = nil
-		for _, name := range o.bases {
+		for _, name := range unique(o.bases) {
 			b, err := glazing.BasisNamed(name)
 			if err != nil {
-				return r, fmt.Errorf("--basis: unknown basis %q; %s", short(name), project.DidYouMean(project.Nearest(name, glazing.BasisNames()), glazing.BasisNames()))
+				offer := project.Known(glazing.BasisNames())
+				if near := project.Nearest(name, glazing.BasisNames()); len(near) > 0 {
+					offer = project.DidYouMean(near, nil) + " " + offer
+				}
+				return r, fmt.Errorf("--basis: unknown basis %q; %s", short(name), offer)
 			}
 			bases = append(bases, b)
 		}
@@ -118,7 +143,7 @@ func rate(path string, o selection) (table.Report, error) {
 	makeups := p.Makeups
 	if len(o.makeups) > 0 {
 		makeups = nil
-		for _, id := range o.makeups {
+		for _, id := range unique(o.makeups) {
 			m := p.Makeup(id)
 			if m == nil {
 				var known []string
@@ -130,7 +155,8 @@ func rate(path string, o selection) (table.Report, error) {
 			makeups = append(makeups, m)
 		}
 	}
-	var tints []string
+	var tints []string         // of all that was selected otherwise
+	found := map[string]bool{} // the tints asked for that there are
 	for _, b := range bases {
 		method := p.Method(b)
 		for _, m := range makeups {
@@ -140,17 +166,23 @@ func rate(path string, o selection) (table.Report, error) {
 			}
 			for i := range ratings {
 				tints = append(tints, ratings[i].Tint)
-				if len(o.tints) == 0 || slices.ContainsFunc(o.tints, func(t string) bool { return sameTint(t, ratings[i].Tint) }) {
+				keep := len(o.tints) == 0
+				for _, t := range o.tints {
+					if ratings[i].InTint(t) {
+						keep, found[t] = true, true
+					}
+				}
+				if keep {
 					r.Ratings = append(r.Ratings, ratings[i])
 				}
 			}
 		}
 	}
 	for _, t := range o.tints {
-		if !slices.ContainsFunc(tints, func(x string) bool { return sameTint(t, x) }) {
+		if !found[t] {
 			known := slices.DeleteFunc(tints, func(x string) bool { return x == "" })
 			if len(known) == 0 {
-				return r, fmt.Errorf("--tint %s: nothing that was selected switches", short(t))
+				return r, fmt.Errorf("--tint %s: no make-up that was selected has a pane that switches", short(t))
 			}
 			return r, fmt.Errorf("--tint: no tint %q; %s", short(t), project.DidYouMean(project.Nearest(t, known), known))
 		}
@@ -158,18 +190,14 @@ func rate(path string, o selection) (table.Report, error) {
 	return r, nil
 }
 
-// sameTint reports whether a tint that was asked for is that of a rating: its whole name, or the
-// name of each of its parts.
-func sameTint(asked, tint string) bool {
-	if asked == tint {
-		return true
-	}
-	for part := range strings.SplitSeq(tint, "/") {
-		if part != asked {
-			return false
+// unique returns a list without what stands in it before.
+func unique(list []string) (out []string) {
+	for _, x := range list {
+		if !slices.Contains(out, x) {
+			out = append(out, x)
 		}
 	}
-	return true
+	return out
 }
 
 // wavelengths reads a list of wavelengths in nm, ascending.

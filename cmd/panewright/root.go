@@ -4,6 +4,7 @@ import (
 	"errors"
 	"fmt"
 	"io"
+	"io/fs"
 	"os"
 	"path/filepath"
 	"strings"
@@ -11,7 +12,9 @@ import (
 	"github.com/spf13/cobra"
 	"github.com/spf13/pflag"
 
+	"panewright/glazing"
 	"panewright/glazing/project"
+	"panewright/reference"
 )
 
 // version is printed by --version and on every output.
@@ -103,9 +106,20 @@ Options:
 // newHelp is the command library's help, but for a command that does not exist.
 func newHelp() *cobra.Command {
 	return &cobra.Command{
-		Use:   "help [COMMAND]",
-		Short: "Print the help of a command",
+		Use:                   "help [COMMAND | notices | cautions]",
+		DisableFlagsInUseLine: true,
+		Short:                 "Print the help of a command, notices, or what cautions there are",
 		RunE: func(c *cobra.Command, args []string) error {
+			switch strings.Join(args, " ") {
+			case "notices":
+				_, err := io.WriteString(c.OutOrStdout(), reference.Notices())
+				return err
+			case "cautions":
+				for _, code := range glazing.CautionCodes() {
+					fmt.Fprintf(c.OutOrStdout(), "%-24s%s\n", code[0], code[1])
+				}
+				return nil
+			}
 			about, rest, err := c.Root().Find(args)
 			if err != nil || len(rest) > 0 {
 				return unknownCommand(c.Root(), args[0])
@@ -132,6 +146,9 @@ func flagError(c *cobra.Command, err error) error {
 	known := []string{"--help"}
 	c.Flags().VisitAll(func(f *pflag.Flag) { known = append(known, "--"+f.Name) })
 	name := "--" + unknown.GetSpecifiedName()
+	if letters := unknown.GetSpecifiedShortnames(); letters != "" {
+		return fmt.Errorf("unknown option -%s; see panewright help %s", short(letters), c.Name())
+	}
 	return fmt.Errorf("unknown option %s; %s", short(name), project.DidYouMean(project.Nearest(name, known), known))
 }
 
@@ -236,6 +253,9 @@ func writeFile(path string, content []byte) (err error) {
 		}
 	}
 	f, err := os.CreateTemp(filepath.Dir(path), ".panewright-*")
+	if errors.Is(err, fs.ErrNotExist) {
+		return fmt.Errorf("there is no folder %s", filepath.Dir(path))
+	}
 	if err != nil {
 		return err
 	}

@@ -1,6 +1,8 @@
 package main
 
 import (
+	"fmt"
+
 	"github.com/spf13/cobra"
 
 	"panewright/glazing/project"
@@ -9,6 +11,7 @@ import (
 func newSchema(s streams) *cobra.Command {
 	var output string
 	c := &cobra.Command{
+		Args:                  cobra.ArbitraryArgs,
 		Use:                   "schema [options]",
 		DisableFlagsInUseLine: true,
 		Short:                 "Print the JSON Schema of the project file",
@@ -16,8 +19,10 @@ func newSchema(s streams) *cobra.Command {
 complete and check as you type. It comes from the same table of keys as the
 program's own check.`,
 		Example: "  panewright schema -o panewright.schema.json",
-		Args:    cobra.NoArgs,
-		RunE: func(*cobra.Command, []string) error {
+		RunE: func(_ *cobra.Command, args []string) error {
+			if len(args) > 0 {
+				return fmt.Errorf("schema takes no argument; %q was given", short(args[0]))
+			}
 			return s.write(output, project.Schema())
 		},
 	}

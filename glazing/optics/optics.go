@@ -1,6 +1,6 @@
 // Package optics combines panes into a stack, wavelength by wavelength: incoherent multiple
 // reflection between panes, each described by its transmittance T and the reflectances of its
-// outer face Ro and inner face Ri (EN 410:2011, 5.2; ISO 9050:2003, 3.3). It knows slices of
+// outer face Ro and inner face Ri (EN 410:2011, 5.2 and 5.3; ISO 9050:2003, 3.3 and 3.4). It knows slices of
 // numbers only: which wavelength an element belongs to, and what a pane is, are the caller's.
 //
 // For an outer part (T1, Ro1, Ri1) and an inner part (T2, Ro2, Ri2), with D = 1 − Ri1·Ro2:

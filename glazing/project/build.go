@@ -38,24 +38,34 @@ func (b *builder) project(s *fileSpec) *Project {
 		p.sun, p.Cautions = b.sun(s.Sun, p.Cautions)
 	}
 	ids := map[string]position{}
+	for _, m := range s.Materials {
+		b.unique(ids, m.ID, "id", "material")
+	}
+	ids = map[string]position{}
 	for _, g := range s.Glasses {
-		b.unique(ids, g.ID, "glass or pane")
+		b.unique(ids, g.ID, "id", "glass or pane")
 	}
 	for i := range s.Panes {
-		b.unique(ids, s.Panes[i].ID, "glass or pane")
+		b.unique(ids, s.Panes[i].ID, "id", "glass or pane")
 		if pane := b.pane(&s.Panes[i]); pane != nil {
 			p.Panes = append(p.Panes, pane)
 		}
 	}
 	ids = map[string]position{}
 	for i := range s.Makeups {
-		b.unique(ids, s.Makeups[i].ID, "make-up")
+		b.unique(ids, s.Makeups[i].ID, "id", "make-up")
 		if m := b.makeup(&s.Makeups[i], s.Panes, p.Panes); m != nil {
 			p.Makeups = append(p.Makeups, m)
 		}
 	}
 	b.conditions(s.Conditions)
 	b.limits(s.Limits, s.Makeups)
+	for _, name := range []string{glazing.NA.Name, glazing.ISO15099.Name} {
+		if _, ok := s.Coefficients[name]; ok {
+			p.Cautions = append(p.Cautions, glazing.Caution{Code: "coefficients_not_used",
+				Text: "The coefficients given for " + name + " move nothing: U and g under it need the detailed heat balance, which this version does not have."})
+		}
+	}
 	if len(s.Limits) > 0 {
 		p.Cautions = append(p.Cautions, glazing.Caution{Code: "limits_not_checked",
 			Text: "The project's limits were read and not checked: this version does not check limits."})
@@ -68,12 +78,12 @@ func (b *builder) project(s *fileSpec) *Project {
 }
 
 // unique reports an id that stands twice.
-func (b *builder) unique(ids map[string]position, id text, what string) {
+func (b *builder) unique(ids map[string]position, id text, key, what string) {
 	if !id.given {
 		return
 	}
 	if first, ok := ids[id.value]; ok {
-		b.fail(id.at, "id", "%q is the id of another %s, in line %d", clip(id.value), what, first.line)
+		b.fail(id.at, key, "%q is the name of another %s, in line %d", clip(id.value), what, first.line)
 		b.incomplete["id"] = true
 		return
 	}
@@ -160,7 +170,7 @@ func (b *builder) pane(s *paneSpec) *glazing.Pane {
 	}
 	seen := map[string]position{}
 	for i := range tints {
-		b.unique(seen, tints[i].Tint, "tint of this pane")
+		b.unique(seen, tints[i].Tint, "tint", "tint of this pane")
 		tint, good := b.tint(&tints[i], s.Faulty)
 		ok = ok && good
 		p.Tints = append(p.Tints, tint)
@@ -230,9 +240,9 @@ func (b *builder) tint(s *tintSpec, faulty bool) (glazing.Tint, bool) {
 			b.fail(f.normal.at, "emissivity_normal_"+f.key, "stands beside emissivity_%s; give one", f.key)
 			return t, false
 		}
-		*f.into = emissivity(f.corrected, f.normal, f.infrared)
+		*f.into = emissivity(f.corrected, f.normal, f.infrared, m.InfraredTau)
 		if (f.corrected.given || f.normal.given) && f.infrared.Len() > 0 {
-			measured := glazing.InfraredEmissivity(f.infrared).Corrected.Number
+			measured := glazing.InfraredEmissivity(f.infrared, m.InfraredTau).Corrected.Number
 			if math.Abs(measured-f.into.Corrected.Number) > emissivityDifference {
 				t.Spectrum.Cautions = append(slices.Clone(t.Spectrum.Cautions), glazing.Caution{Code: "emissivity_differs", Text: fmt.Sprintf(
 					"The emissivity typed for the %s (%.3f) was used; the infrared rows of its spectrum give %.3f.", f.key, f.into.Corrected.Number, measured)})
@@ -246,14 +256,14 @@ func (b *builder) tint(s *tintSpec, faulty bool) (glazing.Tint, bool) {
 // without a caution.
 const emissivityDifference = 0.02
 
-func emissivity(corrected, normal number, infrared spectra.Curve) glazing.Emissivity {
+func emissivity(corrected, normal number, infrared, tau spectra.Curve) glazing.Emissivity {
 	switch {
 	case corrected.given:
 		return glazing.GivenEmissivity(corrected.value)
 	case normal.given:
 		return glazing.GivenNormalEmissivity(normal.value)
 	case infrared.Len() > 0:
-		return glazing.InfraredEmissivity(infrared)
+		return glazing.InfraredEmissivity(infrared, tau)
 	}
 	return glazing.NoEmissivity()
 }
@@ -329,15 +339,20 @@ func (b *builder) makeup(s *makeupSpec, specs []paneSpec, panes []*glazing.Pane)
 		m.Typed = append(m.Typed, glazing.Typed{Name: name, Text: s.Typed[name].value})
 	}
 	before := len(b.faults)
-	wantPane := true // what may stand next
+	wantPane, sure := true, true // what may stand next, and whether that is known
 	for i := range s.OutsideToInside {
 		e := &s.OutsideToInside[i]
 		isPane, isGap := e.Pane.given || e.Turned.given || e.Tint.given, e.Gap.given || e.Gas != nil || e.Vacuum != nil
+		if e.Faulty && isPane == isGap { // what it was meant to be is not known
+			sure = false
+			continue
+		}
 		if e.Faulty {
-			wantPane = !isPane
+			wantPane, sure = !isPane, true
 			continue
 		}
 		switch {
+		case !sure:
 		case isPane && isGap:
 			b.fail(e.At, "outside_to_inside", "an item is either a pane or a gap, not both")
 		case !isPane && !isGap:
@@ -349,7 +364,7 @@ func (b *builder) makeup(s *makeupSpec, specs []paneSpec, panes []*glazing.Pane)
 		case isGap && wantPane:
 			b.fail(e.At, "gap_mm", "two gaps in a row; there is a pane between gaps")
 		}
-		wantPane = !isPane
+		wantPane, sure = !isPane, true
 		if isPane {
 			b.place(m, e, specs, panes)
 		} else if isGap {
@@ -384,7 +399,7 @@ func (b *builder) place(m *glazing.Makeup, e *elementSpec, specs []paneSpec, pan
 	placed := glazing.Placed{Turned: e.Turned.value, Tint: e.Tint.value}
 	if i := slices.IndexFunc(panes, func(p *glazing.Pane) bool { return p.ID == e.Pane.value }); i >= 0 {
 		placed.Pane = panes[i]
-		if names := placed.Pane.TintNames(); placed.Tint != "" && placed.Tint != glazing.SameTint && !slices.Contains(names, placed.Tint) {
+		if names := placed.Pane.TintNames(); placed.Tint != "" && placed.Tint != glazing.SameTint && placed.Pane.TintNamed(placed.Tint) < 0 {
 			if placed.Pane.Tintable() {
 				b.fail(e.Tint.at, "tint", "pane %s has no tint %q; %s", e.Pane.value, clip(placed.Tint), DidYouMean(Nearest(placed.Tint, names), names))
 			} else {
@@ -430,7 +445,11 @@ func (b *builder) gap(m *glazing.Makeup, e *elementSpec) {
 		}
 		for _, name := range slices.Sorted(maps.Keys(e.Gas)) {
 			if !slices.Contains(known, name) {
-				b.fail(e.Gas[name].name, "gas", "unknown gas %q; %s", clip(name), DidYouMean(Nearest(name, known), known))
+				offer := Known(known)
+				if near := Nearest(name, known); len(near) > 0 {
+					offer = DidYouMean(near, known) + " " + offer
+				}
+				b.fail(e.Gas[name].name, "gas", "unknown gas %q; %s", clip(name), offer)
 				return
 			}
 		}
@@ -447,7 +466,7 @@ func (b *builder) gap(m *glazing.Makeup, e *elementSpec) {
 func (b *builder) conditions(list []conditionSpec) {
 	ids := map[string]position{}
 	for _, c := range list {
-		b.unique(ids, c.ID, "condition")
+		b.unique(ids, c.ID, "id", "condition")
 		if c.ID.value == "winter" || c.ID.value == "summer" {
 			b.fail(c.ID.at, "id", "%s is a condition of the basis; choose another name", c.ID.value)
 		}

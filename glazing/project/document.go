@@ -33,7 +33,9 @@ func (r *reader) parse(content []byte) (*fileSpec, bool) {
 		return nil, false
 	}
 	var spec fileSpec
-	r.object(doc.Content[0], reflect.ValueOf(&spec).Elem(), "")
+	if r.plain(doc.Content[0], "") {
+		r.object(doc.Content[0], reflect.ValueOf(&spec).Elem(), "")
+	}
 	return &spec, true
 }
 
@@ -76,6 +78,8 @@ func yamlFault(content []byte, err error) (position, string, string, error) {
 			message = "lists or maps are nested too deeply"
 		case strings.Contains(message, "cannot start any token"), strings.Contains(message, "tab character"):
 			message += " (a tab? indent with spaces)"
+		case strings.HasPrefix(message, "did not find expected"):
+			message += " (a bracket or quote left open, or a line indented wrongly, here or above?)"
 		case strings.Contains(message, "multiple"):
 			line := bytes.Count(content[:secondDocument(content)], []byte("\n")) + 1
 			return position{line, 1}, "", "%v", errors.New("a second document begins here; a project is one, without ---")

@@ -43,10 +43,20 @@ func (e Errors) Unwrap() []error { return e }
 // Nearest returns those of the known names that are nearest to a misspelt one: those at the
 // least distance, counted in letters changed, added, dropped or swapped, if that is small.
 func Nearest(word string, names []string) []string {
-	best := max(2, len([]rune(word))/3) + 1
+	word = strings.ToLower(word)
+	letters := len([]rune(word))
+	best := 2 // in a short word one letter may differ
+	if letters > 3 {
+		best = max(2, letters/3) + 1
+	}
 	var near []string
 	for _, name := range names {
-		switch d := distance(strings.ToLower(word), strings.ToLower(name), best); {
+		d := distance(word, strings.ToLower(name), best)
+		if letters >= 3 && strings.HasPrefix(strings.ToLower(name), word) {
+			d = 1 // the beginning of a name
+		}
+		switch {
+		case name == "":
 		case d < best:
 			best, near = d, []string{name}
 		case d == best && len(near) > 0:
@@ -61,7 +71,13 @@ func DidYouMean(near, all []string) string {
 	if len(near) > 0 {
 		return "did you mean " + strings.Join(near, " or ") + "?"
 	}
-	if all = slices.Compact(slices.Sorted(slices.Values(all))); len(all) > 30 {
+	return Known(all)
+}
+
+// Known lists names for a message.
+func Known(all []string) string {
+	all = slices.DeleteFunc(slices.Compact(slices.Sorted(slices.Values(all))), func(s string) bool { return s == "" })
+	if len(all) > 30 {
 		return "known are " + strings.Join(all[:30], ", ") + " and others"
 	}
 	return "known are " + strings.Join(all, ", ")

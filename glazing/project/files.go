@@ -11,6 +11,7 @@ import (
 	"os"
 	"path/filepath"
 	"slices"
+	"strings"
 
 	"panewright/spectra"
 )
@@ -117,7 +118,10 @@ func folder(dir string, anywhere bool) (from source, done func()) {
 		case errors.Is(err, fs.ErrNotExist):
 			return nil, errors.New("there is no such file in the project's folder")
 		case err != nil && !errors.Is(err, fs.ErrPermission):
-			return nil, fmt.Errorf("%w; if it leads out of the project's folder, copy the file there or allow it with --files-anywhere", reason(err))
+			if strings.Contains(err.Error(), "escapes") {
+				return nil, errors.New("is a link that leads out of the project's folder; copy the file there, or allow it with --files-anywhere")
+			}
+			return nil, reason(err)
 		case err == nil && !info.Mode().IsRegular() && !info.IsDir():
 			return nil, errors.New("is not a regular file") // opening a pipe would wait
 		}

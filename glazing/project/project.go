@@ -11,8 +11,10 @@
 package project
 
 import (
+	"maps"
 	"path/filepath"
 	"reflect"
+	"slices"
 
 	"panewright/glazing"
 	"panewright/spectra"
@@ -28,6 +30,7 @@ type Project struct {
 	Makeups                     []*glazing.Makeup
 	Cautions                    []glazing.Caution // of the project as a whole
 	Digest                      string            // SHA-256 of the project file and each file it names
+	Files                       []string          // paths of the project file and of each file that it names
 
 	sun          *spectra.Weighting
 	coefficients map[string]surfacesSpec
@@ -47,7 +50,16 @@ func Load(path string, a Access) (*Project, error) {
 	}
 	from, done := folder(filepath.Dir(path), a.Anywhere)
 	defer done()
-	return read(path, content, from)
+	p, err := read(path, content, from)
+	if err != nil {
+		return nil, err
+	}
+	for i, name := range p.Files[1:] {
+		if name = filepath.FromSlash(name); !filepath.IsAbs(name) {
+			p.Files[i+1] = filepath.Join(filepath.Dir(path), name)
+		}
+	}
+	return p, nil
 }
 
 // read reads a project from its content and a source of the files that it names.
@@ -65,6 +77,7 @@ func read(file string, content []byte, from source) (*Project, error) {
 	}
 	p.File = file
 	p.Digest = b.fileSet.digest(content)
+	p.Files = append([]string{file}, slices.Sorted(maps.Keys(b.fileSet.content))...)
 	return p, nil
 }
 

@@ -88,12 +88,9 @@ func (r *reader) plain(n *yaml.Node, key string) bool {
 	return false
 }
 
-// object fills a struct from a map. It returns false where the node is no map.
+// object fills a struct from a map. It returns false where anything in it was refused.
 func (r *reader) object(n *yaml.Node, into reflect.Value, key string) bool {
 	called := called(into.Type())
-	if !r.plain(n, key) {
-		return false
-	}
 	if n.Kind != yaml.MappingNode {
 		r.fail(place(n), key, "%s is a map of keys and values, not %s", called, kindOf(n))
 		return false
@@ -111,7 +108,11 @@ func (r *reader) object(n *yaml.Node, into reflect.Value, key string) bool {
 		if !r.plain(k, key) {
 			continue
 		}
-		if k.Kind != yaml.ScalarNode || k.Tag == "!!merge" {
+		if k.Tag == "!!merge" {
+			r.fail(place(k), key, "merge keys (<<) are not used in a project; write the keys out")
+			continue
+		}
+		if k.Kind != yaml.ScalarNode {
 			r.fail(place(k), key, "a key of %s is a plain word", called)
 			continue
 		}
@@ -121,7 +122,11 @@ func (r *reader) object(n *yaml.Node, into reflect.Value, key string) bool {
 			for _, name := range near {
 				spoilt[name] = true
 			}
-			r.fail(place(k), k.Value, "unknown key in %s; %s", called, DidYouMean(near, keyNames(known)))
+			offer := DidYouMean(near, keyNames(known))
+			if isDigits(k.Value) {
+				offer = "a decimal comma? write a point"
+			}
+			r.fail(place(k), k.Value, "unknown key in %s; %s", called, offer)
 			continue
 		}
 		if seen[k.Value] {
@@ -153,7 +158,7 @@ func (r *reader) object(n *yaml.Node, into reflect.Value, key string) bool {
 // value fills one field. It returns false where the value was refused.
 func (r *reader) value(n *yaml.Node, into reflect.Value, f reflect.StructField) bool {
 	key := f.Tag.Get("key")
-	if !r.plain(n, key) {
+	if !r.plain(n, key) && n.Anchor == "" {
 		return false
 	}
 	if n.Kind == yaml.ScalarNode && n.Tag == "!!null" {
@@ -196,6 +201,12 @@ func (r *reader) list(n *yaml.Node, into reflect.Value, key string) bool {
 			r.fail(place(item), key, "has an empty item")
 			ok = false
 			continue
+		}
+		if !r.plain(item, key) {
+			ok = false
+			if item.Kind == yaml.AliasNode {
+				continue // what it stands for is not looked at
+			}
 		}
 		ok = r.object(item, e, key) && ok
 		into.Set(reflect.Append(into, e))
@@ -360,6 +371,9 @@ func (r *reader) number(n *yaml.Node, into *number, tag reflect.StructTag, key s
 		return refuse("%s is not below %s", clip(s), short(*b))
 	}
 	if b := bound(tag, "upto"); b != nil && v > *b {
+		if *b == 1 && v <= 100 {
+			return refuse("%s is above 1; fractions of one, not percent", clip(s))
+		}
 		return refuse("%s is above %s", clip(s), short(*b))
 	}
 	*into = number{value: v, given: true, at: place(n)}

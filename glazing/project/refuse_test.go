@@ -56,7 +56,7 @@ func TestRefuses(t *testing.T) {
 		{"a number for true", [2]string{"turned: true", "turned: " + mark + "1"}, "turned", []string{"true or false"}},
 		{"quoted true", [2]string{"turned: true", "turned: " + mark + `"true"`}, "turned", []string{"true or false"}},
 
-		{"alias of a merge", [2]string{"      - {pane: dusk-7}\n", "      - {pane: dusk-7, " + mark + "<<: {turned: true}}\n"}, "outside_to_inside", []string{"plain word"}},
+		{"alias of a merge", [2]string{"      - {pane: dusk-7}\n", "      - {pane: dusk-7, " + mark + "<<: {turned: true}}\n"}, "outside_to_inside", []string{"merge keys"}},
 		{"anchor on a value", row(mark + "&six 6"), "thickness_mm", []string{"anchors and aliases are not used", "write the value out"}},
 		{"anchor on a key", [2]string{thickness, mark + "&t " + thickness}, "panes", []string{"anchors and aliases are not used"}},
 		{"anchor on a list", [2]string{"panes:\n", "panes: " + mark + "&p\n"}, "panes", []string{"anchors and aliases are not used"}},
@@ -70,10 +70,10 @@ func TestRefuses(t *testing.T) {
 		{"a text for a list", [2]string{"outside_to_inside:\n      - {pane: dusk-7}\n      - {gap_mm: 16, gas: {argon: 0.9, air: 0.1}}\n      - {pane: plain-6, turned: true}\n", "outside_to_inside: " + mark + "plain-6\n"}, "outside_to_inside", []string{"is a list", `"plain-6"`}},
 		{"a map for a list", [2]string{"makeups:\n", "limits: " + mark + "{figure: u, at_most: 1}\nmakeups:\n"}, "limits", []string{"is a list", "not a map"}},
 
-		{"duplicate pane", [2]string{"  - id: dusk-7\n", "  - {id: " + mark + "plain-6, thickness_mm: 4, spectrum: a.csv}\n  - id: dusk-7\n"}, "id", []string{`"plain-6" is the id of another glass or pane, in line 4`}},
-		{"duplicate make-up", [2]string{"makeups:\n  - id: A1", "makeups:\n  - {id: A1, outside_to_inside: [{pane: plain-6}]}\n  - id: " + mark + "A1"}, "id", []string{`"A1" is the id of another make-up, in line 18`}},
-		{"duplicate tint", [2]string{"tint: full", "tint: " + mark + "clear"}, "id", []string{`"clear" is the id of another tint of this pane, in line 15`}},
-		{"duplicate condition", [2]string{"makeups:\n", "conditions:\n  - {id: c, outside_c: 0, inside_c: 20}\n  - {id: " + mark + "c, outside_c: 0, inside_c: 20}\nmakeups:\n"}, "id", []string{`"c" is the id of another condition, in line 18`}},
+		{"duplicate pane", [2]string{"  - id: dusk-7\n", "  - {id: " + mark + "plain-6, thickness_mm: 4, spectrum: a.csv}\n  - id: dusk-7\n"}, "id", []string{`"plain-6" is the name of another glass or pane, in line 4`}},
+		{"duplicate make-up", [2]string{"makeups:\n  - id: A1", "makeups:\n  - {id: A1, outside_to_inside: [{pane: plain-6}]}\n  - id: " + mark + "A1"}, "id", []string{`"A1" is the name of another make-up, in line 18`}},
+		{"duplicate tint", [2]string{"tint: full", "tint: " + mark + "clear"}, "tint", []string{`"clear" is the name of another tint of this pane, in line 15`}},
+		{"duplicate condition", [2]string{"makeups:\n", "conditions:\n  - {id: c, outside_c: 0, inside_c: 20}\n  - {id: " + mark + "c, outside_c: 0, inside_c: 20}\nmakeups:\n"}, "id", []string{`"c" is the name of another condition, in line 18`}},
 		{"unknown pane", [2]string{"pane: dusk-7", "pane: " + mark + "dsuk-7"}, "pane", []string{`unknown pane "dsuk-7"`, "did you mean dusk-7?"}},
 		{"unknown pane, none near", [2]string{"pane: dusk-7", "pane: " + mark + "somewhere-else-entirely"}, "pane", []string{"known are dusk-7, plain-6"}},
 		{"unknown basis", [2]string{"basis: en", "basis: " + mark + "iso1509"}, "basis", []string{`"iso1509" is not known`, "did you mean iso15099?"}},

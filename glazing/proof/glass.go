@@ -86,5 +86,5 @@ func glassEmissivity(in *inputs) (float64, error) {
 		x := 1000 * um
 		c.NM, c.Value = append(c.NM, x), append(c.Value, reflectance(n.At(x), k.At(x)))
 	}
-	return number(glazing.InfraredEmissivity(c).Normal)
+	return number(glazing.InfraredEmissivity(c, spectra.Curve{}).Normal)
 }

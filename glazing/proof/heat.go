@@ -26,7 +26,7 @@ func grey(thicknessMM, tau, rho, front, back float64) *glazing.Pane {
 // sheet is one ply of soda-lime glass.
 func sheet(thicknessMM float64) []glazing.Ply {
 	return []glazing.Ply{{ThicknessMM: thicknessMM,
-		ConductivityWMK: thermal.GlassConductivity, DensityKGM3: glazing.DefaultGlassKGM3}}
+		ConductivityWMK: thermal.GlassConductivity, DensityKGM3: glazing.GlassKGM3}}
 }
 
 // Optical figures of a pane where a check asks for none that depends on them.

@@ -18,7 +18,7 @@ func JSON(r Report) []byte {
 	top.set(quoted(r.Version), "panewright")
 	top.set(quoted(r.Project.Title), "project")
 	for _, x := range []struct{ key, value string }{
-		{"author", r.Project.Author}, {"date", r.Project.Date}, {"client", r.Project.Client},
+		{"author", r.Project.Author}, {"date", r.Project.Date}, {"client", r.Project.Client}, {"notes", r.Project.Notes},
 	} {
 		if x.value != "" {
 			top.set(quoted(x.value), x.key)

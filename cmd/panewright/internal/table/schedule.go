@@ -183,7 +183,7 @@ func (r Report) buildUps(b *bytes.Buffer) {
 		done = append(done, m)
 		title := m.ID
 		if m.Title != "" {
-			title += "  " + m.Title
+			title += " " + m.Title
 		}
 		if !m.Tilt.Vertical() {
 			title += fmt.Sprintf(" (tilt %.6g°)", m.Tilt.Degrees())
@@ -272,7 +272,15 @@ func (r Report) cautionList(b *bytes.Buffer) {
 	}
 }
 
-// names lists ratings by make-up, and by tint where not all tints of a make-up are meant.
+// add appends a text to a list that does not hold it.
+func add(list []string, s string) []string {
+	if slices.Contains(list, s) {
+		return list
+	}
+	return append(list, s)
+}
+
+// names lists ratings by make-up, and by tint and basis where not all of a make-up are meant.
 func (r Report) names(of []int) string {
 	var parts []string
 	for k, i := range of {
@@ -281,23 +289,24 @@ func (r Report) names(of []int) string {
 		if k > 0 && same(of[k-1]) {
 			continue
 		}
-		meant, all := 0, 0
-		var tints []string
+		var tints, bases, every []string
 		for j := range r.Ratings {
 			if !same(j) {
 				continue
 			}
-			all++
+			every = add(every, r.Ratings[j].Tint)
 			if slices.Contains(of, j) {
-				meant++
-				if t := r.Ratings[j].Tint; !slices.Contains(tints, t) {
-					tints = append(tints, t)
-				}
+				tints = add(tints, r.Ratings[j].Tint)
+				bases = add(bases, r.Ratings[j].Method.Basis.Name)
 			}
 		}
+		states := len(every)
 		name := rating.Makeup.ID
-		if meant < all && rating.Tint != "" {
+		if len(tints) < states {
 			name += " " + strings.Join(tints, " + ")
+		}
+		if len(bases) < len(r.bases()) {
+			name += " under " + strings.Join(bases, " + ")
 		}
 		parts = append(parts, name)
 	}
