@@ -6,14 +6,19 @@
 // A make-up lists its panes from outside to inside; surfaces are numbered 1, 2, 3 … in the same
 // direction. A rating is calculated: it is not certified, nor a maker's declaration.
 //
-//	m := &glazing.Makeup{
-//		ID:    "D1",
-//		Panes: []glazing.Placed{{Pane: clear}, {Pane: lowE, Turned: true}},
-//		Gaps:  []glazing.Gap{{WidthMM: 16, Gas: argon}},
-//	}
-//	ratings, err := glazing.Rate(m, glazing.EN)
-//	// …
+// A make-up rated from one CSV spectrum; each err is to be looked at:
+//
+//	columns, err := spectra.ReadCSV(file, "low-e.csv")
+//	spectrum, err := spectra.Join(columns, spectra.Column{}, spectra.Column{})
+//	pane := &glazing.Pane{ID: "low-e", Plies: []glazing.Ply{{ThicknessMM: 6, ConductivityWMK: 1, DensityKGM3: 2500}},
+//		Tints: []glazing.Tint{{Spectrum: spectrum, Front: glazing.GivenEmissivity(0.837), Back: glazing.GivenEmissivity(0.04)}}}
+//	argon, err := glazing.Filling(map[string]float64{"argon": 0.9, "air": 0.1})
+//	ratings, err := glazing.Rate(&glazing.Makeup{ID: "D1",
+//		Panes: []glazing.Placed{{Pane: pane}, {Pane: pane, Turned: true}},
+//		Gaps:  []glazing.Gap{{WidthMM: 16, Gas: argon}}}, glazing.EN)
 //	fmt.Println(ratings[0].U.Number, ratings[0].G.Number)
+//
+// Package glazing/project reads whole projects from their files.
 //
 // Everything here is pure: values in, values out. Methods, made-ready make-ups and panes may be
 // shared by goroutines; a Rating belongs to one.

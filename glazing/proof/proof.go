@@ -1,6 +1,6 @@
 // Package proof runs the published check values of reference/checks through the calculations
-// that every rating uses and sets the computed figure beside the published one. The command
-// `verify` prints the outcomes; the test of this package fails on the first that does not pass.
+// that every rating uses and sets the computed figure beside the expected one. The
+// test of this package fails on each that does not pass.
 //
 // A check names its kind; the table of kinds says which function computes it. A further figure
 // of a known kind is one more row in reference/checks/tables, a new kind one more row here. A

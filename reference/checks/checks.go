@@ -1,6 +1,7 @@
-// Package checks holds published figures that Panewright must reproduce, as data: what is
-// computed, from which inputs, the figure, its tolerance and its source. It computes nothing;
-// package glazing/proof does, and prints both figures beside each other.
+// Package checks holds figures that Panewright must reproduce, as data: what is computed, from
+// which inputs, the figure, its tolerance and its source. Some are printed in the source; where
+// the source prints a method and not the case, the figure was worked through apart from this
+// program, and the source says so. The package computes nothing; glazing/proof does.
 //
 // The figures stand in the files under tables/, embedded. A file begins with "# title:",
 // "# inputs:", "# tolerance:" and "# verified:", names each of its sources once in a line

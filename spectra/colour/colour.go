@@ -48,7 +48,8 @@ type Meter struct {
 	rendering reference13
 }
 
-// Wavelengths returns those that a grid must hold, in nm: 380 to 780 at 5 nm.
+// Wavelengths returns those that a grid must hold, in nm: 380 to 780 at 5 nm. They must not be
+// written to.
 func Wavelengths() []float64 { return reference.Observers().Column("wavelength_nm") }
 
 // NewMeter lays the weights of D65, observers and samples out on a grid.
@@ -90,6 +91,7 @@ func NewMeter(g spectra.Grid) *Meter {
 // d65 returns D65 at the observers' wavelengths.
 func d65() []float64 { return onObserver("d65") }
 
+// onObserver returns a column of the daylight table at the observers' wavelengths.
 func onObserver(column string) []float64 {
 	nm, v := reference.Daylight().Series(column)
 	out := make([]float64, len(Wavelengths()))

@@ -57,7 +57,7 @@ func TestRenderingOfFluorescent(t *testing.T) {
 	knownDifferent := map[string]float64{"fl8": 0.51}
 	spectraOf := fluorescent(t)
 	for _, p := range published {
-		ra, kelvin := RenderingOf(spectraOf[p.name])
+		ra, kelvin := renderingOf(spectraOf[p.name])
 		tolerance := 0.5
 		if w, ok := knownDifferent[p.name]; ok {
 			tolerance = w

@@ -31,17 +31,17 @@ func TestDaylight(t *testing.T) {
 			t.Errorf("%s: x %.5f, y %.5f, want %.4f, %.4f (CIE 15:2004)", tt.name, c.X/sum, c.Y/sum, tt.x, tt.y)
 		}
 		// A phase of daylight is its own reference, a black body below 5000 K likewise.
-		if ra, found := RenderingOf(daylight(kelvin)); math.Abs(ra-100) > 0.05 || math.Abs(found-kelvin) > 10 {
+		if ra, found := renderingOf(daylight(kelvin)); math.Abs(ra-100) > 0.05 || math.Abs(found-kelvin) > 10 {
 			t.Errorf("%s: Ra %.3f at %.1f K, want 100 at %.1f K", tt.name, ra, found, kelvin)
 		}
 	}
 	for _, kelvin := range []float64{2856, 4000, 4990} {
-		if ra, found := RenderingOf(planck(kelvin)); math.Abs(ra-100) > 1e-3 || math.Abs(found-kelvin) > 0.1 {
+		if ra, found := renderingOf(planck(kelvin)); math.Abs(ra-100) > 1e-3 || math.Abs(found-kelvin) > 0.1 {
 			t.Errorf("black body: Ra %.4f at %.2f K, want 100 at %g K", ra, found, kelvin)
 		}
 	}
 	// Just beyond 5000 K the reference is daylight already.
-	if ra, found := RenderingOf(daylight(5030)); math.Abs(ra-100) > 0.05 {
+	if ra, found := renderingOf(daylight(5030)); math.Abs(ra-100) > 0.05 {
 		t.Errorf("daylight of 5030 K: Ra %.3f at %.1f K, want 100", ra, found)
 	}
 }
