@@ -4,7 +4,6 @@ import (
 	"fmt"
 	"math"
 	"math/rand/v2"
-	"reflect"
 	"slices"
 	"strings"
 	"testing"
@@ -225,55 +224,6 @@ func TestUnknownEmissivity(t *testing.T) {
 	}
 }
 
-func TestStates(t *testing.T) {
-	tints := func(id string, names ...string) *Pane {
-		p := pane(id, flat(300, 2500, 0.5, 0.1, 0.1), 0.837, 0.837)
-		one := p.Tints[0]
-		p.Tints = nil
-		for _, n := range names {
-			one.Name = n
-			p.Tints = append(p.Tints, one)
-		}
-		return p
-	}
-	x, y, plain := tints("x", "clear", "full"), tints("y", "clear", "mid", "full"), tints("z", "")
-	for _, tt := range []struct {
-		panes []Placed
-		want  string
-	}{
-		{[]Placed{{Pane: plain}}, `[""]`},
-		{[]Placed{{Pane: x}, {Pane: plain}}, `["clear" "full"]`},
-		{[]Placed{{Pane: plain}, {Pane: x, Tint: "full"}}, `["full"]`},
-		{[]Placed{{Pane: x}, {Pane: y}}, `["clear/clear" "clear/mid" "clear/full" "full/clear" "full/mid" "full/full"]`},
-		{[]Placed{{Pane: x}, {Pane: y, Tint: SameTint}}, `["clear" "full"]`},
-		{[]Placed{{Pane: x}, {Pane: y, Tint: "mid"}}, `["clear/mid" "full/mid"]`},
-		{[]Placed{{Pane: x, Tint: "full"}, {Pane: y, Tint: SameTint}}, `["full"]`},
-		{[]Placed{{Pane: y}, {Pane: x, Tint: SameTint}}, "no tint \"mid\""},
-		{[]Placed{{Pane: x, Tint: SameTint}}, "no pane outside it can switch"},
-		{[]Placed{{Pane: x, Tint: "dim"}}, "no tint \"dim\""},
-	} {
-		states, err := (&Makeup{Panes: tt.panes}).States()
-		if err != nil {
-			if !strings.Contains(err.Error(), tt.want) {
-				t.Errorf("error %v, want %q", err, tt.want)
-			}
-			continue
-		}
-		var names []string
-		for _, s := range states {
-			names = append(names, s.Name)
-		}
-		if got := fmt.Sprintf("%q", names); got != tt.want {
-			t.Errorf("states %s, want %s", got, tt.want)
-		}
-	}
-	// A pane that follows takes the tint of the same name, not of the same place.
-	states, err := (&Makeup{Panes: []Placed{{Pane: x}, {Pane: y, Tint: SameTint}}}).States()
-	if err != nil || !reflect.DeepEqual(states[1].Tints, []int{1, 2}) {
-		t.Errorf("following: %v %v, want tints 1 and 2", states, err)
-	}
-}
-
 // The coefficients of the bases are those of their standards (EN 673:2011, EN 410:2011,
 // ISO 9050:2003, ISO 10292, from memory), checked on a single pane that the formulas fit on one
 // line: U = 1/(1/he + 0.004 + 1/hi), qi = αe·hi/(he + hi).
@@ -372,6 +322,107 @@ func TestRefused(t *testing.T) {
 	} {
 		if _, err := Rate(tt.m, EN); err == nil || !strings.Contains(err.Error(), tt.want) {
 			t.Errorf("error %v, want %q", err, tt.want)
+		}
+	}
+}
+
+// A figure needs the spectra that its radiation meets, and no others.
+func TestWhatAFigureNeeds(t *testing.T) {
+	short := func(c spectra.Curve) spectra.Curve { // from 400 nm on
+		return spectra.Curve{NM: c.NM[20:], Value: c.Value[20:]}
+	}
+	for _, tt := range []struct {
+		what           string
+		cut            func(outer, inner *spectra.Measured)
+		uv, light, rho string // whether τuv, τe, ρe outside, ρe inside are known
+	}{
+		{"outer front", func(o, _ *spectra.Measured) { o.RhoFront = short(o.RhoFront) }, "known", "known", "-+"},
+		{"outer back", func(o, _ *spectra.Measured) { o.RhoBack = short(o.RhoBack) }, "unknown", "unknown", "--"},
+		{"inner front", func(_, i *spectra.Measured) { i.RhoFront = short(i.RhoFront) }, "unknown", "unknown", "--"},
+		{"inner back", func(_, i *spectra.Measured) { i.RhoBack = short(i.RhoBack) }, "known", "known", "+-"},
+		{"outer tau", func(o, _ *spectra.Measured) { o.Tau = short(o.Tau) }, "unknown", "unknown", "-+"},
+		{"inner tau", func(_, i *spectra.Measured) { i.Tau = short(i.Tau) }, "unknown", "unknown", "+-"},
+	} {
+		a, b := pane("a", flat(300, 2500, 0.6, 0.1, 0.1), 0.837, 0.837), pane("b", flat(300, 2500, 0.6, 0.1, 0.1), 0.837, 0.837)
+		tt.cut(&a.Tints[0].Spectrum, &b.Tints[0].Spectrum)
+		r := rateOne(t, &Makeup{Panes: []Placed{{Pane: a}, {Pane: b}}, Gaps: []Gap{gap(t, 12, map[string]float64{"air": 1})}}, EN, Options{})
+		for _, x := range []struct {
+			name string
+			v    Value
+			want bool
+		}{
+			{"τuv", r.UV, tt.uv == "known"}, {"τe", r.Solar.Transmittance, tt.light == "known"},
+			{"ρe", r.Solar.ReflectanceOutside, tt.rho[0] == '+'}, {"ρe′", r.Solar.ReflectanceInside, tt.rho[1] == '+'},
+		} {
+			if x.v.Known != x.want {
+				t.Errorf("%s short: %s known %t, want %t (%s)", tt.what, x.name, x.v.Known, x.want, x.v.Why)
+			}
+		}
+		if r.G.Known != (r.Solar.Transmittance.Known && r.Solar.ReflectanceOutside.Known) {
+			t.Errorf("%s short: g known %t, but τe %t and ρe %t", tt.what, r.G.Known, r.Solar.Transmittance.Known, r.Solar.ReflectanceOutside.Known)
+		}
+	}
+}
+
+// Memory that is used again keeps nothing of a make-up whose figures were known.
+func TestUnknownInReusedMemory(t *testing.T) {
+	method := NewMethod(EN, Options{})
+	double := func(e Emissivity, face int) *Ready {
+		a, b := pane("a", flat(300, 2500, 0.6, 0.1, 0.1), 0.837, 0.837), pane("b", flat(300, 2500, 0.6, 0.1, 0.1), 0.837, 0.837)
+		*[]*Emissivity{&a.Tints[0].Back, &b.Tints[0].Back}[face] = e
+		ready, err := method.Ready(&Makeup{Panes: []Placed{{Pane: a}, {Pane: b}}, Gaps: []Gap{gap(t, 12, map[string]float64{"air": 1})}})
+		if err != nil {
+			t.Fatal(err)
+		}
+		return ready
+	}
+	for face := range 2 {
+		var reused, fresh Rating
+		for _, r := range []*Ready{double(GivenEmissivity(0.05), face), double(NoEmissivity(), face)} {
+			if err := r.RateInto(&reused, 0); err != nil {
+				t.Fatal(err)
+			}
+		}
+		if err := double(NoEmissivity(), face).RateInto(&fresh, 0); err != nil {
+			t.Fatal(err)
+		}
+		if got, want := fmt.Sprint(reused.Gaps, reused.GapsG, reused.Heat), fmt.Sprint(fresh.Gaps, fresh.GapsG, fresh.Heat); got != want {
+			t.Errorf("unknown face %d: %s in reused memory, %s in fresh", face, got, want)
+		}
+	}
+	// The conductances between panes do not need the room-side face.
+	var r Rating
+	if err := double(NoEmissivity(), 1).RateInto(&r, 0); err != nil {
+		t.Fatal(err)
+	}
+	if r.U.Known || len(r.Heat.Conductances) != 1 || !r.GapsKnown {
+		t.Errorf("room-side face unknown: U %v, Λ %v, gaps known %t", r.U, r.Heat.Conductances, r.GapsKnown)
+	}
+}
+
+// A sheet that lets infrared through has no U by EN 673, whether that was typed or measured.
+func TestInfraredTransparent(t *testing.T) {
+	for _, vary := range []func(p *Pane){
+		func(p *Pane) { p.TauInfrared = 0.02 },
+		func(p *Pane) {
+			p.Tints[0].Spectrum.InfraredTau = spectra.Curve{NM: []float64{5000, 50000}, Value: []float64{0.02, 0.02}}
+		},
+	} {
+		p := pane("foil", flat(300, 2500, 0.6, 0.1, 0.1), 0.837, 0.837)
+		vary(p)
+		r := rateOne(t, &Makeup{Panes: []Placed{{Pane: p}}}, EN, Options{})
+		if r.U.Known || !strings.Contains(r.U.Why, "lets infrared through") {
+			t.Errorf("U %v, want unknown", r.U)
+		}
+	}
+}
+
+// Where an end is held, the working shows the held value, as the sum has it.
+func TestWorkingOfAHeldEnd(t *testing.T) {
+	r := rateOne(t, &Makeup{Panes: []Placed{{Pane: pane("p", flat(390, 2500, 0.6, 0.1, 0.1), 0.837, 0.837)}}}, EN, Options{})
+	for _, c := range Working(r) {
+		if c.Sum != nil && (c.Sum.NM[0] != 380 || c.Sum.Value[0] != 0.6) {
+			t.Errorf("row of %g nm shows %g, want the held 0.6", c.Sum.NM[0], c.Sum.Value[0])
 		}
 	}
 }
