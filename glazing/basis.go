@@ -1,5 +1,7 @@
 package glazing
 
+// The bases: which standards stand together, and their coefficients.
+
 import (
 	"fmt"
 	"strings"

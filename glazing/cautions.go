@@ -1,5 +1,7 @@
 package glazing
 
+// The cautions: each a row with code, condition and text.
+
 import (
 	"fmt"
 	"math"

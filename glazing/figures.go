@@ -1,5 +1,7 @@
 package glazing
 
+// The list of figures, from which every output is made.
+
 import (
 	"math"
 	"strconv"

@@ -1,5 +1,8 @@
 package glazing
 
+// From a basis to a Method, and from a make-up to a Ready: weights and spectra on one grid, what the
+// spectra reach far enough for, the gaps of each state.
+
 import (
 	"fmt"
 	"math"

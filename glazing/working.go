@@ -1,5 +1,7 @@
 package glazing
 
+// The working: U, g and the light transmittance of a rating as a hand calculation, for explain.
+
 import (
 	"fmt"
 	"math"

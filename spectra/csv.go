@@ -1,5 +1,7 @@
 package spectra
 
+// The CSV reader: columns of one file, each checked by itself.
+
 import (
 	"bytes"
 	"encoding/csv"

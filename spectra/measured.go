@@ -1,5 +1,8 @@
 package spectra
 
+// From columns to the spectrum of a pane: what is checked when columns are seen together, and the
+// split of the solar range from the infrared.
+
 import (
 	"cmp"
 	"fmt"

@@ -1,5 +1,7 @@
 package spectra
 
+// The weightings: tables of weighted means, and what they mean of a curve.
+
 import (
 	"math"
 	"slices"

@@ -1,5 +1,7 @@
 package thermal
 
+// The gases of EN 673 and their mixtures.
+
 import (
 	"fmt"
 	"maps"

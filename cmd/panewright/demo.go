@@ -1,5 +1,7 @@
 package main
 
+// panewright demo: the invented project, written and rated.
+
 import (
 	"errors"
 	"fmt"

@@ -1,5 +1,7 @@
 package main
 
+// panewright explain: the calculation of a make-up, every number put in.
+
 import (
 	"fmt"
 

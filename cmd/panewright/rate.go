@@ -1,5 +1,7 @@
 package main
 
+// panewright rate: which make-ups, tints and bases of a project to rate, and in which form to print.
+
 import (
 	"fmt"
 	"math"

@@ -1,5 +1,8 @@
 package main
 
+// The root command: what every sub-command shares, from streams and exit codes to the printing of
+// errors and the writing of files.
+
 import (
 	"errors"
 	"fmt"

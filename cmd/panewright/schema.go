@@ -1,5 +1,7 @@
 package main
 
+// panewright schema: the JSON Schema of the project file.
+
 import (
 	"fmt"
 

@@ -1,5 +1,7 @@
 package project
 
+// From keys to panes and make-ups: what only shows when keys are seen together.
+
 import (
 	"bytes"
 	"fmt"

@@ -1,5 +1,7 @@
 package project
 
+// Faults of a project, and the names offered for misspelt ones.
+
 import (
 	"fmt"
 	"slices"

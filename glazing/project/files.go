@@ -1,5 +1,7 @@
 package project
 
+// The files of a project: where they may stand, how they are read once, the digest over them.
+
 import (
 	"bytes"
 	"crypto/sha256"

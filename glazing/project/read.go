@@ -1,5 +1,7 @@
 package project
 
+// From YAML nodes to the spec types of keys.go: each value checked where it stands.
+
 import (
 	"fmt"
 	"reflect"

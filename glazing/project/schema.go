@@ -1,5 +1,7 @@
 package project
 
+// The JSON Schema of the project file, from the tags of keys.go.
+
 import (
 	"encoding/json"
 	"reflect"

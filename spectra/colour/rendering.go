@@ -1,5 +1,7 @@
 package colour
 
+// The general colour rendering index, step by step as CIE 13.3-1995 has it.
+
 import (
 	"math"
 )

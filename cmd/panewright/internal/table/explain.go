@@ -1,5 +1,7 @@
 package table
 
+// The text of explain: the working of each rating, then all its figures.
+
 import (
 	"bytes"
 	"fmt"

@@ -1,5 +1,7 @@
 package table
 
+// The JSON of rate: a tree built from the keys of the list of figures.
+
 import (
 	"bytes"
 	"encoding/json"

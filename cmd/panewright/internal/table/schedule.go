@@ -1,5 +1,7 @@
 package table
 
+// The schedule: 80 columns of text that could stand in a report.
+
 import (
 	"bytes"
 	"fmt"
