@@ -247,24 +247,7 @@ func (r *Ready) cover(s State) coverage {
 	for i := range c {
 		w := r.Method.coverageOf(i)
 		for k, p := range r.Makeup.Panes {
-			spectrum := &p.Pane.Tints[s.Tints[k]].Spectrum
-			outer, inner := spectrum.RhoFront, spectrum.RhoBack
-			if p.Turned {
-				outer, inner = inner, outer
-			}
-			// A figure needs the transmittance of the panes that its radiation passes, and the
-			// reflectances of the faces that it meets.
-			t := []spectra.Curve{spectrum.Tau}
-			var ro, ri []spectra.Curve
-			if k > 0 {
-				t = append(t, outer)
-				ri = append(ri, spectrum.Tau, outer)
-			}
-			if k < last {
-				t = append(t, inner)
-				ro = append(ro, spectrum.Tau, inner)
-			}
-			ro, ri = append(ro, outer), append(ri, inner)
+			t, ro, ri := p.needed(s.Tints[k], k == 0, k == last)
 			name := p.Pane.nameOf(s.Tints[k])
 			first(&c[i].t, r.reach(name, w, t))
 			if i == light || i == solar || i == colours { // of the others only transmission is a figure
@@ -274,6 +257,36 @@ func (r *Ready) cover(s State) coverage {
 		}
 	}
 	return c
+}
+
+// needed returns the spectra of a tint that the transmittance, and the reflectances outside and
+// inside, of a stack depend on: the transmittance of panes that radiation passes, and the
+// reflectances of faces that it meets.
+func (p Placed) needed(tint int, outermost, innermost bool) (t, ro, ri []spectra.Curve) {
+	spectrum := &p.Pane.Tints[tint].Spectrum
+	outer, inner := spectrum.RhoFront, spectrum.RhoBack
+	if p.Turned {
+		outer, inner = inner, outer
+	}
+	t = []spectra.Curve{spectrum.Tau}
+	if !outermost {
+		t = append(t, outer)
+		ri = append(ri, spectrum.Tau, outer)
+	}
+	if !innermost {
+		t = append(t, inner)
+		ro = append(ro, spectrum.Tau, inner)
+	}
+	return t, append(ro, outer), append(ri, inner)
+}
+
+// reachOf returns the range in nm that all curves cover.
+func reachOf(curves []spectra.Curve) (from, to float64) {
+	to = math.Inf(1)
+	for _, c := range curves {
+		from, to = max(from, c.First()), min(to, c.Last())
+	}
+	return from, to
 }
 
 // first keeps the first text that is not blank.
@@ -302,10 +315,7 @@ func (p *Pane) nameOf(tint int) string {
 // reach says why curves of a pane do not reach far enough for a weighting, or returns "". Where
 // an end is held, it adds a caution.
 func (r *Ready) reach(pane string, w spectra.Weighting, curves []spectra.Curve) string {
-	from, to := curves[0].First(), curves[0].Last()
-	for _, c := range curves[1:] {
-		from, to = max(from, c.First()), min(to, c.Last())
-	}
+	from, to := reachOf(curves)
 	start, end := w.NM[0], w.NM[len(w.NM)-1]
 	below, above := w.Missing(from, to)
 	text := ""
@@ -346,30 +356,29 @@ type Spectra struct {
 func (r *Ready) Spectra(state int, nm []float64) Spectra {
 	grid := spectra.Grid{NM: nm}
 	var panes []optics.Pane
-	lo, hi := 0.0, math.Inf(1)
+	var t, ro, ri []spectra.Curve // what each quantity depends on
+	last := len(r.Makeup.Panes) - 1
 	for k, p := range r.Makeup.Panes {
 		tint := r.States[state].Tints[k]
 		panes = append(panes, p.sample(tint, grid))
-		s := p.Pane.Tints[tint].Spectrum
-		for _, c := range []spectra.Curve{s.Tau, s.RhoFront, s.RhoBack} {
-			lo, hi = max(lo, c.First()), min(hi, c.Last())
-		}
+		a, b, c := p.needed(tint, k == 0, k == last)
+		t, ro, ri = append(t, a...), append(ro, b...), append(ri, c...)
 	}
 	var stack optics.Stack
 	stack.Combine(panes)
-	n := grid.Len()
-	out := Spectra{WavelengthNM: nm, T: stack.T[:n], RhoOutside: stack.Ro[:n], RhoInside: stack.Ri[:n]}
-	for _, a := range stack.A {
-		out.Absorptance = append(out.Absorptance, a[:n])
+	within := func(values []float64, curves ...spectra.Curve) []float64 {
+		values = values[:grid.Len()]
+		from, to := reachOf(curves)
+		for i, x := range nm {
+			if x < from || x > to {
+				values[i] = math.NaN()
+			}
+		}
+		return values
 	}
-	for i, x := range nm {
-		if x >= lo && x <= hi {
-			continue
-		}
-		out.T[i], out.RhoOutside[i], out.RhoInside[i] = math.NaN(), math.NaN(), math.NaN()
-		for _, a := range out.Absorptance {
-			a[i] = math.NaN()
-		}
+	out := Spectra{WavelengthNM: nm, T: within(stack.T, t...), RhoOutside: within(stack.Ro, ro...), RhoInside: within(stack.Ri, ri...)}
+	for _, a := range stack.A {
+		out.Absorptance = append(out.Absorptance, within(a, slices.Concat(t, ro)...))
 	}
 	return out
 }
