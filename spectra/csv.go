@@ -319,7 +319,7 @@ func (r *rows) readWavelengths() error {
 		r.fail(0, 0, "%d rows; a spectrum has at least %d", len(r.line), minimumRows)
 	case scale == 1 && last > 0 && last < 100:
 		r.fail(r.line[len(r.line)-1], 0, "the last wavelength is %s nm: µm in a column of nm? name it wavelength_um", short(last))
-	case scale == 1000 && r.nm[0] > 1e5:
+	case scale == 1000 && len(r.nm) > 0 && r.nm[0] > 1e5:
 		r.fail(r.line[0], 0, "the first wavelength is %s µm: nm in a column of µm? name it wavelength_nm", short(r.nm[0]/1000))
 	}
 	return nil
@@ -367,7 +367,7 @@ func (r *rows) column(head string, check func(float64) string) Column {
 			blank = 0
 		}
 		if problem != "" {
-			r.fail(r.line[i], r.nm[i], "%s %s: %s", head, clip(cell), problem)
+			r.fail(r.line[i], r.nm[i], "%s %s: %s", clip(head), clip(cell), problem)
 			continue
 		}
 		c.NM, c.Value, c.Line = append(c.NM, r.nm[i]), append(c.Value, v), append(c.Line, r.line[i])
