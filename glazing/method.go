@@ -212,10 +212,10 @@ func (r *Ready) addState(s State, gases []thermal.Gas) {
 		if !room.Corrected.Known && r.Method.Options.InsideWM2K == 0 {
 			blank = append(blank, m.faceName(n-1, true))
 		}
-		why = "no emissivity is known of " + strings.Join(blank, ", ")
+		why = "the emissivity of " + strings.Join(blank, ", ") + " is not known"
 	}
 	if !room.Corrected.Known {
-		room.Corrected.Why = "no emissivity is known of " + m.faceName(n-1, true)
+		room.Corrected.Why = "the emissivity of " + m.faceName(n-1, true) + " is not known"
 	}
 	for k, p := range m.Panes {
 		if p.Pane.TauInfrared > 0 || spectra.InfraredMean(p.Pane.Tints[s.Tints[k]].Spectrum.InfraredTau) > opaque {

@@ -7,8 +7,10 @@ import (
 	"errors"
 	"fmt"
 	"reflect"
+	"strconv"
 	"strings"
 	"unicode"
+	"unicode/utf16"
 	"unicode/utf8"
 
 	"go.yaml.in/yaml/v4"
@@ -24,7 +26,7 @@ func (r *reader) parse(content []byte) (*fileSpec, bool) {
 		return nil, false
 	}
 	var doc yaml.Node
-	if err := yaml.Load(content, &doc); err != nil {
+	if err := yaml.Load(joinSurrogates(content), &doc); err != nil {
 		r.fail(yamlFault(content, err))
 		return nil, false
 	}
@@ -37,6 +39,32 @@ func (r *reader) parse(content []byte) (*fileSpec, bool) {
 		r.object(doc.Content[0], reflect.ValueOf(&spec).Elem(), "")
 	}
 	return &spec, true
+}
+
+// joinSurrogates writes out the pairs of escapes by which JSON names letters beyond U+FFFF, such
+// as \ud83d\ude00, for YAML has one escape for these. Other content is returned as it is.
+func joinSurrogates(content []byte) []byte {
+	if !bytes.HasPrefix(bytes.TrimSpace(content), []byte("{")) || !bytes.Contains(bytes.ToLower(content), []byte(`\ud`)) {
+		return content
+	}
+	const pair = len(`\ud83d\ude00`)
+	var out []byte
+	for len(content) > 0 {
+		n := 1
+		if content[0] == '\\' && len(content) > 1 {
+			n = 2 // an escape is taken whole, so that \\ud83d stays what it is
+		}
+		if len(content) >= pair && content[0] == '\\' && content[1] == 'u' && content[6] == '\\' && content[7] == 'u' {
+			high, err1 := strconv.ParseUint(string(content[2:6]), 16, 16)
+			low, err2 := strconv.ParseUint(string(content[8:12]), 16, 16)
+			if c := utf16.DecodeRune(rune(high), rune(low)); err1 == nil && err2 == nil && c != utf8.RuneError {
+				out, content = utf8.AppendRune(out, c), content[pair:]
+				continue
+			}
+		}
+		out, content = append(out, content[:n]...), content[n:]
+	}
+	return out
 }
 
 // notText says why content cannot be YAML in UTF-8, and where.

@@ -428,3 +428,20 @@ func TestNearest(t *testing.T) {
 		t.Error(got)
 	}
 }
+
+// JSON writes letters beyond U+FFFF as pairs of escapes; a backslash before one keeps it text.
+func TestSurrogatesOfJSON(t *testing.T) {
+	for _, tt := range []struct{ title, want string }{
+		{`a\ud83d\ude00b`, "a😀b"},
+		{`\u00e9\uD834\uDD1E`, "é𝄞"},
+		{`\\ud83d`, `\ud83d`},
+	} {
+		p, err := read("p.json", []byte(`{"project": "`+tt.title+`"}`), nil)
+		if err != nil || p.Title != tt.want {
+			t.Errorf("%s: %v, want %s", tt.title, err, tt.want)
+		}
+	}
+	if _, err := read("p.json", []byte(`{"project": "\ud83d alone"}`), nil); err == nil {
+		t.Error("half a pair is accepted")
+	}
+}
