@@ -433,16 +433,20 @@ func notNegative(v float64) string {
 // short prints a number as briefly as it can be read back.
 func short(v float64) string { return strconv.FormatFloat(v, 'g', -1, 64) }
 
-// clip shortens a cell for a message, and takes out what would steer a terminal.
-func clip(s string) string {
+// clip shortens a cell for a message.
+func clip(s string) string { return Clip(s, 40) }
+
+// Clip shortens a text of a user's for a message to a number of letters, and takes out what would
+// steer a terminal.
+func Clip(s string, letters int) string {
 	s = strings.Map(func(c rune) rune {
 		if unicode.IsControl(c) {
 			return unicode.ReplacementChar
 		}
 		return c
 	}, s)
-	if r := []rune(s); len(r) > 40 {
-		return string(r[:40]) + "…"
+	if r := []rune(s); len(r) > letters {
+		return string(r[:letters]) + "…"
 	}
 	return s
 }

@@ -18,6 +18,7 @@ import (
 	"panewright/glazing"
 	"panewright/glazing/project"
 	"panewright/reference"
+	"panewright/spectra"
 )
 
 // version is printed by --version and on every output.
@@ -208,21 +209,10 @@ func report(w io.Writer, err error) {
 }
 
 // clip keeps a message on one line of bounded length.
-func clip(s string) string {
-	s = strings.ReplaceAll(s, "\n", " ")
-	if r := []rune(s); len(r) > errorLength {
-		return string(r[:errorLength]) + "…"
-	}
-	return s
-}
+func clip(s string) string { return spectra.Clip(strings.ReplaceAll(s, "\n", " "), errorLength) }
 
 // short keeps what the user typed short in a message.
-func short(s string) string {
-	if r := []rune(s); len(r) > 60 {
-		return string(r[:60]) + "…"
-	}
-	return s
-}
+func short(s string) string { return spectra.Clip(s, 60) }
 
 // write writes a result to standard output, or, if a path is given, to that file.
 func (s streams) write(path string, content []byte) error {

@@ -21,25 +21,51 @@ import (
 // A source gives the content of a file that a project names.
 type source func(name string) ([]byte, error)
 
-// readRegular reads an open file that must be a regular one of at most limit bytes.
-func readRegular(f *os.File, limit int64) ([]byte, error) {
-	info, err := f.Stat()
+// filePlace is where files may be looked at and opened: a folder, or the whole file system.
+type filePlace interface {
+	Stat(name string) (fs.FileInfo, error)
+	Open(name string) (*os.File, error)
+}
+
+// anywhere is the whole file system; *os.Root is a folder.
+type anywhere struct{}
+
+func (anywhere) Stat(name string) (fs.FileInfo, error) { return os.Stat(name) }
+func (anywhere) Open(name string) (*os.File, error)    { return os.Open(name) }
+
+// readFile reads a regular file of at most limit bytes. It is looked at before it is opened, for
+// opening a pipe would wait.
+func readFile(in filePlace, path string, limit int64) ([]byte, error) {
+	info, err := in.Stat(path)
 	switch {
 	case err != nil:
 		return nil, reason(err)
 	case info.IsDir():
-		return nil, errors.New("is a folder, not a file")
+		return nil, errFolder
 	case !info.Mode().IsRegular():
 		return nil, errors.New("is not a regular file")
 	case info.Size() > limit:
 		return nil, fmt.Errorf("is larger than %d MB", limit>>20)
 	}
+	f, err := in.Open(path)
+	if err != nil {
+		return nil, reason(err)
+	}
+	defer f.Close()
 	content, err := io.ReadAll(io.LimitReader(f, limit+1))
 	if err != nil {
 		return nil, reason(err)
 	}
 	return content, nil
 }
+
+var errFolder = errors.New("is a folder, not a file")
+
+const (
+	copyIt     = "; copy the file there, or allow it with --files-anywhere"
+	leadsOut   = "leads out of the project's folder" + copyIt
+	linkingOut = "is a link that leads out of the project's folder" + copyIt
+)
 
 // reason strips the operation and the path off an error of the file system, for both are said
 // already.
@@ -49,6 +75,8 @@ func reason(err error) error {
 		return errors.New("there is no such file")
 	case errors.Is(err, fs.ErrPermission):
 		return errors.New("may not be read (permission denied)")
+	case strings.Contains(err.Error(), "escapes"): // what os.Root says
+		return errors.New(linkingOut)
 	}
 	if pe, ok := errors.AsType[*fs.PathError](err); ok {
 		return pe.Err
@@ -58,82 +86,40 @@ func reason(err error) error {
 
 // readProjectFile reads the project file itself.
 func readProjectFile(path string) ([]byte, error) {
-	if info, err := os.Stat(path); err == nil && !info.Mode().IsRegular() {
-		if info.IsDir() {
-			text := "is a folder; name the project file in it"
-			found, _ := filepath.Glob(filepath.Join(path, "*.y*ml"))
-			if len(found) > 0 {
-				text += ", such as " + found[0]
-			}
-			return nil, errors.New(text)
+	content, err := readFile(anywhere{}, path, maxProjectBytes)
+	if err == errFolder {
+		text := "is a folder; name the project file in it"
+		if found, _ := filepath.Glob(filepath.Join(path, "*.y*ml")); len(found) > 0 {
+			text += ", such as " + found[0]
 		}
-		return nil, errors.New("is not a regular file")
+		return nil, errors.New(text)
 	}
-	f, err := os.Open(path)
-	if err != nil {
-		return nil, reason(err)
-	}
-	defer f.Close()
-	return readRegular(f, maxProjectBytes)
+	return content, err
 }
 
 // folder returns the files of a folder as a source, and a function to call when no more is read.
-// Without anywhere, a name may not lead out of the folder, not by a symbolic link either.
-func folder(dir string, anywhere bool) (from source, done func()) {
-	if anywhere {
+// Unless free, a name may not lead out of the folder, not by a symbolic link either.
+func folder(dir string, free bool) (from source, done func()) {
+	if free {
 		return func(name string) ([]byte, error) {
 			path := filepath.FromSlash(name)
 			if !filepath.IsAbs(path) {
 				path = filepath.Join(dir, path)
 			}
-			if info, err := os.Stat(path); err == nil && !info.Mode().IsRegular() && !info.IsDir() {
-				return nil, errors.New("is not a regular file") // opening a pipe would wait
-			}
-			f, err := os.Open(path)
-			if err != nil {
-				return nil, reason(err)
-			}
-			defer f.Close()
-			return readRegular(f, spectra.MaxBytes)
+			return readFile(anywhere{}, path, spectra.MaxBytes)
 		}, func() {}
 	}
-	var root *os.Root
-	var rootErr error
-	done = func() {
-		if root != nil {
-			root.Close()
-		}
+	root, err := os.OpenRoot(dir)
+	if err != nil {
+		return func(string) ([]byte, error) { return nil, reason(err) }, func() {}
 	}
 	return func(name string) ([]byte, error) {
 		path := filepath.FromSlash(name)
 		if !filepath.IsLocal(path) {
-			return nil, errors.New("leads out of the project's folder; copy the file there, or allow it with --files-anywhere")
+			return nil, errors.New(leadsOut)
 		}
-		if root == nil && rootErr == nil {
-			root, rootErr = os.OpenRoot(dir)
-		}
-		if rootErr != nil {
-			return nil, reason(rootErr)
-		}
-		info, err := root.Stat(path)
-		switch {
-		case errors.Is(err, fs.ErrNotExist):
-			return nil, errors.New("there is no such file in the project's folder")
-		case err != nil && !errors.Is(err, fs.ErrPermission):
-			if strings.Contains(err.Error(), "escapes") {
-				return nil, errors.New("is a link that leads out of the project's folder; copy the file there, or allow it with --files-anywhere")
-			}
-			return nil, reason(err)
-		case err == nil && !info.Mode().IsRegular() && !info.IsDir():
-			return nil, errors.New("is not a regular file") // opening a pipe would wait
-		}
-		f, err := root.Open(path)
-		if err != nil {
-			return nil, reason(err)
-		}
-		defer f.Close()
-		return readRegular(f, spectra.MaxBytes)
-	}, done
+		return readFile(root, path, spectra.MaxBytes)
+	}, func() { root.Close() }
 }
 
 // fileSet reads each named file once and remembers the order in which the project names them.

@@ -4,6 +4,7 @@ package project
 
 import (
 	"fmt"
+	"panewright/spectra"
 	"reflect"
 	"slices"
 	"strconv"
@@ -474,16 +475,5 @@ func called(t reflect.Type) string {
 
 func short(v float64) string { return strconv.FormatFloat(v, 'g', -1, 64) }
 
-// clip shortens a text of the user's for a message, and takes out what would steer a terminal.
-func clip(s string) string {
-	s = strings.Map(func(c rune) rune {
-		if unicode.IsControl(c) {
-			return unicode.ReplacementChar
-		}
-		return c
-	}, s)
-	if r := []rune(s); len(r) > 60 {
-		return string(r[:60]) + "…"
-	}
-	return s
-}
+// clip shortens a text of the user's for a message.
+func clip(s string) string { return spectra.Clip(s, 60) }
