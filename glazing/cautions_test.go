@@ -94,10 +94,19 @@ func TestThresholds(t *testing.T) {
 		}
 	}
 	// Colour cautions, where the figure itself tells the side.
-	for depth := 0.05; depth < 0.95; depth += 0.01 {
+	method := NewMethod(EN, Options{})
+	for depth := 0.05; depth < 0.95; depth += 0.001 {
 		m := quiet()
 		blue(m, depth)
-		r := rateOne(t, m, EN, Options{})
+		ready, err := method.Ready(m)
+		if err != nil {
+			t.Fatal(err)
+		}
+		ratings, err := ready.RateAll()
+		if err != nil {
+			t.Fatal(err)
+		}
+		r := &ratings[0]
 		has := func(code string) bool {
 			return slices.ContainsFunc(r.Cautions, func(c Caution) bool { return c.Code == code })
 		}

@@ -402,17 +402,26 @@ func TestUnknownInReusedMemory(t *testing.T) {
 
 // A sheet that lets infrared through has no U by EN 673, whether that was typed or measured.
 func TestInfraredTransparent(t *testing.T) {
-	for _, vary := range []func(p *Pane){
-		func(p *Pane) { p.TauInfrared = 0.02 },
-		func(p *Pane) {
-			p.Tints[0].Spectrum.InfraredTau = spectra.Curve{NM: []float64{5000, 50000}, Value: []float64{0.02, 0.02}}
-		},
+	measured := func(tau float64) func(p *Pane) {
+		return func(p *Pane) {
+			p.Tints[0].Spectrum.InfraredTau = spectra.Curve{NM: []float64{5000, 50000}, Value: []float64{tau, tau}}
+		}
+	}
+	for _, tt := range []struct {
+		what  string
+		vary  func(p *Pane)
+		known bool
+	}{
+		{"typed", func(p *Pane) { p.TauInfrared = 0.02 }, false},
+		{"measured", measured(0.02), false},
+		{"just not opaque", measured(0.00502), false},
+		{"opaque but for stray light", measured(0.00498), true},
 	} {
 		p := pane("foil", flat(300, 2500, 0.6, 0.1, 0.1), 0.837, 0.837)
-		vary(p)
+		tt.vary(p)
 		r := rateOne(t, &Makeup{Panes: []Placed{{Pane: p}}}, EN, Options{})
-		if r.U.Known || !strings.Contains(r.U.Why, "lets infrared through") {
-			t.Errorf("U %v, want unknown", r.U)
+		if r.U.Known != tt.known || (!tt.known && !strings.Contains(r.U.Why, "lets infrared through")) {
+			t.Errorf("%s: U %v, want it known %t", tt.what, r.U, tt.known)
 		}
 	}
 }

@@ -5,6 +5,7 @@ import (
 	"encoding/hex"
 	"encoding/json"
 	"errors"
+	"fmt"
 	"math"
 	"slices"
 	"strings"
@@ -331,6 +332,32 @@ func TestTintEmissivity(t *testing.T) {
 	// EN 12898: a normal emissivity of 0.1 is corrected by 1.14
 	if got := full.Back.Corrected.Number; math.Abs(got-0.114) > 1e-12 {
 		t.Errorf("corrected emissivity %v, want 0.114", got)
+	}
+}
+
+// A typed emissivity wins over infrared rows; a difference above 0.02 is said. A reflectance of
+// 0.5 makes a normal emissivity of 0.5, which EN 12898 corrects by 1.00.
+func TestTypedEmissivityDiffers(t *testing.T) {
+	var rows strings.Builder
+	rows.WriteString("wavelength_nm,tau,rho_front,rho_back\n")
+	for nm := 300; nm <= 2500; nm += 20 {
+		fmt.Fprintf(&rows, "%d,0.5,0.1,0.1\n", nm)
+	}
+	for nm := 5000; nm <= 50000; nm += 1000 {
+		fmt.Fprintf(&rows, "%d,,0.1,0.5\n", nm)
+	}
+	for _, tt := range []struct {
+		typed string
+		said  bool
+	}{{"0.5199", false}, {"0.5201", true}, {"0.4801", false}, {"0.4799", true}} {
+		p := accept(t, "project: p\npanes: [{id: a, thickness_mm: 4, spectrum: a.csv, emissivity_back: "+tt.typed+"}]\n", map[string]string{"a.csv": rows.String()})
+		said := slices.ContainsFunc(p.Panes[0].Tints[0].Spectrum.Cautions, func(c glazing.Caution) bool { return c.Code == "emissivity_differs" })
+		if said != tt.said {
+			t.Errorf("typed %s, measured 0.5: caution %t, want %t", tt.typed, said, tt.said)
+		}
+		if got := fmt.Sprintf("%.4f", p.Panes[0].Tints[0].Back.Corrected.Number); got != tt.typed {
+			t.Errorf("typed %s, used %s", tt.typed, got)
+		}
 	}
 }
 
