@@ -170,10 +170,10 @@ func thermalFigures() []Figure {
 	} {
 		list = append(list, Figure{Key: "gaps.#." + g.key, Alias: g.alias, Symbol: g.symbol, Unit: g.unit, Places: g.places, Per: PerGap,
 			Clause: g.clause, Meaning: g.meaning, Value: func(r *Rating, i int) Value {
-				if !r.GapsKnown {
-					return unknown(r.U.Why)
+				if v := g.get(r, i); v > 0 {
+					return known(v)
 				}
-				return known(g.get(r, i))
+				return unknown(r.U.Why)
 			}})
 	}
 	return append(list,

@@ -143,10 +143,17 @@ func GivenNormalEmissivity(normal float64) Emissivity {
 // InfraredEmissivity follows from the reflectance of a face from 5 to 50 µm (EN 12898), and from
 // the transmittance of a sheet that is not opaque there.
 func InfraredEmissivity(reflectance, transmittance spectra.Curve) Emissivity {
-	e := fromNormal(spectra.NormalEmissivity(reflectance, transmittance))
+	normal := spectra.NormalEmissivity(reflectance, transmittance)
+	if normal < leastEmissivity {
+		return noEmissivity("the infrared rows leave none")
+	}
+	e := fromNormal(normal)
 	e.Source = EmissivityInfrared
 	return e
 }
+
+// leastEmissivity is below that of any surface; bulk silver has about 0.005.
+const leastEmissivity = 0.0001
 
 func fromNormal(normal float64) Emissivity {
 	corrected, _ := thermal.CorrectedEmissivity(normal)
@@ -155,8 +162,12 @@ func fromNormal(normal float64) Emissivity {
 
 // NoEmissivity is that of a face of which nothing is known.
 func NoEmissivity() Emissivity {
-	why := unknown("no emissivity and no infrared rows were given")
-	return Emissivity{Normal: why, Corrected: why, Hemispherical: why, Source: EmissivityUnknown}
+	return noEmissivity("no emissivity and no infrared rows were given")
+}
+
+func noEmissivity(why string) Emissivity {
+	none := unknown(why)
+	return Emissivity{Normal: none, Corrected: none, Hemispherical: none, Source: EmissivityUnknown}
 }
 
 // Tilt of a glazing; the zero value is vertical.
@@ -309,7 +320,7 @@ func (m *Makeup) BuildUp() string {
 	for i := range parts {
 		parts[i] = strings.ReplaceAll(parts[i], " ", "\u00a0")
 	}
-	return strings.Join(parts, " | ")
+	return strings.Join(parts, "\u00a0| ")
 }
 
 // A State is one combination of tints: for each pane the index of its tint.

@@ -108,6 +108,7 @@ type Ready struct {
 	glass    []float64       // resistance of each pane, m²·K/W
 	gaps     [][]thermal.Gap // by state
 	thermal  []string        // by state: why U and g are unknown, or ""
+	open     []bool          // by state: whether that is for unknown emissivities alone
 	inner    []Emissivity    // by state: of the room-side face
 	tilted   thermal.Convection
 	vertical thermal.Convection
@@ -217,15 +218,17 @@ func (r *Ready) addState(s State, gases []thermal.Gas) {
 	if !room.Corrected.Known {
 		room.Corrected.Why = "the emissivity of " + m.faceName(n-1, true) + " is not known"
 	}
+	open := why != ""
 	for k, p := range m.Panes {
 		if p.Pane.TauInfrared > 0 || spectra.InfraredMean(p.Pane.Tints[s.Tints[k]].Spectrum.InfraredTau) > opaque {
-			why = "pane " + p.Pane.ID + " lets infrared through; " + noBalance
+			why, open = "pane "+p.Pane.ID+" lets infrared through; "+noBalance, false
 			break
 		}
 	}
 	if r.Method.Basis.balance {
-		why = noBalance
+		why, open = noBalance, false
 	}
+	r.open = append(r.open, open)
 	r.gaps, r.thermal, r.inner = append(r.gaps, gaps), append(r.thermal, why), append(r.inner, room)
 	r.spectral = append(r.spectral, nil)
 	r.coverage = append(r.coverage, r.cover(s))

@@ -38,8 +38,7 @@ type Rating struct {
 	OutsideWM2K, InsideWM2K   Value                 // he and hi of U, W/(m²·K)
 	OutsideGWM2K, InsideGWM2K Value                 // he and hi of g, W/(m²·K)
 	U                         Value                 // of the centre of the glass, W/(m²·K) (EN 673)
-	GapsKnown                 bool                  // whether the gaps' figures are; else U.Why tells why not
-	Gaps                      []thermal.GapState    // at the make-up's tilt, as U has them
+	Gaps                      []thermal.GapState    // at the make-up's tilt, as U has them; 0 where unknown, see U.Why
 	GapsG                     []thermal.GapState    // of vertical gaps, as g has them
 	Heat                      thermal.SecondaryHeat // what leads to qi
 
@@ -151,7 +150,6 @@ func (r *Ready) rateHeat(dst *Rating, state int) error {
 	}
 	gaps, why := r.gaps[state], r.thermal[state]
 	dst.Gaps, dst.GapsG = resized(dst.Gaps, n-1), resized(dst.GapsG, n-1)
-	dst.GapsKnown = why == ""
 	room := r.inner[state].Corrected
 	dst.OutsideWM2K, dst.InsideWM2K = known(m.outside(m.Basis.u)), m.inside(m.Basis.u, room)
 	dst.OutsideGWM2K, dst.InsideGWM2K = known(m.outside(m.Basis.g)), m.inside(m.Basis.g, room)
@@ -162,6 +160,11 @@ func (r *Ready) rateHeat(dst *Rating, state int) error {
 	if why != "" {
 		clear(dst.Gaps)
 		clear(dst.GapsG)
+		if r.open[state] {
+			if err := r.rateOpenGaps(dst.Gaps, gaps); err != nil {
+				return err
+			}
+		}
 		dst.Heat = thermal.SecondaryHeat{B: dst.Heat.B[:0], Conductances: dst.Heat.Conductances[:0]}
 		dst.noHeat(why)
 		return nil
@@ -223,6 +226,26 @@ func (r *Rating) InTint(name string) bool {
 		}
 	}
 	return any
+}
+
+// rateOpenGaps writes what is known of gaps some of whose faces are of unknown emissivity, which
+// stands as 0: radiation between known faces, and in a single gap, which has the whole
+// temperature drop, convection.
+func (r *Ready) rateOpenGaps(states []thermal.GapState, gaps []thermal.Gap) error {
+	if len(gaps) == 1 {
+		black := gaps[0]
+		black.Emissivity = [2]float64{1, 1}
+		if err := thermal.SolveGaps(states, []thermal.Gap{black}, r.tilted); err != nil {
+			return err
+		}
+		states[0].Radiative, states[0].Total = 0, 0
+	}
+	for k, g := range gaps {
+		if g.Emissivity[0] > 0 && g.Emissivity[1] > 0 {
+			states[k].Radiative = thermal.RadiativeConductance(g.Emissivity[0], g.Emissivity[1])
+		}
+	}
+	return nil
 }
 
 // noHeat leaves U, and what follows from heat, unknown.

@@ -72,10 +72,10 @@ type paneSpec struct {
 	Origin          text              `key:"origin" one:"measured modelled invented" doc:"where the spectrum comes from; measured when absent"`
 	Spectrum        text              `key:"spectrum" file:"yes" doc:"CSV of wavelength, tau, rho_front, rho_back"`
 	Spectra         *spectraSpec      `key:"spectra" doc:"the same from several files"`
-	EmissivityFront number            `key:"emissivity_front" above:"0" upto:"1" doc:"corrected (hemispherical) emissivity of the front"`
-	EmissivityBack  number            `key:"emissivity_back" above:"0" upto:"1" doc:"corrected (hemispherical) emissivity of the back"`
-	NormalFront     number            `key:"emissivity_normal_front" above:"0" upto:"1" doc:"normal emissivity of the front"`
-	NormalBack      number            `key:"emissivity_normal_back" above:"0" upto:"1" doc:"normal emissivity of the back"`
+	EmissivityFront number            `key:"emissivity_front" above:"0" from:"0.0001" upto:"1" doc:"corrected (hemispherical) emissivity of the front"`
+	EmissivityBack  number            `key:"emissivity_back" above:"0" from:"0.0001" upto:"1" doc:"corrected (hemispherical) emissivity of the back"`
+	NormalFront     number            `key:"emissivity_normal_front" above:"0" from:"0.0001" upto:"1" doc:"normal emissivity of the front"`
+	NormalBack      number            `key:"emissivity_normal_back" above:"0" from:"0.0001" upto:"1" doc:"normal emissivity of the back"`
 	TauInfrared     number            `key:"tau_ir" from:"0" below:"1" doc:"transmittance in the thermal infrared, 0 when absent"`
 	Glass           text              `key:"glass" id:"yes" doc:"a glass, or a pane of the library, that is coated"`
 	Coatings        []coatingSpec     `key:"coatings" doc:"films on the faces"`
@@ -128,10 +128,10 @@ type tintSpec struct {
 	Temperature     number       `key:"temperature_c" above:"-273.15" doc:"temperature of a thermochromic state, °C"`
 	Spectrum        text         `key:"spectrum" file:"yes" doc:"CSV of wavelength, tau, rho_front, rho_back"`
 	Spectra         *spectraSpec `key:"spectra" doc:"the same from several files"`
-	EmissivityFront number       `key:"emissivity_front" above:"0" upto:"1" doc:"corrected emissivity of the front in this tint"`
-	EmissivityBack  number       `key:"emissivity_back" above:"0" upto:"1" doc:"corrected emissivity of the back in this tint"`
-	NormalFront     number       `key:"emissivity_normal_front" above:"0" upto:"1" doc:"normal emissivity of the front in this tint"`
-	NormalBack      number       `key:"emissivity_normal_back" above:"0" upto:"1" doc:"normal emissivity of the back in this tint"`
+	EmissivityFront number       `key:"emissivity_front" above:"0" from:"0.0001" upto:"1" doc:"corrected emissivity of the front in this tint"`
+	EmissivityBack  number       `key:"emissivity_back" above:"0" from:"0.0001" upto:"1" doc:"corrected emissivity of the back in this tint"`
+	NormalFront     number       `key:"emissivity_normal_front" above:"0" from:"0.0001" upto:"1" doc:"normal emissivity of the front in this tint"`
+	NormalBack      number       `key:"emissivity_normal_back" above:"0" from:"0.0001" upto:"1" doc:"normal emissivity of the back in this tint"`
 }
 
 type makeupSpec struct {
