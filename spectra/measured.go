@@ -214,17 +214,21 @@ func infrared(rho, own Column, face string, changed *rowList, cautions *[]Cautio
 
 // coarse says where steps are too wide for the standards' tables, or returns "".
 func coarse(c Curve) string {
-	widest := map[bool]float64{}
+	var visible, beyond float64 // the widest steps
 	for i := 1; i < c.Len(); i++ {
-		visible := c.NM[i-1] < stepEdgeNM
-		widest[visible] = max(widest[visible], c.NM[i]-c.NM[i-1])
+		step := c.NM[i] - c.NM[i-1]
+		if c.NM[i-1] < stepEdgeNM {
+			visible = max(visible, step)
+		} else {
+			beyond = max(beyond, step)
+		}
 	}
 	var parts []string
-	if widest[true] > stepVisibleNM {
-		parts = append(parts, fmt.Sprintf("steps of up to %s nm below %d nm (at most %d are usual)", short(widest[true]), stepEdgeNM, stepVisibleNM))
+	if visible > stepVisibleNM {
+		parts = append(parts, fmt.Sprintf("steps of up to %s nm below %d nm (at most %d are usual)", short(visible), stepEdgeNM, stepVisibleNM))
 	}
-	if widest[false] > stepSolarNM {
-		parts = append(parts, fmt.Sprintf("steps of up to %s nm beyond %d nm (at most %d)", short(widest[false]), stepEdgeNM, stepSolarNM))
+	if beyond > stepSolarNM {
+		parts = append(parts, fmt.Sprintf("steps of up to %s nm beyond %d nm (at most %d)", short(beyond), stepEdgeNM, stepSolarNM))
 	}
 	if parts == nil {
 		return ""

@@ -52,11 +52,12 @@ func readFile(in filePlace, path string, limit int64) ([]byte, error) {
 		return nil, reason(err)
 	}
 	defer f.Close()
-	content, err := io.ReadAll(io.LimitReader(f, limit+1))
-	if err != nil {
+	var content bytes.Buffer
+	content.Grow(int(info.Size()) + bytes.MinRead) // so that it need not grow again
+	if _, err := content.ReadFrom(io.LimitReader(f, limit+1)); err != nil {
 		return nil, reason(err)
 	}
-	return content, nil
+	return content.Bytes(), nil
 }
 
 var errFolder = errors.New("is a folder, not a file")

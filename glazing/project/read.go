@@ -236,7 +236,7 @@ func (r *reader) dictionary(n *yaml.Node, into reflect.Value, f reflect.StructFi
 			r.fail(place(k), key, "a name is a plain word")
 			continue
 		}
-		if c, found := control(name); found {
+		if c, found := control(name, ""); found {
 			r.fail(place(k), key, "a name holds the control character U+%04X", c)
 			continue
 		}
@@ -299,7 +299,7 @@ func (r *reader) text(n *yaml.Node, into *text, tag reflect.StructTag, key strin
 		return false
 	}
 	value := strings.TrimSpace(n.Value)
-	if c, found := control(strings.NewReplacer("\n", "", "\t", "").Replace(value)); found {
+	if c, found := control(value, "\n\t"); found {
 		r.fail(place(n), key, "holds the control character U+%04X", c)
 		return false
 	}
@@ -425,10 +425,10 @@ func (r *reader) names(n *yaml.Node, into *names, tag reflect.StructTag, key str
 	return ok
 }
 
-// control returns the first control character of a text, if there is one.
-func control(s string) (rune, bool) {
+// control returns the first control character of a text that is not among the allowed ones.
+func control(s, allowed string) (rune, bool) {
 	for _, c := range s {
-		if unicode.IsControl(c) {
+		if unicode.IsControl(c) && !strings.ContainsRune(allowed, c) {
 			return c, true
 		}
 	}
