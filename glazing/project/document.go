@@ -6,6 +6,7 @@ import (
 	"bytes"
 	"errors"
 	"fmt"
+	"panewright/spectra"
 	"reflect"
 	"strconv"
 	"strings"
@@ -96,27 +97,32 @@ func notText(b []byte) (position, string) {
 	return position{}, ""
 }
 
+// longest is how many letters of a message of the YAML library are shown: it may quote the file.
+const longest = 300
+
 // yamlFault turns an error of the YAML library into the arguments of fail.
 func yamlFault(content []byte, err error) (position, string, string, error) {
 	const format = "not readable as YAML: %v"
 	if le, ok := errors.AsType[*yaml.LoadError](err); ok {
 		message := strings.TrimPrefix(le.Message, "yaml: ")
 		switch {
+		case strings.HasPrefix(message, "unknown anchor"):
+			message = "anchors and aliases are not used in a project; write the value out"
 		case strings.Contains(message, "exceeded max depth"):
 			message = "lists or maps are nested too deeply"
 		case strings.Contains(message, "cannot start any token"), strings.Contains(message, "tab character"):
 			message += " (a tab? indent with spaces)"
 		case strings.HasPrefix(message, "did not find expected"):
 			message += " (a bracket or quote left open, or a line indented wrongly, here or above?)"
-		case strings.Contains(message, "multiple"):
+		case strings.HasPrefix(message, "expected single document"):
 			line := bytes.Count(content[:secondDocument(content)], []byte("\n")) + 1
 			return position{line, 1}, "", "%v", errors.New("a second document begins here; a project is one, without ---")
-		case strings.Contains(message, "no documents"):
+		case strings.HasPrefix(message, "no documents"):
 			return position{}, "", "%v", errors.New("is empty; a project begins with project: TITLE")
 		}
-		return position{le.Mark.Line, le.Mark.Column}, "", format, errors.New(message)
+		return position{le.Mark.Line, le.Mark.Column}, "", format, errors.New(spectra.Clip(message, longest))
 	}
-	return position{}, "", format, err
+	return position{}, "", format, errors.New(spectra.Clip(err.Error(), longest))
 }
 
 // secondDocument returns where the line is that begins a second document.

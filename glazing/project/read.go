@@ -299,7 +299,11 @@ func (r *reader) text(n *yaml.Node, into *text, tag reflect.StructTag, key strin
 		return false
 	}
 	value := strings.TrimSpace(n.Value)
-	if c, found := control(value, "\n\t"); found {
+	allowed := "\n\t"
+	if tag.Get("file") != "" {
+		allowed = ""
+	}
+	if c, found := control(value, allowed); found {
 		r.fail(place(n), key, "holds the control character U+%04X", c)
 		return false
 	}
@@ -307,8 +311,8 @@ func (r *reader) text(n *yaml.Node, into *text, tag reflect.StructTag, key strin
 		r.fail(place(n), key, "is blank; give a text, or leave the key out")
 		return false
 	}
-	if allowed := tag.Get("one"); allowed != "" && !slices.Contains(strings.Fields(allowed), value) {
-		r.fail(place(n), key, "%q is not known; %s", clip(value), DidYouMean(Nearest(value, strings.Fields(allowed)), strings.Fields(allowed)))
+	if one := strings.Fields(tag.Get("one")); len(one) > 0 && !slices.Contains(one, value) {
+		r.fail(place(n), key, "%q is not known; %s", clip(value), DidYouMean(Nearest(value, one), one))
 		return false
 	}
 	if tag.Get("id") != "" && !isID(value) {
