@@ -118,6 +118,8 @@ func TestFilesThatAreNoSpectra(t *testing.T) {
 		{"JCAMP-DX", "##TITLE=glass\n##JCAMP-DX=4.24\n##XYDATA=(X++(Y..Y))\n300 1 2 3\n", "p.csv: is JCAMP-DX"},
 		{"no heads", "300,0.5,0.1,0.1\n310,0.5,0.1,0.1\n", "p.csv:1: the first row must hold the column heads"},
 		{"a head of 100 000 columns", strings.Repeat("x,", 100000) + "x\n" + strings.Repeat("\n", 100000), "p.csv:1: 100001 columns; a spectrum has four"},
+		{"below 0 by more than 0.002", "wavelength_nm,tau,rho_front,rho_back\n300,-0.00201,0.1,0.1\n", "p.csv:2: at 300 nm: tau -0.00201: not in 0..1"},
+		{"above 1 by more than 0.002", "wavelength_nm,tau,rho_front,rho_back\n300,0.1,1.00201,0.1\n", "p.csv:2: at 300 nm: rho_front 1.00201: not in 0..1"},
 		{"percent signs", "wavelength_nm,tau,rho_front,rho_back\n300,50%,0.1,0.1\n", "p.csv:2: at 300 nm: tau 50%: not a number; fractions of one, not percent"},
 	} {
 		_, err := ReadCSV(strings.NewReader(tt.text), "p.csv")

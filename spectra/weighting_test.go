@@ -112,6 +112,7 @@ func TestActionSpectra(t *testing.T) {
 		{"skin at 298 nm", ErythemaWeight(298), 1, "McKinlay and Diffey 1987"},
 		{"skin at 308 nm", ErythemaWeight(308), 0.114815, "10^-0.94, table of logarithms"},
 		{"skin at 328 nm", ErythemaWeight(328), 0.00151356, "10^-2.82, table of logarithms"},
+		{"skin at 330 nm", ErythemaWeight(330), 0.00136458, "10^-2.865, table of logarithms"},
 		{"skin at 339 nm", ErythemaWeight(339), 0.001, "10^-3, McKinlay and Diffey 1987"},
 		{"skin at 400 nm", ErythemaWeight(400), 0.000121619, "10^-3.915, table of logarithms"},
 		{"skin beyond", ErythemaWeight(400.001), 0, "McKinlay and Diffey 1987"},

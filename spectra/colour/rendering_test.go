@@ -61,6 +61,10 @@ func TestSteps(t *testing.T) {
 			t.Errorf("%s is %.6f, by hand %.6f", x.name, x.got, x.want)
 		}
 	}
+	// u = 4 X/(X + 15 Y + 3 Z) = 380.18/1921.685, v = 6 Y/(X + 15 Y + 3 Z) = 600/1921.685.
+	if d65 := (XYZ{95.045, 100, 108.88}).uv(); math.Abs(d65.u-0.1978368) > 1e-6 || math.Abs(d65.v-0.3122260) > 1e-6 {
+		t.Errorf("D65 is u %.7f, v %.7f, by hand 0.1978368, 0.3122260", d65.u, d65.v)
+	}
 	// c = (4 − u − 10 v)/v = 0.45/0.33; d = (1.708 v + 0.404 − 1.481 u)/v = 0.59739/0.33.
 	c, d := p.cd()
 	if math.Abs(c-0.45/0.33) > 1e-12 || math.Abs(d-0.59739/0.33) > 1e-12 {
