@@ -79,14 +79,8 @@ var cautionRules = []cautionRule{
 		if r.Makeup.Tilt.Vertical() || !r.U.Known || len(r.Gaps) == 0 {
 			return ""
 		}
-		hidden := *r.Ready
-		hidden.tilted = hidden.vertical
-		var upright Rating
-		if hidden.RateInto(&upright, r.State) != nil {
-			return ""
-		}
 		return fmt.Sprintf("U is that of the tilt of %.6g°; upright it is %s W/(m²·K). g is computed with the conductance of vertical gaps at every tilt, as EN 410 and ISO 9050 have it.",
-			r.Makeup.Tilt.Degrees(), PrintRounded(upright.U.Number, 2))
+			r.Makeup.Tilt.Degrees(), PrintRounded(r.uOf(r.GapsG), 2))
 	}},
 	{"annealed_absorbing", "αe above 0.5 in any tint, annealed or treatment unknown", func(all []Rating, i int) string {
 		return panesWhere(all, func(r *Rating, k int) bool {
@@ -141,7 +135,7 @@ var cautionRules = []cautionRule{
 func above(v Value, limit float64) bool { return v.Known && v.Number > limit }
 
 // cautionsOf returns the cautions of rating i of all ratings of one make-up under one basis.
-func cautionsOf(all []Rating, i int) []Caution {
+func cautionsOf(all []Rating, i int, figures []Figure) []Caution {
 	r := &all[i]
 	out := []Caution{}
 	for _, rule := range cautionRules {
@@ -149,8 +143,8 @@ func cautionsOf(all []Rating, i int) []Caution {
 			out = append(out, Caution{Code: rule.code, Text: text})
 		}
 	}
-	out = append(out, r.Ready.spectral[r.State]...)
-	out = append(out, reasons(r, out)...)
+	out = append(out, r.Ready.prepared[r.State].cautions...)
+	out = append(out, reasons(r, out, figures)...)
 	for k, p := range r.Makeup.Panes {
 		for _, c := range p.Pane.Tints[r.Ready.States[r.State].Tints[k]].Spectrum.Cautions {
 			if !slices.Contains(out, c) {
@@ -163,10 +157,10 @@ func cautionsOf(all []Rating, i int) []Caution {
 
 // reasons returns why figures are unknown, where no caution says so already. The emissivities that
 // a given one leaves open are none.
-func reasons(r *Rating, said []Caution) (out []Caution) {
-	figures := map[string][]string{} // by reason
+func reasons(r *Rating, said []Caution, figures []Figure) (out []Caution) {
+	symbols := map[string][]string{} // by reason
 	var order []string
-	for _, f := range Figures() {
+	for _, f := range figures {
 		if f.Value == nil || f.Symbol == "εn" || f.Symbol == "εh" {
 			continue
 		}
@@ -175,16 +169,16 @@ func reasons(r *Rating, said []Caution) (out []Caution) {
 			if v.Known || slices.ContainsFunc(said, func(c Caution) bool { return strings.Contains(c.Text, v.Why) }) {
 				continue
 			}
-			if figures[v.Why] == nil {
+			if symbols[v.Why] == nil {
 				order = append(order, v.Why)
 			}
-			if !slices.Contains(figures[v.Why], f.Symbol) {
-				figures[v.Why] = append(figures[v.Why], f.Symbol)
+			if !slices.Contains(symbols[v.Why], f.Symbol) {
+				symbols[v.Why] = append(symbols[v.Why], f.Symbol)
 			}
 		}
 	}
 	for _, why := range order {
-		out = append(out, Caution{Code: "missing_data", Text: "No figure for " + strings.Join(figures[why], ", ") + ": " + why + "."})
+		out = append(out, Caution{Code: "missing_data", Text: "No figure for " + strings.Join(symbols[why], ", ") + ": " + why + "."})
 	}
 	return out
 }
@@ -238,6 +232,11 @@ func facesWhere(r *Rating, condition func(Emissivity) bool, format string) strin
 	return fmt.Sprintf(format, strings.Join(names, ", "))
 }
 
+// uOf returns what U would be with the gaps in other states, where U is known.
+func (r *Rating) uOf(gaps []thermal.GapState) float64 {
+	return thermal.U(r.OutsideWM2K.Number, r.InsideWM2K.Number, r.Ready.glassResistance(), gaps)
+}
+
 func tiltInterpolated(all []Rating, i int) string {
 	r := &all[i]
 	deg := r.Makeup.Tilt.Degrees()
@@ -247,14 +246,12 @@ func tiltInterpolated(all []Rating, i int) string {
 	}
 	var text string
 	if between.Weight != 0 && !between.Still {
-		other := *r.Ready
-		other.tilted = between
-		var reading Rating
-		if other.RateInto(&reading, r.State) != nil || !reading.U.Known || math.IsNaN(reading.U.Number) {
+		other := make([]thermal.GapState, len(r.Gaps))
+		if thermal.SolveGaps(other, r.Ready.prepared[r.State].gaps, between) != nil {
 			return ""
 		}
 		text = fmt.Sprintf("EN 673 gives its constants for 0, 45 and 90°; at %.6g° A and n were interpolated. Interpolating the Nusselt number instead gives U %s and not %s W/(m²·K).",
-			deg, PrintRounded(reading.U.Number, 2), PrintRounded(r.U.Number, 2))
+			deg, PrintRounded(r.uOf(other), 2), PrintRounded(r.U.Number, 2))
 	}
 	if deg > 90 {
 		text += fmt.Sprintf(" EN 673 knows no tilt beyond 90°; the gap was taken as at %.6g°, with the direction of heat that was given.", 180-deg)

@@ -104,16 +104,30 @@ type Ready struct {
 	States []State
 
 	sampled  [][]optics.Pane // by pane and tint, as placed
-	coverage []coverage      // by state
 	glass    []float64       // resistance of each pane, m²·K/W
-	gaps     [][]thermal.Gap // by state
-	thermal  []string        // by state: why U and g are unknown, or ""
-	open     []bool          // by state: whether that is for unknown emissivities alone
-	inner    []Emissivity    // by state: of the room-side face
+	prepared []prepared      // by state
 	tilted   thermal.Convection
 	vertical thermal.Convection
 	mm, kg   float64
-	spectral [][]Caution // by state: what the spectra lack
+}
+
+// prepared is what is ready of one state.
+type prepared struct {
+	gaps     []thermal.Gap
+	room     Emissivity // of the room-side face
+	why      string     // why U and g are unknown, or ""
+	open     bool       // whether that is for unknown emissivities alone
+	coverage coverage
+	cautions []Caution // what the spectra lack
+}
+
+// glassResistance returns that of all panes together, m²·K/W.
+func (r *Ready) glassResistance() float64 {
+	var sum float64
+	for _, x := range r.glass {
+		sum += x
+	}
+	return sum
 }
 
 // coverage says for each band, by quantity, why a figure is unknown: "" where it is known.
@@ -228,10 +242,9 @@ func (r *Ready) addState(s State, gases []thermal.Gas) {
 	if r.Method.Basis.balance {
 		why, open = noBalance, false
 	}
-	r.open = append(r.open, open)
-	r.gaps, r.thermal, r.inner = append(r.gaps, gaps), append(r.thermal, why), append(r.inner, room)
-	r.spectral = append(r.spectral, nil)
-	r.coverage = append(r.coverage, r.cover(s))
+	p := prepared{gaps: gaps, room: room, why: why, open: open}
+	p.coverage = r.cover(s, &p.cautions)
+	r.prepared = append(r.prepared, p)
 }
 
 // opaque is the infrared transmittance up to which a sheet counts as opaque; common practice, no
@@ -244,7 +257,7 @@ const endTolerance = 0.001
 
 // cover says which figures the spectra of a state reach far enough for, and adds cautions where
 // an end is held or a figure stays unknown.
-func (r *Ready) cover(s State) coverage {
+func (r *Ready) cover(s State, cautions *[]Caution) coverage {
 	var c coverage
 	last := len(r.Makeup.Panes) - 1
 	for i := range c {
@@ -252,10 +265,10 @@ func (r *Ready) cover(s State) coverage {
 		for k, p := range r.Makeup.Panes {
 			t, ro, ri := p.needed(s.Tints[k], k == 0, k == last)
 			name := p.Pane.nameOf(s.Tints[k])
-			first(&c[i].t, r.reach(name, w, t))
+			first(&c[i].t, reach(name, w, t, cautions))
 			if i == light || i == solar || i == colours { // of the others only transmission is a figure
-				first(&c[i].ro, r.reach(name, w, ro))
-				first(&c[i].ri, r.reach(name, w, ri))
+				first(&c[i].ro, reach(name, w, ro, cautions))
+				first(&c[i].ri, reach(name, w, ri, cautions))
 			}
 		}
 	}
@@ -317,11 +330,16 @@ func (p *Pane) nameOf(tint int) string {
 
 // reach says why curves of a pane do not reach far enough for a weighting, or returns "". Where
 // an end is held, it adds a caution.
-func (r *Ready) reach(pane string, w spectra.Weighting, curves []spectra.Curve) string {
+func reach(pane string, w spectra.Weighting, curves []spectra.Curve, cautions *[]Caution) string {
 	from, to := reachOf(curves)
 	start, end := w.NM[0], w.NM[len(w.NM)-1]
 	below, above := w.Missing(from, to)
 	text := ""
+	add := func(code, text string) { // once
+		if c := (Caution{Code: code, Text: text}); !slices.Contains(*cautions, c) {
+			*cautions = append(*cautions, c)
+		}
+	}
 	for _, x := range []struct {
 		at, table, share float64
 		verb, which      string
@@ -329,21 +347,13 @@ func (r *Ready) reach(pane string, w spectra.Weighting, curves []spectra.Curve) 
 		switch {
 		case x.share >= endTolerance:
 			text = fmt.Sprintf("the spectrum of pane %s %s at %.6g nm; %s needs %.6g to %.6g nm", pane, x.verb, x.at, w.Name, start, end)
-			r.caution("missing_band", fmt.Sprintf("No figure for %s: %s.", w.Name, text))
+			add("missing_band", fmt.Sprintf("No figure for %s: %s.", w.Name, text))
 		case x.share > 0:
-			r.caution("extended", fmt.Sprintf("The spectrum of pane %s %s at %.6g nm; its %s value was held to %.6g nm for %s (%.2g %% of the weight).",
+			add("extended", fmt.Sprintf("The spectrum of pane %s %s at %.6g nm; its %s value was held to %.6g nm for %s (%.2g %% of the weight).",
 				pane, x.verb, x.at, x.which, x.table, w.Name, 100*x.share))
 		}
 	}
 	return text
-}
-
-// caution adds a caution to the state being made, once.
-func (r *Ready) caution(code, text string) {
-	own := &r.spectral[len(r.spectral)-1]
-	if c := (Caution{Code: code, Text: text}); !slices.Contains(*own, c) {
-		*own = append(*own, c)
-	}
 }
 
 // Spectra are those of a make-up in one state: fractions of one at wavelengths in nm; NaN where

@@ -75,8 +75,9 @@ func (r *Ready) RateAll() ([]Rating, error) {
 			return nil, err
 		}
 	}
+	figures := Figures()
 	for i := range ratings {
-		ratings[i].Cautions = cautionsOf(ratings, i)
+		ratings[i].Cautions = cautionsOf(ratings, i, figures)
 	}
 	return ratings, nil
 }
@@ -95,7 +96,7 @@ func (r *Ready) RateInto(dst *Rating, state int) error {
 		dst.panes = append(dst.panes, r.sampled[k][s.Tints[k]])
 	}
 	dst.stack.Combine(dst.panes)
-	r.rateOptics(dst, &r.coverage[state])
+	r.rateOptics(dst, &r.prepared[state].coverage)
 	return r.rateHeat(dst, state)
 }
 
@@ -148,9 +149,9 @@ func (r *Ready) rateHeat(dst *Rating, state int) error {
 		outer, inner := p.faces(r.States[state].Tints[k])
 		dst.Surfaces = append(dst.Surfaces, outer, inner)
 	}
-	gaps, why := r.gaps[state], r.thermal[state]
+	p := &r.prepared[state]
+	gaps, why, room := p.gaps, p.why, p.room.Corrected
 	dst.Gaps, dst.GapsG = resized(dst.Gaps, n-1), resized(dst.GapsG, n-1)
-	room := r.inner[state].Corrected
 	dst.OutsideWM2K, dst.InsideWM2K = known(m.outside(m.Basis.u)), m.inside(m.Basis.u, room)
 	dst.OutsideGWM2K, dst.InsideGWM2K = known(m.outside(m.Basis.g)), m.inside(m.Basis.g, room)
 	if m.Basis.balance {
@@ -160,7 +161,7 @@ func (r *Ready) rateHeat(dst *Rating, state int) error {
 	if why != "" {
 		clear(dst.Gaps)
 		clear(dst.GapsG)
-		if r.open[state] {
+		if p.open {
 			if err := r.rateOpenGaps(dst.Gaps, gaps); err != nil {
 				return err
 			}
@@ -177,17 +178,13 @@ func (r *Ready) rateHeat(dst *Rating, state int) error {
 	} else if err := thermal.SolveGaps(dst.GapsG, gaps, r.vertical); err != nil {
 		return err
 	}
-	var glass float64
-	for _, x := range r.glass {
-		glass += x
-	}
 	dst.Heat.Solve(dst.OutsideGWM2K.Number, dst.InsideGWM2K.Number, dst.absorbed, r.glass, dst.GapsG)
 	if !dst.InsideWM2K.Known { // conductances do not need it
 		dst.Heat = thermal.SecondaryHeat{B: dst.Heat.B[:0], Conductances: dst.Heat.Conductances}
 		dst.noHeat(dst.InsideWM2K.Why)
 		return nil
 	}
-	dst.U = known(thermal.U(dst.OutsideWM2K.Number, dst.InsideWM2K.Number, glass, dst.Gaps))
+	dst.U = known(thermal.U(dst.OutsideWM2K.Number, dst.InsideWM2K.Number, r.glassResistance(), dst.Gaps))
 
 	missing := ""
 	for _, v := range dst.Absorptance {

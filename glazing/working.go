@@ -202,7 +202,7 @@ func workEmissivity(r *Rating) Chapter {
 
 // workGap writes out the conductance of gap k of the given states.
 func workGap(r *Rating, k int, states []thermal.GapState, convection thermal.Convection, suffix string) Chapter {
-	g, s := r.Ready.gaps[r.State][k], states[k]
+	g, s := r.Ready.prepared[r.State].gaps[k], states[k]
 	c := Chapter{Title: fmt.Sprintf("Gap %d%s: %.6g mm %s, surfaces %d and %d", k+1, suffix, r.Makeup.Gaps[k].WidthMM, g.Gas.Name, 2*k+2, 2*k+3)}
 	mixture := r.Makeup.Gaps[k].Gas
 	mixed := func(get func(thermal.Gas) float64) string {
@@ -264,7 +264,7 @@ func inner(r *Rating, s surfaces, value float64, clause string) Step {
 	}
 	last := 2 * len(r.Makeup.Panes)
 	step.Formula = fmt.Sprintf("%s + %s·ε%d/0.837", put(s.insideConvection), put(s.insideRadiation), last)
-	step.Numbers = fmt.Sprintf("%s + %s·%s/%s", put(s.insideConvection), put(s.insideRadiation), put(r.Ready.inner[r.State].Corrected.Number), put(thermal.GlassEmissivity))
+	step.Numbers = fmt.Sprintf("%s + %s·%s/%s", put(s.insideConvection), put(s.insideRadiation), put(r.Ready.prepared[r.State].room.Corrected.Number), put(thermal.GlassEmissivity))
 	return step
 }
 
@@ -279,14 +279,12 @@ func outer(r *Rating, value float64, clause string) Step {
 // workGlass writes out the resistance of all panes.
 func workGlass(r *Rating) Step {
 	var parts []string
-	var total float64
-	for k, p := range r.Makeup.Panes {
-		total += r.Ready.glass[k]
+	for _, p := range r.Makeup.Panes {
 		for _, y := range p.Pane.Plies {
 			parts = append(parts, put(y.ThicknessMM/1000)+"/"+put(y.ConductivityWMK))
 		}
 	}
-	return Step{Symbol: "Rg", Meaning: "resistance of the panes", Formula: "Σ d/λ", Numbers: strings.Join(parts, " + "), Value: total, Unit: "m²·K/W", Clause: "EN 673 (2)"}
+	return Step{Symbol: "Rg", Meaning: "resistance of the panes", Formula: "Σ d/λ", Numbers: strings.Join(parts, " + "), Value: r.Ready.glassResistance(), Unit: "m²·K/W", Clause: "EN 673 (2)"}
 }
 
 // resistance writes out 1/he + 1/hi + Rg + Σ 1/hs.

@@ -125,11 +125,7 @@ func ReadSunCSV(r io.Reader, file string) (Weighting, error) {
 		return Weighting{}, err
 	}
 	w := Trapezoid(c.Curve, SolarFirstNM, SolarLastNM)
-	var total float64
-	for _, v := range w.Weight {
-		total += v
-	}
-	if total <= 0 || math.IsInf(total, 0) {
+	if sum := total(w.Weight); sum <= 0 || math.IsInf(sum, 0) {
 		rows.fail(rows.headLine, 0, "the column irradiance adds to nothing between %d and %d nm", SolarFirstNM, SolarLastNM)
 		return Weighting{}, rows.err()
 	}

@@ -49,11 +49,7 @@ func (w Weighting) On(g Grid) Placed {
 		}
 		p.Weight[at-p.From] = w.Weight[i]
 	}
-	ones := make([]float64, len(p.Weight))
-	for i := range ones {
-		ones[i] = 1
-	}
-	p.Total = dot(p.Weight, ones)
+	p.Total = total(p.Weight)
 	return p
 }
 

@@ -72,7 +72,7 @@ func oneProject(c *cobra.Command, args []string) error {
 func runRate(s streams, path string, o selection, as, spectra, output string) error {
 	formats := []string{"table", "json"}
 	if !slices.Contains(formats, as) {
-		return fmt.Errorf("--as %s is not known; %s", short(as), project.DidYouMean(project.Nearest(as, formats), formats))
+		return fmt.Errorf("--as %s is not known; %s", short(as), project.Offer(as, formats))
 	}
 	if spectra != "" && as != "json" {
 		return fmt.Errorf("--spectra prints spectra in JSON; add --as json")
@@ -133,11 +133,7 @@ func rate(path string, o selection) (table.Report, error) {
 		for _, name := range unique(o.bases) {
 			b, err := glazing.BasisNamed(name)
 			if err != nil {
-				offer := project.Known(glazing.BasisNames())
-				if near := project.Nearest(name, glazing.BasisNames()); len(near) > 0 {
-					offer = project.DidYouMean(near, nil) + " " + offer
-				}
-				return r, fmt.Errorf("--basis: unknown basis %q; %s", short(name), offer)
+				return r, fmt.Errorf("--basis: unknown basis %q; %s", short(name), project.OfferAll(name, glazing.BasisNames()))
 			}
 			bases = append(bases, b)
 		}
@@ -152,7 +148,7 @@ func rate(path string, o selection) (table.Report, error) {
 				for _, m := range p.Makeups {
 					known = append(known, m.ID)
 				}
-				return r, fmt.Errorf("--makeup: %s has no make-up %q; %s", path, short(id), project.DidYouMean(project.Nearest(id, known), known))
+				return r, fmt.Errorf("--makeup: %s has no make-up %q; %s", path, short(id), project.Offer(id, known))
 			}
 			makeups = append(makeups, m)
 		}
@@ -186,7 +182,7 @@ func rate(path string, o selection) (table.Report, error) {
 			if len(known) == 0 {
 				return r, fmt.Errorf("--tint %s: no make-up that was selected has a pane that switches", short(t))
 			}
-			return r, fmt.Errorf("--tint: no tint %q; %s", short(t), project.DidYouMean(project.Nearest(t, known), known))
+			return r, fmt.Errorf("--tint: no tint %q; %s", short(t), project.Offer(t, known))
 		}
 	}
 	return r, nil

@@ -138,7 +138,7 @@ func unknownCommand(root *cobra.Command, name string) error {
 	for _, x := range root.Commands() {
 		known = append(known, x.Name())
 	}
-	return fmt.Errorf("unknown command %q; %s", short(name), project.DidYouMean(project.Nearest(name, known), known))
+	return fmt.Errorf("unknown command %q; %s", short(name), project.Offer(name, known))
 }
 
 // flagError offers the options nearest to one that is not known.
@@ -153,7 +153,7 @@ func flagError(c *cobra.Command, err error) error {
 	if letters := unknown.GetSpecifiedShortnames(); letters != "" {
 		return fmt.Errorf("unknown option -%s; see panewright help %s", short(letters), c.Name())
 	}
-	return fmt.Errorf("unknown option %s; %s", short(name), project.DidYouMean(project.Nearest(name, known), known))
+	return fmt.Errorf("unknown option %s; %s", short(name), project.Offer(name, known))
 }
 
 // checkedWriter remembers that a write failed.

@@ -403,7 +403,7 @@ func (b *builder) place(m *glazing.Makeup, e *elementSpec, specs []paneSpec, pan
 		placed.Pane = panes[i]
 		if names := placed.Pane.TintNames(); placed.Tint != "" && placed.Tint != glazing.SameTint && placed.Pane.TintNamed(placed.Tint) < 0 {
 			if placed.Pane.Tintable() {
-				b.fail(e.Tint.at, "tint", "pane %s has no tint %q; %s", e.Pane.value, clip(placed.Tint), DidYouMean(Nearest(placed.Tint, names), names))
+				b.fail(e.Tint.at, "tint", "pane %s has no tint %q; %s", e.Pane.value, clip(placed.Tint), Offer(placed.Tint, names))
 			} else {
 				b.fail(e.Tint.at, "tint", "pane %s does not switch", e.Pane.value)
 			}
@@ -419,7 +419,7 @@ func (b *builder) place(m *glazing.Makeup, e *elementSpec, specs []paneSpec, pan
 		}
 		offer := "the project has no panes"
 		if len(known) > 0 {
-			offer = DidYouMean(Nearest(e.Pane.value, known), known)
+			offer = Offer(e.Pane.value, known)
 		}
 		if len(known) > 0 || !b.incomplete["panes"] {
 			b.fail(e.Pane.at, "pane", "unknown pane %q; %s", clip(e.Pane.value), offer)
@@ -447,11 +447,7 @@ func (b *builder) gap(m *glazing.Makeup, e *elementSpec) {
 		}
 		for _, name := range slices.Sorted(maps.Keys(e.Gas)) {
 			if !slices.Contains(known, name) {
-				offer := Known(known)
-				if near := Nearest(name, known); len(near) > 0 {
-					offer = DidYouMean(near, known) + " " + offer
-				}
-				b.fail(e.Gas[name].name, "gas", "unknown gas %q; %s", clip(name), offer)
+				b.fail(e.Gas[name].name, "gas", "unknown gas %q; %s", clip(name), OfferAll(name, known))
 				return
 			}
 		}
@@ -484,17 +480,21 @@ func (b *builder) limits(list []limitSpec, makeups []makeupSpec) {
 	for _, m := range makeups {
 		ids = append(ids, m.ID.value)
 	}
+	if len(list) == 0 {
+		return
+	}
+	figures := glazing.Figures()
 	for _, l := range list {
-		if l.Figure.given && !slices.ContainsFunc(glazing.Figures(), func(f glazing.Figure) bool { return f.Named(l.Figure.value) }) {
+		if l.Figure.given && !slices.ContainsFunc(figures, func(f glazing.Figure) bool { return f.Named(l.Figure.value) }) {
 			var known []string
-			for _, f := range glazing.Figures() {
+			for _, f := range figures {
 				known = append(known, f.Key, f.Alias)
 			}
-			b.fail(l.Figure.at, "figure", "unknown figure %q; %s", clip(l.Figure.value), DidYouMean(Nearest(l.Figure.value, known), known))
+			b.fail(l.Figure.at, "figure", "unknown figure %q; %s", clip(l.Figure.value), Offer(l.Figure.value, known))
 		}
 		for _, m := range l.Makeups.values {
 			if !slices.Contains(ids, m.value) && !b.incomplete["id"] && !b.incomplete["makeups"] {
-				b.fail(m.at, "makeups", "unknown make-up %q; %s", clip(m.value), DidYouMean(Nearest(m.value, ids), ids))
+				b.fail(m.at, "makeups", "unknown make-up %q; %s", clip(m.value), Offer(m.value, ids))
 			}
 		}
 		switch {

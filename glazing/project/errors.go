@@ -68,16 +68,26 @@ func Nearest(word string, names []string) []string {
 	return near
 }
 
-// DidYouMean words the offer of the nearest names, or lists all of them where none is near.
-func DidYouMean(near, all []string) string {
+// Offer words the offer of the names nearest to a misspelt one, or lists all where none is near.
+func Offer(word string, names []string) string { return didYouMean(Nearest(word, names), names) }
+
+// OfferAll offers the nearest names and lists all in any case, for names that are few and short.
+func OfferAll(word string, names []string) string {
+	if near := Nearest(word, names); len(near) > 0 {
+		return didYouMean(near, names) + " " + known(names)
+	}
+	return known(names)
+}
+
+func didYouMean(near, all []string) string {
 	if len(near) > 0 {
 		return "did you mean " + strings.Join(near, " or ") + "?"
 	}
-	return Known(all)
+	return known(all)
 }
 
-// Known lists names for a message.
-func Known(all []string) string {
+// known lists names for a message.
+func known(all []string) string {
 	all = slices.DeleteFunc(slices.Compact(slices.Sorted(slices.Values(all))), func(s string) bool { return s == "" })
 	if len(all) > 30 {
 		return "known are " + strings.Join(all[:30], ", ") + " and others"

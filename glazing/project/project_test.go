@@ -448,10 +448,10 @@ func TestNearest(t *testing.T) {
 			t.Errorf("nearest to %q: %v, want %v", word, got, want)
 		}
 	}
-	if got := DidYouMean(nil, names); got != "known are gap_mm, gas, glass, tint, turned" {
+	if got := didYouMean(nil, names); got != "known are gap_mm, gas, glass, tint, turned" {
 		t.Error(got)
 	}
-	if got := DidYouMean([]string{"gas", "glass"}, names); got != "did you mean gas or glass?" {
+	if got := didYouMean([]string{"gas", "glass"}, names); got != "did you mean gas or glass?" {
 		t.Error(got)
 	}
 }

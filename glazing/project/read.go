@@ -125,7 +125,7 @@ func (r *reader) object(n *yaml.Node, into reflect.Value, key string) bool {
 			for _, name := range near {
 				spoilt[name] = true
 			}
-			offer := DidYouMean(near, keyNames(known))
+			offer := didYouMean(near, keyNames(known))
 			if isDigits(k.Value) {
 				offer = "a decimal comma? write a point"
 			}
@@ -241,7 +241,7 @@ func (r *reader) dictionary(n *yaml.Node, into reflect.Value, f reflect.StructFi
 			continue
 		}
 		if allowed := f.Tag.Get("one"); allowed != "" && !slices.Contains(strings.Fields(allowed), name) {
-			r.fail(place(k), name, "unknown in %s; %s", key, DidYouMean(Nearest(name, strings.Fields(allowed)), strings.Fields(allowed)))
+			r.fail(place(k), name, "unknown in %s; %s", key, Offer(name, strings.Fields(allowed)))
 			continue
 		}
 		if into.MapIndex(reflect.ValueOf(name)).IsValid() {
@@ -312,7 +312,7 @@ func (r *reader) text(n *yaml.Node, into *text, tag reflect.StructTag, key strin
 		return false
 	}
 	if one := strings.Fields(tag.Get("one")); len(one) > 0 && !slices.Contains(one, value) {
-		r.fail(place(n), key, "%q is not known; %s", clip(value), DidYouMean(Nearest(value, one), one))
+		r.fail(place(n), key, "%q is not known; %s", clip(value), Offer(value, one))
 		return false
 	}
 	if tag.Get("id") != "" && !isID(value) {
