@@ -115,8 +115,11 @@ type Tint struct {
 type Emissivity struct {
 	Normal        Value // at 283 K (EN 12898)
 	Corrected     Value // hemispherical by the table of EN 12898; enters U and g
-	Hemispherical Value // exact integral over angle, where the films are known
-	Source        string
+	Hemispherical Value // exact integral over angle, where what the face is made of is known
+	// ComputedNormal is the normal emissivity by the face's optical constants where a convention
+	// stands in its place; it is shown and enters nothing.
+	ComputedNormal Value
+	Source         string
 }
 
 // The sources of an emissivity.
@@ -124,6 +127,8 @@ const (
 	EmissivityGiven       = "given"        // corrected, typed by the user
 	EmissivityGivenNormal = "given_normal" // normal, typed by the user
 	EmissivityInfrared    = "infrared"     // from infrared rows of the spectrum
+	EmissivityConvention  = "convention"   // of uncoated soda-lime glass (EN 673)
+	EmissivityComputed    = "computed"     // from optical constants
 	EmissivityUnknown     = "unknown"
 )
 
@@ -149,6 +154,24 @@ func InfraredEmissivity(reflectance, transmittance spectra.Curve) Emissivity {
 	}
 	e := fromNormal(normal)
 	e.Source = EmissivityInfrared
+	return e
+}
+
+// ConventionalEmissivity is that of an uncoated face of soda-lime glass, 0.89 normal and 0.837
+// corrected (EN 673), with the normal and the hemispherical emissivity by its optical constants,
+// which enter nothing.
+func ConventionalEmissivity(computedNormal, hemispherical float64) Emissivity {
+	return Emissivity{Normal: known(thermal.GlassEmissivityNormal), Corrected: known(thermal.GlassEmissivity),
+		Hemispherical: known(hemispherical), ComputedNormal: known(computedNormal), Source: EmissivityConvention}
+}
+
+// ComputedEmissivity is that of a face whose reflectance, and transmittance, from 5 to 50 µm were
+// computed from optical constants, with the exact integral over the half space.
+func ComputedEmissivity(reflectance, transmittance spectra.Curve, hemispherical float64) Emissivity {
+	e := InfraredEmissivity(reflectance, transmittance)
+	if e.Corrected.Known {
+		e.Source, e.Hemispherical = EmissivityComputed, known(hemispherical)
+	}
 	return e
 }
 
@@ -301,12 +324,15 @@ func (m *Makeup) Tintable() bool {
 
 // BuildUp returns the sequence from outside to inside as the trade writes it: thickness and pane,
 // gap and gas. Spaces within a part are no-break spaces.
-func (m *Makeup) BuildUp() string {
+func (m *Makeup) BuildUp() string { return m.buildUp(millimetres) }
+
+// buildUp is BuildUp with the widths of gaps as a function prints them.
+func (m *Makeup) buildUp(width func(mm float64) string) string {
 	var parts []string
 	for i, p := range m.Panes {
 		if i > 0 {
 			g := m.Gaps[i-1]
-			parts = append(parts, fmt.Sprintf("%.6g mm %s", g.WidthMM, g.Gas))
+			parts = append(parts, width(g.WidthMM)+" "+g.Gas.String())
 		}
 		s := p.Pane.ID
 		if p.Turned {

@@ -252,7 +252,7 @@ func (r *Ready) addState(s State, gases []thermal.Gas) {
 const opaque = 0.005
 
 // endTolerance is the share of a band's weight that may lie beyond an end of a spectrum, whose
-// last value is then held.
+// last value is then held, or in a gap of it, which is then interpolated.
 const endTolerance = 0.001
 
 // cover says which figures the spectra of a state reach far enough for, and adds cautions where
@@ -328,8 +328,8 @@ func (p *Pane) nameOf(tint int) string {
 	return p.ID
 }
 
-// reach says why curves of a pane do not reach far enough for a weighting, or returns "". Where
-// an end is held, it adds a caution.
+// reach says why curves of a pane do not reach far enough for a weighting, or have a gap in it, or
+// returns "". Where an end is held or a gap is small enough to be interpolated, it adds a caution.
 func reach(pane string, w spectra.Weighting, curves []spectra.Curve, cautions *[]Caution) string {
 	from, to := reachOf(curves)
 	start, end := w.NM[0], w.NM[len(w.NM)-1]
@@ -353,11 +353,37 @@ func reach(pane string, w spectra.Weighting, curves []spectra.Curve, cautions *[
 				pane, x.verb, x.at, x.which, x.table, w.Name, 100*x.share))
 		}
 	}
+	gaps := gapsOf(curves)
+	enough := w.Within(gaps) < endTolerance
+	for _, g := range gaps {
+		switch share := w.Within([]spectra.Span{g}); {
+		case share == 0:
+		case enough:
+			add("interpolated", fmt.Sprintf("The spectrum of pane %s has no values between %.6g and %.6g nm; it was interpolated there for %s (%.2g %% of the weight).",
+				pane, g.FromNM, g.ToNM, w.Name, 100*share))
+		default:
+			why := fmt.Sprintf("the spectrum of pane %s has no values between %.6g and %.6g nm, which %s needs", pane, g.FromNM, g.ToNM, w.Name)
+			first(&text, why)
+			add("missing_band", fmt.Sprintf("No figure for %s: %s.", w.Name, why))
+		}
+	}
 	return text
 }
 
+// gapsOf returns the gaps of all curves, each once.
+func gapsOf(curves []spectra.Curve) (gaps []spectra.Span) {
+	for _, c := range curves {
+		for _, g := range c.Gaps {
+			if !slices.Contains(gaps, g) {
+				gaps = append(gaps, g)
+			}
+		}
+	}
+	return gaps
+}
+
 // Spectra are those of a make-up in one state: fractions of one at wavelengths in nm; NaN where
-// a pane's spectrum does not reach.
+// a pane's spectrum does not reach, or has a gap.
 type Spectra struct {
 	WavelengthNM          []float64
 	T                     []float64
@@ -382,8 +408,9 @@ func (r *Ready) Spectra(state int, nm []float64) Spectra {
 	within := func(values []float64, curves ...spectra.Curve) []float64 {
 		values = values[:grid.Len()]
 		from, to := reachOf(curves)
+		holes := spectra.Curve{Gaps: gapsOf(curves)}
 		for i, x := range nm {
-			if x < from || x > to {
+			if x < from || x > to || holes.InGap(x) {
 				values[i] = math.NaN()
 			}
 		}

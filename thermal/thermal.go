@@ -25,12 +25,13 @@ type Delta float64
 
 // The reference values of EN 673:2011, 5 to 7; ISO 10292 shares them.
 const (
-	StefanBoltzmann   = 5.67e-8 // W/(m²·K⁴), as EN 673 prints it; CODATA 2018 has 5.670374e-8
-	MeanTemperature   = 283.0   // K, of every gap
-	TotalDrop         = 15.0    // K, over all gaps together
-	Gravity           = 9.81    // m/s²
-	GlassConductivity = 1.0     // W/(m·K), of soda-lime glass
-	GlassEmissivity   = 0.837   // corrected, of an uncoated soda-lime face
+	StefanBoltzmann       = 5.67e-8 // W/(m²·K⁴), as EN 673 prints it; CODATA 2018 has 5.670374e-8
+	MeanTemperature       = 283.0   // K, of every gap
+	TotalDrop             = 15.0    // K, over all gaps together
+	Gravity               = 9.81    // m/s²
+	GlassConductivity     = 1.0     // W/(m·K), of soda-lime glass
+	GlassEmissivity       = 0.837   // corrected, of an uncoated soda-lime face
+	GlassEmissivityNormal = 0.89    // normal, of the same
 )
 
 // A Gap is the space between two panes.

@@ -5,12 +5,13 @@ package project
 import (
 	"bytes"
 	"fmt"
-	"maps"
 	"math"
 	"slices"
 	"strings"
 
 	"panewright/glazing"
+	"panewright/glazing/film"
+	"panewright/glazing/library"
 	"panewright/spectra"
 )
 
@@ -19,6 +20,7 @@ import (
 type builder struct {
 	*reader
 	*fileSet
+	builtIn map[string]*glazing.Pane // the panes of the library that make-ups use
 }
 
 const notYet = "is not in this version"
@@ -46,10 +48,13 @@ func (b *builder) project(s *fileSpec) *Project {
 	ids = map[string]position{}
 	for _, g := range s.Glasses {
 		b.unique(ids, g.ID, "id", "glass or pane")
+		b.notBuiltIn(g.ID)
 	}
+	glasses := b.glasses(s.Glasses)
 	for i := range s.Panes {
 		b.unique(ids, s.Panes[i].ID, "id", "glass or pane")
-		if pane := b.pane(&s.Panes[i]); pane != nil {
+		b.notBuiltIn(s.Panes[i].ID)
+		if pane := b.pane(&s.Panes[i], glasses); pane != nil {
 			p.Panes = append(p.Panes, pane)
 		}
 	}
@@ -92,6 +97,13 @@ func (b *builder) unique(ids map[string]position, id text, key, what string) {
 	ids[id.value] = id.at
 }
 
+// notBuiltIn reports an id that a glass or a pane of the library has.
+func (b *builder) notBuiltIn(id text) {
+	if _, ok := film.Glass(id.value); ok || slices.Contains(library.IDs(), id.value) {
+		b.fail(id.at, "id", "%q is built in; choose another name", id.value)
+	}
+}
+
 // sun reads the site's spectrum; the limits of the solar range that it does not reach are said.
 func (b *builder) sun(t text, cautions []glazing.Caution) (*spectra.Weighting, []glazing.Caution) {
 	content, err := b.bytesOf(t)
@@ -112,7 +124,7 @@ func (b *builder) sun(t text, cautions []glazing.Caution) (*spectra.Weighting, [
 }
 
 // pane makes a pane, or returns nil after reporting why not.
-func (b *builder) pane(s *paneSpec) *glazing.Pane {
+func (b *builder) pane(s *paneSpec, glasses map[string]glass) *glazing.Pane {
 	ok := !s.Faulty
 	fail := func(at position, key, format string, args ...any) {
 		if !s.Faulty { // what a faulty pane lacks is not said as well
@@ -120,22 +132,30 @@ func (b *builder) pane(s *paneSpec) *glazing.Pane {
 		}
 		ok = false
 	}
+	p := &glazing.Pane{ID: s.ID.value, Origin: glazing.MeasuredOrigin}
 	if s.modelled() {
-		return nil // place refuses it where a make-up uses it
+		if len(s.Coatings) > 0 || s.Faulty {
+			return nil // place refuses it where a make-up uses it
+		}
+		if p = b.sheetOf(s, glasses); p == nil {
+			return nil
+		}
 	}
-	p := &glazing.Pane{ID: s.ID.value, HeatTreatment: glazing.HeatTreatment(s.HeatTreatment.value), HeatSoaked: s.HeatSoaked.value,
-		Origin: glazing.Origin(s.Origin.value), TauInfrared: s.TauInfrared.value}
-	if p.HeatTreatment == "" {
-		p.HeatTreatment = glazing.UnknownTreatment
+	p.HeatTreatment, p.HeatSoaked, p.TauInfrared = glazing.UnknownTreatment, s.HeatSoaked.value, s.TauInfrared.value
+	if s.HeatTreatment.given {
+		p.HeatTreatment = glazing.HeatTreatment(s.HeatTreatment.value)
 	}
-	if p.Origin == "" {
-		p.Origin = glazing.MeasuredOrigin
+	if s.Origin.given {
+		p.Origin = glazing.Origin(s.Origin.value)
 	}
 	for name, v := range s.Attributes {
 		if p.Attributes == nil {
 			p.Attributes = map[string]float64{}
 		}
 		p.Attributes[name] = v.value
+	}
+	if s.modelled() {
+		return p
 	}
 	switch {
 	case s.Thickness.given && len(s.Plies) > 0:
@@ -184,9 +204,6 @@ func (b *builder) pane(s *paneSpec) *glazing.Pane {
 	return p
 }
 
-// modelled reports whether the pane is given by glass and films and not by a spectrum.
-func (s *paneSpec) modelled() bool { return s.Glass.given || len(s.Coatings) > 0 }
-
 // Defaults of an interlayer; common practice for polyvinyl butyral, no source.
 const (
 	interlayerWMK  = 0.22
@@ -229,46 +246,55 @@ func (b *builder) tint(s *tintSpec, faulty bool) (glazing.Tint, bool) {
 		return t, false
 	}
 	t.Spectrum = m
-	for _, f := range []struct {
-		key               string
-		corrected, normal number
-		infrared          spectra.Curve
-		into              *glazing.Emissivity
+	return t, b.faces(&t, [2]faceSpec{{s.EmissivityFront, s.NormalFront}, {s.EmissivityBack, s.NormalBack}})
+}
+
+// faceSpec is what a pane or a tint says of the emissivity of a face.
+type faceSpec struct{ corrected, normal number }
+
+// faces gives the front and the back of a tint their emissivities: the typed one, else that of the
+// infrared rows, else what the tint has already.
+func (b *builder) faces(t *glazing.Tint, typed [2]faceSpec) bool {
+	m := &t.Spectrum
+	for i, f := range []struct {
+		key      string
+		infrared spectra.Curve
+		into     *glazing.Emissivity
 	}{
-		{"front", s.EmissivityFront, s.NormalFront, m.InfraredFront, &t.Front},
-		{"back", s.EmissivityBack, s.NormalBack, m.InfraredBack, &t.Back},
+		{"front", m.InfraredFront, &t.Front},
+		{"back", m.InfraredBack, &t.Back},
 	} {
-		if f.corrected.given && f.normal.given {
-			b.fail(f.normal.at, "emissivity_normal_"+f.key, "stands beside emissivity_%s; give one", f.key)
-			return t, false
+		switch given := typed[i]; {
+		case given.corrected.given && given.normal.given:
+			b.fail(given.normal.at, "emissivity_normal_"+f.key, "stands beside emissivity_%s; give one", f.key)
+			return false
+		case given.corrected.given:
+			*f.into = glazing.GivenEmissivity(given.corrected.value)
+		case given.normal.given:
+			*f.into = glazing.GivenNormalEmissivity(given.normal.value)
+		case f.into.Source == "" && f.infrared.Len() > 0:
+			*f.into = glazing.InfraredEmissivity(f.infrared, m.InfraredTau)
+			continue
+		case f.into.Source == "":
+			*f.into = glazing.NoEmissivity()
+			continue
+		default:
+			continue
 		}
-		*f.into = emissivity(f.corrected, f.normal, f.infrared, m.InfraredTau)
-		if (f.corrected.given || f.normal.given) && f.infrared.Len() > 0 {
+		if f.infrared.Len() > 0 {
 			measured := glazing.InfraredEmissivity(f.infrared, m.InfraredTau).Corrected.Number
 			if math.Abs(measured-f.into.Corrected.Number) > emissivityDifference {
-				t.Spectrum.Cautions = append(slices.Clone(t.Spectrum.Cautions), glazing.Caution{Code: "emissivity_differs", Text: fmt.Sprintf(
+				m.Cautions = append(slices.Clone(m.Cautions), glazing.Caution{Code: "emissivity_differs", Text: fmt.Sprintf(
 					"The emissivity typed for the %s (%.3f) was used; the infrared rows of its spectrum give %.3f.", f.key, f.into.Corrected.Number, measured)})
 			}
 		}
 	}
-	return t, true
+	return true
 }
 
 // emissivityDifference is how far a typed emissivity and that of infrared rows may differ
 // without a caution.
 const emissivityDifference = 0.02
-
-func emissivity(corrected, normal number, infrared, tau spectra.Curve) glazing.Emissivity {
-	switch {
-	case corrected.given:
-		return glazing.GivenEmissivity(corrected.value)
-	case normal.given:
-		return glazing.GivenNormalEmissivity(normal.value)
-	case infrared.Len() > 0:
-		return glazing.InfraredEmissivity(infrared, tau)
-	}
-	return glazing.NoEmissivity()
-}
 
 // measured reads the spectrum of a tint from one file or from several.
 func (b *builder) measured(s *tintSpec, faulty bool) (spectra.Measured, bool) {
@@ -326,138 +352,6 @@ func (b *builder) measured(s *tintSpec, faulty bool) (spectra.Measured, bool) {
 		return spectra.Measured{}, false
 	}
 	return m, true
-}
-
-// makeup makes a make-up, or returns nil after reporting why not.
-func (b *builder) makeup(s *makeupSpec, specs []paneSpec, panes []*glazing.Pane) *glazing.Makeup {
-	m := &glazing.Makeup{ID: s.ID.value, Title: s.Title.value, Tilt: glazing.TiltDeg(s.Tilt.or(90))}
-	if s.HeatFlow.value == "down" {
-		m.HeatFlow = glazing.FlowDown
-	}
-	for _, name := range slices.SortedFunc(maps.Keys(s.Typed), func(x, y string) int {
-		a, b := s.Typed[x].at, s.Typed[y].at
-		return (a.line-b.line)*100000 + a.column - b.column
-	}) {
-		m.Typed = append(m.Typed, glazing.Typed{Name: name, Text: s.Typed[name].value})
-	}
-	before := len(b.faults)
-	wantPane, sure := true, true // what may stand next, and whether that is known
-	for i := range s.OutsideToInside {
-		e := &s.OutsideToInside[i]
-		isPane, isGap := e.Pane.given || e.Turned.given || e.Tint.given, e.Gap.given || e.Gas != nil || e.Vacuum != nil
-		if e.Faulty && isPane == isGap { // what it was meant to be is not known
-			sure = false
-			continue
-		}
-		if e.Faulty {
-			wantPane, sure = !isPane, true
-			continue
-		}
-		switch {
-		case !sure:
-		case isPane && isGap:
-			b.fail(e.At, "outside_to_inside", "an item is either a pane or a gap, not both")
-		case !isPane && !isGap:
-			b.fail(e.At, "outside_to_inside", "an item is a pane ({pane: ID}) or a gap ({gap_mm: 16, gas: {air: 1}})")
-		case isPane && !wantPane:
-			b.fail(e.At, "pane", "two panes in a row; there is a gap between panes (a laminate is one pane with plies)")
-		case isGap && wantPane && i == 0:
-			b.fail(e.At, "gap_mm", "a make-up begins with a pane, outside")
-		case isGap && wantPane:
-			b.fail(e.At, "gap_mm", "two gaps in a row; there is a pane between gaps")
-		}
-		wantPane, sure = !isPane, true
-		if isPane {
-			b.place(m, e, specs, panes)
-		} else if isGap {
-			b.gap(m, e)
-		}
-	}
-	switch last := len(s.OutsideToInside) - 1; {
-	case s.Faulty:
-	case last < 0:
-		b.fail(s.At, "outside_to_inside", "holds no pane")
-	case wantPane && len(b.faults) == before:
-		b.fail(s.OutsideToInside[last].At, "gap_mm", "a make-up ends with a pane, inside")
-	case len(m.Panes) > glazing.MaxPanes:
-		b.fail(s.At, "outside_to_inside", "%d panes; at most %d", len(m.Panes), glazing.MaxPanes)
-	}
-	if s.Faulty || len(b.faults) > before || slices.ContainsFunc(m.Panes, func(p glazing.Placed) bool { return p.Pane == nil }) {
-		return nil
-	}
-	if _, err := m.States(); err != nil {
-		b.fail(s.At, "outside_to_inside", "%v", err)
-		return nil
-	}
-	return m
-}
-
-// place adds a pane to a make-up.
-func (b *builder) place(m *glazing.Makeup, e *elementSpec, specs []paneSpec, panes []*glazing.Pane) {
-	if !e.Pane.given {
-		b.fail(e.At, "pane", "is missing: turned and tint belong to a pane")
-		return
-	}
-	placed := glazing.Placed{Turned: e.Turned.value, Tint: e.Tint.value}
-	if i := slices.IndexFunc(panes, func(p *glazing.Pane) bool { return p.ID == e.Pane.value }); i >= 0 {
-		placed.Pane = panes[i]
-		if names := placed.Pane.TintNames(); placed.Tint != "" && placed.Tint != glazing.SameTint && placed.Pane.TintNamed(placed.Tint) < 0 {
-			if placed.Pane.Tintable() {
-				b.fail(e.Tint.at, "tint", "pane %s has no tint %q; %s", e.Pane.value, clip(placed.Tint), Offer(placed.Tint, names))
-			} else {
-				b.fail(e.Tint.at, "tint", "pane %s does not switch", e.Pane.value)
-			}
-		}
-	} else if i := slices.IndexFunc(specs, func(s paneSpec) bool { return s.ID.value == e.Pane.value }); i >= 0 {
-		if specs[i].modelled() {
-			b.fail(e.Pane.at, "pane", "%s is modelled from glass and films, which %s; give the pane a spectrum", e.Pane.value, notYet)
-		}
-	} else if !b.incomplete["id"] {
-		var known []string
-		for _, s := range specs {
-			known = append(known, s.ID.value)
-		}
-		offer := "the project has no panes"
-		if len(known) > 0 {
-			offer = Offer(e.Pane.value, known)
-		}
-		if len(known) > 0 || !b.incomplete["panes"] {
-			b.fail(e.Pane.at, "pane", "unknown pane %q; %s", clip(e.Pane.value), offer)
-		}
-	}
-	m.Panes = append(m.Panes, placed)
-}
-
-// gap adds a gap to a make-up.
-func (b *builder) gap(m *glazing.Makeup, e *elementSpec) {
-	switch {
-	case !e.Gap.given:
-		b.fail(e.At, "gap_mm", "is missing: a gap has a width")
-	case e.Vacuum != nil && e.Gas != nil:
-		b.fail(e.Vacuum.At, "vacuum", "stands beside gas; give one")
-	case e.Vacuum != nil:
-		b.fail(e.Vacuum.At, "vacuum", "a vacuum gap %s", notYet)
-	case e.Gas == nil:
-		b.fail(e.Gap.at, "gas", "is missing: a gap has a gas, such as {air: 1} or {argon: 0.9, air: 0.1}")
-	default:
-		fractions := map[string]float64{}
-		known := glazing.Gases()
-		for name, f := range e.Gas {
-			fractions[name] = f.value
-		}
-		for _, name := range slices.Sorted(maps.Keys(e.Gas)) {
-			if !slices.Contains(known, name) {
-				b.fail(e.Gas[name].name, "gas", "unknown gas %q; %s", clip(name), OfferAll(name, known))
-				return
-			}
-		}
-		mixture, err := glazing.Filling(fractions)
-		if err != nil {
-			b.fail(e.At, "gas", "%v", err)
-			return
-		}
-		m.Gaps = append(m.Gaps, glazing.Gap{WidthMM: e.Gap.value, Gas: mixture})
-	}
 }
 
 // conditions checks what the tags cannot.

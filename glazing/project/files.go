@@ -127,7 +127,8 @@ func folder(dir string, free bool) (from source, done func()) {
 type fileSet struct {
 	read    source
 	content map[string][]byte
-	columns map[string]spectra.Columns
+	columns map[string]spectra.Columns // by file, and of a JCAMP-DX file by key as well
+	blocks  map[string][]spectra.Block
 	failed  map[string]error
 	named   []named
 }
@@ -170,27 +171,65 @@ func (l *fileSet) digest(project []byte) string {
 	return hex.EncodeToString(h.Sum(nil))
 }
 
-// spectrum reads the columns of a spectrum file, once. A fault of the file is reported once.
+// spectrum reads the columns of a spectrum file, once. Of a JCAMP-DX file it is the one that the key
+// asks for. A fault of the file is reported once.
 func (l *fileSet) spectrum(r *reader, t text, key string) (spectra.Columns, bool) {
 	content, err := l.bytesOf(t)
-	if c, ok := l.columns[t.value]; ok {
+	asked := t.value
+	if err == nil && spectra.IsJCAMP(content) {
+		asked += "\n" + key
+	}
+	if c, ok := l.columns[asked]; ok {
 		return c, true
 	}
-	if l.failed[t.value] != nil {
+	if l.failed[t.value] != nil || l.failed[asked] != nil {
 		return spectra.Columns{}, false
 	}
-	if err == nil {
+	switch {
+	case err != nil:
+		r.fail(t.at, key, "%s: %v", clip(t.value), err)
+	case asked != t.value:
+		blocks, read := l.blocks[t.value]
+		if !read {
+			if blocks, err = spectra.ReadJCAMP(bytes.NewReader(content), t.value); err != nil {
+				asked = t.value // of no use for any key
+			}
+			l.blocks[t.value] = blocks
+		}
 		var c spectra.Columns
-		if c, err = spectra.ReadCSV(bytes.NewReader(content), t.value); err == nil {
-			l.columns[t.value] = c
+		if err == nil {
+			c, err = blockFor(key, blocks, t.value)
+		}
+		if err == nil {
+			l.columns[asked] = c
 			return c, true
 		}
 		r.spectrumFaults(err)
-	} else {
-		r.fail(t.at, key, "%s: %v", clip(t.value), err)
+	default:
+		var c spectra.Columns
+		if c, err = spectra.ReadCSV(bytes.NewReader(content), t.value); err == nil {
+			l.columns[asked] = c
+			return c, true
+		}
+		r.spectrumFaults(err)
 	}
-	l.failed[t.value] = err
+	l.failed[asked] = err
 	return spectra.Columns{}, false
+}
+
+// blockFor returns the column of a JCAMP-DX file that a key asks for.
+func blockFor(key string, blocks []spectra.Block, file string) (c spectra.Columns, err error) {
+	quantity, into := spectra.Reflectance, &c.RhoFront
+	switch key {
+	case "spectrum":
+		return c, spectra.Errors{{File: file, Text: "is JCAMP-DX, which has one quantity a spectrum; name its files by quantity: spectra: {tau: FILE, rho_front: FILE, rho_back: FILE}"}}
+	case "tau":
+		quantity, into = spectra.Transmittance, &c.Tau
+	case "rho_back", "infrared_back":
+		into = &c.RhoBack
+	}
+	*into, err = spectra.OneOf(blocks, quantity, file)
+	return c, err
 }
 
 // spectrumFaults takes over the faults of a spectrum file, which name their own place.

@@ -210,7 +210,8 @@ func completeFiles() source {
 	for nm := 300; nm <= 2500; nm += 200 {
 		sun += fmt.Sprintf("%d,1\n", nm)
 	}
-	return memory(map[string]string{"a.csv": spectrumOf("0.7,0.2,0.1"), "ir.csv": infrared, "sun.csv": sun})
+	return memory(map[string]string{"a.csv": spectrumOf("0.7,0.2,0.1"), "ir.csv": infrared, "sun.csv": sun,
+		"nk.csv": "wavelength_um,n,k\n0.3,1.5,0\n60,1.5,0.01\n"})
 }
 
 // misspellings returns a key with one letter dropped, doubled, swapped with the next, or replaced.

@@ -70,7 +70,7 @@ func read(file string, content []byte, from source) (*Project, error) {
 		return nil, r.faults
 	}
 	b := &builder{reader: r, fileSet: &fileSet{read: from, content: map[string][]byte{},
-		columns: map[string]spectra.Columns{}, failed: map[string]error{}}}
+		columns: map[string]spectra.Columns{}, blocks: map[string][]spectra.Block{}, failed: map[string]error{}}, builtIn: map[string]*glazing.Pane{}}
 	p := b.project(spec)
 	if len(r.faults) > 0 {
 		return nil, r.faults

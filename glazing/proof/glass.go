@@ -1,90 +1,74 @@
 package proof
 
+// Checks of uncoated glass and of a sheet by its optical constants.
+
 import (
 	"math"
-	"slices"
 
 	"panewright/glazing"
-	"panewright/reference"
+	"panewright/glazing/film"
+	"panewright/glazing/library"
 	"panewright/spectra"
 )
 
-// constants returns n and k of a soda-lime glass over the wavelength in nm. Curves hold their
-// ends, so that below the first tabulated wavelength the first value stands.
-func constants(in *inputs) (n, k spectra.Curve) {
-	t, name := reference.SodaLimeGlass(), in.text("glass")
-	curve := func(column string) spectra.Curve {
-		um, v := t.Series(column)
-		nm := make([]float64, len(um))
-		for i := range um {
-			nm[i] = 1000 * um[i]
-		}
-		return spectra.Curve{NM: nm, Value: v}
+// uncoated is a pane of a built-in glass.
+func uncoated(in *inputs, thicknessMM float64) film.Sheet {
+	c, ok := film.Glass(in.text("glass"))
+	if !ok {
+		in.fail("input glass: there is no built-in glass %q", in.text("glass"))
 	}
-	if !slices.Contains(t.Columns, "n_"+name) {
-		in.fail("input glass: the table of soda-lime glasses has no %q", name)
-		return n, k
-	}
-	return curve("n_" + name), curve("k_" + name)
+	return film.Sheet{Constants: c, ThicknessMM: thicknessMM}
 }
 
-// reflectance is that of one face between air and a medium n + ik at normal incidence.
-func reflectance(n, k float64) float64 {
-	return ((n-1)*(n-1) + k*k) / ((n+1)*(n+1) + k*k) // Fresnel
-}
-
-// slab returns transmittance and reflectance at normal incidence of a plane-parallel sheet in
-// air that is too thick to interfere. It serves checks only: a rating takes spectra as measured.
-//
-// Light that has entered crosses the sheet with the share a and meets the far face, where r of
-// it turns back. Summing what leaves through either face at each crossing, with s = r²a²:
-//
-//	T = (1−r)² a (1 + s + s² + …)          = (1−r)² a / (1−s)
-//	R = r + (1−r)² r a² (1 + s + s² + …)   = r (1 + a T)
-func slab(n, k, wavelengthNM, thicknessMM float64) (transmittance, rho float64) {
-	const nmPerMM = 1e6
-	r := reflectance(n, k)
-	a := math.Exp(-4 * math.Pi * k * thicknessMM * nmPerMM / wavelengthNM) // Beer and Lambert
-	t := (1 - r) * (1 - r) * a / (1 - r*r*a*a)
-	return t, r * (1 + a*t)
-}
-
-// glassFigure is any figure of one uncoated sheet of soda-lime glass, computed from its optical
-// constants at the wavelengths of the basis's own tables.
+// glassFigure is any figure of one uncoated sheet of a built-in glass.
 func glassFigure(in *inputs) (float64, error) {
-	n, k := constants(in)
-	b, err := glazing.BasisNamed(in.text("basis"))
-	if err != nil {
-		return 0, err
-	}
-	mm, nm := in.number("thickness_mm"), glazing.NewMethod(b, glazing.Options{}).WavelengthsNM()
-	tau, rho := make([]float64, len(nm)), make([]float64, len(nm))
-	for i, x := range nm {
-		tau[i], rho[i] = slab(n.At(x), k.At(x), x, mm)
-	}
-	both := spectra.Curve{NM: nm, Value: rho}
-	face := glazing.NoEmissivity()
-	r, err := rate(in, &glazing.Makeup{ID: "check", Panes: []glazing.Placed{{Pane: &glazing.Pane{
-		ID:    "slab",
-		Plies: sheet(mm),
-		Tints: []glazing.Tint{{
-			Spectrum: spectra.Measured{Tau: spectra.Curve{NM: nm, Value: tau}, RhoFront: both, RhoBack: both},
-			Front:    face, Back: face,
-		}},
-	}}}})
+	s := uncoated(in, in.number("thickness_mm"))
+	r, err := rate(in, &glazing.Makeup{ID: "check", Panes: []glazing.Placed{{Pane: library.Uncoated("sheet", s)}}})
 	if err != nil {
 		return 0, err
 	}
 	return figure(r, in.text("figure"))
 }
 
-// glassEmissivity is the normal emissivity at 283 K of an uncoated face, opaque to its own heat.
+// anyMM is a thickness at which glass is opaque to its own heat.
+const anyMM = 4
+
+// glassEmissivity is the normal emissivity at 283 K of an uncoated face by its constants.
 func glassEmissivity(in *inputs) (float64, error) {
-	n, k := constants(in)
-	var c spectra.Curve
-	for _, um := range reference.EmissivityWavelengths().Column("wavelength_um") {
-		x := 1000 * um
-		c.NM, c.Value = append(c.NM, x), append(c.Value, reflectance(n.At(x), k.At(x)))
+	return number(library.Uncoated("sheet", uncoated(in, anyMM)).Tints[0].Front.ComputedNormal)
+}
+
+// glassHemispherical is the same over the half space.
+func glassHemispherical(in *inputs) (float64, error) {
+	return number(library.Uncoated("sheet", uncoated(in, anyMM)).Tints[0].Front.Hemispherical)
+}
+
+// sheetOf is a sheet of a given index and absorption at one wavelength, where k is small.
+func sheetOf(in *inputs) (s film.Sheet, wavelengthNM float64) {
+	const nm, mm, nmPerMM = 550, 6, 1e6
+	k := in.number("alpha_d") * nm / (4 * math.Pi * mm * nmPerMM)
+	one := func(v float64) spectra.Curve { return spectra.Curve{NM: []float64{nm}, Value: []float64{v}} }
+	return film.Sheet{Constants: film.Constants{N: one(in.number("n")), K: one(k)}, ThicknessMM: mm}, nm
+}
+
+func slabShare(in *inputs) (float64, error) {
+	s, nm := sheetOf(in)
+	return share(in, s.At(nm, in.number("theta_deg")).Unpolarised())
+}
+
+func slabHemispherical(in *inputs) (float64, error) {
+	s, nm := sheetOf(in)
+	return share(in, s.Hemispherical(nm))
+}
+
+func share(in *inputs, f film.Share) (float64, error) {
+	switch which := in.text("share"); which {
+	case "T":
+		return f.T, nil
+	case "R":
+		return f.R, nil
+	default:
+		in.fail("input share: %q is neither T nor R", which)
+		return 0, nil
 	}
-	return number(glazing.InfraredEmissivity(c, spectra.Curve{}).Normal)
 }

@@ -1,7 +1,6 @@
 package proof
 
 import (
-	"math"
 	"testing"
 
 	"panewright/reference/checks"
@@ -82,20 +81,5 @@ func TestInputsAreNeeded(t *testing.T) {
 	}
 	if o := evaluate(checks.Check{ID: "x", Kind: "guess"}); o.Err == nil || o.Pass {
 		t.Error("an unknown kind was computed")
-	}
-}
-
-// The slab neither makes nor loses light: without absorption all of it leaves, by the sum of
-// the series in closed form (2n/(n²+1) is let through); an opaque sheet reflects as one face does.
-func TestSlab(t *testing.T) {
-	for _, n := range []float64{1, 1.3, 1.52, 2.4} {
-		tau, rho := slab(n, 0, 550, 6)
-		if want := 2 * n / (n*n + 1); math.Abs(tau-want) > 1e-14 || math.Abs(tau+rho-1) > 1e-14 {
-			t.Errorf("n = %g: τ %.17g ρ %.17g, want τ %.17g and a sum of 1", n, tau, rho, want)
-		}
-		tau, rho = slab(n, 0.1, 550, 6)
-		if tau != 0 || rho != reflectance(n, 0.1) {
-			t.Errorf("n = %g, opaque: τ %g ρ %g, want 0 and that of a face, %g", n, tau, rho, reflectance(n, 0.1))
-		}
 	}
 }

@@ -36,15 +36,16 @@ func (o Observer) columns() [3]string {
 	return [3]string{"x2", "y2", "z2"}
 }
 
-// samples is the number of test colour samples of the general index.
-const samples = 8
+// Samples is the number of test colour samples of the general index.
+const Samples = 8
 
 // A Meter measures colours under D65 on one grid. It is made once and may be shared.
 type Meter struct {
 	observers [2]spectra.Triple
+	sums      [2]XYZ // of D65 itself, Σ S·x̄, Σ S·ȳ, Σ S·z̄
 	white     [2]XYZ // scaled so that Y is 100
 	scale     [2]float64
-	samples   [samples]spectra.Triple // of CIE 13.3, seen by the 2° observer
+	samples   [Samples]spectra.Triple // of CIE 13.3, seen by the 2° observer
 	rendering reference13
 }
 
@@ -75,11 +76,12 @@ func NewMeter(g spectra.Grid) *Meter {
 	for _, o := range []Observer{TwoDegree, TenDegree} {
 		t, white := triple(o, nil)
 		m.observers[o] = t
+		m.sums[o] = white
 		m.scale[o] = 100 / white.Y
 		m.white[o] = white.times(m.scale[o])
 	}
-	var whites [samples]XYZ
-	for i := range samples {
+	var whites [Samples]XYZ
+	for i := range whites {
 		var white XYZ
 		m.samples[i], white = triple(TwoDegree, sample(i))
 		whites[i] = white.times(m.scale[TwoDegree])
@@ -118,16 +120,49 @@ func (m *Meter) Lab(o Observer, values []float64) Lab {
 	return m.XYZ(o, values).Lab(m.white[o])
 }
 
-// Lab converts to L*a*b* against a white (CIE 15:2004, 8.2.1).
-func (c XYZ) Lab(white XYZ) Lab {
-	fx, fy, fz := cubeRoot(c.X/white.X), cubeRoot(c.Y/white.Y), cubeRoot(c.Z/white.Z)
-	return Lab{L: float64(116*fy) - 16, A: 500 * (fx - fy), B: 200 * (fy - fz)}
+// Working is a colour with all that leads to it.
+type Working struct {
+	Sums      XYZ // Σ f·S·x̄, Σ f·S·ȳ, Σ f·S·z̄
+	WhiteSums XYZ // the same of D65 itself
+	XYZ       XYZ // Sums·100/WhiteSums.Y
+	White     XYZ // of D65, Y 100
+	Roots     Roots
+	Lab       Lab
 }
+
+// Working returns the colour of a transmittance or reflectance given over the whole padded grid,
+// with all that leads to it.
+func (m *Meter) Working(o Observer, values []float64) Working {
+	x, y, z := m.observers[o].Sums(values)
+	w := Working{Sums: XYZ{x, y, z}, WhiteSums: m.sums[o], White: m.white[o]}
+	w.XYZ = w.Sums.times(m.scale[o])
+	w.Roots = w.XYZ.Roots(w.White)
+	w.Lab = w.Roots.Lab()
+	return w
+}
+
+// Roots are f(X/Xn), f(Y/Yn) and f(Z/Zn) of CIE 15:2004, 8.2.1.
+type Roots struct{ X, Y, Z float64 }
+
+// Roots returns those of a colour against a white.
+func (c XYZ) Roots(white XYZ) Roots {
+	return Roots{cubeRoot(c.X / white.X), cubeRoot(c.Y / white.Y), cubeRoot(c.Z / white.Z)}
+}
+
+// Lab converts to L*a*b* (CIE 15:2004, 8.2.1).
+func (f Roots) Lab() Lab {
+	return Lab{L: float64(116*f.Y) - 16, A: 500 * (f.X - f.Y), B: 200 * (f.Y - f.Z)}
+}
+
+// Lab converts to L*a*b* against a white (CIE 15:2004, 8.2.1).
+func (c XYZ) Lab(white XYZ) Lab { return c.Roots(white).Lab() }
+
+// LinearBelow is the edge of f, (24/116)³: below it f is a straight line.
+const LinearBelow = (24.0 / 116) * (24.0 / 116) * (24.0 / 116)
 
 // cubeRoot is f of CIE 15:2004 (8.6): the cube root, continued linearly below (24/116)³.
 func cubeRoot(t float64) float64 {
-	const edge = 24.0 / 116
-	if t > edge*edge*edge {
+	if t > LinearBelow {
 		return math.Cbrt(t)
 	}
 	return float64(841.0/108*t) + 16.0/116
@@ -137,13 +172,26 @@ func cubeRoot(t float64) float64 {
 // D65 as reference illuminant (EN 410:2011, 5.6; CIE 13.3-1995). It is not clamped: strong
 // colours may be below 0. The transmittance must not be 0 everywhere.
 func (m *Meter) RenderingIndex(values []float64) float64 {
+	var r Rendering
+	m.render(&r, values)
+	return r.Ra
+}
+
+// Rendering returns the same index with all that leads to it.
+func (m *Meter) Rendering(values []float64) Rendering {
+	var r Rendering
+	m.render(&r, values)
+	return r
+}
+
+func (m *Meter) render(dst *Rendering, values []float64) {
 	test := m.XYZ(TwoDegree, values)
-	var seen [samples]XYZ
-	for i := range samples {
+	var seen [Samples]XYZ
+	for i := range seen {
 		x, y, z := m.samples[i].Sums(values)
 		seen[i] = XYZ{x, y, z}.times(m.scale[TwoDegree])
 	}
-	return m.rendering.index(test, seen)
+	m.rendering.work(dst, test, &seen)
 }
 
 // Weighting returns the weight of each wavelength in a colour under D65, D65·(x̄ + ȳ + z̄) of the

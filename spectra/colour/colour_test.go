@@ -55,7 +55,7 @@ func TestRenderingOfFluorescent(t *testing.T) {
 	// FL8 computes to 95.50 with the black body that its 4998 K call for, and to 95.15 with
 	// daylight, which a nominal 5000 K would call for: the published 95 lies on that edge.
 	knownDifferent := map[string]float64{"fl8": 0.51}
-	spectraOf := fluorescent(t)
+	spectraOf := columnsOf(t, "testdata/fluorescent.csv")
 	for _, p := range published {
 		ra, kelvin := renderingOf(spectraOf[p.name])
 		tolerance := 0.5
@@ -71,9 +71,10 @@ func TestRenderingOfFluorescent(t *testing.T) {
 	}
 }
 
-func fluorescent(t *testing.T) map[string][]float64 {
+// columnsOf reads a table of numbers by the heads of its columns.
+func columnsOf(t *testing.T, file string) map[string][]float64 {
 	t.Helper()
-	f, err := os.Open("testdata/fluorescent.csv")
+	f, err := os.Open(file)
 	if err != nil {
 		t.Fatal(err)
 	}
@@ -86,12 +87,12 @@ func fluorescent(t *testing.T) map[string][]float64 {
 	}
 	out := map[string][]float64{}
 	for _, row := range rows[1:] {
-		for i, cell := range row[1:] {
+		for i, cell := range row {
 			v, err := strconv.ParseFloat(cell, 64)
 			if err != nil {
 				t.Fatal(err)
 			}
-			out[rows[0][i+1]] = append(out[rows[0][i+1]], v)
+			out[rows[0][i]] = append(out[rows[0][i]], v)
 		}
 	}
 	return out
@@ -115,5 +116,48 @@ func TestLab(t *testing.T) {
 		if math.Abs(got.L-tt.want.L) > 5e-4 || math.Abs(got.A-tt.want.A) > 5e-4 || math.Abs(got.B-tt.want.B) > 5e-4 {
 			t.Errorf("%s: %.4f, want %v", tt.name, got, tt.want)
 		}
+	}
+}
+
+// What leads to a colour gives the colour: the sums over that of the white, and the roots.
+func TestWorking(t *testing.T) {
+	m := NewMeter(grid())
+	values := make([]float64, grid().Padded())
+	for i := range grid().Len() {
+		values[i] = 0.3 + 0.2*math.Sin(float64(i)/9)
+	}
+	for _, o := range []Observer{TwoDegree, TenDegree} {
+		w := m.Working(o, values)
+		if w.XYZ != m.XYZ(o, values) || w.Lab != m.Lab(o, values) {
+			t.Errorf("observer %d: %v and %v, want %v and %v", o, w.XYZ, w.Lab, m.XYZ(o, values), m.Lab(o, values))
+		}
+		for _, x := range [][3]float64{
+			{w.XYZ.X, w.Sums.X, w.WhiteSums.Y}, {w.XYZ.Y, w.Sums.Y, w.WhiteSums.Y}, {w.XYZ.Z, w.Sums.Z, w.WhiteSums.Y},
+			{w.White.X, w.WhiteSums.X, w.WhiteSums.Y}, {w.White.Z, w.WhiteSums.Z, w.WhiteSums.Y},
+		} {
+			if math.Abs(x[0]-100*x[1]/x[2]) > 1e-11 {
+				t.Errorf("observer %d: %v of the sums %v and %v", o, x[0], x[1], x[2])
+			}
+		}
+		if got := w.Roots.Lab(); got != w.Lab || math.Abs(w.Roots.Y-math.Cbrt(w.XYZ.Y/100)) > 1e-15 {
+			t.Errorf("observer %d: roots %v give %v, want %v", o, w.Roots, got, w.Lab)
+		}
+	}
+	r := m.Rendering(values)
+	if r.Ra != m.RenderingIndex(values) || r.Test.XYZ != m.XYZ(TwoDegree, values) {
+		t.Errorf("Ra %v of %v, want %v of %v", r.Ra, r.Test.XYZ, m.RenderingIndex(values), m.XYZ(TwoDegree, values))
+	}
+	var mean float64
+	for _, s := range r.Samples {
+		mean += s.R / Samples
+		if math.Abs(s.R-(100-4.6*s.DeltaE)) > 1e-12 {
+			t.Errorf("R %v of ΔE %v", s.R, s.DeltaE)
+		}
+	}
+	if math.Abs(mean-r.Ra) > 1e-12 {
+		t.Errorf("Ra %v is not the mean %v", r.Ra, mean)
+	}
+	if n := testing.AllocsPerRun(100, func() { m.RenderingIndex(values) }); n != 0 {
+		t.Errorf("RenderingIndex allocates %v times", n)
 	}
 }

@@ -48,26 +48,26 @@ func TestDaylight(t *testing.T) {
 
 // The steps of CIE 13.3-1995 (from memory), worked out by hand for one colour.
 func TestSteps(t *testing.T) {
-	white, p := uv{0.1978, 0.3122}, uv{0.2500, 0.3300}
+	white, p := UV{0.1978, 0.3122}, UV{0.2500, 0.3300}
 	// W* = 25·∛30 − 17 = 60.680813; U* = 13·W*·0.0522, V* = 13·W*·0.0178.
 	got := space(p, white, 30)
 	for _, x := range []struct {
 		name      string
 		got, want float64
 	}{
-		{"W*", got.w, 60.680813}, {"U*", got.u, 41.177999}, {"V*", got.v, 14.041540},
+		{"W*", got.W, 60.680813}, {"U*", got.U, 41.177999}, {"V*", got.V, 14.041540},
 	} {
 		if math.Abs(x.got-x.want) > 2e-6 {
 			t.Errorf("%s is %.6f, by hand %.6f", x.name, x.got, x.want)
 		}
 	}
 	// u = 4 X/(X + 15 Y + 3 Z) = 380.18/1921.685, v = 6 Y/(X + 15 Y + 3 Z) = 600/1921.685.
-	if d65 := (XYZ{95.045, 100, 108.88}).uv(); math.Abs(d65.u-0.1978368) > 1e-6 || math.Abs(d65.v-0.3122260) > 1e-6 {
-		t.Errorf("D65 is u %.7f, v %.7f, by hand 0.1978368, 0.3122260", d65.u, d65.v)
+	if d65 := (XYZ{95.045, 100, 108.88}).UV(); math.Abs(d65.U-0.1978368) > 1e-6 || math.Abs(d65.V-0.3122260) > 1e-6 {
+		t.Errorf("D65 is u %.7f, v %.7f, by hand 0.1978368, 0.3122260", d65.U, d65.V)
 	}
 	// c = (4 − u − 10 v)/v = 0.45/0.33; d = (1.708 v + 0.404 − 1.481 u)/v = 0.59739/0.33.
-	c, d := p.cd()
-	if math.Abs(c-0.45/0.33) > 1e-12 || math.Abs(d-0.59739/0.33) > 1e-12 {
-		t.Errorf("c %.9f, d %.9f, by hand %.9f, %.9f", c, d, 0.45/0.33, 0.59739/0.33)
+	cd := p.CD()
+	if math.Abs(cd.C-0.45/0.33) > 1e-12 || math.Abs(cd.D-0.59739/0.33) > 1e-12 {
+		t.Errorf("c %.9f, d %.9f, by hand %.9f, %.9f", cd.C, cd.D, 0.45/0.33, 0.59739/0.33)
 	}
 }

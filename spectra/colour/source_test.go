@@ -15,20 +15,23 @@ import (
 // from there on (CIE 13.3-1995, 5.2). A glazing under D65 is rated by Meter.RenderingIndex.
 func renderingOf(source []float64) (ra, kelvin float64) {
 	t := sums(source, nil)
-	kelvin = temperature(t.uv())
+	kelvin = temperature(t.UV())
 	ref := planck(kelvin)
 	if kelvin >= 5000 {
 		ref = daylight(kelvin)
 	}
-	under := func(light []float64) (white XYZ, seen [samples]XYZ) {
+	under := func(light []float64) (white XYZ, seen [Samples]XYZ) {
 		white = sums(light, nil)
-		for i := range samples {
+		for i := range Samples {
 			seen[i] = sums(light, sample(i)).times(100 / white.Y)
 		}
 		return white.times(100 / white.Y), seen
 	}
 	r := newReference13(under(ref))
-	return r.index(under(source)), kelvin
+	var out Rendering
+	white, seen := under(source)
+	r.work(&out, white, &seen)
+	return out.Ra, kelvin
 }
 
 // sums returns the tristimulus values of a light, reflected by factor if there is one.
@@ -85,10 +88,10 @@ func daylightFactors(kelvin float64) (m1, m2 float64) {
 
 // temperature returns the correlated colour temperature in K: the black body nearest in the CIE
 // 1960 diagram, found by golden section on the reciprocal temperature from 1000 to 25 000 K.
-func temperature(p uv) float64 {
+func temperature(p UV) float64 {
 	distance := func(mired float64) float64 {
-		q := sums(planck(1e6/mired), nil).uv()
-		return math.Hypot(q.u-p.u, q.v-p.v)
+		q := sums(planck(1e6/mired), nil).UV()
+		return math.Hypot(q.U-p.U, q.V-p.V)
 	}
 	const golden = 0.6180339887498949
 	lo, hi := 40.0, 1000.0

@@ -1,0 +1,111 @@
+package project
+
+// Panes that are computed from the optical constants of a glass.
+
+import (
+	"bytes"
+
+	"panewright/glazing"
+	"panewright/glazing/film"
+	"panewright/glazing/library"
+	"panewright/spectra"
+)
+
+// modelled reports whether the pane is given by glass and films and not by a spectrum.
+func (s *paneSpec) modelled() bool { return s.Glass.given || len(s.Coatings) > 0 }
+
+// glass is a glass of the project.
+type glass struct {
+	constants       film.Constants
+	conductivityWMK float64
+	densityKGM3     float64
+}
+
+// glasses reads the optical constants of the project's glasses, by id.
+func (b *builder) glasses(list []glassSpec) map[string]glass {
+	out := map[string]glass{}
+	for _, s := range list {
+		if s.Faulty {
+			b.incomplete["glasses"] = true
+			continue
+		}
+		content, err := b.bytesOf(s.NK)
+		if err != nil {
+			b.fail(s.NK.at, "nk", "%s: %v", clip(s.NK.value), err)
+			b.incomplete["glasses"] = true
+			continue
+		}
+		n, k, err := spectra.ReadConstantsCSV(bytes.NewReader(content), s.NK.value)
+		if err != nil {
+			if b.failed[s.NK.value] == nil { // glasses may share a file; its faults are said once
+				b.spectrumFaults(err)
+				b.failed[s.NK.value] = err
+			}
+			b.incomplete["glasses"] = true
+			continue
+		}
+		out[s.ID.value] = glass{film.Constants{Name: s.ID.value, Source: s.NK.value, N: n, K: k},
+			s.Conductivity.or(glazing.GlassWMK), s.Density.or(glazing.GlassKGM3)}
+	}
+	return out
+}
+
+// sheetOf makes a pane of the sheet that a pane of the project names by glass; nil after reporting
+// why there is none.
+func (b *builder) sheetOf(s *paneSpec, own map[string]glass) *glazing.Pane {
+	name := s.Glass.value
+	fail := func(at position, key, format string, args ...any) *glazing.Pane {
+		b.fail(at, key, format, args...)
+		b.incomplete["panes"] = true
+		return nil
+	}
+	switch {
+	case !s.Glass.given:
+		return fail(s.At, "glass", "is missing: coatings stand on a glass or a pane of the library")
+	case s.Spectrum.given || s.Spectra != nil:
+		return fail(s.Glass.at, "glass", "stands beside a spectrum; give one")
+	case len(s.Plies) > 0:
+		return fail(s.Glass.at, "glass", "stands beside plies; a laminate has a spectrum")
+	case len(s.Tints) > 0:
+		return fail(s.Glass.at, "glass", "stands beside tints; a pane that switches has a spectrum for each")
+	}
+	base, of := library.Pane(name), own[name]
+	constants, builtin := film.Glass(name)
+	if builtin {
+		of = glass{constants, glazing.GlassWMK, glazing.GlassKGM3}
+	}
+	_, found := own[name]
+	switch {
+	case base != nil && s.Thickness.given:
+		return fail(s.Thickness.at, "thickness_mm", "stands beside %s, which has its own thickness; name the glass instead to choose one: %s", name, known(film.Glasses()))
+	case base != nil:
+		base.ID = s.ID.value
+	case !found && !builtin:
+		if b.incomplete["glasses"] || b.incomplete["id"] {
+			b.incomplete["panes"] = true
+			return nil
+		}
+		names := append(film.Glasses(), library.IDs()...)
+		for id := range own {
+			names = append(names, id)
+		}
+		if len(Nearest(name, names)) == 0 {
+			names = names[:len(film.Glasses())]
+		}
+		return fail(s.Glass.at, "glass", "unknown glass %q; %s", clip(name), Offer(name, names))
+	case !s.Thickness.given:
+		return fail(s.At, "thickness_mm", "is missing: a pane of %s has a thickness", name)
+	default:
+		base = library.Uncoated(s.ID.value, film.Sheet{Constants: of.constants, ThicknessMM: s.Thickness.value})
+		base.Plies[0].ConductivityWMK, base.Plies[0].DensityKGM3 = of.conductivityWMK, of.densityKGM3
+	}
+	y := &base.Plies[0]
+	y.ConductivityWMK, y.DensityKGM3 = s.Conductivity.or(y.ConductivityWMK), s.Density.or(y.DensityKGM3)
+	for i := range base.Tints {
+		if !b.faces(&base.Tints[i], [2]faceSpec{{s.EmissivityFront, s.NormalFront}, {s.EmissivityBack, s.NormalBack}}) {
+			b.incomplete["panes"] = true
+			return nil
+		}
+	}
+	return base
+}
