@@ -80,10 +80,11 @@ const (
 
 // ReadCSV reads a spectrum of a pane: a header row, columns in any order (wavelength_nm or
 // wavelength_um, tau, rho_front, rho_back; fractions of one), lines beginning with # as
-// comments, blank cells where a column stops. The file name serves errors only. It checks what
-// can be checked in each column; Join checks them together. An error is Errors, or that of r.
+// comments, blank cells where a column stops, ? for a value that is missing between others. The
+// file name serves errors only. It checks what can be checked in each column; Join checks them
+// together. An error is Errors, or that of r.
 func ReadCSV(r io.Reader, file string) (Columns, error) {
-	rows, err := readRows(r, file)
+	rows, err := readRows(r, file, minimumRows)
 	if err != nil {
 		return Columns{}, err
 	}
@@ -107,7 +108,7 @@ func ReadCSV(r io.Reader, file string) (Columns, error) {
 // irradiance with its unit, such as irradiance_w_m2_nm (any unit per wavelength; only the shape
 // counts). It returns the weighting by the trapezoid rule within 300–2500 nm.
 func ReadSunCSV(r io.Reader, file string) (Weighting, error) {
-	rows, err := readRows(r, file)
+	rows, err := readRows(r, file, minimumRows)
 	if err != nil {
 		return Weighting{}, err
 	}
@@ -120,6 +121,9 @@ func ReadSunCSV(r io.Reader, file string) (Weighting, error) {
 		default:
 			rows.fail(rows.headLine, 0, "unknown column %q; a sun has wavelength_nm or wavelength_um, and irradiance", clip(head))
 		}
+	}
+	for _, g := range c.Gaps {
+		rows.fail(0, g.FromNM, "values are missing (?) from here to %s nm; a sun needs them all", short(g.ToNM))
 	}
 	if err := rows.err(); err != nil {
 		return Weighting{}, err
@@ -136,11 +140,13 @@ func ReadSunCSV(r io.Reader, file string) (Weighting, error) {
 // rows is a file read as text: heads, and for each row its line and cells.
 type rows struct {
 	file     string
+	least    int // rows that there must be
 	heads    []string
 	headLine int
-	line     []int     // of each row
-	nm       []float64 // of each row
-	cells    []string  // row after row
+	line     []int                                         // of each row
+	nm       []float64                                     // of each row
+	cells    []string                                      // row after row
+	read     func(cell string) (v float64, problem string) // nil: number
 	faults   Errors
 }
 
@@ -159,24 +165,17 @@ func (r *rows) err() error {
 }
 
 // readRows reads header, wavelengths and cells, and checks the wavelengths. Faults that leave
-// the rows unreadable are returned; others are kept in faults.
-func readRows(in io.Reader, file string) (*rows, error) {
-	r := &rows{file: file}
-	text, err := io.ReadAll(io.LimitReader(in, MaxBytes+1))
+// the rows unreadable are returned; others are kept in faults. least is how many rows there must
+// be.
+func readRows(in io.Reader, file string, least int) (*rows, error) {
+	r := &rows{file: file, least: least}
+	text, err := readText(in, file)
 	if err != nil {
-		return nil, fmt.Errorf("%s: %w", file, err)
+		return nil, err
 	}
-	if problem := notText(text); problem != "" {
-		r.fail(0, 0, "%s", problem)
-		return nil, r.err()
-	}
-	text = bytes.TrimPrefix(text, []byte("\ufeff"))
 	if bytes.HasPrefix(bytes.TrimSpace(text), []byte("##TITLE")) {
-		r.fail(0, 0, "is JCAMP-DX, which is not in this version; export CSV")
+		r.fail(0, 0, "is JCAMP-DX, and CSV is needed here")
 		return nil, r.err()
-	}
-	if !bytes.ContainsRune(text, '\n') { // line ends of old files
-		text = bytes.ReplaceAll(text, []byte("\r"), []byte("\n"))
 	}
 	cr := csv.NewReader(bytes.NewReader(text))
 	cr.Comment, cr.FieldsPerRecord, cr.TrimLeadingSpace, cr.ReuseRecord = '#', -1, true, true
@@ -233,6 +232,23 @@ func readRows(in io.Reader, file string) (*rows, error) {
 	return r, nil
 }
 
+// readText reads a text file of bounded size, without the mark of its byte order and with line ends
+// that hold a line feed.
+func readText(in io.Reader, file string) ([]byte, error) {
+	text, err := io.ReadAll(io.LimitReader(in, MaxBytes+1))
+	if err != nil {
+		return nil, fmt.Errorf("%s: %w", file, err)
+	}
+	if problem := notText(text); problem != "" {
+		return nil, Errors{{File: file, Text: problem}}
+	}
+	text = bytes.TrimPrefix(text, []byte("\ufeff"))
+	if !bytes.ContainsRune(text, '\n') { // line ends of old files
+		text = bytes.ReplaceAll(text, []byte("\r"), []byte("\n"))
+	}
+	return text, nil
+}
+
 // maxColumns is how many columns are looked at at all.
 const maxColumns = 64
 
@@ -262,8 +278,10 @@ func notText(b []byte) string {
 	return ""
 }
 
-// minimumRows is how many rows a spectrum has at least.
-const minimumRows = 10
+const (
+	minimumRows = 10  // how many rows a spectrum has at least
+	leastLastNM = 100 // where a spectrum in nm stops before, the unit is in doubt
+)
 
 // readWavelengths finds the wavelength column and checks that it ascends in the unit it names.
 func (r *rows) readWavelengths() error {
@@ -311,9 +329,9 @@ func (r *rows) readWavelengths() error {
 		last = r.nm[i]
 	}
 	switch {
-	case len(r.line) < minimumRows && len(r.faults) == 0:
-		r.fail(0, 0, "%d rows; a spectrum has at least %d", len(r.line), minimumRows)
-	case scale == 1 && last > 0 && last < 100:
+	case len(r.line) < r.least && len(r.faults) == 0:
+		r.fail(0, 0, "%d rows; at least %d are needed", len(r.line), r.least)
+	case scale == 1 && last > 0 && last < leastLastNM:
 		r.fail(r.line[len(r.line)-1], 0, "the last wavelength is %s nm: µm in a column of nm? name it wavelength_um", short(last))
 	case scale == 1000 && len(r.nm) > 0 && r.nm[0] > 1e5:
 		r.fail(r.line[0], 0, "the first wavelength is %s µm: nm in a column of µm? name it wavelength_nm", short(r.nm[0]/1000))
@@ -342,7 +360,8 @@ func (r *rows) column(head string, check func(float64) string) Column {
 	}
 	n := len(r.line)
 	c.NM, c.Value, c.Line = make([]float64, 0, n), make([]float64, 0, n), make([]int, 0, n)
-	blank := 0 // line of the first blank cell since the column began
+	blank := 0   // line of the first blank cell since the column began
+	gap := false // whether values are missing since the last
 	for i := range r.line {
 		cell := r.cell(i, at)
 		if cell == "" {
@@ -351,7 +370,11 @@ func (r *rows) column(head string, check func(float64) string) Column {
 			}
 			continue
 		}
-		v, problem := number(cell)
+		if cell == missingCell {
+			gap = c.Len() > 0
+			continue
+		}
+		v, problem := r.value(cell)
 		if problem == "" {
 			problem = check(v)
 		}
@@ -359,16 +382,35 @@ func (r *rows) column(head string, check func(float64) string) Column {
 			blank = 0
 		}
 		if problem == "" && blank > 0 {
-			problem = fmt.Sprintf("the column has a blank cell at line %d and then goes on; cells may be blank only where a column stops", blank)
+			problem = fmt.Sprintf("the column has a blank cell at line %d and then goes on; cells may be blank only where a column stops; write ? for a value that is missing", blank)
 			blank = 0
 		}
 		if problem != "" {
 			r.fail(r.line[i], r.nm[i], "%s %s: %s", clip(head), clip(cell), problem)
 			continue
 		}
+		if gap {
+			if c.Gaps, gap = append(c.Gaps, Span{c.Last(), r.nm[i]}), false; len(c.Gaps) > maxGaps {
+				r.fail(r.line[i], r.nm[i], "%s lacks values (?) in more than %d places; that is no spectrum", clip(head), maxGaps)
+				return c
+			}
+		}
 		c.NM, c.Value, c.Line = append(c.NM, r.nm[i]), append(c.Value, v), append(c.Line, r.line[i])
 	}
 	return c
+}
+
+const (
+	missingCell = "?"  // of a value that is missing between others of its column
+	maxGaps     = 1000 // of a column
+)
+
+// value reads a cell, as a layout says or as a plain decimal number.
+func (r *rows) value(cell string) (v float64, problem string) {
+	if r.read != nil {
+		return r.read(cell)
+	}
+	return number(cell)
 }
 
 // number reads a plain decimal number; problem says why a cell is none.

@@ -127,6 +127,27 @@ func TestReadCSVAccepts(t *testing.T) {
 	}
 }
 
+// A question mark between values leaves a gap from the last before to the first after; at an end it
+// is like a blank.
+func TestReadCSVGaps(t *testing.T) {
+	tau := []string{"?", "", "0.1", "?", "0.2", "0.3", "?", "?", "?", "0.4", "?"}
+	text := goodLines()
+	for i, cell := range tau {
+		text[i+1] = fmt.Sprintf("%d,%s,0.1,?", 300+10*i, cell)
+	}
+	c, err := ReadCSV(strings.NewReader(strings.Join(text, "\n")), "pane.csv")
+	if err != nil {
+		t.Fatal(err)
+	}
+	want := Curve{NM: []float64{320, 340, 350, 390}, Value: []float64{0.1, 0.2, 0.3, 0.4}, Gaps: []Span{{320, 340}, {350, 390}}}
+	if !reflect.DeepEqual(c.Tau.Curve, want) || !slices.Equal(c.Tau.Line, []int{4, 6, 7, 11}) {
+		t.Errorf("got %+v, want %+v", c.Tau, want)
+	}
+	if c.RhoFront.Gaps != nil || c.RhoFront.Len() != 11 || c.RhoBack.Len() != 0 {
+		t.Errorf("rho_front %+v, rho_back %+v", c.RhoFront, c.RhoBack)
+	}
+}
+
 func TestReadCSVRefuses(t *testing.T) {
 	utf16 := func(order ...byte) string {
 		out := order
@@ -184,7 +205,17 @@ func TestReadCSVRefuses(t *testing.T) {
 		{"a long word is clipped", withLine(2, "300,"+strings.Repeat("é", 5000)+",0.1,0.15"), [][]string{{"pane.csv:2: at 300 nm: tau é", "…: not a number"}}},
 		{"control characters", withLine(2, "300,\x1b[31mred,0.1,0.15"), [][]string{{"pane.csv:2: at 300 nm: tau ", "[31mred: not a number"}}},
 		{"control characters in a head", withLine(1, "wavelength_nm,tau,rho_front,\x1b[31m"), [][]string{{"pane.csv:1: unknown column", "[31m"}}},
-		{"blank cell in the middle", withLine(7, "350,,0.1,0.15"), [][]string{{"pane.csv:8: at 360 nm: tau 0.8: ", "blank cell at line 7", "only where a column stops"}}},
+		{"blank cell in the middle", withLine(7, "350,,0.1,0.15"), [][]string{{"pane.csv:8: at 360 nm: tau 0.8: ", "blank cell at line 7", "only where a column stops", "write ? for a value that is missing"}}},
+		{"a blank cell among missing ones", strings.Replace(withLine(7, "350,,0.1,0.15"), "340,0.8", "340,?", 1), [][]string{{"pane.csv:8: at 360 nm: tau 0.8: ", "blank cell at line 7"}}},
+		{"a missing wavelength", withLine(7, "?,0.8,0.1,0.15"), [][]string{{"pane.csv:7: wavelength \"?\": not a number"}}},
+		{"holes everywhere", "wavelength_nm,tau\n" + func() string {
+			var s strings.Builder
+			for nm := 300; nm < 300+2*maxGaps+10; nm += 2 {
+				fmt.Fprintf(&s, "%d,0.5\n%d,?\n", nm, nm+1)
+			}
+			return s.String()
+		}(), [][]string{{"pane.csv:2004: at 2302 nm: tau lacks values (?) in more than 1000 places"}}},
+		{"a missing value in words", withLine(7, "350,??,0.1,0.15"), [][]string{{"pane.csv:7: at 350 nm: tau ??: not a number"}}},
 
 		{"not sorted", withLine(4, "305,0.8,0.1,0.15"), [][]string{{"pane.csv:4: at 305 nm: wavelengths must ascend", "310 nm"}}},
 		{"wavelength twice in rows", withLine(4, "310.0,0.8,0.1,0.15"), [][]string{{"pane.csv:4: at 310 nm: this wavelength stands twice"}}},
@@ -317,6 +348,7 @@ func TestReadSunCSV(t *testing.T) {
 		{"unknown column", sun("wavelength_nm,sun", one), [][]string{{"sun.csv:1: unknown column \"sun\"", "irradiance"}}},
 		{"negative", sun("wavelength_nm,irradiance", func(nm int) string { return fmt.Sprint(500 - nm/5) }), [][]string{{"sun.csv:114: at 2520 nm: irradiance -4: below 0"}}},
 		{"nothing", sun("wavelength_nm,irradiance", func(int) string { return "0" }), [][]string{{"sun.csv:1: ", "adds to nothing", "300", "2500"}}},
+		{"missing", sun("wavelength_nm,irradiance", func(nm int) string { return map[bool]string{true: "?", false: "1"}[nm == 500] }), [][]string{{"sun.csv: at 480 nm: values are missing", "to 520 nm"}}},
 		{"blank", sun("wavelength_nm,irradiance", func(int) string { return "" }), [][]string{{"sun.csv:1: ", "adds to nothing"}}},
 		{"NaN", sun("wavelength_nm,irradiance", func(nm int) string { return map[bool]string{true: "NaN", false: "1"}[nm == 500] }), [][]string{{"sun.csv:13: at 500 nm: irradiance NaN: not a finite number"}}},
 	} {

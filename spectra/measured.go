@@ -92,7 +92,7 @@ func Join(c Columns, infraredFront, infraredBack Column) (Measured, error) {
 func (c Curve) solar() Curve {
 	s := c.cut(0, SolarLastNM)
 	if n := s.Len(); n < c.Len() && s.Last() < SolarLastNM && c.NM[n] <= SolarLastNM+stepSolarNM {
-		return Curve{c.NM[:n+1], c.Value[:n+1]}
+		return c.slice(0, n+1)
 	}
 	return s
 }
@@ -143,7 +143,7 @@ func (l *rowList) cautions() (out []Caution) {
 
 // bound returns a copy of the column with values set into 0…1.
 func bound(c Column, changed *rowList) Column {
-	out := Column{c.File, c.Line, Curve{c.NM, make([]float64, len(c.Value))}}
+	out := Column{c.File, c.Line, Curve{NM: c.NM, Value: make([]float64, len(c.Value)), Gaps: c.Gaps}}
 	for i, v := range c.Value {
 		out.Value[i] = min(max(v, 0), 1)
 		if out.Value[i] != v {
@@ -166,7 +166,7 @@ func sumToOne(tau, rho Column, name string, changed *rowList) (faults Errors) {
 		for i, nm := range c.NM {
 			sum := c.Value[i] + values[i]
 			switch {
-			case nm < other.First() || nm > other.Last():
+			case nm < other.First() || nm > other.Last() || other.InGap(nm):
 			case sum > 1+Slack+binary:
 				faults = append(faults, &RowError{c.File, c.Line[i], nm,
 					fmt.Sprintf("tau + %s is %.4f; transmittance and reflectance add to at most 1", name, sum)})
@@ -205,6 +205,9 @@ func infrared(rho, own Column, face string, changed *rowList, cautions *[]Cautio
 		return Curve{}, &RowError{rho.File, line, c.Last(), "infrared rows of the " + face + " must reach 25 µm at least (5 to 50 µm give emissivity); drop them or measure on"}
 	case c.First() > infraredStartNM:
 		return Curve{}, &RowError{rho.File, firstLine, c.First(), "infrared rows of the " + face + " must begin at 5.5 µm or before (5 to 50 µm give emissivity)"}
+	case len(c.Gaps) > 0:
+		g := c.Gaps[0]
+		return Curve{}, &RowError{rho.File, 0, g.FromNM, fmt.Sprintf("infrared rows of the %s have no values from here to %s nm (5 to 50 µm give emissivity); drop them or measure again", face, short(g.ToNM))}
 	case c.Last() < infraredLastNM:
 		*cautions = append(*cautions, Caution{"extended", fmt.Sprintf(
 			"%s: infrared rows of the %s stop at %s µm; the last value was held to 50 µm.", rho.File, face, short(c.Last()/1000))})
@@ -217,6 +220,9 @@ func coarse(c Curve) string {
 	var visible, beyond float64 // the widest steps
 	for i := 1; i < c.Len(); i++ {
 		step := c.NM[i] - c.NM[i-1]
+		if slices.Contains(c.Gaps, Span{c.NM[i-1], c.NM[i]}) {
+			continue // which the figures that need it speak of
+		}
 		if c.NM[i-1] < stepEdgeNM {
 			visible = max(visible, step)
 		} else {

@@ -15,13 +15,22 @@
 // incidence other than normal, and polarisation.
 package spectra
 
-import "sort"
+import (
+	"slices"
+	"sort"
+)
 
-// A Curve is a quantity over wavelength: NM ascending in nm, Value of the same length.
+// A Curve is a quantity over wavelength: NM ascending in nm, Value of the same length. Gaps are the
+// stretches between two points of it in which its source says that values are missing; what is
+// interpolated there is a guess, and callers say so.
 type Curve struct {
 	NM    []float64
 	Value []float64
+	Gaps  []Span // ascending; each from the last point before to the first after
 }
+
+// A Span is a stretch of wavelengths in nm.
+type Span struct{ FromNM, ToNM float64 }
 
 // Len returns the number of points.
 func (c Curve) Len() int { return len(c.NM) }
@@ -85,7 +94,23 @@ func (c Curve) cut(lo, hi float64) Curve {
 	for j < len(c.NM) && c.NM[j] <= hi {
 		j++
 	}
-	return Curve{c.NM[i:j], c.Value[i:j]}
+	return c.slice(i, j)
+}
+
+// InGap reports whether a wavelength lies inside a gap of the curve.
+func (c Curve) InGap(nm float64) bool {
+	return slices.ContainsFunc(c.Gaps, func(g Span) bool { return g.FromNM < nm && nm < g.ToNM })
+}
+
+// slice returns points i to j of the curve, with the gaps that lie between them.
+func (c Curve) slice(i, j int) Curve {
+	out := Curve{NM: c.NM[i:j], Value: c.Value[i:j]}
+	for _, g := range c.Gaps {
+		if i < j && g.FromNM >= c.NM[i] && g.ToNM <= c.NM[j-1] {
+			out.Gaps = append(out.Gaps, g)
+		}
+	}
+	return out
 }
 
 // A Caution is a remark that must travel with every figure it concerns: a short code and a

@@ -37,6 +37,18 @@ func (w Weighting) Missing(first, last float64) (below, above float64) {
 	return total(w.Weight[:from]) / all, total(w.Weight[to:]) / all
 }
 
+// Within returns the share of the weight, from 0 to 1, that lies inside gaps.
+func (w Weighting) Within(gaps []Span) float64 {
+	var inside float64
+	c := Curve{Gaps: gaps}
+	for i, nm := range w.NM {
+		if c.InGap(nm) {
+			inside += w.Weight[i]
+		}
+	}
+	return inside / total(w.Weight)
+}
+
 // times returns the weighting with each weight multiplied by f(nm).
 func (w Weighting) times(f func(nm float64) float64) Weighting {
 	out := Weighting{Name: w.Name, Source: w.Source, NM: w.NM, Weight: make([]float64, len(w.NM))}
@@ -75,7 +87,7 @@ func LightEN410() Weighting {
 // LightCIE returns D65·V at 5 nm, 380–780 nm, from the CIE's own tables (CIE 15:2004).
 func LightCIE() Weighting {
 	nm, d65 := reference.Daylight().Series("d65")
-	d := Curve{nm, d65}
+	d := Curve{NM: nm, Value: d65}
 	w := table(reference.Observers(), "y2", "light", "CIE 15:2004, D65 times V at 5 nm")
 	return w.times(d.At)
 }
@@ -90,7 +102,7 @@ func SolarEN410() Weighting {
 // its own wavelengths, 300–2500 nm, by the trapezoid rule.
 func SolarG173() Weighting {
 	nm, global := reference.SolarG173().Series("global")
-	w := Trapezoid(Curve{nm, global}, SolarFirstNM, SolarLastNM)
+	w := Trapezoid(Curve{NM: nm, Value: global}, SolarFirstNM, SolarLastNM)
 	w.Name, w.Source = "solar", "ASTM G173-03 global tilt, 300-2500 nm, trapezoid rule"
 	return w
 }
