@@ -25,11 +25,13 @@ type Figure struct {
 	Key     string // JSON path; "#" stands for the number of the pane, gap or surface
 	Alias   string // short name, accepted wherever a figure is typed
 	Symbol  string // the trade's symbol
+	Mark    string // follows the symbol in a heading where other figures have the same
 	Unit    string
 	Places  int  // decimals as printed
 	Small   bool // three decimals below 0.05
 	BasisU  bool // decimals of a U-value, which depend on the basis
 	Column  int  // place among the columns of the schedule, from 1; 0 for none
+	Beside  bool // compare shows it too, beside the columns of the schedule
 	Per     Per
 	Clause  string // where the standard defines it; numbers of clauses are from memory
 	Meaning string
@@ -85,22 +87,22 @@ func opticalFigures() []Figure {
 				}
 				return unknown(r.U.Why)
 			}},
-		{Key: "solar.secondary_heat_inward", Alias: "qi", Symbol: "qi", Places: 2, Small: true, Clause: "EN 410, 5.4.6; ISO 9050, 3.5",
+		{Key: "solar.secondary_heat_inward", Alias: "qi", Symbol: "qi", Places: 2, Small: true, Beside: true, Clause: "EN 410, 5.4.6; ISO 9050, 3.5",
 			Meaning: "secondary heat towards the inside", Value: whole(func(r *Rating) Value { return r.SecondaryHeat })},
 		{Key: "solar.g", Alias: "g", Symbol: "g", Places: 2, Small: true, Column: 6, Clause: "EN 410, 5.4.1; ISO 9050, 3.5",
 			Meaning: "total solar energy transmittance τe + qi", Value: whole(func(r *Rating) Value { return r.G })},
-		{Key: "solar.shading_coefficient", Alias: "shading", Symbol: "SC", Places: 2, Small: true, Clause: "EN 410, 5.7",
+		{Key: "solar.shading_coefficient", Alias: "shading", Symbol: "SC", Places: 2, Small: true, Beside: true, Clause: "EN 410, 5.7",
 			Meaning: "shading coefficient g/0.87", Value: whole(func(r *Rating) Value { return r.ShadingCoefficient })},
 		{Key: "solar.light_to_solar_gain", Alias: "light_to_solar", Symbol: "τv/g", Places: 2, Clause: "common practice, no source",
 			Meaning: "light to solar gain", Value: whole(func(r *Rating) Value { return r.LightToSolarGain })},
 
 		{Key: "uv.transmittance", Alias: "uv", Symbol: "τuv", Places: 2, Small: true, Column: 9, Clause: "EN 410, 5.5; ISO 9050, 3.6",
 			Meaning: "ultraviolet transmittance, 300-380 nm", Value: whole(func(r *Rating) Value { return r.UV })},
-		{Key: "uv.damage_weighted", Alias: "damage", Symbol: "τdf", Places: 2, Small: true, Clause: "ISO 9050, 3.7; CIE 89/3",
+		{Key: "uv.damage_weighted", Alias: "damage", Symbol: "τdf", Places: 2, Small: true, Beside: true, Clause: "ISO 9050, 3.7; CIE 89/3",
 			Meaning: "damage-weighted transmittance, 300-600 nm", Value: whole(func(r *Rating) Value { return r.Damage })},
 		{Key: "uv.damage_weighted_700", Alias: "damage_700", Symbol: "τdf,700", Places: 2, Small: true, Clause: "CIE 89/3",
 			Meaning: "damage-weighted transmittance, 300-700 nm", Value: whole(func(r *Rating) Value { return r.Damage700 })},
-		{Key: "uv.skin_weighted", Alias: "skin", Symbol: "τsk", Places: 2, Small: true, Clause: "ISO 9050, 3.8",
+		{Key: "uv.skin_weighted", Alias: "skin", Symbol: "τsk", Places: 2, Small: true, Beside: true, Clause: "ISO 9050, 3.8",
 			Meaning: "skin-weighted transmittance, 300-400 nm", Value: whole(func(r *Rating) Value { return r.Skin })},
 	}
 }
@@ -109,22 +111,22 @@ func colourFigures() []Figure {
 	list := []Figure{{Key: "colour.ra", Alias: "ra", Symbol: "Ra", Places: 0, Column: 8, Clause: "EN 410, 5.6; ISO 9050; CIE 13.3",
 		Meaning: "general colour rendering index", Value: whole(func(r *Rating) Value { return r.Ra })}}
 	for _, c := range []struct {
-		key, alias, of string
-		ten            bool
-		get            func(r *Rating) Colours
+		key, alias, mark, of string
+		ten                  bool
+		get                  func(r *Rating) Colours
 	}{
-		{"transmitted", "transmitted", "transmitted", false, func(r *Rating) Colours { return r.Transmitted }},
-		{"reflected_outside", "outside", "reflected outside", false, func(r *Rating) Colours { return r.Outside }},
-		{"reflected_inside", "inside", "reflected inside", false, func(r *Rating) Colours { return r.Inside }},
-		{"transmitted_10deg", "transmitted10", "transmitted, 10° observer", true, func(r *Rating) Colours { return r.Transmitted }},
-		{"reflected_outside_10deg", "outside10", "reflected outside, 10° observer", true, func(r *Rating) Colours { return r.Outside }},
-		{"reflected_inside_10deg", "inside10", "reflected inside, 10° observer", true, func(r *Rating) Colours { return r.Inside }},
+		{"transmitted", "transmitted", "τ", "transmitted", false, func(r *Rating) Colours { return r.Transmitted }},
+		{"reflected_outside", "outside", "ρ", "reflected outside", false, func(r *Rating) Colours { return r.Outside }},
+		{"reflected_inside", "inside", "ρ′", "reflected inside", false, func(r *Rating) Colours { return r.Inside }},
+		{"transmitted_10deg", "transmitted10", "τ,10", "transmitted, 10° observer", true, func(r *Rating) Colours { return r.Transmitted }},
+		{"reflected_outside_10deg", "outside10", "ρ,10", "reflected outside, 10° observer", true, func(r *Rating) Colours { return r.Outside }},
+		{"reflected_inside_10deg", "inside10", "ρ′,10", "reflected inside, 10° observer", true, func(r *Rating) Colours { return r.Inside }},
 	} {
 		for axis, a := range []struct{ name, symbol, meaning string }{
 			{"l", "L*", "lightness, "}, {"a", "a*", "green to red, "}, {"b", "b*", "blue to yellow, "},
 		} {
 			list = append(list, Figure{
-				Key: "colour." + c.key + "." + a.name, Alias: a.name + "_" + c.alias, Symbol: a.symbol, Places: 1,
+				Key: "colour." + c.key + "." + a.name, Alias: a.name + "_" + c.alias, Symbol: a.symbol, Mark: c.mark, Places: 1, Beside: !c.ten,
 				Clause: "EN 410, 5.6; CIE 15", Meaning: a.meaning + c.of,
 				Value: whole(func(r *Rating) Value {
 					k := c.get(r)
@@ -149,7 +151,7 @@ func thermalFigures() []Figure {
 			Value: func(_ *Rating, i int) Value { return known(float64(i + 1)) }},
 		{Key: "surfaces.#.emissivity_normal", Alias: "emissivity_normal", Symbol: "εn", Places: 3, Per: PerSurface, Clause: "EN 12898",
 			Meaning: "normal emissivity at 283 K", Value: surface(func(e Emissivity) Value { return e.Normal })},
-		{Key: "surfaces.#.emissivity", Alias: "emissivity", Symbol: "ε", Places: 3, Per: PerSurface, Clause: "EN 12898",
+		{Key: "surfaces.#.emissivity", Alias: "emissivity", Symbol: "ε", Places: 3, Beside: true, Per: PerSurface, Clause: "EN 12898",
 			Meaning: "corrected emissivity", Value: surface(func(e Emissivity) Value { return e.Corrected })},
 		{Key: "surfaces.#.emissivity_hemispherical", Alias: "emissivity_hemispherical", Symbol: "εh", Places: 3, Per: PerSurface,
 			Clause: "integral over angle", Meaning: "exact hemispherical emissivity", Value: surface(func(e Emissivity) Value { return e.Hemispherical })},
@@ -227,13 +229,14 @@ func (f Figure) Print(r *Rating, i int) string {
 	if !v.Known {
 		return "–"
 	}
-	return PrintRounded(v.Number, f.places(r, v.Number))
+	return PrintRounded(v.Number, f.Decimals(r, v.Number))
 }
 
 // smallBelow is the bound below which a fraction shows a third decimal.
 const smallBelow = 0.05
 
-func (f Figure) places(r *Rating, v float64) int {
+// Decimals returns how many decimals outputs print of a value of the figure in a rating.
+func (f Figure) Decimals(r *Rating, v float64) int {
 	switch {
 	case f.BasisU:
 		return r.Method.Basis.uPlaces

@@ -9,6 +9,7 @@ import (
 	"github.com/spf13/cobra"
 
 	"panewright/cmd/panewright/internal/demo"
+	"panewright/cmd/panewright/internal/table"
 )
 
 func newDemo(s streams) *cobra.Command {
@@ -39,7 +40,11 @@ DIR and differ are not overwritten.`,
 				return &outputError{"the demo project", err}
 			}
 			fmt.Fprintf(s.err, "wrote %s; rate it again with: panewright rate %s\n", path, path)
-			return runRate(s, path, selection{}, "table", "", "")
+			r, err := rate(path, selection{})
+			if err != nil {
+				return err
+			}
+			return s.write("", table.Schedule(r))
 		},
 	}
 }

@@ -6,11 +6,13 @@ import (
 	"fmt"
 	"math"
 	"os"
+	"path/filepath"
 	"slices"
 	"strconv"
 	"strings"
 
 	"github.com/spf13/cobra"
+	"golang.org/x/term"
 
 	"panewright/cmd/panewright/internal/table"
 	"panewright/glazing"
@@ -34,30 +36,99 @@ func outputFlag(c *cobra.Command, output *string) {
 	c.Flags().StringVarP(output, "output", "o", "", "write to `FILE` instead of standard output")
 }
 
+// page is how to print: the form, the file, the figures and their units.
+type page struct {
+	as, output string
+	formats    []string // offered
+	figures    []string
+	units      string
+	csv        struct {
+		separator          string
+		decimalComma, rows bool
+	}
+}
+
+func (p *page) flags(c *cobra.Command, formats ...string) {
+	p.formats = formats
+	c.Flags().StringVar(&p.as, "as", "", "print as `FORMAT`: "+strings.Join(formats, ", ")+"; table when absent, or what the end of -o says")
+	c.Flags().StringSliceVar(&p.figures, "figures", nil, "show the figures `NAME,NAME`, in this order")
+	c.Flags().StringVar(&p.units, "units", "si", "print figures in `UNITS`: si or ip (inch-pound)")
+	c.Flags().StringVar(&p.csv.separator, "separator", "", "with --as csv: `SIGN` between cells: comma, semicolon or tab (default comma)")
+	c.Flags().BoolVar(&p.csv.decimalComma, "decimal-comma", false, "with --as csv: write 0,25 for 0.25")
+	c.Flags().BoolVar(&p.csv.rows, "units-row", false, "with --as csv: a second row with the units")
+	outputFlag(c, &p.output)
+}
+
+// spreadsheetText is help that commands which print CSV or XLSX share.
+const spreadsheetText = `CSV is UTF-8 without a byte-order mark; lines end with a line feed. A text that
+a spreadsheet would take for a formula (it begins with = + - @, a tab or a
+carriage return, also after blanks) has an apostrophe put before it.`
+
+// figureNames lists the short names of figures, folded for a help text.
+func figureNames() string {
+	var b strings.Builder
+	column := 0
+	for i, name := range table.FigureNames(glazing.Figures()) {
+		if i > 0 {
+			b.WriteByte(',')
+			column++
+		}
+		switch {
+		case i == 0:
+		case column+1+len(name) > table.Width-2: // room for a comma
+			b.WriteByte('\n')
+			column = 0
+		default:
+			b.WriteByte(' ')
+			column++
+		}
+		b.WriteString(name)
+		column += len(name)
+	}
+	return b.String()
+}
+
 func newRate(s streams) *cobra.Command {
 	var o selection
-	var as, spectra, output string
+	var p page
+	var spectra string
 	c := &cobra.Command{
 		Use:                   "rate PROJECT [options]",
 		DisableFlagsInUseLine: true,
 		Short:                 "Print the schedule of a project",
-		Long: `Rates every make-up of a project in every tint and prints the schedule.
+		Long: `Rates every make-up of a project in every tint and prints the schedule, as text
+of 80 columns or as Markdown.
 
-JSON has every figure with all its digits; null marks a figure that is not
-known, with the reason among the cautions.`,
+JSON, CSV and XLSX have every figure with all its digits. What is not known is
+null in JSON and an empty cell elsewhere; the cautions say why.
+
+CSV and XLSX have one row a rating. The first row has the keys of the figures,
+which are their paths in JSON, with panes, gaps and surfaces counted from 1.
+XLSX also has the units, editions, cautions, and a chart of the spectra.
+` + spreadsheetText + `
+
+--figures takes keys, such as solar.g or surfaces.3.emissivity, and the short
+names below. A figure of panes, gaps or surfaces without a number stands for all
+of them; in JSON its list is always whole.
+
+` + figureNames(),
 		Example: `  panewright rate panewright-demo/project.yaml
   panewright rate panewright-demo/project.yaml --makeup E1 --tint full
   panewright rate panewright-demo/project.yaml --basis en,iso --as json
-  panewright rate panewright-demo/project.yaml --as json --spectra 400,550,700`,
+  panewright rate panewright-demo/project.yaml --as json --spectra 400,550,700
+  panewright rate panewright-demo/project.yaml --figures light,g,u,absorptance
+  panewright rate panewright-demo/project.yaml --units ip
+  panewright rate panewright-demo/project.yaml -o mill.xlsx
+  panewright rate panewright-demo/project.yaml -o mill.csv --separator ";" \
+    --decimal-comma`,
 		Args: oneProject,
 		RunE: func(_ *cobra.Command, args []string) error {
-			return runRate(s, args[0], o, as, spectra, output)
+			return runRate(s, args[0], o, p, spectra)
 		},
 	}
 	o.flags(c)
-	c.Flags().StringVar(&as, "as", "table", "print as `FORMAT`: table or json")
+	p.flags(c, "table", "json", "csv", "xlsx", "markdown")
 	c.Flags().StringVar(&spectra, "spectra", "", "with --as json: spectra at the wavelengths `NM,NM`, or all")
-	outputFlag(c, &output)
 	return c
 }
 
@@ -69,16 +140,25 @@ func oneProject(c *cobra.Command, args []string) error {
 	return nil
 }
 
-func runRate(s streams, path string, o selection, as, spectra, output string) error {
-	formats := []string{"table", "json"}
-	if !slices.Contains(formats, as) {
-		return fmt.Errorf("--as %s is not known; %s", short(as), project.Offer(as, formats))
+func runRate(s streams, path string, o selection, p page, spectra string) error {
+	form, err := p.form()
+	if err != nil {
+		return err
 	}
-	if spectra != "" && as != "json" {
+	if spectra != "" && p.as != "json" {
 		return fmt.Errorf("--spectra prints spectra in JSON; add --as json")
+	}
+	if p.as == "xlsx" {
+		if p.output == "" && s.terminal() {
+			return fmt.Errorf("a spreadsheet is not for a terminal; add -o FILE.xlsx")
+		}
+		spectra = "all"
 	}
 	r, err := rate(path, o)
 	if err != nil {
+		return err
+	}
+	if err := p.choose(&r); err != nil {
 		return err
 	}
 	if spectra != "" {
@@ -93,13 +173,98 @@ func runRate(s streams, path string, o selection, as, spectra, output string) er
 			r.Spectra = append(r.Spectra, rating.Ready.Spectra(rating.State, nm))
 		}
 	}
-	if err := keepInputs(output, r.Project); err != nil {
+	if err := keepInputs(p.output, r.Project); err != nil {
 		return err
 	}
-	if as == "json" {
-		return s.write(output, table.JSON(r))
+	var out []byte
+	switch p.as {
+	case "json":
+		out = table.JSON(r)
+	case "csv":
+		out, err = table.CSV(r, form)
+	case "xlsx":
+		out, err = table.XLSX(r)
+	case "markdown":
+		out = table.Markdown(r)
+	default:
+		out = table.Schedule(r)
 	}
-	return s.write(output, table.Schedule(r))
+	if err != nil {
+		return err
+	}
+	return s.write(p.output, out)
+}
+
+// choose makes a report show the figures and units that were asked for.
+func (p *page) choose(r *table.Report) error {
+	r.InchPound = p.units == "ip"
+	if p.figures == nil {
+		return nil
+	}
+	if err := r.Choose(p.figures); err != nil {
+		return fmt.Errorf("--figures: %w", err)
+	}
+	return nil
+}
+
+// ends are the formats that the end of a file's name says.
+var ends = map[string]string{".json": "json", ".csv": "csv", ".xlsx": "xlsx", ".md": "markdown"}
+
+// separators are what may stand between the cells of CSV, by name and as they are.
+var separators = map[string]rune{"": 0, "comma": ',', ",": ',', "semicolon": ';', ";": ';', "tab": '\t', "\t": '\t', `\t`: '\t'}
+
+// form settles the format and checks what goes with it.
+func (p *page) form() (table.CSVForm, error) {
+	var none table.CSVForm
+	switch end := ends[strings.ToLower(filepath.Ext(p.output))]; {
+	case p.as == "md":
+		p.as = "markdown"
+	case p.as != "":
+	case slices.Contains(p.formats, end):
+		p.as = end
+	default:
+		p.as = "table"
+	}
+	if !slices.Contains(p.formats, p.as) {
+		return none, fmt.Errorf("--as %s is not known; %s", short(p.as), project.Offer(p.as, p.formats))
+	}
+	switch units := []string{"si", "ip"}; {
+	case !slices.Contains(units, p.units):
+		return none, fmt.Errorf("--units %s is not known; %s", short(p.units), project.OfferAll(p.units, units))
+	case p.units == "ip" && p.as == "json":
+		return none, fmt.Errorf("--units ip is not for JSON, whose keys name SI units; use --as csv or xlsx")
+	}
+	if p.figures != nil && len(p.figures) == 0 {
+		return none, fmt.Errorf("--figures names no figure; write light,g,u")
+	}
+	if p.as != "csv" {
+		for _, x := range []struct {
+			name string
+			set  bool
+		}{{"--separator", p.csv.separator != ""}, {"--decimal-comma", p.csv.decimalComma}, {"--units-row", p.csv.rows}} {
+			if x.set {
+				return none, fmt.Errorf("%s is for CSV; add --as csv", x.name)
+			}
+		}
+	}
+	sign, ok := separators[p.csv.separator]
+	if !ok {
+		return none, fmt.Errorf("--separator %s is not known; write comma, semicolon or tab", short(p.csv.separator))
+	}
+	if p.csv.decimalComma && (sign == 0 || sign == ',') {
+		return none, fmt.Errorf("--decimal-comma needs another sign between cells; add --separator semicolon")
+	}
+	return table.CSVForm{Separator: sign, DecimalComma: p.csv.decimalComma, UnitsRow: p.csv.rows}, nil
+}
+
+// terminal reports whether standard output is a terminal.
+func (s streams) terminal() bool {
+	out := s.out
+	if c, ok := out.(*checkedWriter); ok {
+		out = c.w
+	}
+	f, ok := out.(*os.File)
+	return ok && term.IsTerminal(int(f.Fd()))
 }
 
 // keepInputs refuses to write over the project or a file that it names.
@@ -131,9 +296,9 @@ func rate(path string, o selection) (table.Report, error) {
 	if len(o.bases) > 0 {
 		bases = nil
 		for _, name := range unique(o.bases) {
-			b, err := glazing.BasisNamed(name)
+			b, err := basisNamed(name)
 			if err != nil {
-				return r, fmt.Errorf("--basis: unknown basis %q; %s", short(name), project.OfferAll(name, glazing.BasisNames()))
+				return r, err
 			}
 			bases = append(bases, b)
 		}
@@ -142,13 +307,9 @@ func rate(path string, o selection) (table.Report, error) {
 	if len(o.makeups) > 0 {
 		makeups = nil
 		for _, id := range unique(o.makeups) {
-			m := p.Makeup(id)
-			if m == nil {
-				var known []string
-				for _, m := range p.Makeups {
-					known = append(known, m.ID)
-				}
-				return r, fmt.Errorf("--makeup: %s has no make-up %q; %s", path, short(id), project.Offer(id, known))
+			m, err := makeupNamed(p, id)
+			if err != nil {
+				return r, fmt.Errorf("--makeup: %w", err)
 			}
 			makeups = append(makeups, m)
 		}
@@ -186,6 +347,27 @@ func rate(path string, o selection) (table.Report, error) {
 		}
 	}
 	return r, nil
+}
+
+// basisNamed returns the basis that --basis names.
+func basisNamed(name string) (glazing.Basis, error) {
+	b, err := glazing.BasisNamed(name)
+	if err != nil {
+		return b, fmt.Errorf("--basis: unknown basis %q; %s", short(name), project.OfferAll(name, glazing.BasisNames()))
+	}
+	return b, nil
+}
+
+// makeupNamed returns the make-up of an id.
+func makeupNamed(p *project.Project, id string) (*glazing.Makeup, error) {
+	if m := p.Makeup(id); m != nil {
+		return m, nil
+	}
+	var known []string
+	for _, m := range p.Makeups {
+		known = append(known, m.ID)
+	}
+	return nil, fmt.Errorf("%s has no make-up %q; %s", p.File, short(id), project.Offer(id, known))
 }
 
 // unique returns a list without what stands in it before.

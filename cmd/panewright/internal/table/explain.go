@@ -41,7 +41,7 @@ func Explain(r Report) []byte {
 			writeWrapped(&b, "- "+c.Text, "  ")
 		}
 	}
-	fmt.Fprintf(&b, "\nPanewright %s, input sha256\n%s\n", r.Version, r.Project.Digest)
+	r.trace(&b)
 	return b.Bytes()
 }
 
@@ -59,6 +59,9 @@ func chapter(b *bytes.Buffer, c glazing.Chapter) {
 	if c.Sum != nil {
 		weightedSum(b, c.Sum)
 	}
+	if c.Rows != nil {
+		smallTable(b, c.Rows)
+	}
 	for _, s := range c.Steps {
 		head := "  " + text.Pad(s.Symbol, 6, ' ') + " " + s.Meaning
 		if gap := Width - width(head) - width(s.Clause); gap > 1 {
@@ -73,6 +76,19 @@ func chapter(b *bytes.Buffer, c glazing.Chapter) {
 		}
 		writeWrapped(b, strings.TrimRight("         = "+result+" "+s.Unit, " "), "           ")
 	}
+}
+
+// smallTable prints rows under their heads.
+func smallTable(b *bytes.Buffer, r *glazing.Rows) {
+	var columns []column
+	for i, head := range r.Head {
+		var cells []string
+		for _, row := range r.Cells {
+			cells = append(cells, row[i])
+		}
+		columns = append(columns, newColumn(head, cells))
+	}
+	render(b, columns, 1, gutter)
 }
 
 // weightedSum prints the rows of a sum, two beside each other.

@@ -7,6 +7,7 @@ import (
 	"encoding/json"
 	"fmt"
 	"math"
+	"slices"
 	"strconv"
 	"strings"
 
@@ -17,6 +18,17 @@ import (
 // their keys, null where a figure is unknown, [] where a list is empty.
 func JSON(r Report) []byte {
 	top := newNode()
+	r.said(top)
+	ratings := top.at("ratings")
+	ratings.list = true
+	for i := range r.Ratings {
+		r.rating(ratings.at(strconv.Itoa(i)), i)
+	}
+	return top.bytes()
+}
+
+// said writes what the user says of the project, and what makes the page traceable.
+func (r Report) said(top *node) {
 	top.set(quoted(r.Version), "panewright")
 	top.set(quoted(r.Project.Title), "project")
 	for _, x := range []struct{ key, value string }{
@@ -27,15 +39,6 @@ func JSON(r Report) []byte {
 		}
 	}
 	top.set(quoted(r.Project.Digest), "input_sha256")
-	ratings := top.at("ratings")
-	ratings.list = true
-	for i := range r.Ratings {
-		r.rating(ratings.at(strconv.Itoa(i)), i)
-	}
-	var b bytes.Buffer
-	top.print(&b, 0)
-	b.WriteByte('\n')
-	return b.Bytes()
 }
 
 func (r Report) rating(n *node, i int) {
@@ -56,7 +59,7 @@ func (r Report) rating(n *node, i int) {
 		pane.set(strconv.FormatBool(p.Turned), "turned")
 		pane.set(quoted(string(p.Pane.Origin)), "origin")
 	}
-	for _, f := range r.Figures {
+	for _, f := range r.kinds() {
 		path := strings.Split(f.Key, ".")
 		if f.Per != glazing.PerMakeup {
 			list := n
@@ -77,9 +80,17 @@ func (r Report) rating(n *node, i int) {
 		}
 	}
 	if i < len(r.Spectra) {
-		spectra(n.at("spectra"), r.Spectra[i])
+		spectraLists(n.at("spectra"), r.Spectra[i])
 	}
-	n.at("balances").list = true
+	if r.Choices == nil {
+		n.at("balances").list = true
+	}
+	r.remarks(n, i)
+}
+
+// remarks writes the cautions of a rating, and what the user typed of its make-up.
+func (r Report) remarks(n *node, i int) {
+	rating := &r.Ratings[i]
 	cautions := n.at("cautions")
 	cautions.list = true
 	for k, c := range r.cautions(i) {
@@ -95,17 +106,36 @@ func (r Report) rating(n *node, i int) {
 	}
 }
 
+// kinds returns the figures that the report shows. A list stays whole in JSON, whichever of its
+// places were chosen, so that the position of a value tells which it is.
+func (r Report) kinds() []glazing.Figure {
+	if r.Choices == nil {
+		return r.Figures
+	}
+	var list []glazing.Figure
+	for _, c := range r.Choices {
+		if !slices.ContainsFunc(list, func(f glazing.Figure) bool { return f.Key == c.Key }) {
+			list = append(list, c.Figure)
+		}
+	}
+	return list
+}
+
 func leaf(f glazing.Figure, r *glazing.Rating, k int) string {
 	if f.Text != nil {
 		return quoted(f.Text(r, k))
 	}
-	if v := f.Value(r, k); v.Known {
+	return jsonValue(f.Value(r, k))
+}
+
+func jsonValue(v glazing.Value) string {
+	if v.Known {
 		return figure(v.Number)
 	}
 	return "null"
 }
 
-func spectra(n *node, s glazing.Spectra) {
+func spectraLists(n *node, s glazing.Spectra) {
 	n.set(figures(s.WavelengthNM), "wavelength_nm")
 	n.set(figures(s.T), "tau")
 	n.set(figures(s.RhoOutside), "rho_outside")
@@ -144,7 +174,15 @@ func (n *node) set(value string, path ...string) {
 	n.leaf = value
 }
 
-// print writes the node; lists of plain values stand on one line.
+// bytes returns the document whose top the node is.
+func (n *node) bytes() []byte {
+	var b bytes.Buffer
+	n.print(&b, 0)
+	b.WriteByte('\n')
+	return b.Bytes()
+}
+
+// print writes the node; a list of numbers stands on one line.
 func (n *node) print(b *bytes.Buffer, depth int) {
 	if n.leaf != "" {
 		b.WriteString(n.leaf)
@@ -157,7 +195,7 @@ func (n *node) print(b *bytes.Buffer, depth int) {
 	b.WriteString(opening)
 	inline := n.list
 	for _, key := range n.keys {
-		inline = inline && n.kids[key].leaf != "" && n.kids[key].leaf[0] != '['
+		inline = inline && n.kids[key].leaf != "" && n.kids[key].leaf[0] != '[' && n.kids[key].leaf[0] != '"'
 	}
 	for i, key := range n.keys {
 		if i > 0 {

@@ -28,15 +28,26 @@ func Schedule(r Report) []byte {
 	if len(r.Ratings) == 0 {
 		b.WriteString("\nNo make-up to rate.\n")
 	}
-	for _, name := range r.bases() {
-		r.block(&b, name)
+	if r.InchPound {
+		b.WriteByte('\n')
+		writeWrapped(&b, siRemains, "")
+	}
+	for _, x := range r.editions() {
+		b.WriteByte('\n')
+		writeWrapped(&b, "Basis "+x.basis+": "+x.editions, "  ")
+		r.block(&b, x.basis)
 	}
 	r.buildUps(&b)
 	r.origins(&b)
-	r.symbols(&b)
+	r.symbols(&b, r.columns())
 	r.cautionList(&b)
-	fmt.Fprintf(&b, "\nPanewright %s, input sha256\n%s\n", r.Version, r.Project.Digest)
+	r.trace(&b)
 	return b.Bytes()
+}
+
+// trace prints what makes a page traceable.
+func (r Report) trace(b *bytes.Buffer) {
+	fmt.Fprintf(b, "\nPanewright %s, input sha256\n%s\n", r.Version, r.Project.Digest)
 }
 
 // heading prints what the user says of the project.
@@ -57,16 +68,17 @@ func heading(b *bytes.Buffer, r Report) {
 	}
 }
 
-// column is one column of the schedule, already printed.
+// column is one column of a table, already printed.
 type column struct {
 	head  string
 	cells []string
 	width int
+	right bool // aligned to the right even where it names the rows
 }
 
 func newColumn(head string, cells []string) column {
-	c := column{head, cells, width(head)}
-	for _, cell := range cells {
+	c := column{head: head, cells: cells}
+	for _, cell := range append([]string{head}, cells...) {
 		for line := range strings.SplitSeq(cell, "\n") {
 			c.width = max(c.width, width(line))
 		}
@@ -82,8 +94,6 @@ func (r Report) block(b *bytes.Buffer, basis string) {
 			rows = append(rows, &r.Ratings[i])
 		}
 	}
-	b.WriteByte('\n')
-	writeWrapped(b, "Basis "+basis+": "+rows[0].Method.Editions(), "  ")
 	var ids, tints []string
 	tinted := false
 	for _, row := range rows {
@@ -96,13 +106,19 @@ func (r Report) block(b *bytes.Buffer, basis string) {
 		names = append(names, newColumn("tint", tints))
 	}
 	var figures []column
-	for _, f := range r.columns() {
+	for _, c := range r.columns() {
 		var cells []string
 		for _, row := range rows {
-			cells = append(cells, f.Print(row, 0))
+			cells = append(cells, c.printed(row))
 		}
-		figures = append(figures, newColumn(f.Symbol, cells))
+		figures = append(figures, newColumn(c.Head(), cells))
 	}
+	fold(b, names, figures)
+}
+
+// fold prints columns beside those that name the rows, in several tables where one is wider than
+// the page.
+func fold(b *bytes.Buffer, names, figures []column) {
 	total := -gutter
 	for _, c := range append(slices.Clone(names), figures...) {
 		total += c.width + gutter
@@ -129,15 +145,6 @@ func (r Report) block(b *bytes.Buffer, basis string) {
 // gutter is the space between columns; where a table fits only so, it is 1.
 const gutter = 2
 
-// columns returns the figures that the schedule shows, in their places.
-func (r Report) columns() []glazing.Figure {
-	list := slices.DeleteFunc(slices.Clone(r.Figures), func(f glazing.Figure) bool {
-		return f.Column == 0 || f.Per != glazing.PerMakeup
-	})
-	slices.SortStableFunc(list, func(a, b glazing.Figure) int { return a.Column - b.Column })
-	return list
-}
-
 // render prints columns side by side; those after the names are right-aligned.
 func render(b *bytes.Buffer, columns []column, names, space int) {
 	t := pretty.NewWriter()
@@ -152,7 +159,7 @@ func render(b *bytes.Buffer, columns []column, names, space int) {
 	for i, c := range columns {
 		head = append(head, c.head)
 		align := text.AlignRight
-		if i < names {
+		if i < names && !c.right {
 			align = text.AlignLeft
 		}
 		configs = append(configs, pretty.ColumnConfig{Number: i + 1, Align: align, AlignHeader: align})
@@ -171,42 +178,62 @@ func render(b *bytes.Buffer, columns []column, names, space int) {
 	}
 }
 
+// buildUp returns the sequence of a make-up in the units of the page.
+func (r Report) buildUp(m *glazing.Makeup) string {
+	if r.InchPound {
+		return m.BuildUpInches()
+	}
+	return m.BuildUp()
+}
+
+// makeups returns each make-up once.
+func (r Report) makeups() (list []*glazing.Makeup) {
+	for i := range r.Ratings {
+		if m := r.Ratings[i].Makeup; !slices.Contains(list, m) {
+			list = append(list, m)
+		}
+	}
+	return list
+}
+
+// called returns id and title of a make-up, and its tilt where it is not vertical.
+func called(m *glazing.Makeup) string {
+	s := m.ID
+	if m.Title != "" {
+		s += " " + m.Title
+	}
+	if !m.Tilt.Vertical() {
+		s += fmt.Sprintf(" (tilt %.6g°)", m.Tilt.Degrees())
+	}
+	return s
+}
+
 // buildUps prints each make-up once: title, sequence, what the user typed.
 func (r Report) buildUps(b *bytes.Buffer) {
-	var done []*glazing.Makeup
-	for i := range r.Ratings {
-		m := r.Ratings[i].Makeup
-		if slices.Contains(done, m) {
-			continue
-		}
-		if done == nil {
+	for i, m := range r.makeups() {
+		if i == 0 {
 			b.WriteString("\nMake-ups, from outside to inside\n")
 		}
-		done = append(done, m)
-		title := m.ID
-		if m.Title != "" {
-			title += " " + m.Title
-		}
-		if !m.Tilt.Vertical() {
-			title += fmt.Sprintf(" (tilt %.6g°)", m.Tilt.Degrees())
-		}
-		writeWrapped(b, title, "    ")
-		writeWrapped(b, "    "+m.BuildUp(), "    ")
+		writeWrapped(b, called(m), "    ")
+		writeWrapped(b, "    "+r.buildUp(m), "    ")
 		for _, t := range m.Typed {
 			writeWrapped(b, "    typed by the user: "+t.Name+": "+t.Text, "    ")
 		}
 	}
 }
 
-// origins prints where the spectra come from.
-func (r Report) origins(b *bytes.Buffer) {
+// originNames are the origins of spectra, in the order in which they are printed.
+var originNames = []glazing.Origin{glazing.MeasuredOrigin, glazing.ModelledOrigin, glazing.InventedOrigin}
+
+// spectraBy returns where the spectra come from, with the panes of each origin.
+func (r Report) spectraBy() string {
 	var parts []string
-	for _, o := range []glazing.Origin{glazing.MeasuredOrigin, glazing.ModelledOrigin, glazing.InventedOrigin} {
+	for _, o := range originNames {
 		var ids []string
-		for i := range r.Ratings {
-			for _, p := range r.Ratings[i].Makeup.Panes {
-				if p.Pane.Origin == o && !slices.Contains(ids, p.Pane.ID) {
-					ids = append(ids, p.Pane.ID)
+		for _, m := range r.makeups() {
+			for _, p := range m.Panes {
+				if p.Pane.Origin == o {
+					ids = add(ids, p.Pane.ID)
 				}
 			}
 		}
@@ -214,31 +241,59 @@ func (r Report) origins(b *bytes.Buffer) {
 			parts = append(parts, string(o)+": "+strings.Join(ids, ", "))
 		}
 	}
-	if parts != nil {
+	return strings.Join(parts, "; ")
+}
+
+// origins prints where the spectra come from.
+func (r Report) origins(b *bytes.Buffer) {
+	if s := r.spectraBy(); s != "" {
 		b.WriteString("\nSpectra\n")
-		writeWrapped(b, strings.Join(parts, "; "), "  ")
+		writeWrapped(b, s, "  ")
 	}
+}
+
+// legend returns what the symbols of columns mean; places that follow each other stand together.
+func legend(columns []Choice, ratings []glazing.Rating) []string {
+	var parts []string
+	blank := false
+	for len(columns) > 0 {
+		n := 1
+		for n < len(columns) && columns[n].Key == columns[0].Key && columns[n].Index == columns[0].Index+n {
+			n++
+		}
+		first, last := columns[0], columns[n-1]
+		s := first.Head() + " " + first.About()
+		if n > 1 {
+			s = fmt.Sprintf("%s to %s %s, %ss %d to %d", first.Head(), last.Head(), first.Meaning, placeNames[first.Per], first.Index+1, last.Index+1)
+		}
+		if first.Unit != "" {
+			s += ", " + first.Unit
+		}
+		parts = append(parts, s)
+		for i := range ratings {
+			blank = blank || !last.in(&ratings[i])
+		}
+		columns = columns[n:]
+	}
+	parts = append(parts, "– not known")
+	if blank {
+		parts = append(parts, "blank: there is no such pane, gap or surface")
+	}
+	return parts
 }
 
 // symbols prints what the columns mean.
-func (r Report) symbols(b *bytes.Buffer) {
+func (r Report) symbols(b *bytes.Buffer, columns []Choice) {
 	if len(r.Ratings) == 0 {
 		return
 	}
-	var parts []string
-	for _, f := range r.columns() {
-		s := f.Symbol + " " + f.Meaning
-		if f.Unit != "" {
-			s += ", " + f.Unit
-		}
-		parts = append(parts, s)
-	}
 	b.WriteString("\nSymbols\n")
-	writeWrapped(b, strings.Join(parts, "; ")+"; – not known.", "")
+	writeWrapped(b, strings.Join(legend(columns, r.Ratings), "; ")+".", "")
 }
 
-// cautionList prints each caution once, with the ratings it belongs to where these are not all.
-func (r Report) cautionList(b *bytes.Buffer) {
+// cautionsOnce returns the text of each caution once, with the ratings it belongs to where these
+// are not all; what holds for all comes first. The editions stand elsewhere.
+func (r Report) cautionsOnce() []string {
 	type entry struct {
 		glazing.Caution
 		of []int
@@ -247,7 +302,7 @@ func (r Report) cautionList(b *bytes.Buffer) {
 	for i := range r.Ratings {
 		for _, c := range r.cautions(i) {
 			if c.Code == "edition" {
-				continue // stands above each table
+				continue
 			}
 			at := slices.IndexFunc(list, func(e *entry) bool { return e.Caution == c })
 			if at < 0 {
@@ -257,20 +312,24 @@ func (r Report) cautionList(b *bytes.Buffer) {
 			list[at].of = append(list[at].of, i)
 		}
 	}
-	if list == nil {
-		return
-	}
-	b.WriteString("\nCautions\n")
-	for _, all := range []bool{true, false} { // what holds for all comes first
-		for _, e := range list {
-			switch {
-			case all != (len(e.of) == len(r.Ratings)):
-			case all:
-				writeWrapped(b, "- "+e.Text, "  ")
-			default:
-				writeWrapped(b, "- "+e.Text+" ["+r.names(e.of)+"]", "  ")
-			}
+	var ofAll, ofSome []string
+	for _, e := range list {
+		if len(e.of) == len(r.Ratings) {
+			ofAll = append(ofAll, e.Text)
+		} else {
+			ofSome = append(ofSome, e.Text+" ["+r.names(e.of)+"]")
 		}
+	}
+	return append(ofAll, ofSome...)
+}
+
+// cautionList prints the cautions.
+func (r Report) cautionList(b *bytes.Buffer) {
+	for i, text := range r.cautionsOnce() {
+		if i == 0 {
+			b.WriteString("\nCautions\n")
+		}
+		writeWrapped(b, "- "+text, "  ")
 	}
 }
 
@@ -310,9 +369,9 @@ func (r Report) names(of []int) string {
 		if len(bases) < len(r.bases()) {
 			name += " under " + strings.Join(bases, " + ")
 		}
-		parts = append(parts, name)
+		parts = add(parts, name)
 	}
-	return strings.Join(slices.Compact(parts), ", ")
+	return strings.Join(parts, ", ")
 }
 
 // writeWrapped writes text folded at the page's width, with an indent for the lines after the

@@ -1,5 +1,6 @@
-// Package table prints ratings as text of 80 columns and as JSON, both from the list of figures:
-// a figure that stands in the list appears here without another edit.
+// Package table prints ratings as text of 80 columns, JSON, CSV, XLSX and Markdown, and compares
+// them, all from the list of figures: a figure that stands in the list appears here without another
+// edit.
 package table
 
 import (
@@ -16,7 +17,13 @@ type Report struct {
 	Figures []glazing.Figure
 	Ratings []glazing.Rating
 	Spectra []glazing.Spectra // one a rating, or none
+	// Choices are the figures that are shown, in order; nil for what each output shows by itself.
+	Choices   []Choice
+	InchPound bool // figures and build-ups are printed in inch-pound units; JSON and explain never are
 }
+
+// siRemains is printed where figures are in inch-pound units.
+const siRemains = "Figures are in inch-pound units. Coefficients that stand with editions, cautions and what was put in stay in SI."
 
 // bases returns the names of the bases in the order in which they occur.
 func (r Report) bases() []string {
@@ -27,6 +34,21 @@ func (r Report) bases() []string {
 		}
 	}
 	return names
+}
+
+// named is a basis with its editions and coefficients.
+type named struct{ basis, editions string }
+
+// editions returns those of each basis.
+func (r Report) editions() (list []named) {
+	for i := range r.Ratings {
+		m := r.Ratings[i].Method
+		x := named{m.Basis.Name, m.Editions()}
+		if !slices.ContainsFunc(list, func(y named) bool { return y.basis == x.basis }) {
+			list = append(list, x)
+		}
+	}
+	return list
 }
 
 // cautions returns those of one rating, with that of a page of several bases where it applies.

@@ -63,6 +63,41 @@ func TestAddedFigureAppears(t *testing.T) {
 			t.Errorf("explain lacks %q", want)
 		}
 	}
+	sheet, err := CSV(r, CSVForm{UnitsRow: true})
+	if err != nil {
+		t.Fatal(err)
+	}
+	compared, err := CompareCSV(r, CSVForm{})
+	if err != nil {
+		t.Fatal(err)
+	}
+	file := openXLSX(t, r)
+	for name, tt := range map[string]struct {
+		out   string
+		wants []string
+	}{
+		"CSV":                  {string(sheet), []string{"invented.figure", "panes_invented.2", ",7.125,", ",furlong,"}},
+		"XLSX":                 {fmt.Sprint(rowsOf(t, file, "en")), []string{" invented.figure ", " panes_invented.2 ", " 7.125 ", " furlong "}},
+		"XLSX, about":          {fmt.Sprint(rowsOf(t, file, aboutSheet)), []string{"Xq: an invented figure, furlong", "Yq2: one a pane, pane 2"}},
+		"Markdown":             {string(Markdown(r)), []string{"| Xq |", "| 7.125 |", "- Xq an invented figure, furlong"}},
+		"comparison":           {strings.Join(strings.Fields(string(Compare(r))), " "), []string{"Xq", "7.125", "Xq an invented figure, furlong"}},
+		"comparison, JSON":     {string(CompareJSON(r)), []string{`"invented.figure": 7.125`, `"invented.figure": 0`, `"panes_invented.1": null`}},
+		"comparison, CSV":      {string(compared), []string{"invented.figure", "difference.invented.figure"}},
+		"comparison, Markdown": {string(CompareMarkdown(r)), []string{"| Xq | furlong | 7.125 |"}},
+	} {
+		for _, want := range tt.wants {
+			if !strings.Contains(tt.out, want) {
+				t.Errorf("%s lacks %q", name, want)
+			}
+		}
+	}
+	chosen := r
+	if err := chosen.Choose([]string{"inv", "panes_invented.2"}); err != nil {
+		t.Fatal(err)
+	}
+	if out := string(Schedule(chosen)); !strings.Contains(out, "Xq") || !strings.Contains(out, "Yq2") || strings.Contains(out, "τv") {
+		t.Errorf("chosen, the schedule is\n%s", out)
+	}
 	var doc struct {
 		Ratings []struct {
 			Invented struct{ Figure float64 }
@@ -171,7 +206,7 @@ func TestWidth(t *testing.T) {
 	long.Title = strings.Repeat("word ", 40) + strings.Repeat("x", 200)
 	r.Ratings[0].Makeup = &long
 	r.Ratings[0].Tint = strings.Repeat("tint/", 30)
-	for name, out := range map[string][]byte{"schedule": Schedule(r), "explain": Explain(r)} {
+	for name, out := range map[string][]byte{"schedule": Schedule(r), "explain": Explain(r), "comparison": Compare(r)} {
 		for i, line := range strings.Split(string(out), "\n") {
 			if w := text.StringWidth(line); w > Width {
 				t.Errorf("%s, line %d: %d columns: %s", name, i+1, w, line)
@@ -299,7 +334,11 @@ func (p *parser) take(prefix string) bool {
 }
 
 func (p *parser) sum() float64 {
-	v := p.product()
+	sign := 1.0
+	if p.take("-") {
+		sign = -1
+	}
+	v := sign * p.product()
 	for {
 		switch {
 		case p.take("+"):

@@ -1,0 +1,163 @@
+package glazing
+
+// Two ratings side by side: how far their figures and colours lie apart, and what differs in what
+// was put in.
+
+import (
+	"fmt"
+	"slices"
+
+	"panewright/spectra/colour"
+)
+
+// A Comparison is what tells a rating, the option, from another, the reference.
+type Comparison struct {
+	Reference, Option *Rating
+	// CIEDE2000 of the colours for the 2° observer (ISO/CIE 11664-6); unknown where a colour is.
+	Transmitted, ReflectedOutside, ReflectedInside Value
+	// Inputs are sentences: each says one thing in which what was put in differs.
+	Inputs []string
+}
+
+// Compare compares an option with a reference.
+func Compare(reference, option *Rating) Comparison {
+	return Comparison{
+		Reference: reference, Option: option,
+		Transmitted:      colourDifference(reference.Transmitted, option.Transmitted),
+		ReflectedOutside: colourDifference(reference.Outside, option.Outside),
+		ReflectedInside:  colourDifference(reference.Inside, option.Inside),
+		Inputs:           inputDifferences(reference, option),
+	}
+}
+
+// Difference returns by how much a figure of the option, at a pane, gap or surface counted from 0,
+// is above that of the reference, unrounded; unknown where one of them is, or has no such place.
+func (c Comparison) Difference(f Figure, i int) Value {
+	if f.Value == nil {
+		return unknown("not a number")
+	}
+	var v [2]Value
+	for k, r := range []*Rating{c.Reference, c.Option} {
+		if i >= f.Count(r) {
+			return unknown(r.Makeup.ID + " has none")
+		}
+		if v[k] = f.Value(r, i); !v[k].Known {
+			return v[k]
+		}
+	}
+	return known(v[1].Number - v[0].Number)
+}
+
+func colourDifference(a, b Colours) Value {
+	for _, c := range []Colours{a, b} {
+		if c.Why != "" {
+			return unknown(c.Why)
+		}
+	}
+	return known(colour.Lab.CIEDE2000(a.TwoDegree, b.TwoDegree))
+}
+
+// none stands in a sentence for what one of two make-ups does not have.
+const none = "none"
+
+// inputDifferences says what of the option's input is not as in the reference's.
+func inputDifferences(reference, option *Rating) []string {
+	out := []string{}
+	differ := func(what, is, was string) {
+		if is != was {
+			out = append(out, fmt.Sprintf("%s: %s instead of %s.", what, is, was))
+		}
+	}
+	a, b := reference.Makeup, option.Makeup
+	differ("Basis", option.Method.Basis.Name, reference.Method.Basis.Name)
+	if reference.Method.Basis.Name == option.Method.Basis.Name {
+		differ("Editions and coefficients", option.Method.Editions(), reference.Method.Editions())
+	}
+	for k := range max(len(a.Panes), len(b.Panes)) {
+		what := fmt.Sprintf("Pane %d", k+1)
+		was, is := a.paneInput(k), b.paneInput(k)
+		differ(what, is, was)
+		if is == none || was == none {
+			continue
+		}
+		differ(what, turnedInput(b.Panes[k]), turnedInput(a.Panes[k]))
+		differ(what+", tint", option.tintInput(k), reference.tintInput(k))
+	}
+	for k := range max(len(a.Gaps), len(b.Gaps)) {
+		what := fmt.Sprintf("Gap %d", k+1)
+		if k >= len(a.Gaps) || k >= len(b.Gaps) {
+			differ(what, b.gapInput(k), a.gapInput(k))
+			continue
+		}
+		differ(what, millimetres(b.Gaps[k].WidthMM), millimetres(a.Gaps[k].WidthMM))
+		differ(what, b.Gaps[k].Gas.String(), a.Gaps[k].Gas.String())
+	}
+	differ("Tilt", fmt.Sprintf("%.6g°", b.Tilt.Degrees()), fmt.Sprintf("%.6g°", a.Tilt.Degrees()))
+	if !a.Tilt.Vertical() || !b.Tilt.Vertical() {
+		differ("Heat flow", flowNames[b.HeatFlow], flowNames[a.HeatFlow])
+	}
+	for k := range min(len(reference.Surfaces), len(option.Surfaces)) {
+		differ(fmt.Sprintf("Emissivity of surface %d", k+1), option.emissivityInput(k), reference.emissivityInput(k))
+	}
+	var names []string
+	for _, t := range slices.Concat(a.Typed, b.Typed) {
+		if !slices.Contains(names, t.Name) {
+			names = append(names, t.Name)
+			differ("Typed by the user, "+t.Name, orNone(b.TypedText(t.Name)), orNone(a.TypedText(t.Name)))
+		}
+	}
+	return out
+}
+
+var flowNames = map[HeatFlow]string{FlowUp: "up", FlowDown: "down"}
+
+func orNone(s string) string {
+	if s == "" {
+		return none
+	}
+	return s
+}
+
+// TypedText returns the value of a name that the user typed, or "".
+func (m *Makeup) TypedText(name string) string {
+	for _, t := range m.Typed {
+		if t.Name == name {
+			return t.Text
+		}
+	}
+	return ""
+}
+
+func (m *Makeup) paneInput(k int) string {
+	if k >= len(m.Panes) {
+		return none
+	}
+	p := m.Panes[k].Pane
+	return fmt.Sprintf("%s (%s)", p.ID, millimetres(p.ThicknessMM()))
+}
+
+func turnedInput(p Placed) string {
+	if p.Turned {
+		return "turned"
+	}
+	return "not turned"
+}
+
+// tintInput returns the tint that a pane has in the rating.
+func (r *Rating) tintInput(k int) string {
+	return orNone(r.Makeup.Panes[k].Pane.Tints[r.Ready.States[r.State].Tints[k]].Name)
+}
+
+func (m *Makeup) gapInput(k int) string {
+	if k >= len(m.Gaps) {
+		return none
+	}
+	return millimetres(m.Gaps[k].WidthMM) + " " + m.Gaps[k].Gas.String()
+}
+
+func (r *Rating) emissivityInput(k int) string {
+	if v := r.Surfaces[k].Corrected; v.Known {
+		return fmt.Sprintf("%.4g", v.Number)
+	}
+	return "not known"
+}
