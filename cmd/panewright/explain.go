@@ -17,11 +17,14 @@ func newExplain(s streams) *cobra.Command {
 		Use:                   "explain PROJECT --makeup ID [options]",
 		DisableFlagsInUseLine: true,
 		Short:                 "Show the calculation of a make-up, every number put in",
-		Long: `Prints every intermediate of the U-value, of g and of one weighted sum, in the
-order of a hand calculation: symbol, formula, the formula with the numbers put
-in, value, unit and clause. Without --tint, a make-up that switches is shown in
-its first tint.`,
+		Long: `Prints what leads to every figure, in the order of a hand calculation: symbol,
+formula, the formula with the numbers put in, value, unit and clause. One
+weighted sum is written out row by row; of the others the two sums are given.
+Then come U of lower gas fills, and how U and g change with emissivities, fills
+and widths of gaps. Without --tint, a make-up that switches is shown in its
+first tint.`,
 		Example: `  panewright explain panewright-demo/project.yaml --makeup D1
+  panewright explain panewright-demo/project.yaml --makeup D1 --basis en,iso
   panewright explain panewright-demo/project.yaml --makeup E1 --tint full`,
 		Args: oneProject,
 		RunE: func(_ *cobra.Command, args []string) error {

@@ -5,12 +5,16 @@ import (
 	"go/token"
 	"io/fs"
 	"os"
+	"os/exec"
 	"path"
 	"path/filepath"
+	"regexp"
 	"slices"
 	"strconv"
 	"strings"
 	"testing"
+
+	"panewright/reference"
 )
 
 const module = "panewright/"
@@ -117,6 +121,20 @@ func TestTopLevel(t *testing.T) {
 			return ok && err == nil
 		}) {
 			t.Errorf("%s does not belong at the top level of the repository", e.Name())
+		}
+	}
+}
+
+// TestNoticesNameEveryModule holds the notices against the modules that the program is built from.
+func TestNoticesNameEveryModule(t *testing.T) {
+	out, err := exec.Command("go", "list", "-deps", "-f", "{{with .Module}}{{if not .Main}}{{.Path}}{{end}}{{end}}", ".").Output()
+	if err != nil {
+		t.Fatal(err)
+	}
+	notices := reference.Notices()
+	for _, path := range slices.Compact(slices.Sorted(strings.FieldsSeq(string(out)))) {
+		if !regexp.MustCompile(`(?m)^\|.*\b` + regexp.QuoteMeta(path) + `( |,)`).MatchString(notices) {
+			t.Errorf("reference/NOTICES.md does not name %s", path)
 		}
 	}
 }

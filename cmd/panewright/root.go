@@ -15,9 +15,7 @@ import (
 	"github.com/spf13/cobra"
 	"github.com/spf13/pflag"
 
-	"panewright/glazing"
 	"panewright/glazing/project"
-	"panewright/reference"
 	"panewright/spectra"
 )
 
@@ -40,6 +38,9 @@ func run(args []string, s streams) int {
 	s.out = out
 	root := newRoot(s)
 	root.SetArgs(args)
+	if len(args) > 0 && strings.HasPrefix(args[0], cobra.ShellCompRequestCmd) {
+		root.SetErr(io.Discard) // what a shell asks for by the way is answered on standard output alone
+	}
 	err := root.Execute()
 	if failed := out.failure(); failed != nil {
 		err = failed // the command library ignores it when it prints help
@@ -83,10 +84,12 @@ declaration. Local authorities and licensed practitioners decide.`,
 	root.SetOut(s.out)
 	root.SetErr(s.err)
 	root.CompletionOptions.DisableDefaultCmd = true
-	root.SetUsageTemplate(usage)
+	root.SetUsageTemplate(usage + "{{if not .HasParent}}\nTopics, such as panewright help formats:\n" + topicList() + "\n{{end}}")
 	root.SetFlagErrorFunc(flagError)
-	root.AddCommand(newDemo(s), newRate(s), newExplain(s), newSchema(s))
+	root.AddCommand(newDemo(s), newRate(s), newCompare(s), newExplain(s), newSchema(s), newPanes(s), newSpectrum(s), newCompletion(s))
+	root.AddCommand(generators(s)...)
 	root.SetHelpCommand(newHelp())
+	addCompletions(root)
 	return root
 }
 
@@ -107,40 +110,6 @@ Options:
 {{.LocalFlags.FlagUsagesWrapped 80 | trimTrailingWhitespaces}}{{end}}
 `
 
-// newHelp is the command library's help, but for a command that does not exist.
-func newHelp() *cobra.Command {
-	return &cobra.Command{
-		Use:                   "help [COMMAND | notices | cautions]",
-		DisableFlagsInUseLine: true,
-		Short:                 "Print the help of a command, notices, or what cautions there are",
-		RunE: func(c *cobra.Command, args []string) error {
-			switch strings.Join(args, " ") {
-			case "notices":
-				_, err := io.WriteString(c.OutOrStdout(), reference.Notices())
-				return err
-			case "cautions":
-				for _, code := range glazing.CautionCodes() {
-					fmt.Fprintf(c.OutOrStdout(), "%-24s%s\n", code[0], code[1])
-				}
-				return nil
-			}
-			about, rest, err := c.Root().Find(args)
-			if err != nil || len(rest) > 0 {
-				return unknownCommand(c.Root(), args[0])
-			}
-			return about.Help()
-		},
-	}
-}
-
-func unknownCommand(root *cobra.Command, name string) error {
-	var known []string
-	for _, x := range root.Commands() {
-		known = append(known, x.Name())
-	}
-	return fmt.Errorf("unknown command %q; %s", short(name), project.Offer(name, known))
-}
-
 // flagError offers the options nearest to one that is not known.
 func flagError(c *cobra.Command, err error) error {
 	unknown, ok := errors.AsType[*pflag.NotExistError](err)
@@ -151,7 +120,7 @@ func flagError(c *cobra.Command, err error) error {
 	c.Flags().VisitAll(func(f *pflag.Flag) { known = append(known, "--"+f.Name) })
 	name := "--" + unknown.GetSpecifiedName()
 	if letters := unknown.GetSpecifiedShortnames(); letters != "" {
-		return fmt.Errorf("unknown option -%s; see panewright help %s", short(letters), c.Name())
+		return fmt.Errorf("unknown option -%s; see %s --help", short(letters), c.CommandPath())
 	}
 	return fmt.Errorf("unknown option %s; %s", short(name), project.Offer(name, known))
 }
