@@ -339,3 +339,17 @@ func TestJCAMPBounds(t *testing.T) {
 		t.Errorf("%v", err)
 	}
 }
+
+// A table that lacks every other ordinate is refused, and quickly.
+func TestJCAMPOfGaps(t *testing.T) {
+	var b strings.Builder
+	n := 4 * maxGaps
+	for i := range n {
+		fmt.Fprintf(&b, "%d, %s\n", 300+i, []string{"0.5", "?"}[i%2])
+	}
+	text := "##TITLE= holes\n##DATA TYPE= UV/VIS SPECTRUM\n##XUNITS= NM\n##YUNITS= TRANSMITTANCE\n##XYPOINTS= (XY..XY)\n" + b.String() + "##END=\n"
+	_, err := ReadJCAMP(strings.NewReader(text), "holes.jdx")
+	if err == nil || !strings.Contains(err.Error(), "missing (?) in more than 1000 places") {
+		t.Errorf("%v", err)
+	}
+}

@@ -223,6 +223,9 @@ func (b *jcampBlock) curve(out *Block, x []float64, yFactor float64) {
 			b.fail(line, nm, "this wavelength stands twice")
 		case last > 0 && (nm > c.NM[last]) != (c.NM[1] > c.NM[0]):
 			b.fail(line, nm, "x must ascend or descend throughout; the point before is at %s nm", short(c.NM[last]))
+		case lost > 0 && len(c.Gaps) == maxGaps:
+			b.fail(line, nm, "ordinates are missing (?) in more than %d places; that is no spectrum", maxGaps)
+			return
 		case lost > 0:
 			c.Gaps = append(c.Gaps, Span{min(nm, c.NM[last]), max(nm, c.NM[last])})
 		}

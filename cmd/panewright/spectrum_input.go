@@ -7,8 +7,6 @@ import (
 	"crypto/sha256"
 	"errors"
 	"fmt"
-	"io"
-	"io/fs"
 	"os"
 	"path/filepath"
 	"slices"
@@ -55,7 +53,7 @@ func (in *spectrumInput) add(arg string, layout *spectra.Layout) error {
 		return fmt.Errorf("unknown key %q in KEY=FILE; %s", short(before), project.OfferAll(before, spectrumKeys))
 	}
 	f.Name = spectra.Clip(filepath.Base(f.path), 60)
-	content, err := readSpectrumFile(f.path)
+	content, err := project.ReadFile(f.path, spectra.MaxBytes)
 	if err != nil {
 		return fmt.Errorf("%s: %w", f.path, err)
 	}
@@ -256,43 +254,4 @@ func eachLine(err error, before ...string) error {
 		list = append(list, x)
 	}
 	return list
-}
-
-// readSpectrumFile reads a regular file of bounded size. It is looked at before it is opened, for
-// opening a pipe would wait.
-func readSpectrumFile(path string) ([]byte, error) {
-	info, err := os.Stat(path)
-	switch {
-	case errors.Is(err, fs.ErrNotExist):
-		return nil, errors.New("there is no such file")
-	case err != nil:
-		return nil, reasonOf(err)
-	case info.IsDir():
-		return nil, errors.New("is a folder, not a file")
-	case !info.Mode().IsRegular():
-		return nil, errors.New("is not a regular file")
-	case info.Size() > spectra.MaxBytes:
-		return nil, fmt.Errorf("is larger than %d MB", spectra.MaxBytes>>20)
-	}
-	f, err := os.Open(path)
-	if err != nil {
-		return nil, reasonOf(err)
-	}
-	defer f.Close()
-	content, err := io.ReadAll(io.LimitReader(f, spectra.MaxBytes+1))
-	if err != nil {
-		return nil, reasonOf(err)
-	}
-	return content, nil
-}
-
-// reasonOf strips operation and path off an error of the file system.
-func reasonOf(err error) error {
-	if errors.Is(err, fs.ErrPermission) {
-		return errors.New("may not be read (permission denied)")
-	}
-	if pe, ok := errors.AsType[*fs.PathError](err); ok {
-		return pe.Err
-	}
-	return err
 }

@@ -33,6 +33,10 @@ type anywhere struct{}
 func (anywhere) Stat(name string) (fs.FileInfo, error) { return os.Stat(name) }
 func (anywhere) Open(name string) (*os.File, error)    { return os.Open(name) }
 
+// ReadFile reads a regular file of at most limit bytes, from anywhere. An error says what is wrong
+// with it, without its name.
+func ReadFile(path string, limit int64) ([]byte, error) { return readFile(anywhere{}, path, limit) }
+
 // readFile reads a regular file of at most limit bytes. It is looked at before it is opened, for
 // opening a pipe would wait.
 func readFile(in filePlace, path string, limit int64) ([]byte, error) {
