@@ -353,18 +353,19 @@ func reach(pane string, w spectra.Weighting, curves []spectra.Curve, cautions *[
 				pane, x.verb, x.at, x.which, x.table, w.Name, 100*x.share))
 		}
 	}
-	gaps := gapsOf(curves)
-	enough := w.Within(gaps) < endTolerance
-	for _, g := range gaps {
-		switch share := w.Within([]spectra.Span{g}); {
-		case share == 0:
-		case enough:
-			add("interpolated", fmt.Sprintf("The spectrum of pane %s has no values between %.6g and %.6g nm; it was interpolated there for %s (%.2g %% of the weight).",
-				pane, g.FromNM, g.ToNM, w.Name, 100*share))
-		default:
-			why := fmt.Sprintf("the spectrum of pane %s has no values between %.6g and %.6g nm, which %s needs", pane, g.FromNM, g.ToNM, w.Name)
-			first(&text, why)
-			add("missing_band", fmt.Sprintf("No figure for %s: %s.", w.Name, why))
+	for _, c := range curves {
+		enough := w.Within(c.Gaps) < endTolerance
+		for _, g := range c.Gaps {
+			switch share := w.Within([]spectra.Span{g}); {
+			case share == 0:
+			case enough:
+				add("interpolated", fmt.Sprintf("The spectrum of pane %s has no values between %.6g and %.6g nm; it was interpolated there for %s (%.2g %% of the weight).",
+					pane, g.FromNM, g.ToNM, w.Name, 100*share))
+			default:
+				why := fmt.Sprintf("the spectrum of pane %s has no values between %.6g and %.6g nm, which %s needs", pane, g.FromNM, g.ToNM, w.Name)
+				first(&text, why)
+				add("missing_band", fmt.Sprintf("No figure for %s: %s.", w.Name, why))
+			}
 		}
 	}
 	return text

@@ -124,6 +124,48 @@ func TestHemisphericalConverges(t *testing.T) {
 	}
 }
 
+// The emissivity over the half space agrees with plain sums over many more wavelengths and angles.
+func TestHemisphericalEmissivityConverges(t *testing.T) {
+	c, _ := film.Glass("soda-lime")
+	s := film.Sheet{Constants: c, ThicknessMM: 4}
+	const wavelengths, angles = 1500, 400
+	var sum, weights float64
+	for i := range wavelengths {
+		nm := 5000 + 45000*(float64(i)+0.5)/wavelengths
+		x := 1.438776877e7 / (nm * 283)
+		w := math.Pow(x, 5) / math.Expm1(x)
+		for k := range angles {
+			deg := 90 * (float64(k) + 0.5) / angles
+			f := s.At(nm, deg).Unpolarised()
+			v := w * math.Sin(2*deg*math.Pi/180)
+			sum += v * (1 - f.R - f.T)
+			weights += v
+		}
+	}
+	if got, ok := s.HemisphericalEmissivity(); !ok || math.Abs(got-sum/weights) > 5e-6 {
+		t.Errorf("%.6f, by plain sums %.6f", got, sum/weights)
+	}
+	// Constants that stop at 30 µm are held; at 20 µm they do not suffice.
+	short := func(last float64) film.Sheet {
+		n := len(c.N.NM)
+		for c.N.NM[n-1] > last {
+			n--
+		}
+		part := c
+		part.N, part.K = spectra.Curve{NM: c.N.NM[:n], Value: c.N.Value[:n]}, spectra.Curve{NM: c.K.NM[:n], Value: c.K.Value[:n]}
+		return film.Sheet{Constants: part, ThicknessMM: 4}
+	}
+	if got, ok := short(30000).HemisphericalEmissivity(); !ok || math.Abs(got-sum/weights) > 0.02 {
+		t.Errorf("constants to 30 µm: %.4f, %v", got, ok)
+	}
+	if m := short(30000).Spectrum(0); m.InfraredFront.Last() != 30000 || len(m.Cautions) != 2 || m.Cautions[1].Code != "extended" {
+		t.Errorf("constants to 30 µm: infrared to %g nm, %v", m.InfraredFront.Last(), m.Cautions)
+	}
+	if _, ok := short(20000).HemisphericalEmissivity(); ok {
+		t.Error("an emissivity from constants that end at 20 µm")
+	}
+}
+
 // A sheet's spectrum stands at every wavelength of the weightings, so that a weighted mean of it is
 // that of the formula itself.
 func TestSpectrumInterpolatesNowhere(t *testing.T) {
@@ -150,7 +192,7 @@ func TestSpectrumEndsWithTheConstants(t *testing.T) {
 	s := film.Sheet{Constants: film.Constants{N: spectra.Curve{NM: []float64{400, 900}, Value: []float64{1.5, 1.5}},
 		K: spectra.Curve{NM: []float64{400, 900}, Value: []float64{0, 0}}}, ThicknessMM: 6}
 	m := s.Spectrum(0)
-	if m.Tau.First() != 400 || m.Tau.Last() != 900 || m.InfraredFront.Len() != 0 || m.Cautions != nil {
+	if m.Tau.First() != 400 || m.Tau.Last() != 900 || m.InfraredFront.Len() != 0 || len(m.Cautions) != 1 || m.Cautions[0].Code != "coarse_steps" {
 		t.Errorf("from %g to %g nm, infrared %d, cautions %v", m.Tau.First(), m.Tau.Last(), m.InfraredFront.Len(), m.Cautions)
 	}
 	if _, ok := s.HemisphericalEmissivity(); ok {

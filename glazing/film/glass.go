@@ -78,11 +78,23 @@ func Glass(name string) (c Constants, ok bool) {
 // toNM converts a wavelength of few decimals in µm without a trace of binary rounding.
 func toNM(um float64) float64 { return math.Round(um*1e6) / 1e3 }
 
-// held says how far the constants were held beyond their first value, or returns "".
-func (c Constants) held() string {
+// infrared reports whether the constants reach far enough for an emissivity.
+func (c Constants) infrared() bool {
+	return c.FirstNM() <= spectra.InfraredFirstNM && c.LastNM() >= infraredLeastNM
+}
+
+// cautions say how far the constants were held beyond their points, and where those are far apart.
+func (c Constants) cautions() (list []spectra.Caution) {
 	if first := max(c.N.First(), c.K.First()); c.HeldFromNM > 0 && c.HeldFromNM < first {
-		return fmt.Sprintf("The optical constants of %s glass begin at %.6g nm (%s); their first value was held to %.6g nm.",
-			c.Name, first, c.Source, c.HeldFromNM)
+		list = append(list, spectra.Caution{Code: "extended", Text: fmt.Sprintf(
+			"The optical constants of %s glass begin at %.6g nm (%s); their first value was held to %.6g nm.", c.Name, first, c.Source, c.HeldFromNM)})
 	}
-	return ""
+	if last := c.LastNM(); c.infrared() && last < infraredLastNM {
+		list = append(list, spectra.Caution{Code: "extended", Text: fmt.Sprintf(
+			"The optical constants of %s stop at %.6g µm; for the emissivity their reflectance was held to 50 µm.", c.Name, last/1000)})
+	}
+	if text := spectra.CoarseSteps(c.N); text != "" && !c.SodaLime {
+		list = append(list, spectra.Caution{Code: "coarse_steps", Text: "The optical constants of " + c.Name + " have " + text})
+	}
+	return list
 }

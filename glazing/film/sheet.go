@@ -42,7 +42,7 @@ func (s Sheet) Hemispherical(wavelengthNM float64) Share {
 // hemisphere are angles and weights of the mean over the half space: Gauss and Legendre in θ, the
 // weights times sin 2θ.
 var hemisphere = sync.OnceValue(func() (h struct{ deg, weight []float64 }) {
-	const nodes = 24
+	const nodes = 16
 	theta, weight := make([]float64, nodes), make([]float64, nodes)
 	quad.Legendre{}.FixedLocations(theta, weight, 0, math.Pi/2)
 	for i, x := range theta {
@@ -69,23 +69,26 @@ func (s Sheet) spectrum(at func(nm float64) Share) spectra.Measured {
 	within := slices.DeleteFunc(slices.Clone(solarNM()), func(x float64) bool { return x < first || x > last })
 	tau, rho := shares(within, at)
 	m := spectra.Measured{Tau: tau, RhoFront: rho, RhoBack: rho}
-	if last >= infraredLastNM && first <= spectra.InfraredFirstNM {
-		through, back := shares(infraredNM(s.Constants.N.NM), at)
+	if s.Constants.infrared() {
+		far := slices.DeleteFunc(infraredNM(s.Constants.N.NM), func(x float64) bool { return x > last })
+		through, back := shares(far, at)
 		m.InfraredFront, m.InfraredBack = back, back
 		if slices.Max(through.Value) > opaque {
 			m.InfraredTau = through
 		}
 	}
-	if text := s.Constants.held(); text != "" {
-		m.Cautions = []spectra.Caution{{Code: "extended", Text: text}}
-	}
+	m.Cautions = s.Constants.cautions()
 	return m
 }
 
 // opaque is the transmittance below which a sheet passes nothing.
 const opaque = 1e-6
 
-const infraredLastNM = 50000
+// The end of the infrared that gives emissivity, and where constants may end that are held to it.
+const (
+	infraredLastNM  = 50000
+	infraredLeastNM = 25000
+)
 
 // shares samples a function into two curves.
 func shares(nm []float64, at func(nm float64) Share) (tau, rho spectra.Curve) {
@@ -119,20 +122,24 @@ func infraredNM(nm []float64) []float64 {
 }
 
 // HemisphericalEmissivity returns the emissivity at 283 K of a face over the half space: one less
-// the shares reflected and transmitted, weighted by Planck's law from 5 to 50 µm. ok is false
-// where the constants do not cover that range.
+// the shares reflected and transmitted, weighted by Planck's law from 5 to 50 µm. Constants that
+// stop at 25 µm or beyond are held; ok is false where they cover less.
 func (s Sheet) HemisphericalEmissivity() (emissivity float64, ok bool) {
-	if s.Constants.FirstNM() > spectra.InfraredFirstNM || s.Constants.LastNM() < infraredLastNM {
+	if !s.Constants.infrared() {
 		return 0, false
 	}
 	var sum, weights float64
 	nm := infraredNM(s.Constants.N.NM)
-	for i, x := range nm {
-		f := s.Hemispherical(x)
-		bin := (nm[min(i+1, len(nm)-1)] - nm[max(i-1, 0)]) / 2 // trapezoid rule
-		w := float64(bin * planck(x))
-		sum += float64(w * (1 - f.R - f.T))
-		weights += w
+	const points = 4 // of Gauss and Legendre between two neighbours, where the constants are linear
+	x, bin := make([]float64, points), make([]float64, points)
+	for i := 1; i < len(nm); i++ {
+		quad.Legendre{}.FixedLocations(x, bin, nm[i-1], nm[i])
+		for k := range x {
+			f := s.Hemispherical(x[k])
+			w := float64(bin[k] * planck(x[k]))
+			sum += float64(w * (1 - f.R - f.T))
+			weights += w
+		}
 	}
 	return sum / weights, true
 }

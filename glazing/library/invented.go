@@ -79,10 +79,10 @@ func of(v float64) glazing.Value { return glazing.Value{Number: v, Known: true} 
 // coat gives a pane of uncoated glass the spectra of its invented films.
 func (e Entry) coat(p *glazing.Pane) {
 	sheet, front := e.sheet(), p.Tints[0].Front
-	p.Origin, p.Tints = glazing.InventedOrigin, nil
+	p.Origin, p.Sheet, p.Tints = glazing.InventedOrigin, nil, nil
 	for _, t := range e.tints {
 		tint := t.film.behind(sheet, t.name)
-		tint.Front, tint.ChargeMCCM2, tint.TemperatureC = front, t.chargeMCCM2, t.celsius
+		tint.Front, tint.ChargeMCCM2, tint.TemperatureC, tint.Source = front, t.chargeMCCM2, t.celsius, "smooth made-up curves"
 		p.Tints = append(p.Tints, tint)
 	}
 }

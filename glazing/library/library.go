@@ -46,22 +46,6 @@ func (e Entry) sheet() film.Sheet {
 	return film.Sheet{Constants: c, ThicknessMM: e.mm}
 }
 
-// Sheet returns the sheet that an uncoated pane is.
-func (e Entry) Sheet() (s film.Sheet, ok bool) {
-	if e.tints != nil {
-		return s, false
-	}
-	return e.sheet(), true
-}
-
-// Source says where the pane's spectrum comes from.
-func (e Entry) Source() string {
-	if e.tints != nil {
-		return "smooth made-up curves"
-	}
-	return "optical constants: " + e.sheet().Constants.Source
-}
-
 // Pane makes the pane, anew.
 func (e Entry) Pane() *glazing.Pane {
 	p := Uncoated(e.ID, e.sheet())
@@ -105,6 +89,7 @@ func Uncoated(id string, s film.Sheet) *glazing.Pane {
 		Plies:         []glazing.Ply{{ThicknessMM: s.ThicknessMM, ConductivityWMK: glazing.GlassWMK, DensityKGM3: glazing.GlassKGM3}},
 		HeatTreatment: glazing.UnknownTreatment,
 		Origin:        glazing.ModelledOrigin,
-		Tints:         []glazing.Tint{{Spectrum: m, Front: face, Back: face}},
+		Sheet:         &s,
+		Tints:         []glazing.Tint{{Spectrum: m, Source: "optical constants of " + s.Constants.Name + " glass: " + s.Constants.Source, Front: face, Back: face}},
 	}
 }
