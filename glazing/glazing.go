@@ -29,6 +29,7 @@ import (
 	"slices"
 	"strings"
 
+	"panewright/glazing/film"
 	"panewright/spectra"
 	"panewright/thermal"
 )
@@ -87,7 +88,8 @@ type Pane struct {
 	HeatTreatment HeatTreatment
 	HeatSoaked    bool
 	Origin        Origin
-	Tints         []Tint // at least one; a pane that does not switch has one, with no name
+	Sheet         *film.Sheet // what an uncoated pane was computed from; nil of any other
+	Tints         []Tint      // at least one; a pane that does not switch has one, with no name
 	// TauInfrared is the transmittance in the thermal infrared, if the user gave it, of a sheet
 	// that is not opaque there. EN 673 cannot treat it: with such a pane U and g are unknown.
 	TauInfrared float64
@@ -108,6 +110,7 @@ type Tint struct {
 	ChargeMCCM2  Value // inserted charge density, mC/cm², if the user gave it
 	TemperatureC Value // of a thermochromic pane
 	Spectrum     spectra.Measured
+	Source       string // where the spectrum comes from: files, a paper
 	Front, Back  Emissivity
 }
 

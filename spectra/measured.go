@@ -77,7 +77,7 @@ func Join(c Columns, infraredFront, infraredBack Column) (Measured, error) {
 	}
 	m.Cautions = append(m.Cautions, bounded.cautions()...)
 	for _, col := range []Column{c.Tau, c.RhoFront, c.RhoBack} {
-		if text := coarse(col.solar()); text != "" {
+		if text := CoarseSteps(col.Curve); text != "" {
 			caution := Caution{"coarse_steps", col.File + ": " + text}
 			if !slices.Contains(m.Cautions, caution) {
 				m.Cautions = append(m.Cautions, caution)
@@ -215,8 +215,10 @@ func infrared(rho, own Column, face string, changed *rowList, cautions *[]Cautio
 	return c, nil
 }
 
-// coarse says where steps are too wide for the standards' tables, or returns "".
-func coarse(c Curve) string {
+// CoarseSteps says where the steps of a curve up to 2500 nm are too wide for the standards' tables,
+// or returns "".
+func CoarseSteps(c Curve) string {
+	c = c.solar()
 	var visible, beyond float64 // the widest steps
 	for i := 1; i < c.Len(); i++ {
 		step := c.NM[i] - c.NM[i-1]

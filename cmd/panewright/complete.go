@@ -149,10 +149,11 @@ var optionOffers = map[string]offer{
 	"spectra":              words("all\tthe wavelengths of the basis"),
 	"unit":                 always(spectra.LayoutUnits),
 	"columns":              always(layoutColumns),
+	"only":                 always(familiesAbout),
 }
 
 // optionEnds are the ends of the files that options name; none for files of any kind.
-var optionEnds = map[string][]string{"project": projectEnds, "output": {}}
+var optionEnds = map[string][]string{"project": projectEnds, "limits": projectEnds, "output": {}, "each": {}}
 
 // lists are the options whose values are mostly lists with commas: no blank follows an element.
 var lists = []string{"figures", "columns"}
@@ -166,10 +167,15 @@ var argumentOffers = map[string]cobra.CompletionFunc{
 	"man":        folder,
 	"rate":       projectThen(nil),
 	"explain":    projectThen(nil),
+	"section":    projectThen(nil),
+	"plot":       projectThen(nil),
+	"check":      projectThen(nil),
+	"sheet":      projectThen(nil),
 	"compare":    projectThen(makeupsAndTints),
 	"panes":      first(paneIDs),
 	"spectrum":   spectrumFiles,
 	"schema":     cobra.NoFileCompletions,
+	"verify":     cobra.NoFileCompletions,
 	"completion": first(always(func() []string { return shells })),
 }
 

@@ -39,6 +39,10 @@ of the project and stay in it, unless --files-anywhere is given.
                   heat_treatment: annealed, heat-strengthened, toughened
   makeups         id, title, tilt_deg, and outside_to_inside: panes (turned:,
                   tint:) and gaps (gap_mm, gas: shares that add to 1)
+  limits          figure; at_most or at_least, in the unit of the figure; tint:
+                  clear, full, each, worst or a name; scope, basis, makeups;
+                  source and date; panewright check holds figures against them
+  limits_file     YAML of limits: alone, which projects share
 
 Every key, with its bounds, is in the schema; editors complete from it:
 
@@ -82,4 +86,5 @@ EXIT CODES
   0               done
   1               an output could not be written
   2               wrong usage, or wrong input
+  3               not every limit that was checked is met
 `

@@ -12,7 +12,6 @@ import (
 
 	"panewright/cmd/panewright/internal/table"
 	"panewright/glazing"
-	"panewright/glazing/film"
 	"panewright/glazing/library"
 	"panewright/glazing/project"
 	"panewright/spectra"
@@ -181,16 +180,14 @@ func runPane(s streams, id string, o panesOptions) error {
 	if tint >= 0 {
 		r.Ratings = r.Ratings[tint : tint+1]
 	}
-	var view table.PaneView
+	view := table.PaneView{About: "a pane of " + o.project}
 	if entry != nil {
-		view.About, view.Source = entry.About, entry.Source()
-		if sheet, ok := entry.Sheet(); ok {
-			if view.Angles, err = from.angles(pane, sheet); err != nil {
-				return err
-			}
+		view.About = entry.About
+	}
+	if pane.Sheet != nil {
+		if view.Angles, err = from.angles(pane); err != nil {
+			return err
 		}
-	} else {
-		view.About, view.Source = "a pane of the project", from.project.Title
 	}
 	return s.write(o.output, table.Pane(r, view))
 }
@@ -224,8 +221,8 @@ func (s shelf) find(id, file string) (*library.Entry, *glazing.Pane, error) {
 	return nil, nil, fmt.Errorf("%s %q; %s", where, short(id), offer)
 }
 
-// angles rates a sheet at angles of incidence, and for radiation from the half space.
-func (s shelf) angles(p *glazing.Pane, sheet film.Sheet) ([]table.Angle, error) {
+// angles rates an uncoated pane at angles of incidence, and for radiation from the half space.
+func (s shelf) angles(p *glazing.Pane) ([]table.Angle, error) {
 	var out []table.Angle
 	rate := func(name string, m spectra.Measured) error {
 		turned := *p
@@ -238,11 +235,11 @@ func (s shelf) angles(p *glazing.Pane, sheet film.Sheet) ([]table.Angle, error) 
 		return err
 	}
 	for _, deg := range []float64{0, 30, 45, 60, 75, 85} {
-		if err := rate(fmt.Sprintf("%g°", deg), sheet.Spectrum(deg)); err != nil {
+		if err := rate(fmt.Sprintf("%g°", deg), p.Sheet.Spectrum(deg)); err != nil {
 			return nil, err
 		}
 	}
-	return out, rate("half space", sheet.HemisphericalSpectrum())
+	return out, rate("half space", p.Sheet.HemisphericalSpectrum())
 }
 
 // paneCSV writes the spectrum of a tint as a spectrum file; what of the pane it cannot hold stands
@@ -256,7 +253,14 @@ func paneCSV(p *glazing.Pane, tint int, e *library.Entry) ([]byte, error) {
 	}
 	comments := []string{title + ", " + string(p.Origin) + "; Panewright " + version}
 	if e != nil {
-		comments = append(comments, e.About+"; "+e.Source())
+		comments = append(comments, e.About)
+	}
+	comments = append(comments, "from "+t.Source)
+	if p.Origin != glazing.MeasuredOrigin {
+		comments = append(comments, "add to the pane: origin: "+string(p.Origin))
+	}
+	if len(p.Plies) == 1 {
+		comments = append(comments, fmt.Sprintf("add to the pane: thickness_mm: %v", p.ThicknessMM()))
 	}
 	front, back := m.InfraredFront, m.InfraredBack
 	for _, f := range []struct {

@@ -49,13 +49,18 @@ type page struct {
 }
 
 func (p *page) flags(c *cobra.Command, formats ...string) {
-	p.formats = formats
-	c.Flags().StringVar(&p.as, "as", "", "print as `FORMAT`: "+strings.Join(formats, ", ")+"; table when absent, or what the end of -o says")
+	p.formatFlags(c, formats...)
 	c.Flags().StringSliceVar(&p.figures, "figures", nil, "show the figures `NAME,NAME`, in this order")
 	c.Flags().StringVar(&p.units, "units", "si", "print figures in `UNITS`: si or ip (inch-pound)")
+	c.Flags().BoolVar(&p.csv.rows, "units-row", false, "with --as csv: a second row with the units")
+}
+
+// formatFlags are those of a page whose figures and units are settled.
+func (p *page) formatFlags(c *cobra.Command, formats ...string) {
+	p.formats, p.units = formats, "si"
+	c.Flags().StringVar(&p.as, "as", "", "print as `FORMAT`: "+strings.Join(formats, ", ")+"; table when absent, or what the end of -o says")
 	c.Flags().StringVar(&p.csv.separator, "separator", "", "with --as csv: `SIGN` between cells: comma, semicolon or tab (default comma)")
 	c.Flags().BoolVar(&p.csv.decimalComma, "decimal-comma", false, "with --as csv: write 0,25 for 0.25")
-	c.Flags().BoolVar(&p.csv.rows, "units-row", false, "with --as csv: a second row with the units")
 	outputFlag(c, &p.output)
 }
 
@@ -208,7 +213,7 @@ func (p *page) choose(r *table.Report) error {
 }
 
 // ends are the formats that the end of a file's name says.
-var ends = map[string]string{".json": "json", ".csv": "csv", ".xlsx": "xlsx", ".md": "markdown"}
+var ends = map[string]string{".json": "json", ".csv": "csv", ".xlsx": "xlsx", ".md": "markdown", ".pdf": "pdf"}
 
 // separators are what may stand between the cells of CSV, by name and as they are.
 var separators = map[string]rune{"": 0, "comma": ',', ",": ',', "semicolon": ';', ";": ';', "tab": '\t', "\t": '\t', `\t`: '\t'}
@@ -303,16 +308,9 @@ func rate(path string, o selection) (table.Report, error) {
 			bases = append(bases, b)
 		}
 	}
-	makeups := p.Makeups
-	if len(o.makeups) > 0 {
-		makeups = nil
-		for _, id := range unique(o.makeups) {
-			m, err := makeupNamed(p, id)
-			if err != nil {
-				return r, fmt.Errorf("--makeup: %w", err)
-			}
-			makeups = append(makeups, m)
-		}
+	makeups, err := o.makeupsOf(p)
+	if err != nil {
+		return r, err
 	}
 	var tints []string         // of all that was selected otherwise
 	found := map[string]bool{} // the tints asked for that there are
@@ -347,6 +345,22 @@ func rate(path string, o selection) (table.Report, error) {
 		}
 	}
 	return r, nil
+}
+
+// makeupsOf returns the make-ups that --makeup names, or all.
+func (o *selection) makeupsOf(p *project.Project) ([]*glazing.Makeup, error) {
+	if len(o.makeups) == 0 {
+		return p.Makeups, nil
+	}
+	var list []*glazing.Makeup
+	for _, id := range unique(o.makeups) {
+		m, err := makeupNamed(p, id)
+		if err != nil {
+			return nil, fmt.Errorf("--makeup: %w", err)
+		}
+		list = append(list, m)
+	}
+	return list, nil
 }
 
 // basisNamed returns the basis that --basis names.

@@ -25,8 +25,9 @@ const version = "0.1.0"
 // The exit codes.
 const (
 	exitDone   = 0
-	exitFailed = 1 // the work failed; an output could not be written
+	exitFailed = 1 // the work failed: an output could not be written, a published check is missed
 	exitUsage  = 2 // wrong usage or wrong input
+	exitNotMet = 3 // not every limit that was checked is met
 )
 
 // streams are where a command prints: results to out, all else to err.
@@ -49,8 +50,18 @@ func run(args []string, s streams) int {
 		return exitDone
 	}
 	report(s.err, err)
-	if _, failed := errors.AsType[*outputError](err); failed {
+	return exitOf(err)
+}
+
+// exitOf returns the exit code of an error.
+func exitOf(err error) int {
+	_, unwritten := errors.AsType[*outputError](err)
+	_, missed := errors.AsType[*missedError](err)
+	if unwritten || missed {
 		return exitFailed
+	}
+	if _, checked := errors.AsType[*notMetError](err); checked {
+		return exitNotMet
 	}
 	return exitUsage
 }
@@ -86,7 +97,7 @@ declaration. Local authorities and licensed practitioners decide.`,
 	root.CompletionOptions.DisableDefaultCmd = true
 	root.SetUsageTemplate(usage + "{{if not .HasParent}}\nTopics, such as panewright help formats:\n" + topicList() + "\n{{end}}")
 	root.SetFlagErrorFunc(flagError)
-	root.AddCommand(newDemo(s), newRate(s), newCompare(s), newExplain(s), newSchema(s), newPanes(s), newSpectrum(s), newCompletion(s))
+	root.AddCommand(newDemo(s), newRate(s), newCompare(s), newCheck(s), newExplain(s), newSection(s), newPlot(s), newSchema(s), newPanes(s), newSheet(s), newSpectrum(s), newVerify(s), newCompletion(s))
 	root.AddCommand(generators(s)...)
 	root.SetHelpCommand(newHelp())
 	addCompletions(root)

@@ -66,16 +66,16 @@ func (b *builder) project(s *fileSpec) *Project {
 		}
 	}
 	b.conditions(s.Conditions)
-	b.limits(s.Limits, s.Makeups)
+	b.limits(p, s)
 	for _, name := range []string{glazing.NA.Name, glazing.ISO15099.Name} {
 		if _, ok := s.Coefficients[name]; ok {
 			p.Cautions = append(p.Cautions, glazing.Caution{Code: "coefficients_not_used",
 				Text: "The coefficients given for " + name + " move nothing: U and g under it need the detailed heat balance, which this version does not have."})
 		}
 	}
-	if len(s.Limits) > 0 {
-		p.Cautions = append(p.Cautions, glazing.Caution{Code: "limits_not_checked",
-			Text: "The project's limits were read and not checked: this version does not check limits."})
+	if len(p.Limits) > 0 || p.LimitsFile != nil {
+		p.Cautions = append(p.Cautions, glazing.Caution{Code: LimitsNotChecked,
+			Text: "The project has limits, against which these figures are not held here: panewright check does that."})
 	}
 	if len(s.Conditions) > 0 {
 		p.Cautions = append(p.Cautions, glazing.Caution{Code: "conditions_not_rated",
@@ -245,8 +245,23 @@ func (b *builder) tint(s *tintSpec, faulty bool) (glazing.Tint, bool) {
 	if !ok {
 		return t, false
 	}
-	t.Spectrum = m
+	t.Spectrum, t.Source = m, s.files()
 	return t, b.faces(&t, [2]faceSpec{{s.EmissivityFront, s.NormalFront}, {s.EmissivityBack, s.NormalBack}})
+}
+
+// files lists the files of a tint's spectrum, each once.
+func (s *tintSpec) files() string {
+	names := []string{s.Spectrum.value}
+	if x := s.Spectra; x != nil {
+		names = []string{x.Tau.value, x.RhoFront.value, x.RhoBack.value, x.InfraredFront.value, x.InfraredBack.value}
+	}
+	var once []string
+	for _, name := range names {
+		if name != "" && !slices.Contains(once, name) {
+			once = append(once, name)
+		}
+	}
+	return strings.Join(once, ", ")
 }
 
 // faceSpec is what a pane or a tint says of the emissivity of a face.
@@ -364,39 +379,6 @@ func (b *builder) conditions(list []conditionSpec) {
 		}
 		if c.Wind.given && c.OutsideConvection.given {
 			b.fail(c.OutsideConvection.at, "outside_convection_w_m2k", "stands beside wind_m_s; give one")
-		}
-	}
-}
-
-// limits checks what the tags cannot.
-func (b *builder) limits(list []limitSpec, makeups []makeupSpec) {
-	var ids []string
-	for _, m := range makeups {
-		ids = append(ids, m.ID.value)
-	}
-	if len(list) == 0 {
-		return
-	}
-	figures := glazing.Figures()
-	for _, l := range list {
-		if l.Figure.given && !slices.ContainsFunc(figures, func(f glazing.Figure) bool { return f.Named(l.Figure.value) }) {
-			var known []string
-			for _, f := range figures {
-				known = append(known, f.Key, f.Alias)
-			}
-			b.fail(l.Figure.at, "figure", "unknown figure %q; %s", clip(l.Figure.value), Offer(l.Figure.value, known))
-		}
-		for _, m := range l.Makeups.values {
-			if !slices.Contains(ids, m.value) && !b.incomplete["id"] && !b.incomplete["makeups"] {
-				b.fail(m.at, "makeups", "unknown make-up %q; %s", clip(m.value), Offer(m.value, ids))
-			}
-		}
-		switch {
-		case l.Faulty:
-		case !l.AtMost.given && !l.AtLeast.given:
-			b.fail(l.At, "limits", "a limit has at_most or at_least")
-		case l.AtMost.given && l.AtLeast.given && l.AtMost.value < l.AtLeast.value:
-			b.fail(l.At, "limits", "at_most is below at_least; no figure can meet both")
 		}
 	}
 }

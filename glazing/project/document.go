@@ -1,6 +1,7 @@
 package project
 
-// What is checked of a project file before its keys are: that it is text, and YAML.
+// What is checked of a project file, or a limits file, before its keys are: that it is text, and
+// YAML.
 
 import (
 	"bytes"
@@ -20,26 +21,36 @@ import (
 // maxProjectBytes is the size beyond which a project file is refused.
 const maxProjectBytes = 16 << 20
 
-// parse reads the text of a project file.
-func (r *reader) parse(content []byte) (*fileSpec, bool) {
-	if at, problem := notText(content); problem != "" {
+// A kind is what a file is, for messages: with an article, and how it begins.
+type kind struct{ name, begins string }
+
+var (
+	aProject    = kind{"a project", "project: TITLE"}
+	aLimitsFile = kind{"a limits file", "limits:"}
+)
+
+// isEmpty says that a file of the kind holds nothing.
+func (k kind) isEmpty() string { return "is empty; " + k.name + " begins with " + k.begins }
+
+// parse reads the text of a file into a spec type. It returns false where nothing could be read.
+func (r *reader) parse(content []byte, into any) bool {
+	if at, problem := r.kind.notText(content); problem != "" {
 		r.fail(at, "", "%s", problem)
-		return nil, false
+		return false
 	}
 	var doc yaml.Node
 	if err := yaml.Load(joinSurrogates(content), &doc); err != nil {
-		r.fail(yamlFault(content, err))
-		return nil, false
+		r.fail(r.kind.yamlFault(content, err))
+		return false
 	}
 	if len(doc.Content) == 0 {
-		r.fail(position{}, "", "is empty; a project begins with project: TITLE")
-		return nil, false
+		r.fail(position{}, "", "%s", r.kind.isEmpty())
+		return false
 	}
-	var spec fileSpec
 	if r.plain(doc.Content[0], "") {
-		r.object(doc.Content[0], reflect.ValueOf(&spec).Elem(), "")
+		r.object(doc.Content[0], reflect.ValueOf(into).Elem(), "")
 	}
-	return &spec, true
+	return true
 }
 
 // joinSurrogates writes out the pairs of escapes by which JSON names letters beyond U+FFFF, such
@@ -69,16 +80,16 @@ func joinSurrogates(content []byte) []byte {
 }
 
 // notText says why content cannot be YAML in UTF-8, and where.
-func notText(b []byte) (position, string) {
+func (k kind) notText(b []byte) (position, string) {
 	switch {
 	case len(b) > maxProjectBytes:
-		return position{}, fmt.Sprintf("is larger than %d MB; a project file is a few kB", maxProjectBytes>>20)
+		return position{}, fmt.Sprintf("is larger than %d MB; %s is a few kB", maxProjectBytes>>20, k.name)
 	case bytes.HasPrefix(b, []byte{0xff, 0xfe}), bytes.HasPrefix(b, []byte{0xfe, 0xff}):
 		return position{}, "is UTF-16; save it as UTF-8"
 	case bytes.IndexByte(b, 0) >= 0:
-		return position{}, "is binary, or UTF-16; a project is YAML text in UTF-8"
+		return position{}, "is binary, or UTF-16; " + k.name + " is YAML text in UTF-8"
 	case len(bytes.TrimSpace(bytes.TrimPrefix(b, []byte("\ufeff")))) == 0:
-		return position{}, "is empty; a project begins with project: TITLE"
+		return position{}, k.isEmpty()
 	}
 	line, column := 1, 1
 	for rest := b; len(rest) > 0; {
@@ -101,13 +112,13 @@ func notText(b []byte) (position, string) {
 const longest = 300
 
 // yamlFault turns an error of the YAML library into the arguments of fail.
-func yamlFault(content []byte, err error) (position, string, string, error) {
+func (k kind) yamlFault(content []byte, err error) (position, string, string, error) {
 	const format = "not readable as YAML: %v"
 	if le, ok := errors.AsType[*yaml.LoadError](err); ok {
 		message := strings.TrimPrefix(le.Message, "yaml: ")
 		switch {
 		case strings.HasPrefix(message, "unknown anchor"):
-			message = "anchors and aliases are not used in a project; write the value out"
+			message = "anchors and aliases are not used in " + k.name + "; write the value out"
 		case strings.Contains(message, "exceeded max depth"):
 			message = "lists or maps are nested too deeply"
 		case strings.Contains(message, "cannot start any token"), strings.Contains(message, "tab character"):
@@ -116,9 +127,9 @@ func yamlFault(content []byte, err error) (position, string, string, error) {
 			message += " (a bracket or quote left open, or a line indented wrongly, here or above?)"
 		case strings.HasPrefix(message, "expected single document"):
 			line := bytes.Count(content[:secondDocument(content)], []byte("\n")) + 1
-			return position{line, 1}, "", "%v", errors.New("a second document begins here; a project is one, without ---")
+			return position{line, 1}, "", "%v", errors.New("a second document begins here; " + k.name + " is one, without ---")
 		case strings.HasPrefix(message, "no documents"):
-			return position{}, "", "%v", errors.New("is empty; a project begins with project: TITLE")
+			return position{}, "", "%v", errors.New(k.isEmpty())
 		}
 		return position{le.Mark.Line, le.Mark.Column}, "", format, errors.New(spectra.Clip(message, longest))
 	}

@@ -28,6 +28,15 @@ type fileSpec struct {
 	Makeups      []makeupSpec            `key:"makeups" doc:"make-ups to rate"`
 	Conditions   []conditionSpec         `key:"conditions" doc:"sets of temperatures, wind and sun"`
 	Limits       []limitSpec             `key:"limits" doc:"requirements, with their sources"`
+	LimitsFile   text                    `key:"limits_file" file:"yes" doc:"YAML with limits that projects share"`
+}
+
+// limitsFileSpec is a file of limits that projects share.
+type limitsFileSpec struct {
+	_      struct{}    `called:"a limits file"`
+	Name   text        `key:"name" doc:"title of the file"`
+	Author text        `key:"author" doc:"who typed the limits"`
+	Limits []limitSpec `key:"limits" need:"yes" doc:"requirements, with their sources"`
 }
 
 type surfacesSpec struct {
@@ -186,11 +195,11 @@ type limitSpec struct {
 	_ struct{} `called:"a limit"`
 	object
 	Figure    text   `key:"figure" need:"yes" doc:"key or alias of a figure"`
-	AtMost    number `key:"at_most" doc:"the figure is at most this"`
-	AtLeast   number `key:"at_least" doc:"the figure is at least this"`
-	Scope     text   `key:"scope" one:"centre window" doc:"centre of the glass, or whole window"`
-	Basis     text   `key:"basis" one:"en iso na iso15099" doc:"basis of the figure"`
-	Tint      text   `key:"tint" doc:"clear, full, each, worst, or the name of a tint"`
+	AtMost    number `key:"at_most" doc:"the figure is at most this, in its unit"`
+	AtLeast   number `key:"at_least" doc:"the figure is at least this, in its unit"`
+	Scope     text   `key:"scope" one:"centre window" doc:"centre of the glass (when absent), or whole window"`
+	Basis     text   `key:"basis" one:"en iso na iso15099" doc:"basis of the figure; the project's when absent, if it has just one"`
+	Tint      text   `key:"tint" doc:"clear, full, each (when absent), worst, or the name of a tint"`
 	Condition text   `key:"condition" doc:"id of a condition"`
 	Makeups   names  `key:"makeups" doc:"ids of make-ups; all when absent"`
 	Source    text   `key:"source" doc:"who set the limit, and where"`

@@ -76,7 +76,7 @@ var apart = map[reflect.Type][][]string{
 // typedValues are the values of keys for which any number or text will not do.
 var typedValues = map[string]string{
 	"tau": "a.csv", "rho_front": "a.csv", "rho_back": "a.csv", "infrared_front": "ir.csv", "infrared_back": "ir.csv",
-	"spectrum": "a.csv", "sun": "sun.csv", "nk": "nk.csv",
+	"spectrum": "a.csv", "sun": "sun.csv", "nk": "nk.csv", "limits_file": "limits.yaml",
 	"pane": "pane-3", "material": "material-1", "glass": "glass-1", "figure": "u", "makeups": "[makeup-1]", "condition": "condition-1",
 	"thickness_mm": "4", "glass_mm": "4", "interlayer_mm": "0.76", "gap_mm": "16", "outside_c": "-10", "inside_c": "20",
 }
@@ -194,12 +194,18 @@ func (d *document) misspelt(s spot, wrong string) string {
 	return strings.Join(lines, "\n") + "\n"
 }
 
-// complete is a document in which every key of the key table occurs.
-func complete() *document {
+// completeOf is a document in which every key of a spec type, and of those within it, occurs.
+func completeOf(t reflect.Type) *document {
 	d := &document{count: map[reflect.Type]int{}}
-	d.object(reflect.TypeFor[fileSpec](), "", "", 0)
+	d.object(t, "", "", 0)
 	return d
 }
+
+// complete is a project in which every key of the key table occurs.
+func complete() *document { return completeOf(reflect.TypeFor[fileSpec]()) }
+
+// completeLimits is such a limits file.
+func completeLimits() *document { return completeOf(reflect.TypeFor[limitsFileSpec]()) }
 
 func completeFiles() source {
 	infrared := "wavelength_um,rho_front,rho_back\n"
@@ -211,7 +217,7 @@ func completeFiles() source {
 		sun += fmt.Sprintf("%d,1\n", nm)
 	}
 	return memory(map[string]string{"a.csv": spectrumOf("0.7,0.2,0.1"), "ir.csv": infrared, "sun.csv": sun,
-		"nk.csv": "wavelength_um,n,k\n0.3,1.5,0\n60,1.5,0.01\n"})
+		"nk.csv": "wavelength_um,n,k\n0.3,1.5,0\n60,1.5,0.01\n", "limits.yaml": completeLimits().text()})
 }
 
 // misspellings returns a key with one letter dropped, doubled, swapped with the next, or replaced.
@@ -247,21 +253,9 @@ func faultsOf(text string, from source) Errors {
 // on offer, and nothing is said to be missing for it. Neither does the schema let it pass.
 func TestEveryKeyMisspelt(t *testing.T) {
 	d := complete()
-	used := map[string]bool{}
-	for _, s := range d.spots {
-		used[s.object.Name()+"."+s.key] = true
-	}
-	for _, of := range specTypes(reflect.TypeFor[fileSpec](), nil) {
-		for _, f := range fieldsOf(of) {
-			if !used[of.Name()+"."+f.Tag.Get("key")] {
-				t.Errorf("the complete document lacks %s of %s", f.Tag.Get("key"), called(of))
-			}
-		}
-	}
 	from := completeFiles()
-	before := map[string]bool{} // what the right document is told: of the later versions, no more
-	for _, f := range faultsOf(d.text(), from) {
-		if before[textOf(f)] = true; !strings.Contains(f.Error(), notYet) {
+	for _, f := range faultsOf(d.text(), from) { // it is told of later versions, no more
+		if !strings.Contains(f.Error(), notYet) {
 			t.Errorf("the complete document has a fault: %v", f)
 		}
 	}
@@ -272,10 +266,42 @@ func TestEveryKeyMisspelt(t *testing.T) {
 	if t.Failed() {
 		t.Fatal(d.text())
 	}
+	misspellEach(t, d, reflect.TypeFor[fileSpec](), func(text string) Errors { return faultsOf(text, from) }, func(text string) bool {
+		return compiled.Validate(jsonValue(t, text)) == nil
+	})
+}
+
+// The same of a limits file, which has no schema of its own.
+func TestEveryKeyOfLimitsMisspelt(t *testing.T) {
+	d := completeLimits()
+	if faults := limitsFaults(d.text()); len(faults) > 0 {
+		t.Fatalf("%v\n%s", faults, d.text())
+	}
+	misspellEach(t, d, reflect.TypeFor[limitsFileSpec](), limitsFaults, func(string) bool { return false })
+}
+
+// misspellEach misspells each key of a complete document of a type.
+func misspellEach(t *testing.T, d *document, of reflect.Type, faultsOf func(string) Errors, valid func(string) bool) {
+	t.Helper()
+	used := map[string]bool{}
+	for _, s := range d.spots {
+		used[s.object.Name()+"."+s.key] = true
+	}
+	for _, of := range specTypes(of, nil) {
+		for _, f := range fieldsOf(of) {
+			if !used[of.Name()+"."+f.Tag.Get("key")] {
+				t.Errorf("the complete document lacks %s of %s", f.Tag.Get("key"), called(of))
+			}
+		}
+	}
+	before := map[string]bool{}
+	for _, f := range faultsOf(d.text()) {
+		before[textOf(f)] = true
+	}
 	count := 0
 	for _, s := range d.spots {
-		valid := namesOf(s.object)
-		wrongs := slices.DeleteFunc(misspellings(s.key), func(w string) bool { return slices.Contains(valid, w) })
+		names := namesOf(s.object)
+		wrongs := slices.DeleteFunc(misspellings(s.key), func(w string) bool { return slices.Contains(names, w) })
 		if len(wrongs) == 0 {
 			t.Errorf("no misspelling of %q was tried", s.key)
 		}
@@ -286,7 +312,7 @@ func TestEveryKeyMisspelt(t *testing.T) {
 			count++
 			text := d.misspelt(s, wrong)
 			found := false
-			for _, f := range faultsOf(text, from) {
+			for _, f := range faultsOf(text) {
 				p, ok := errors.AsType[*Problem](f)
 				switch {
 				case ok && p.Key == s.key && strings.Contains(p.Text, "is missing"):
@@ -302,9 +328,9 @@ func TestEveryKeyMisspelt(t *testing.T) {
 				}
 			}
 			if !found {
-				t.Errorf("%s misspelt as %s in line %d, column %d: not reported there, but: %v", s.key, wrong, s.line, s.column, faultsOf(text, from))
+				t.Errorf("%s misspelt as %s in line %d, column %d: not reported there, but: %v", s.key, wrong, s.line, s.column, faultsOf(text))
 			}
-			if err := compiled.Validate(jsonValue(t, text)); err == nil {
+			if valid(text) {
 				t.Errorf("the schema accepts %s for %s in %s", wrong, s.key, called(s.object))
 			}
 		}
@@ -312,6 +338,12 @@ func TestEveryKeyMisspelt(t *testing.T) {
 	if count < 2*len(d.spots) {
 		t.Errorf("%d misspellings of %d keys tried", count, len(d.spots))
 	}
+}
+
+// limitsFaults reads a limits file and returns its faults.
+func limitsFaults(text string) Errors {
+	_, faults := readLimits("l.yaml", []byte(text))
+	return faults
 }
 
 // textOf returns a fault without its place.

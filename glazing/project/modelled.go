@@ -66,6 +66,8 @@ func (b *builder) sheetOf(s *paneSpec, own map[string]glass) *glazing.Pane {
 		return fail(s.Glass.at, "glass", "stands beside a spectrum; give one")
 	case len(s.Plies) > 0:
 		return fail(s.Glass.at, "glass", "stands beside plies; a laminate has a spectrum")
+	case s.Origin.value == string(glazing.MeasuredOrigin):
+		return fail(s.Origin.at, "origin", "a pane of glass is computed, not measured; leave the key out")
 	case len(s.Tints) > 0:
 		return fail(s.Glass.at, "glass", "stands beside tints; a pane that switches has a spectrum for each")
 	}

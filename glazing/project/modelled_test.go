@@ -64,8 +64,8 @@ func TestGlassOfTheProject(t *testing.T) {
 	if pane.Origin != glazing.ModelledOrigin || !r.U.Known {
 		t.Errorf("origin %s, U %+v", pane.Origin, r.U)
 	}
-	typed := accept(t, ofGlass("glass: lab, thickness_mm: 4, emissivity_back: 0.5, density_kg_m3: 2000, origin: measured"), labFiles())
-	if x := typed.Panes[0]; x.Tints[0].Back.Corrected.Number != 0.5 || x.MassKGM2() != 8 || x.Origin != glazing.MeasuredOrigin {
+	typed := accept(t, ofGlass("glass: lab, thickness_mm: 4, emissivity_back: 0.5, density_kg_m3: 2000, origin: invented"), labFiles())
+	if x := typed.Panes[0]; x.Tints[0].Back.Corrected.Number != 0.5 || x.MassKGM2() != 8 || x.Origin != glazing.InventedOrigin {
 		t.Errorf("what is typed does not win: %+v", x)
 	}
 	// Constants that end at 900 nm leave solar figures unknown, and the emissivity.
@@ -89,6 +89,7 @@ func TestRefusesGlasses(t *testing.T) {
 		{"glass: " + mark + "soda-lime, thickness_mm: 4, spectrum: a.csv", "glass", []string{"beside a spectrum"}},
 		{"glass: " + mark + "soda-lime, plies: [{glass_mm: 4}]", "glass", []string{"beside plies"}},
 		{"glass: " + mark + "soda-lime, thickness_mm: 4, tints: [{tint: a, spectrum: a.csv}]", "glass", []string{"beside tints"}},
+		{"glass: soda-lime, thickness_mm: 4, origin: " + mark + "measured", "origin", []string{"is computed, not measured"}},
 		{"glass: soda-lime, thickness_mm: 4, emissivity_back: 0.5, emissivity_normal_back: " + mark + "0.5", "emissivity_normal_back", []string{"give one"}},
 	} {
 		text, at := marked(ofGlass(tt.keys))

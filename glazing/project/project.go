@@ -13,7 +13,6 @@ package project
 import (
 	"maps"
 	"path/filepath"
-	"reflect"
 	"slices"
 
 	"panewright/glazing"
@@ -28,6 +27,8 @@ type Project struct {
 	Bases                       []glazing.Basis
 	Panes                       []*glazing.Pane
 	Makeups                     []*glazing.Makeup
+	Limits                      []glazing.Limit   // of the project file itself; see AllLimits
+	LimitsFile                  *LimitsFile       // that the project names, or nil
 	Cautions                    []glazing.Caution // of the project as a whole
 	Digest                      string            // SHA-256 of the project file and each file it names
 	Files                       []string          // paths of the project file and of each file that it names
@@ -64,14 +65,14 @@ func Load(path string, a Access) (*Project, error) {
 
 // read reads a project from its content and a source of the files that it names.
 func read(file string, content []byte, from source) (*Project, error) {
-	r := &reader{file: file, incomplete: map[string]bool{}, keys: map[reflect.Type][]specKey{}}
-	spec, ok := r.parse(content)
-	if !ok {
+	r := newReader(aProject, file)
+	var spec fileSpec
+	if !r.parse(content, &spec) {
 		return nil, r.faults
 	}
 	b := &builder{reader: r, fileSet: &fileSet{read: from, content: map[string][]byte{},
 		columns: map[string]spectra.Columns{}, blocks: map[string][]spectra.Block{}, failed: map[string]error{}}, builtIn: map[string]*glazing.Pane{}}
-	p := b.project(spec)
+	p := b.project(&spec)
 	if len(r.faults) > 0 {
 		return nil, r.faults
 	}

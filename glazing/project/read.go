@@ -58,12 +58,17 @@ func (n number) or(v float64) float64 {
 
 // reader fills the spec types from YAML nodes and gathers every fault.
 type reader struct {
+	kind   kind
 	file   string
 	faults Errors
 	// incomplete holds the keys of which a value was refused or misspelt somewhere: what would
 	// stand there may be missed elsewhere, and that is not reported as well.
 	incomplete map[string]bool
 	keys       map[reflect.Type][]specKey // of each spec type, once looked up
+}
+
+func newReader(k kind, file string) *reader {
+	return &reader{kind: k, file: file, incomplete: map[string]bool{}, keys: map[reflect.Type][]specKey{}}
 }
 
 // specKey is one key of a spec type.
@@ -78,13 +83,13 @@ func (r *reader) fail(at position, key, format string, args ...any) {
 
 func place(n *yaml.Node) position { return position{n.Line, n.Column} }
 
-// plain refuses what YAML has and a project file does not: anchors, aliases, tags.
+// plain refuses what YAML has and a file of ours does not: anchors, aliases, tags.
 func (r *reader) plain(n *yaml.Node, key string) bool {
 	switch {
 	case n.Kind == yaml.AliasNode || n.Anchor != "":
-		r.fail(place(n), key, "anchors and aliases are not used in a project; write the value out")
+		r.fail(place(n), key, "anchors and aliases are not used in %s; write the value out", r.kind.name)
 	case n.Style&yaml.TaggedStyle != 0:
-		r.fail(place(n), key, "tags such as %s are not used in a project", clip(n.Tag))
+		r.fail(place(n), key, "tags such as %s are not used in %s", clip(n.Tag), r.kind.name)
 	default:
 		return true
 	}
@@ -94,9 +99,16 @@ func (r *reader) plain(n *yaml.Node, key string) bool {
 // object fills a struct from a map. It returns false where anything in it was refused.
 func (r *reader) object(n *yaml.Node, into reflect.Value, key string) bool {
 	called := called(into.Type())
+	done := func(ok bool) bool {
+		if o := into.FieldByName("object"); o.IsValid() {
+			into.FieldByName("At").Set(reflect.ValueOf(place(n)))
+			into.FieldByName("Faulty").SetBool(!ok)
+		}
+		return ok
+	}
 	if n.Kind != yaml.MappingNode {
 		r.fail(place(n), key, "%s is a map of keys and values, not %s", called, kindOf(n))
-		return false
+		return done(false)
 	}
 	before := len(r.faults)
 	known, ok := r.keys[into.Type()]
@@ -112,7 +124,7 @@ func (r *reader) object(n *yaml.Node, into reflect.Value, key string) bool {
 			continue
 		}
 		if k.Tag == "!!merge" {
-			r.fail(place(k), key, "merge keys (<<) are not used in a project; write the keys out")
+			r.fail(place(k), key, "merge keys (<<) are not used in %s; write the keys out", r.kind.name)
 			continue
 		}
 		if k.Kind != yaml.ScalarNode {
@@ -150,12 +162,7 @@ func (r *reader) object(n *yaml.Node, into reflect.Value, key string) bool {
 	for name := range spoilt {
 		r.incomplete[name] = true
 	}
-	ok = len(r.faults) == before
-	if o := into.FieldByName("object"); o.IsValid() {
-		into.FieldByName("At").Set(reflect.ValueOf(place(n)))
-		into.FieldByName("Faulty").SetBool(!ok)
-	}
-	return ok
+	return done(len(r.faults) == before)
 }
 
 // value fills one field. It returns false where the value was refused.

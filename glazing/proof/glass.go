@@ -8,6 +8,7 @@ import (
 	"panewright/glazing"
 	"panewright/glazing/film"
 	"panewright/glazing/library"
+	"panewright/glazing/optics"
 	"panewright/spectra"
 )
 
@@ -59,6 +60,20 @@ func slabShare(in *inputs) (float64, error) {
 func slabHemispherical(in *inputs) (float64, error) {
 	s, nm := sheetOf(in)
 	return share(in, s.Hemispherical(nm))
+}
+
+// slabPair is the transmittance of two equal sheets behind each other, each polarisation by itself
+// through both before the mean is taken.
+func slabPair(in *inputs) (float64, error) {
+	s, nm := sheetOf(in)
+	f := s.At(nm, in.number("theta_deg"))
+	through := func(one film.Share) float64 {
+		pane := optics.Pane{T: []float64{one.T}, Ro: []float64{one.R}, Ri: []float64{one.R}}
+		var stack optics.Stack
+		stack.Combine([]optics.Pane{pane, pane})
+		return stack.T[0]
+	}
+	return film.Polarised{S: film.Share{T: through(f.S)}, P: film.Share{T: through(f.P)}}.Unpolarised().T, nil
 }
 
 func share(in *inputs, f film.Share) (float64, error) {

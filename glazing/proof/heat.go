@@ -1,18 +1,25 @@
 package proof
 
+// Checks of U, of secondary heat and g, of emissivities and of weights.
+
 import (
+	"errors"
 	"fmt"
+	"strconv"
+	"strings"
 
 	"panewright/glazing"
 	"panewright/spectra"
 	"panewright/thermal"
 )
 
+// flat is a quantity that is the same at every wavelength of the sun.
+func flat(v float64) spectra.Curve {
+	return spectra.Curve{NM: []float64{spectra.SolarFirstNM, spectra.SolarLastNM}, Value: []float64{v, v}}
+}
+
 // grey returns a pane whose spectrum is the same at every wavelength.
 func grey(thicknessMM, tau, rho, front, back float64) *glazing.Pane {
-	flat := func(v float64) spectra.Curve {
-		return spectra.Curve{NM: []float64{spectra.SolarFirstNM, spectra.SolarLastNM}, Value: []float64{v, v}}
-	}
 	return &glazing.Pane{
 		ID:    "grey",
 		Plies: sheet(thicknessMM),
@@ -66,18 +73,25 @@ func makeup(in *inputs) *glazing.Makeup {
 
 // rate rates a make-up under the basis that the check names.
 func rate(in *inputs, m *glazing.Makeup) (*glazing.Rating, error) {
-	b, err := glazing.BasisNamed(in.text("basis"))
-	if err != nil {
-		return nil, err
-	}
+	basis := in.text("basis")
 	if in.err != nil {
 		return nil, in.err
 	}
-	ratings, err := glazing.Rate(m, b)
+	return in.rated(basis, m)
+}
+
+// rated rates a make-up under a basis.
+func (in *inputs) rated(basis string, m *glazing.Makeup) (*glazing.Rating, error) {
+	method, err := in.memo.method(basis)
 	if err != nil {
 		return nil, err
 	}
-	return &ratings[0], nil
+	ready, err := method.Ready(m)
+	if err != nil {
+		return nil, err
+	}
+	r := new(glazing.Rating)
+	return r, ready.RateInto(r, 0)
 }
 
 // number returns a known figure.
@@ -88,14 +102,20 @@ func number(v glazing.Value) (float64, error) {
 	return v.Number, nil
 }
 
-// figure returns a figure of a rating by its key in the list of figures.
+// figure returns a figure of a rating by its key in the list of figures, with panes, gaps and
+// surfaces counted from 1.
 func figure(r *glazing.Rating, key string) (float64, error) {
 	for _, f := range glazing.Figures() {
-		if f.Key == key && f.Value != nil {
-			return number(f.Value(r, 0))
+		if f.Value == nil || !f.Named(key) {
+			continue
+		}
+		for i := range f.Count(r) {
+			if strings.ReplaceAll(f.Key, "#", strconv.Itoa(i+1)) == key {
+				return number(f.Value(r, i))
+			}
 		}
 	}
-	return 0, fmt.Errorf("the list of figures has no %q", key)
+	return 0, fmt.Errorf("the list of figures has no %q for this make-up", key)
 }
 
 // uValue is the rating's own U.
@@ -111,6 +131,27 @@ func uValue(in *inputs) (float64, error) {
 func uRounded(in *inputs) (float64, error) {
 	u, err := uValue(in)
 	return glazing.Round(u, int(in.number("places"))), err
+}
+
+// uSensitivity is the derivative of U for the corrected emissivity of a surface or the fill of a
+// gap, counted from 1: per unit of either.
+func uSensitivity(in *inputs) (float64, error) {
+	r, err := rate(in, makeup(in))
+	if err != nil {
+		return 0, err
+	}
+	list, err := glazing.Sensitivities(r)
+	if err != nil {
+		return 0, err
+	}
+	of, at := in.text("of"), int(in.number("number"))
+	for _, s := range list {
+		if string(s.Input) == of && s.Number == at {
+			u, err := number(s.U)
+			return u / s.Change, err
+		}
+	}
+	return 0, errors.New("there is no such sensitivity")
 }
 
 // uNusseltBetween is U with the Nusselt number interpolated between the tilts of the standard's

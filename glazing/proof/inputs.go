@@ -1,5 +1,7 @@
 package proof
 
+// How the kinds read the inputs of a check.
+
 import (
 	"fmt"
 	"slices"
@@ -15,6 +17,7 @@ type inputs struct {
 	values map[string]string
 	used   map[string]bool
 	err    error
+	memo   *memo
 }
 
 func (in *inputs) fail(format string, args ...any) {
@@ -68,10 +71,13 @@ func (in *inputs) numbers(name string) []float64 {
 	return out
 }
 
-// gas reads "argon:0.9/air:0.1".
-func (in *inputs) gas(name string) thermal.Mixture {
+// gas reads an input such as "argon:0.9/air:0.1".
+func (in *inputs) gas(name string) thermal.Mixture { return in.mixture(name, in.text(name)) }
+
+// mixture reads a gas that is part of an input.
+func (in *inputs) mixture(name, text string) thermal.Mixture {
 	fractions := map[string]float64{}
-	for part := range strings.SplitSeq(in.text(name), "/") {
+	for part := range strings.SplitSeq(text, "/") {
 		gas, fraction, _ := strings.Cut(part, ":")
 		fractions[gas] = in.parse(name, fraction)
 	}

@@ -51,8 +51,8 @@ func (c Choice) About() string {
 // in reports whether a rating has the pane, gap or surface.
 func (c Choice) in(r *glazing.Rating) bool { return c.Index < c.Count(r) }
 
-// printed returns the figure as text shows it: blank where the rating has no such place.
-func (c Choice) printed(r *glazing.Rating) string {
+// Printed returns the figure as text shows it: blank where the rating has no such place.
+func (c Choice) Printed(r *glazing.Rating) string {
 	if !c.in(r) {
 		return ""
 	}
@@ -123,9 +123,9 @@ func (r Report) everything() []Choice {
 	return list
 }
 
-// columns returns what the schedule shows: the chosen figures, or those that have a column, in
+// Columns returns what the schedule shows: the chosen figures, or those that have a column, in
 // their places.
-func (r Report) columns() []Choice {
+func (r Report) Columns() []Choice {
 	if r.Choices != nil {
 		return r.Choices
 	}

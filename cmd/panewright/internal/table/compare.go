@@ -50,7 +50,7 @@ func (r Report) compared() []Choice {
 	if r.Choices != nil {
 		return r.Choices
 	}
-	list := r.columns()
+	list := r.Columns()
 	for _, c := range r.everything() {
 		towardsGap := func(rating glazing.Rating) bool { return c.Index >= 1 && c.Index < c.Count(&rating)-1 }
 		if c.Beside && (c.Per != glazing.PerSurface || slices.ContainsFunc(r.Ratings, towardsGap)) {
@@ -132,7 +132,7 @@ func Compare(r Report) []byte {
 	for _, c := range rows {
 		symbols = append(symbols, c.Head())
 		units = append(units, c.Unit)
-		reference = append(reference, c.printed(&r.Ratings[0]))
+		reference = append(reference, c.Printed(&r.Ratings[0]))
 	}
 	names := []column{newColumn("", symbols), newColumn("", units), newColumn(tops[0], reference)}
 	names[2].right = true
@@ -140,7 +140,7 @@ func Compare(r Report) []byte {
 	for i := 1; i < len(r.Ratings); i++ {
 		values, changes := []string{"figure"}, []string{"change"}
 		for _, c := range rows {
-			values = append(values, c.printed(&r.Ratings[i]))
+			values = append(values, c.Printed(&r.Ratings[i]))
 			changes = append(changes, change(comparisons[i], c))
 		}
 		options = append(options, newColumn(tops[i], beside(values, changes)))
@@ -210,9 +210,9 @@ func CompareMarkdown(r Report) []byte {
 		colours.head = append(colours.head, label(&r.Ratings[i]))
 	}
 	for _, c := range rows {
-		row := []string{c.Head(), c.Unit, c.printed(&r.Ratings[0])}
+		row := []string{c.Head(), c.Unit, c.Printed(&r.Ratings[0])}
 		for i := 1; i < len(r.Ratings); i++ {
-			row = append(row, c.printed(&r.Ratings[i]), change(comparisons[i], c))
+			row = append(row, c.Printed(&r.Ratings[i]), change(comparisons[i], c))
 		}
 		figures.rows = append(figures.rows, row)
 	}
@@ -235,7 +235,7 @@ func CompareMarkdown(r Report) []byte {
 	}
 	r.markdownBuildUps(&b)
 	markdownList(&b, "Symbols", legend(rows, r.Ratings))
-	markdownList(&b, "Cautions", r.cautionsOnce())
+	markdownList(&b, "Cautions", r.CautionsOnce())
 	r.markdownTrace(&b)
 	return b.Bytes()
 }

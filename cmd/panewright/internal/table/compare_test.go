@@ -27,7 +27,7 @@ func TestCompareText(t *testing.T) {
 		blocks := 0
 		for _, line := range lines {
 			words := strings.Fields(line)
-			if len(words) > 0 && words[0] == c.Head() && (!c.in(&r.Ratings[0]) || slices.Contains(words, c.printed(&r.Ratings[0]))) {
+			if len(words) > 0 && words[0] == c.Head() && (!c.in(&r.Ratings[0]) || slices.Contains(words, c.Printed(&r.Ratings[0]))) {
 				blocks++
 			}
 		}

@@ -16,7 +16,7 @@ func Markdown(r Report) []byte {
 	if len(r.Ratings) == 0 {
 		b.WriteString("\nNo make-up to rate.\n")
 	}
-	columns := r.columns()
+	columns := r.Columns()
 	for _, x := range r.editions() {
 		fmt.Fprintf(&b, "\n## Basis %s\n\n%s\n\n", escaped(x.basis), escaped(x.editions))
 		table := markdownTable{head: []string{"make-up", "tint"}, names: 2}
@@ -30,7 +30,7 @@ func Markdown(r Report) []byte {
 			}
 			row := []string{rating.Makeup.ID, rating.Tint}
 			for _, c := range columns {
-				row = append(row, c.printed(rating))
+				row = append(row, c.Printed(rating))
 			}
 			table.rows = append(table.rows, row)
 		}
@@ -40,7 +40,7 @@ func Markdown(r Report) []byte {
 	if len(r.Ratings) > 0 {
 		markdownList(&b, "Symbols", legend(columns, r.Ratings))
 	}
-	markdownList(&b, "Cautions", r.cautionsOnce())
+	markdownList(&b, "Cautions", r.CautionsOnce())
 	r.markdownTrace(&b)
 	return b.Bytes()
 }
@@ -75,7 +75,7 @@ func (r Report) markdownBuildUps(b *bytes.Buffer) {
 			fmt.Fprintf(b, "  - typed by the user: %s\n", escaped(t.Name+": "+t.Text))
 		}
 	}
-	if s := r.spectraBy(); s != "" {
+	if s := r.SpectraBy(); s != "" {
 		fmt.Fprintf(b, "\n## Spectra\n\n%s\n", escaped(s))
 	}
 }

@@ -27,7 +27,7 @@ func cellsOf(out string) (rows [][]string) {
 func TestMarkdownEqualsSchedule(t *testing.T) {
 	r := demoReport(t, glazing.EN, glazing.NA)
 	rows := cellsOf(string(Markdown(r)))
-	columns := r.columns()
+	columns := r.Columns()
 	schedule := map[string]bool{}
 	for line := range strings.SplitSeq(string(Schedule(r)), "\n") {
 		schedule[strings.Join(strings.Fields(line), " ")] = true
@@ -81,7 +81,7 @@ func TestMarkdownEscapes(t *testing.T) {
 	r.Ratings[0].Tint = "a|b\n| c |"
 	out := string(Markdown(r))
 	for _, row := range cellsOf(out) {
-		if len(row) != 2+len(r.columns()) {
+		if len(row) != 2+len(r.Columns()) {
 			t.Errorf("%d cells: %q", len(row), row)
 		}
 	}

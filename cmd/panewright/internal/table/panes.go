@@ -14,8 +14,8 @@ import (
 
 // A PaneView is what is said of one pane beside its figures.
 type PaneView struct {
-	About, Source string
-	Angles        []Angle // of uncoated glass; none where the angles are not known
+	About  string
+	Angles []Angle // of uncoated glass; none where the angles are not known
 }
 
 // An Angle is a pane rated alone at an angle of incidence.
@@ -47,7 +47,7 @@ func PaneList(r Report) ([]byte, error) {
 	for _, c := range r.Choices {
 		var cells []string
 		for i := range r.Ratings {
-			cells = append(cells, c.printed(&r.Ratings[i]))
+			cells = append(cells, c.Printed(&r.Ratings[i]))
 		}
 		figures = append(figures, newColumn(c.Head(), cells))
 	}
@@ -76,7 +76,6 @@ func Pane(r Report, v PaneView) []byte {
 	var b bytes.Buffer
 	p := r.Ratings[0].Makeup.Panes[0].Pane
 	writeWrapped(&b, p.ID+": "+v.About, "  ")
-	writeWrapped(&b, string(p.Origin)+" spectrum; "+v.Source, "  ")
 	fmt.Fprintf(&b, "%.6g mm, %.6g kg/m²\n", p.ThicknessMM(), p.MassKGM2())
 	r.paneBases(&b)
 	for i := range r.Ratings {
@@ -85,6 +84,8 @@ func Pane(r Report, v PaneView) []byte {
 			b.WriteByte('\n')
 			writeWrapped(&b, "Tint "+rating.Tint, "  ")
 		}
+		tint := p.Tints[rating.Ready.States[rating.State].Tints[0]]
+		writeWrapped(&b, string(p.Origin)+" spectrum, from "+tint.Source, "  ")
 		allFigures(&b, r.Figures, rating)
 		for k, e := range rating.Surfaces {
 			if e.ComputedNormal.Known {
@@ -93,7 +94,7 @@ func Pane(r Report, v PaneView) []byte {
 			}
 		}
 		b.WriteByte('\n')
-		s := p.Tints[rating.Ready.States[rating.State].Tints[0]].Spectrum
+		s := tint.Spectrum
 		Plot(&b, []PlotCurve{{"τ", 'T', s.Tau}, {"ρ front", 'f', s.RhoFront}, {"ρ back", 'b', s.RhoBack}})
 	}
 	angles(&b, v.Angles)

@@ -39,7 +39,7 @@ func Schedule(r Report) []byte {
 	}
 	r.buildUps(&b)
 	r.origins(&b)
-	r.symbols(&b, r.columns())
+	r.symbols(&b, r.Columns())
 	r.cautionList(&b)
 	r.trace(&b)
 	return b.Bytes()
@@ -106,10 +106,10 @@ func (r Report) block(b *bytes.Buffer, basis string) {
 		names = append(names, newColumn("tint", tints))
 	}
 	var figures []column
-	for _, c := range r.columns() {
+	for _, c := range r.Columns() {
 		var cells []string
 		for _, row := range rows {
-			cells = append(cells, c.printed(row))
+			cells = append(cells, c.Printed(row))
 		}
 		figures = append(figures, newColumn(c.Head(), cells))
 	}
@@ -225,8 +225,8 @@ func (r Report) buildUps(b *bytes.Buffer) {
 // originNames are the origins of spectra, in the order in which they are printed.
 var originNames = []glazing.Origin{glazing.MeasuredOrigin, glazing.ModelledOrigin, glazing.InventedOrigin}
 
-// spectraBy returns where the spectra come from, with the panes of each origin.
-func (r Report) spectraBy() string {
+// SpectraBy returns where the spectra come from, with the panes of each origin.
+func (r Report) SpectraBy() string {
 	var parts []string
 	for _, o := range originNames {
 		var ids []string
@@ -246,7 +246,7 @@ func (r Report) spectraBy() string {
 
 // origins prints where the spectra come from.
 func (r Report) origins(b *bytes.Buffer) {
-	if s := r.spectraBy(); s != "" {
+	if s := r.SpectraBy(); s != "" {
 		b.WriteString("\nSpectra\n")
 		writeWrapped(b, s, "  ")
 	}
@@ -291,9 +291,9 @@ func (r Report) symbols(b *bytes.Buffer, columns []Choice) {
 	writeWrapped(b, strings.Join(legend(columns, r.Ratings), "; ")+".", "")
 }
 
-// cautionsOnce returns the text of each caution once, with the ratings it belongs to where these
+// CautionsOnce returns the text of each caution once, with the ratings it belongs to where these
 // are not all; what holds for all comes first. The editions stand elsewhere.
-func (r Report) cautionsOnce() []string {
+func (r Report) CautionsOnce() []string {
 	type entry struct {
 		glazing.Caution
 		of []int
@@ -325,7 +325,7 @@ func (r Report) cautionsOnce() []string {
 
 // cautionList prints the cautions.
 func (r Report) cautionList(b *bytes.Buffer) {
-	for i, text := range r.cautionsOnce() {
+	for i, text := range r.CautionsOnce() {
 		if i == 0 {
 			b.WriteString("\nCautions\n")
 		}
@@ -411,3 +411,6 @@ func width(s string) int {
 	}
 	return len(s)
 }
+
+// Legend returns what the symbols of the schedule's columns mean.
+func (r Report) Legend() string { return strings.Join(legend(r.Columns(), r.Ratings), "; ") }

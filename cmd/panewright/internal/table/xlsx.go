@@ -214,8 +214,8 @@ func (b *book) about(r Report) {
 			line(m.ID+", typed by the user: "+t.Name, t.Text)
 		}
 	}
-	line("spectra", r.spectraBy())
-	for _, text := range r.cautionsOnce() {
+	line("spectra", r.SpectraBy())
+	for _, text := range r.CautionsOnce() {
 		line("caution", text)
 	}
 	for _, c := range r.everything() {

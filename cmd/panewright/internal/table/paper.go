@@ -1,0 +1,90 @@
+package table
+
+// What the pages on paper say as the pages here do: the same words and cells.
+
+import (
+	"fmt"
+
+	"panewright/glazing/limits"
+	"panewright/glazing/proof"
+)
+
+// Notice returns the sentences that stand on every output of a check.
+func (c Check) Notice() []string { return checkNotice }
+
+// CheckHeads are the headings of the columns of results, and Cells what stands below them.
+func CheckHeads() []string { return checkHeads }
+
+// Cells returns a row of results, with the make-up first.
+func (c Check) Cells(x *limits.Result) []string {
+	number := 0
+	for k, l := range c.used() {
+		if l == x.Limit {
+			number = k + 1
+		}
+	}
+	return append([]string{x.Makeup.ID}, c.cells(x, number)...)
+}
+
+// Entered returns the limits in words, numbered as results name them.
+func (c Check) Entered() (lines []string) {
+	for k, l := range c.used() {
+		lines = append(lines, fmt.Sprintf("%d  %s; %s. %s.", k+1, l, l.Terms(), l.Origin()))
+	}
+	return lines
+}
+
+// Reasons returns why results are too close to call or cannot be judged.
+func (c Check) Reasons() []string { return c.reasons() }
+
+// Remarked returns the cautions on the limits.
+func (c Check) Remarked() (lines []string) {
+	for _, x := range c.remarks() {
+		lines = append(lines, x.Text)
+	}
+	return append(lines, c.files()...)
+}
+
+// Counts returns how many results have each verdict.
+func (c Check) Counts() []string { return c.counts() }
+
+// Machine returns which program computed the figures where.
+func (v Verification) Machine() string { return v.machine() }
+
+// Said returns what is said around the checks.
+func (v Verification) Said() []string {
+	return []string{verifyTitle, verifyAbout, verifyMeans, verifyScope}
+}
+
+// Summary returns the rows of the summary, heads first.
+func (v Verification) Summary() (rows [][]string) {
+	names, counts := v.summary()
+	rows = append(rows, append([]string{"standing"}, countHeads()...))
+	for i, name := range names {
+		rows = append(rows, append([]string{name}, counts[i]...))
+	}
+	return rows
+}
+
+// VerifyHeads are the headings of the columns of outcomes, and VerifyCells what stands below them.
+func VerifyHeads() []string { return append([]string{"check", "what"}, numberHeads...) }
+
+// VerifyCells returns a row of outcomes.
+func VerifyCells(o proof.Outcome) []string {
+	what := o.What
+	if o.Subject != "" {
+		what = o.Subject + ": " + what
+	}
+	if o.Unit != "1" {
+		what += ", " + o.Unit
+	}
+	return append([]string{o.ID, what}, numbersOf(o)...)
+}
+
+// VerifyNotes returns what is said under the tables of a group.
+func VerifyNotes(g proof.Group) (lines []string) {
+	for _, n := range notes(g) {
+		lines = append(lines, n[0]+": "+n[1])
+	}
+	return lines
+}

@@ -1,0 +1,130 @@
+package main
+
+// panewright sheet: the data sheets of a project as PDF.
+
+import (
+	"errors"
+	"fmt"
+	"os"
+	"path/filepath"
+	"slices"
+	"strconv"
+	"strings"
+
+	"github.com/spf13/cobra"
+
+	"panewright/cmd/panewright/internal/sheet"
+	"panewright/cmd/panewright/internal/table"
+	"panewright/glazing"
+	"panewright/glazing/project"
+)
+
+func newSheet(s streams) *cobra.Command {
+	var o selection
+	var output, each string
+	c := &cobra.Command{
+		Use:                   "sheet PROJECT [options]",
+		DisableFlagsInUseLine: true,
+		Short:                 "Make the data sheets of a project as PDF",
+		Long: `Makes a PDF with the schedule of the project, how its figures stand to the
+limits that it enters, and a data sheet for each make-up: the section to scale,
+figures, spectra, colours, cautions, and the figures in JSON attached. The same
+project gives the same file; a date is printed if the project has one.
+
+With --each, a file for each make-up, named by its id, without the schedule; the
+names of the files are printed.`,
+		Example: `  panewright sheet panewright-demo/project.yaml -o sheets.pdf
+  panewright sheet panewright-demo/project.yaml --makeup E1 -o e1.pdf
+  panewright sheet panewright-demo/project.yaml --each sheets`,
+		Args: oneProject,
+		RunE: func(_ *cobra.Command, args []string) error {
+			if each != "" && output != "" {
+				return errors.New("--each names a folder for many files, -o one file; give one of them")
+			}
+			r, err := rate(args[0], o)
+			if err != nil {
+				return err
+			}
+			if each != "" {
+				return s.writeEach(each, r)
+			}
+			if err := keepInputs(output, r.Project); err != nil {
+				return err
+			}
+			if output == "" && s.terminal() {
+				return errors.New("a PDF is not for a terminal; add -o FILE")
+			}
+			limits, err := entered(&r, args[0], o)
+			if err != nil {
+				return err
+			}
+			f, err := sheet.Project(r, limits)
+			if err != nil {
+				return err
+			}
+			s.replaced(f)
+			return s.write(output, f.PDF)
+		},
+	}
+	o.flags(c)
+	outputFlag(c, &output)
+	c.Flags().StringVar(&each, "each", "", "write a file for each make-up into folder `DIR`, which is made if need be")
+	return c
+}
+
+// entered holds the project's figures against its limits, where it has any; then no caution says
+// that this was not done.
+func entered(r *table.Report, path string, o selection) (*table.Check, error) {
+	if all, _ := r.Project.AllLimits(); len(all) == 0 {
+		return nil, nil
+	}
+	c, err := checked(path, o, nil)
+	if err != nil {
+		return nil, err
+	}
+	for i := range r.Ratings {
+		r.Ratings[i].Cautions = slices.DeleteFunc(slices.Clone(r.Ratings[i].Cautions), func(x glazing.Caution) bool { return x.Code == project.LimitsNotChecked })
+	}
+	return &c, nil
+}
+
+// writeEach writes the sheets of make-ups into a folder.
+func (s streams) writeEach(dir string, r table.Report) error {
+	files, err := sheet.Makeups(r)
+	if err != nil {
+		return err
+	}
+	for _, f := range files {
+		if err := keepInputs(filepath.Join(dir, f.Makeup+".pdf"), r.Project); err != nil {
+			return err
+		}
+	}
+	if err := os.MkdirAll(dir, 0o755); err != nil {
+		return &outputError{dir, err}
+	}
+	for _, f := range files {
+		s.replaced(f)
+		path := filepath.Join(dir, f.Makeup+".pdf")
+		if err := s.write(path, f.PDF); err != nil {
+			return err
+		}
+		fmt.Fprintln(s.out, path)
+	}
+	return nil
+}
+
+// replaced says which letters of the user's no font has.
+func (s streams) replaced(f sheet.File) {
+	if len(f.Replaced) == 0 {
+		return
+	}
+	const listed = 12
+	var parts []string
+	for _, r := range f.Replaced[:min(len(f.Replaced), listed)] {
+		parts = append(parts, strconv.QuoteRuneToASCII(r))
+	}
+	if n := len(f.Replaced) - listed; n > 0 {
+		parts = append(parts, fmt.Sprintf("and %d more", n))
+	}
+	fmt.Fprintln(s.err, "panewright: the sheet's font lacks "+strings.Join(parts, ", ")+"; a mark stands in their place")
+}
