@@ -44,7 +44,7 @@ var (
 		u: surfaces{23, 3.6, 4.4}, g: surfaces{23, 3.6, 4.4}, uPlaces: 1, rounding: "ISO 10292",
 	}
 	NA = Basis{
-		Name: "na", Editions: "CIE D65 at 5 nm, ASTM G173-03 global tilt (choice of column from memory), UV, damage and skin by EN 410:2011, EN 12898",
+		Name: "na", Editions: "CIE D65 at 5 nm, ASTM G173-03 global tilt (column chosen by Panewright), UV, damage and skin by EN 410:2011, EN 12898",
 		light: spectra.LightCIE, solar: spectra.SolarG173, uPlaces: 2, balance: true,
 	}
 	ISO15099 = Basis{

@@ -13,7 +13,7 @@ import (
 
 // A cautionRule is one caution: its code, when it applies in words, and a function that returns
 // its text for rating i of all ratings of a make-up, or "" where it does not apply. To add a
-// caution, add a row.
+// caution, add a row. One that is made elsewhere has a row in otherCodes.
 type cautionRule struct {
 	code string
 	when string
@@ -127,7 +127,7 @@ var cautionRules = []cautionRule{
 			return e.Corrected.Known && e.Corrected.Number < conductingFilm
 		})
 	}, "A conducting film weakens radio and mobile reception indoors.")},
-	{"mass", "above 50 kg/m2", when(func(r *Rating) bool { return r.MassKGM2 > heavyKGM2 },
+	{"mass", "above 50 kg/m²", when(func(r *Rating) bool { return r.MassKGM2 > heavyKGM2 },
 		"One square metre weighs more than 50 kg: handling and replacement need planning.")},
 	{"bird", "always", always("Clear and mirroring glass kills birds: consider visible markings.")},
 }
@@ -183,13 +183,34 @@ func reasons(r *Rating, said []Caution, figures []Figure) (out []Caution) {
 	return out
 }
 
-// CautionCodes returns the code of each caution that depends on the figures, and when it applies.
+// otherCodes are the codes of cautions that come from elsewhere: from spectra, optical constants, the
+// project and its limits, and from what stands on one page.
+var otherCodes = [][2]string{
+	{"missing_data", "a figure is not known, for a reason that no other caution names"},
+	{"missing_band", "a spectrum does not reach, or has no values in, a part of a band with 0.1 % of its weight or more: its figures are not known"},
+	{"extended", "an end was held. Of a pane's spectrum: its first or last value, for less than 0.1 % of the weight of a band, or its infrared rows to 50 µm. Of optical constants: their first value (that of built-in glass at 310 nm) down to 300 nm, or their reflectance to 50 µm"},
+	{"interpolated", "a spectrum has no values in a part of a band with less than 0.1 % of its weight; those beside it were joined"},
+	{"set_to_bound", "values just outside 0 to 1, or shares that add to just more than 1, were set to the bound"},
+	{"coarse_steps", "a spectrum or optical constants in steps too wide for the tables of the standards"},
+	{"emissivity_differs", "an emissivity was typed, and infrared rows give another by more than 0.02"},
+	{"sun_range", "the project's own sun does not reach from 300 to 2500 nm"},
+	{"coefficients_not_used", "coefficients were given for a basis whose U and g are not known in this version"},
+	{"conditions_not_rated", "the project has conditions, which this version does not rate"},
+	{"limits_not_checked", "the project has limits, against which the page does not hold its figures"},
+	{"limit_basis", "check: a limit names no basis, and that of the project was taken"},
+	{"limit_scope", "check: a limit names no scope, and the centre of the glass was taken"},
+	{"limit_makeup_absent", "check: a file of limits names a make-up that the project does not have"},
+	{"no_limit", "check: no limit is for a make-up"},
+	{MixedBasis.Code, "figures under more than one basis stand on one page"},
+}
+
+// CautionCodes returns every code that a caution of any output can have, and when it applies.
 func CautionCodes() [][2]string {
 	var out [][2]string
 	for _, r := range cautionRules {
 		out = append(out, [2]string{r.code, r.when})
 	}
-	return out
+	return append(out, otherCodes...)
 }
 
 // MixedBasis is the caution of a page that shows more than one basis.

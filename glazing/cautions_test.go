@@ -1,10 +1,131 @@
 package glazing
 
 import (
+	"go/ast"
+	"go/parser"
+	"go/token"
+	"io/fs"
+	"path/filepath"
 	"slices"
+	"strconv"
 	"strings"
 	"testing"
 )
+
+// The list of codes has every code that the sources of the module give a caution, each once and
+// with words, and no other.
+func TestCautionCodesAreWhole(t *testing.T) {
+	made := map[string]bool{}
+	for _, r := range cautionRules {
+		made[r.code] = true
+	}
+	constants := map[string]string{} // of text, by name
+	var later []string               // names of constants that are codes
+	var at func(x ast.Expr, where string)
+	at = func(x ast.Expr, where string) {
+		switch x := x.(type) {
+		case *ast.BasicLit:
+			code, err := strconv.Unquote(x.Value)
+			if err != nil {
+				t.Fatal(err)
+			}
+			made[code] = true
+		case *ast.Ident:
+			if x.Name != "code" { // a parameter of reach's add, whose calls are looked at
+				later = append(later, x.Name)
+			}
+		case *ast.SelectorExpr:
+			if x.Sel.Name != "code" { // that of a rule
+				later = append(later, x.Sel.Name)
+			}
+		default:
+			t.Errorf("%s: the code of a caution is neither a text nor a constant", where)
+		}
+	}
+	literal := func(list *ast.CompositeLit, where string) {
+		for i, e := range list.Elts {
+			if pair, ok := e.(*ast.KeyValueExpr); ok && pair.Key.(*ast.Ident).Name == "Code" {
+				at(pair.Value, where)
+			} else if !ok && i == 0 {
+				at(e, where)
+			}
+		}
+	}
+	isCaution := func(x ast.Expr) bool {
+		switch x := x.(type) {
+		case *ast.Ident:
+			return x.Name == "Caution"
+		case *ast.SelectorExpr:
+			return x.Sel.Name == "Caution"
+		}
+		return false
+	}
+	err := filepath.WalkDir("..", func(path string, d fs.DirEntry, err error) error {
+		if err != nil || d.IsDir() || !strings.HasSuffix(path, ".go") || strings.HasSuffix(path, "_test.go") {
+			return err
+		}
+		file, err := parser.ParseFile(token.NewFileSet(), path, nil, 0)
+		if err != nil {
+			return err
+		}
+		ast.Inspect(file, func(n ast.Node) bool {
+			switch n := n.(type) {
+			case *ast.ValueSpec:
+				for i, name := range n.Names {
+					if i < len(n.Values) {
+						if text, ok := n.Values[i].(*ast.BasicLit); ok && text.Kind == token.STRING {
+							constants[name.Name], _ = strconv.Unquote(text.Value)
+						}
+					}
+				}
+			case *ast.CompositeLit:
+				list, many := n.Type.(*ast.ArrayType)
+				switch {
+				case n.Type != nil && isCaution(n.Type):
+					literal(n, path)
+				case many && isCaution(list.Elt):
+					for _, e := range n.Elts {
+						if one, ok := e.(*ast.CompositeLit); ok {
+							literal(one, path)
+						}
+					}
+				}
+			case *ast.CallExpr:
+				if f, ok := n.Fun.(*ast.Ident); ok && f.Name == "add" && filepath.Base(path) == "method.go" {
+					at(n.Args[0], path)
+				}
+			}
+			return true
+		})
+		return nil
+	})
+	if err != nil {
+		t.Fatal(err)
+	}
+	for _, name := range later {
+		if constants[name] == "" {
+			t.Errorf("%s is no constant, and the code of a caution", name)
+		}
+		made[constants[name]] = true
+	}
+	listed := map[string]bool{}
+	for _, c := range CautionCodes() {
+		if listed[c[0]] || c[1] == "" {
+			t.Errorf("%s stands twice, or without words", c[0])
+		}
+		if listed[c[0]] = true; !made[c[0]] {
+			t.Errorf("%s is listed and made nowhere", c[0])
+		}
+	}
+	for code := range made {
+		if !listed[code] {
+			t.Errorf("%s is not in the list of codes", code)
+		}
+	}
+	if len(made) < 40 {
+		t.Errorf("%d codes were found", len(made))
+	}
+}
 
 // Each caution appears on one side of its threshold and not on the other. What is shown is
 // varied from a make-up that has none but those that always apply.

@@ -6,6 +6,7 @@ package glazing
 import (
 	"fmt"
 	"slices"
+	"strconv"
 
 	"panewright/spectra/colour"
 )
@@ -68,6 +69,10 @@ func inputDifferences(reference, option *Rating) []string {
 			out = append(out, fmt.Sprintf("%s: %s instead of %s.", what, is, was))
 		}
 	}
+	numbers := func(what string, is, was float64, digits int, unit string) {
+		one, two := apart(is, was, digits)
+		differ(what, one+unit, two+unit)
+	}
 	a, b := reference.Makeup, option.Makeup
 	differ("Basis", option.Method.Basis.Name, reference.Method.Basis.Name)
 	if reference.Method.Basis.Name == option.Method.Basis.Name {
@@ -89,15 +94,26 @@ func inputDifferences(reference, option *Rating) []string {
 			differ(what, b.gapInput(k), a.gapInput(k))
 			continue
 		}
-		differ(what, millimetres(b.Gaps[k].WidthMM), millimetres(a.Gaps[k].WidthMM))
-		differ(what, b.Gaps[k].Gas.String(), a.Gaps[k].Gas.String())
+		numbers(what, b.Gaps[k].WidthMM, a.Gaps[k].WidthMM, 6, " mm")
+		is, was := b.Gaps[k].Gas, a.Gaps[k].Gas
+		differ(what, is.String(), was.String())
+		if is.String() == was.String() { // shares that differ below what is printed
+			for i := range min(len(is), len(was)) {
+				numbers(what+", share of "+is[i].Gas, is[i].Fraction, was[i].Fraction, 4, "")
+			}
+		}
 	}
-	differ("Tilt", fmt.Sprintf("%.6g°", b.Tilt.Degrees()), fmt.Sprintf("%.6g°", a.Tilt.Degrees()))
+	numbers("Tilt", b.Tilt.Degrees(), a.Tilt.Degrees(), 6, "°")
 	if !a.Tilt.Vertical() || !b.Tilt.Vertical() {
 		differ("Heat flow", flowNames[b.HeatFlow], flowNames[a.HeatFlow])
 	}
 	for k := range min(len(reference.Surfaces), len(option.Surfaces)) {
-		differ(fmt.Sprintf("Emissivity of surface %d", k+1), option.emissivityInput(k), reference.emissivityInput(k))
+		what, is, was := fmt.Sprintf("Emissivity of surface %d", k+1), option.Surfaces[k].Corrected, reference.Surfaces[k].Corrected
+		if is.Known && was.Known {
+			numbers(what, is.Number, was.Number, 4, "")
+		} else {
+			differ(what, emissivityInput(is), emissivityInput(was))
+		}
 	}
 	var names []string
 	for _, t := range slices.Concat(a.Typed, b.Typed) {
@@ -155,9 +171,23 @@ func (m *Makeup) gapInput(k int) string {
 	return millimetres(m.Gaps[k].WidthMM) + " " + m.Gaps[k].Gas.String()
 }
 
-func (r *Rating) emissivityInput(k int) string {
-	if v := r.Surfaces[k].Corrected; v.Known {
+func emissivityInput(v Value) string {
+	if v.Known {
 		return fmt.Sprintf("%.4g", v.Number)
 	}
 	return "not known"
+}
+
+// sameInput is how many digits of two inputs are the same where they differ by rounding alone.
+const sameInput = 10
+
+// apart prints two numbers with as many digits as are given, or, where they would look the same,
+// with as many as they need to differ.
+func apart(a, b float64, digits int) (string, string) {
+	for ; ; digits++ {
+		one, two := strconv.FormatFloat(a, 'g', digits, 64), strconv.FormatFloat(b, 'g', digits, 64)
+		if one != two || digits >= sameInput {
+			return one, two
+		}
+	}
 }

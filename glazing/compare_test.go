@@ -64,6 +64,32 @@ func TestInputDifferences(t *testing.T) {
 	}
 }
 
+// Inputs that look the same as they are printed are printed with the digits in which they differ;
+// what differs by rounding alone does not.
+func TestInputsThatLookTheSame(t *testing.T) {
+	make := func(room, mm, argon, tilt float64) *Rating {
+		m := doubleOf(t, mm, map[string]float64{"argon": argon, "air": 1 - argon}, 0.837, 0.04, room)
+		m.Tilt = TiltDeg(tilt)
+		return rateOne(t, m, EN, Options{})
+	}
+	a := make(0.82826, 16, 0.9, 60)
+	for _, tt := range []struct {
+		option *Rating
+		want   string
+	}{
+		{make(0.82834, 16, 0.9, 60), "Emissivity of surface 4: 0.82834 instead of 0.82826."},
+		{make(0.8282, 16, 0.9, 60), "Emissivity of surface 4: 0.8282 instead of 0.8283."},
+		{make(0.82826, 16.00001, 0.9, 60), "Gap 1: 16.00001 mm instead of 16 mm."},
+		{make(0.82826, 16, 0.9, 60.00004), "Tilt: 60.00004° instead of 60°."},
+		{make(0.82826, 16, 0.90000004, 60), "Gap 1, share of air: 0.09999996 instead of 0.1. Gap 1, share of argon: 0.90000004 instead of 0.9."},
+		{make(0.82826*(1+1e-14), 16*(1+1e-15), 0.9, 60), ""},
+	} {
+		if got := strings.Join(Compare(a, tt.option).Inputs, " "); got != tt.want {
+			t.Errorf("differences %q, want %q", got, tt.want)
+		}
+	}
+}
+
 // A rating does not differ from itself; a difference changes its sign with the direction; the
 // difference of two colours is that of package colour.
 func TestCompare(t *testing.T) {

@@ -1,6 +1,7 @@
 package glazing
 
-// What one curve is good for: its weighted means, and which figures it leaves unknown.
+// What one curve is good for: its weighted means, and which figures it leaves unknown; and what the
+// emissivities of a pane leave of U and g.
 
 import "panewright/spectra"
 
@@ -35,4 +36,28 @@ func (m *Method) Covers(pane string, c spectra.Curve) []Coverage {
 		list = append(list, v)
 	}
 	return list
+}
+
+// CoversHeat returns what a rating says of the emissivity of either face of a pane of one tint, and of
+// U and g of the pane alone with its front outside and turned, by the same code. Shares and cautions
+// are left empty. It is an error if the pane is impossible.
+func (m *Method) CoversHeat(p *Pane) ([]Coverage, error) {
+	of := func(name string, v Value) Coverage { return Coverage{Band: name, Why: v.Why, Mean: v} }
+	list := []Coverage{of("emissivity front", p.Tints[0].Front.Corrected), of("emissivity back", p.Tints[0].Back.Corrected)}
+	var g []Coverage
+	for _, x := range []struct {
+		placed Placed
+		also   string
+	}{{Placed{Pane: p}, ""}, {Placed{Pane: p, Turned: true}, " turned"}} {
+		ready, err := m.Ready(&Makeup{ID: p.ID, Panes: []Placed{x.placed}})
+		if err != nil {
+			return nil, err
+		}
+		var r Rating
+		if err := ready.RateInto(&r, 0); err != nil {
+			return nil, err
+		}
+		list, g = append(list, of("U"+x.also, r.U)), append(g, of("g"+x.also, r.G))
+	}
+	return append(list, g...), nil
 }

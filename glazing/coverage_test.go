@@ -93,3 +93,66 @@ func TestCoversShares(t *testing.T) {
 	}
 	t.Error("no band uv")
 }
+
+// U and g, and their reasons, are those of a rating: known where the face that looks inside has an
+// emissivity and the basis needs no detailed balance, g only where the sun is covered.
+func TestCoversHeatAgreesWithRatings(t *testing.T) {
+	flat := func(v float64, last float64) spectra.Curve {
+		return evenly(300, last, 5, func(float64) float64 { return v })
+	}
+	far := evenly(5000, 50000, 500, func(float64) float64 { return 0.9 })
+	for _, tt := range []struct {
+		name        string
+		front, back Emissivity
+		last        float64 // nm of the spectrum
+		infrared    spectra.Curve
+		known       []string // under en and iso
+	}{
+		{"no infrared rows", NoEmissivity(), NoEmissivity(), 2500, spectra.Curve{}, nil},
+		{"of the back", NoEmissivity(), InfraredEmissivity(far, spectra.Curve{}), 2500, spectra.Curve{}, []string{"emissivity back", "U", "g"}},
+		{"of the front", InfraredEmissivity(far, spectra.Curve{}), NoEmissivity(), 2500, spectra.Curve{}, []string{"emissivity front", "U turned", "g turned"}},
+		{"of both", GivenEmissivity(0.837), GivenNormalEmissivity(0.05), 2500, spectra.Curve{}, []string{"emissivity front", "emissivity back", "U", "U turned", "g", "g turned"}},
+		{"of a spectrum that stops early", GivenEmissivity(0.837), GivenEmissivity(0.837), 900, spectra.Curve{}, []string{"emissivity front", "emissivity back", "U", "U turned"}},
+		{"of a sheet that lets infrared through", GivenEmissivity(0.837), GivenEmissivity(0.837), 2500, evenly(5000, 50000, 500, func(float64) float64 { return 0.1 }), []string{"emissivity front", "emissivity back"}},
+	} {
+		pane := &Pane{ID: "p", Plies: []Ply{{ThicknessMM: 6, ConductivityWMK: 1, DensityKGM3: 2500}},
+			Tints: []Tint{{Spectrum: spectra.Measured{Tau: flat(0.5, tt.last), RhoFront: flat(0.1, tt.last), RhoBack: flat(0.1, tt.last), InfraredTau: tt.infrared}, Front: tt.front, Back: tt.back}}}
+		for _, b := range Bases() {
+			list, err := NewMethod(b, Options{}).CoversHeat(pane)
+			if err != nil {
+				t.Fatal(err)
+			}
+			want := map[string]Value{}
+			for _, turned := range []bool{false, true} {
+				ratings, err := Rate(&Makeup{ID: "m", Panes: []Placed{{Pane: pane, Turned: turned}}}, b)
+				if err != nil {
+					t.Fatal(err)
+				}
+				r, also, faces := ratings[0], "", [2]string{"front", "back"}
+				if turned {
+					also, faces = " turned", [2]string{"back", "front"}
+				}
+				want["U"+also], want["g"+also] = r.U, r.G
+				for i, e := range r.Surfaces {
+					want["emissivity "+faces[i]] = e.Corrected
+				}
+			}
+			if len(list) != len(want) {
+				t.Errorf("%s, %s: %d rows, want %d", tt.name, b.Name, len(list), len(want))
+			}
+			for _, c := range list {
+				value := want[c.Band]
+				if c.Mean != value || c.Why != value.Why || c.Below+c.Above+c.Within != 0 {
+					t.Errorf("%s, %s, %s: %+v, a rating has %+v", tt.name, b.Name, c.Band, c, value)
+				}
+				covered := slices.Contains(tt.known, c.Band) && (!b.balance || strings.HasPrefix(c.Band, "emissivity"))
+				if covered != (c.Why == "") {
+					t.Errorf("%s, %s, %s: unknown for %q", tt.name, b.Name, c.Band, c.Why)
+				}
+			}
+		}
+	}
+	if _, err := NewMethod(EN, Options{}).CoversHeat(&Pane{ID: "p", Tints: []Tint{{}}}); err == nil {
+		t.Error("a pane of nothing has U")
+	}
+}

@@ -22,21 +22,24 @@ const (
 // A Figure is one row of the list that every output is made from: table, JSON and explain print
 // what stands here and nothing else, so that a figure added here appears everywhere.
 type Figure struct {
-	Key     string // JSON path; "#" stands for the number of the pane, gap or surface
-	Alias   string // short name, accepted wherever a figure is typed
-	Symbol  string // the trade's symbol
-	Mark    string // follows the symbol in a heading where other figures have the same
-	Unit    string
-	Places  int  // decimals as printed
-	Small   bool // three decimals below 0.05
-	BasisU  bool // decimals of a U-value, which depend on the basis
-	Column  int  // place among the columns of the schedule, from 1; 0 for none
-	Beside  bool // compare shows it too, beside the columns of the schedule
-	Per     Per
-	Clause  string // where the standard defines it; numbers of clauses are from memory
-	Meaning string
-	Value   func(r *Rating, i int) Value  // i counts panes, gaps or surfaces from 0
-	Text    func(r *Rating, i int) string // instead of Value, a fact that is no number
+	Key    string // JSON path; "#" stands for the number of the pane, gap or surface
+	Alias  string // short name, accepted wherever a figure is typed, as are symbol and key
+	Symbol string // the trade's symbol
+	Mark   string // follows the symbol in a heading where other figures have the same
+	Unit   string
+	Places int  // decimals as printed
+	Small  bool // three decimals below 0.05
+	BasisU bool // decimals of a U-value, which depend on the basis
+	Column int  // place among the columns of the schedule, from 1; 0 for none
+	Beside bool // compare shows it too, beside the columns of the schedule
+	// Numbering marks the number of the place itself: lists in JSON need it, columns that bear it in
+	// their heads do not.
+	Numbering bool
+	Per       Per
+	Clause    string // where the standard defines it; numbers of clauses are from memory
+	Meaning   string
+	Value     func(r *Rating, i int) Value  // i counts panes, gaps or surfaces from 0
+	Text      func(r *Rating, i int) string // instead of Value, a fact that is no number
 }
 
 // whole makes the accessor of a figure that occurs once.
@@ -147,7 +150,7 @@ func thermalFigures() []Figure {
 		return func(r *Rating, i int) Value { return f(r.Surfaces[i]) }
 	}
 	list := []Figure{
-		{Key: "surfaces.#.number", Per: PerSurface, Meaning: "number of a surface, from outside",
+		{Key: "surfaces.#.number", Per: PerSurface, Numbering: true, Meaning: "number of a surface, from outside",
 			Value: func(_ *Rating, i int) Value { return known(float64(i + 1)) }},
 		{Key: "surfaces.#.emissivity_normal", Alias: "emissivity_normal", Symbol: "εn", Places: 3, Per: PerSurface, Clause: "EN 12898",
 			Meaning: "normal emissivity at 283 K", Value: surface(func(e Emissivity) Value { return e.Normal })},
@@ -188,23 +191,47 @@ func thermalFigures() []Figure {
 	)
 }
 
-// Named reports whether a name that somebody typed is the figure's: its alias, or its key with
-// any number in the place of "#".
+// Named reports whether a name that somebody typed is the figure's.
 func (f Figure) Named(name string) bool {
-	if name == f.Alias && name != "" {
-		return true
+	_, ok := f.Place(name)
+	return ok
+}
+
+// Place returns the number of the pane, gap or surface, from 1, that a name of the figure holds; 0
+// where it stands for every one. A name is the alias, the key with any number in the place of "#",
+// or the symbol with its mark, as headings show it, and perhaps a number.
+func (f Figure) Place(name string) (place int, ok bool) {
+	symbol := f.Symbol + f.Mark
+	if name != "" && (name == f.Alias || name == symbol) {
+		return 0, true
+	}
+	if number, begins := strings.CutPrefix(name, symbol); begins && symbol != "" && f.Per != PerMakeup {
+		if place, ok = placeOf(number); ok {
+			return place, true
+		}
 	}
 	have, want := strings.Split(name, "."), strings.Split(f.Key, ".")
 	if len(have) != len(want) {
-		return false
+		return 0, false
 	}
 	for i, part := range want {
-		n, err := strconv.Atoi(have[i])
-		if number := err == nil && n >= 1; have[i] != part && !(part == "#" && number) {
-			return false
+		if have[i] == part {
+			continue
+		}
+		if place, ok = placeOf(have[i]); part != "#" || !ok {
+			return 0, false
 		}
 	}
-	return true
+	return place, true
+}
+
+// placeOf reads the number of a pane, gap or surface.
+func placeOf(s string) (int, bool) {
+	n, err := strconv.Atoi(s)
+	if err != nil || n < 1 {
+		return 0, false
+	}
+	return n, true
 }
 
 // Count returns how many times the figure occurs in a rating.

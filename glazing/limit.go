@@ -138,19 +138,13 @@ func (l *Limit) Origin() string {
 	return s + "; source: " + said(l.Source, "none given") + "; date: " + said(l.Date, "none given")
 }
 
-// FigureNamed returns the figure that a name means, its alias or its key, and the number of the
-// pane, gap or surface in a key; 0 where the name stands for every one.
+// FigureNamed returns the figure that a name means, as Figure.Place reads it, and the number of the
+// pane, gap or surface in the name; 0 where it stands for every one.
 func FigureNamed(name string) (f Figure, place int, ok bool) {
 	for _, f := range Figures() {
-		if !f.Named(name) {
-			continue
+		if place, ok := f.Place(name); ok {
+			return f, place, true
 		}
-		for part := range strings.SplitSeq(name, ".") {
-			if n, err := strconv.Atoi(part); err == nil {
-				place = n
-			}
-		}
-		return f, place, true
 	}
 	return Figure{}, 0, false
 }

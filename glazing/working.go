@@ -102,11 +102,11 @@ func putFor(v, result float64) string {
 func minus(a, b float64) string { return putFor(a, a-b) + " − " + putFor(b, a-b) }
 
 // Working returns the calculation of a rating in the order of a hand calculation, from the
-// intermediates that the rating keeps: the weighted figures, the combination of panes at one
+// intermediates that the rating keeps: thickness and mass, the weighted figures, the combination of panes at one
 // wavelength, colours, emissivities, every gap, U and g; then U of other gas fills and the
 // sensitivities, each of which is rated anew.
 func Working(r *Rating) []Chapter {
-	out := []Chapter{workLight(r), workStack(r), workSolar(r), workUV(r)}
+	out := []Chapter{workMass(r), workLight(r), workStack(r), workSolar(r), workUV(r)}
 	out = append(out, workColours(r)...)
 	out = append(out, workRendering(r)...)
 	out = append(out, workEmissivities(r))

@@ -4,6 +4,7 @@ package glazing
 
 import (
 	"fmt"
+	"math"
 	"strconv"
 	"strings"
 
@@ -14,19 +15,22 @@ import (
 func workHeat(r *Rating) []Chapter {
 	var out []Chapter
 	for k := range r.Gaps {
-		out = append(out, workGap(r, k, r.Gaps, r.Ready.tilted, ""))
+		out = append(out, workGap(r, k, r.Gaps, r.Makeup.Tilt.Degrees(), ""))
 	}
 	out = append(out, workU(r))
 	if len(r.Gaps) > 0 && r.Ready.tilted != r.Ready.vertical {
 		for k := range r.GapsG {
-			out = append(out, workGap(r, k, r.GapsG, r.Ready.vertical, " as g has it: upright"))
+			out = append(out, workGap(r, k, r.GapsG, uprightDeg, " as g has it: upright"))
 		}
 	}
 	return append(out, workG(r))
 }
 
-// workGap writes out the conductance of gap k of the given states.
-func workGap(r *Rating, k int, states []thermal.GapState, convection thermal.Convection, suffix string) Chapter {
+// uprightDeg is the tilt for which g has its gaps (EN 410, 5.4.6).
+const uprightDeg = 90
+
+// workGap writes out the conductance of gap k of the given states, which are those at a tilt.
+func workGap(r *Rating, k int, states []thermal.GapState, tiltDeg float64, suffix string) Chapter {
 	g, s := r.Ready.prepared[r.State].gaps[k], states[k]
 	c := Chapter{Title: fmt.Sprintf("Gap %d%s: %.6g mm %s, surfaces %d and %d", k+1, suffix, r.Makeup.Gaps[k].WidthMM, g.Gas.Name, 2*k+2, 2*k+3)}
 	mixture := r.Makeup.Gaps[k].Gas
@@ -64,13 +68,8 @@ func workGap(r *Rating, k int, states []thermal.GapState, convection thermal.Con
 			Numbers: put(g.Gas.ViscosityPaS) + "·" + put(g.Gas.HeatCapacityJKGK) + "/" + put(g.Gas.ConductivityWMK), Value: s.Prandtl, Clause: "EN 673 (8)"},
 		Step{Symbol: "Gr·Pr", Meaning: "Rayleigh number", Formula: "Gr·Pr", Numbers: put(s.Grashof) + "·" + put(s.Prandtl), Value: s.Rayleigh, Clause: "EN 673 (6)"},
 	)
-	nu := Step{Symbol: "Nu", Meaning: "Nusselt number", Formula: "max(1, A·(Gr·Pr)^n)", Value: s.Nusselt, Clause: "EN 673 (6)",
-		Numbers: fmt.Sprintf("max(1, %s·%s^%s)", put(convection.First.A), put(s.Rayleigh), put(convection.First.N))}
-	if convection.Still {
-		nu.Formula, nu.Numbers = "1, as heat flows down", "1"
-	}
 	hg := fmt.Sprintf("%s·%s/%s", put(s.Nusselt), put(g.Gas.ConductivityWMK), put(g.WidthM))
-	c.Steps = append(steps, nu,
+	c.Steps = append(append(steps, workNusselt(s, tiltDeg, r.Makeup.HeatFlow)...),
 		Step{Symbol: "hg", Meaning: "gas conductance", Formula: "Nu·λ/s", Numbers: hg, Value: s.Convective, Unit: "W/(m²·K)", Clause: "EN 673 (5)"},
 		Step{Symbol: "hr", Meaning: "radiative conductance", Formula: fmt.Sprintf("4·σ·Tm^3/(1/ε%d + 1/ε%d − 1)", 2*k+2, 2*k+3),
 			Numbers: fmt.Sprintf("4·%s·%s^3/(1/%s + 1/%s − 1)", put(thermal.StefanBoltzmann), put(thermal.MeanTemperature), put(g.Emissivity[0]), put(g.Emissivity[1])),
@@ -78,6 +77,38 @@ func workGap(r *Rating, k int, states []thermal.GapState, convection thermal.Con
 		Step{Symbol: "hs", Meaning: "conductance of the gap", Formula: "hr + hg", Numbers: put(s.Radiative) + " + " + put(s.Convective), Value: s.Total, Unit: "W/(m²·K)", Clause: "EN 673 (3)"},
 	)
 	return c
+}
+
+// tabulatedDeg is how far the tilts lie apart for which EN 673 gives A and n: 0, 45 and 90°.
+const tabulatedDeg = 45
+
+// workNusselt writes out the Nusselt number of a gap at a tilt, and its constants A and n, which
+// between the tilts of the standard are interpolated.
+func workNusselt(s thermal.GapState, tiltDeg float64, flow HeatFlow) []Step {
+	const clause = "EN 673, 5.3"
+	c, between := thermal.ConvectionAt(tiltDeg, flow), thermal.ConvectionBetween(tiltDeg, flow)
+	nu := Step{Symbol: "Nu", Meaning: "Nusselt number", Formula: "max(1, A·(Gr·Pr)^n)", Value: s.Nusselt, Clause: "EN 673 (6)",
+		Numbers: fmt.Sprintf("max(1, %s·%s^%s)", put(c.First.A), put(s.Rayleigh), put(c.First.N))}
+	if c.Still {
+		nu.Formula, nu.Numbers = "1, as heat flows down", "1"
+		return []Step{nu}
+	}
+	tilt, numbers := "tilt", put(tiltDeg)
+	if tiltDeg > uprightDeg {
+		tilt, numbers = "(180 − tilt)", "(180 − "+put(tiltDeg)+")"
+		tiltDeg = 180 - tiltDeg
+	}
+	lower := tabulatedDeg * math.Floor(tiltDeg/tabulatedDeg)
+	constant := func(symbol string, value, first, second float64) Step {
+		step := Step{Symbol: symbol, Meaning: "constant of the tilt", Formula: fmt.Sprintf("of the standard at %g°", tiltDeg), Numbers: put(value), Value: value, Clause: clause}
+		if between.Weight != 0 {
+			step.Formula = fmt.Sprintf("%s at %g° + (%s at %g° − %s at %g°)·(%s − %g)/%d",
+				symbol, lower, symbol, lower+tabulatedDeg, symbol, lower, tilt, lower, tabulatedDeg)
+			step.Numbers = fmt.Sprintf("%s + (%s)·(%s − %s)/%d", put(first), minus(second, first), numbers, put(lower), tabulatedDeg)
+		}
+		return step
+	}
+	return []Step{constant("A", c.First.A, between.First.A, between.Second.A), constant("n", c.First.N, between.First.N, between.Second.N), nu}
 }
 
 // inner writes out hi of one of the basis's two sets of surfaces.
@@ -101,22 +132,29 @@ func outer(r *Rating, value float64, clause string) Step {
 	return step
 }
 
-// workGlass writes out the resistance of all panes.
-func workGlass(r *Rating) Step {
-	var parts []string
-	for _, p := range r.Makeup.Panes {
+// workGlass writes out the resistance of each pane and of all.
+func workGlass(r *Rating) []Step {
+	const unit, clause = "m²·K/W", "EN 673 (2)"
+	var steps []Step
+	var symbols, values []string
+	for k, p := range r.Makeup.Panes {
+		var parts []string
 		for _, y := range p.Pane.Plies {
 			parts = append(parts, put(y.ThicknessMM/1000)+"/"+put(y.ConductivityWMK))
 		}
+		symbols, values = append(symbols, fmt.Sprintf("Rg%d", k+1)), append(values, put(r.Ready.glass[k]))
+		steps = append(steps, Step{Symbol: symbols[k], Meaning: fmt.Sprintf("resistance of pane %d", k+1), Formula: "Σ d/λ of its plies, d in m",
+			Numbers: strings.Join(parts, " + "), Value: r.Ready.glass[k], Unit: unit, Clause: clause})
 	}
-	return Step{Symbol: "Rg", Meaning: "resistance of the panes", Formula: "Σ d/λ", Numbers: strings.Join(parts, " + "), Value: r.Ready.glassResistance(), Unit: "m²·K/W", Clause: "EN 673 (2)"}
+	return append(steps, Step{Symbol: "Rg", Meaning: "resistance of the panes", Formula: strings.Join(symbols, " + "),
+		Numbers: strings.Join(values, " + "), Value: r.Ready.glassResistance(), Unit: unit, Clause: clause})
 }
 
-// resistance writes out 1/he + 1/hi + Rg + Σ 1/hs.
-func resistance(he, hi float64, glass *Step, gaps []thermal.GapState, value float64, clause string) Step {
-	s := Step{Symbol: "R", Meaning: "resistance from air to air", Formula: "1/he + 1/hi", Numbers: "1/" + put(he) + " + 1/" + put(hi), Value: value, Unit: "m²·K/W", Clause: clause}
-	if glass != nil {
-		s.Formula, s.Numbers = s.Formula+" + Rg", s.Numbers+" + "+put(glass.Value)
+// resistance writes out 1/he + 1/hi + Rg + Σ 1/hs; glass is that of Rg, 0 where it is left out.
+func resistance(he, hi, glass float64, gaps []thermal.GapState, value float64, clause string) Step {
+	s := Step{Symbol: "Rt", Meaning: "resistance from air to air", Formula: "1/he + 1/hi", Numbers: "1/" + put(he) + " + 1/" + put(hi), Value: value, Unit: "m²·K/W", Clause: clause}
+	if glass > 0 {
+		s.Formula, s.Numbers = s.Formula+" + Rg", s.Numbers+" + "+put(glass)
 	}
 	for k := range gaps {
 		s.Formula, s.Numbers = s.Formula+fmt.Sprintf(" + 1/hs%d", k+1), s.Numbers+" + 1/"+put(gaps[k].Total)
@@ -126,12 +164,12 @@ func resistance(he, hi float64, glass *Step, gaps []thermal.GapState, value floa
 
 func workU(r *Rating) Chapter {
 	he, hi := r.OutsideWM2K.Number, r.InsideWM2K.Number
-	glass := workGlass(r)
-	total := resistance(he, hi, &glass, r.Gaps, 1/r.U.Number, "EN 673 (1), (2)")
+	total := resistance(he, hi, r.Ready.glassResistance(), r.Gaps, 1/r.U.Number, "EN 673 (1), (2)")
+	steps := append([]Step{outer(r, he, "EN 673, 7"), inner(r, r.Method.Basis.u, hi, "EN 673, 7")}, workGlass(r)...)
 	return Chapter{Title: "U-value of the centre of the glass",
 		Note: "rounded as " + r.Method.Basis.rounding + " rounds: " + PrintRounded(r.U.Number, r.Method.Basis.uPlaces) + " W/(m²·K)",
-		Steps: []Step{outer(r, he, "EN 673, 7"), inner(r, r.Method.Basis.u, hi, "EN 673, 7"), glass, total,
-			{Symbol: "U", Meaning: "thermal transmittance", Formula: "1/R", Numbers: "1/" + put(total.Value), Value: r.U.Number, Unit: "W/(m²·K)", Clause: "EN 673 (1)"}}}
+		Steps: append(steps, total,
+			Step{Symbol: "U", Meaning: "thermal transmittance", Formula: "1/Rt", Numbers: "1/" + put(total.Value), Value: r.U.Number, Unit: "W/(m²·K)", Clause: "EN 673 (1)"})}
 }
 
 func workG(r *Rating) Chapter {
@@ -143,32 +181,35 @@ func workG(r *Rating) Chapter {
 	he, hi, n := r.OutsideGWM2K.Number, r.InsideGWM2K.Number, len(r.Makeup.Panes)
 	gaps, clause := r.GapsG, "EN 410, 5.4.6"
 	c.Steps = []Step{outer(r, he, clause), inner(r, r.Method.Basis.g, hi, clause)}
-	glass := workGlass(r)
-	of := &glass
-	if n == 1 {
-		of = nil // the standards leave the glass of a single pane out
+	glass := 0.0 // the standards leave the glass of a single pane out
+	if n > 1 {
+		glass = r.Ready.glassResistance()
+		c.Steps = append(c.Steps, workGlass(r)...)
 	}
 	// Panes are nodes: the outermost at its outer face, the innermost at its inner face, the
-	// others at mid-glass. outside is the glass between surface 1 and the node of pane k+1.
-	a0, outside := put(r.absorbed[0])+"/"+put(he), 0.0
+	// others at mid-glass. outside is the glass between surface 1 and the node of a pane.
+	a0, a0Formula := put(r.absorbed[0])+"/"+put(he), "αe1/he"
+	var outside, outsideFormula string
+	part := func(k int, whole bool) (formula, number string) {
+		formula, number = fmt.Sprintf("Rg%d", k+1), put(r.Ready.glass[k])
+		if !whole {
+			formula, number = formula+"/2", number+"/2"
+		}
+		return formula, number
+	}
 	for k := 1; k < n; k++ {
-		before, after := r.Ready.glass[k-1]/2, r.Ready.glass[k]/2
-		formula := fmt.Sprintf("1/(R%d/2 + 1/hs%d + R%d/2)", k, k, k+1)
-		if k == 1 {
-			before *= 2
-			formula = strings.Replace(formula, "R1/2", "R1", 1)
-		}
-		if k == n-1 {
-			after *= 2
-			formula = strings.Replace(formula, fmt.Sprintf("R%d/2)", k+1), fmt.Sprintf("R%d)", k+1), 1)
-		}
-		outside += before + after
-		a0 += fmt.Sprintf(" + %s·(1/%s + %s)", put(r.absorbed[k]), put(he), put(outside))
-		c.Steps = append(c.Steps, Step{Symbol: fmt.Sprintf("Λ%d", k), Meaning: "conductance between two panes", Formula: formula,
-			Numbers: fmt.Sprintf("1/(%s + 1/%s + %s)", put(before), put(gaps[k-1].Total), put(after)), Value: r.Heat.Conductances[k-1], Unit: "W/(m²·K)", Clause: clause})
+		beforeFormula, before := part(k-1, k == 1)
+		afterFormula, after := part(k, k == n-1)
+		outsideFormula += " + " + beforeFormula + " + " + afterFormula
+		outside += " + " + before + " + " + after
+		a0Formula += fmt.Sprintf(" + αe%d·(1/he%s)", k+1, outsideFormula)
+		a0 += fmt.Sprintf(" + %s·(1/%s%s)", put(r.absorbed[k]), put(he), outside)
+		c.Steps = append(c.Steps, Step{Symbol: fmt.Sprintf("Λ%d", k), Meaning: "conductance between two panes",
+			Formula: fmt.Sprintf("1/(%s + 1/hs%d + %s)", beforeFormula, k, afterFormula),
+			Numbers: fmt.Sprintf("1/(%s + 1/%s + %s)", before, put(gaps[k-1].Total), after), Value: r.Heat.Conductances[k-1], Unit: "W/(m²·K)", Clause: clause})
 	}
 	c.Steps = append(c.Steps, Step{Symbol: "a0", Meaning: "absorbed sun times resistance outside it",
-		Formula: "Σ αe·(1/he + glass outside the pane)", Numbers: a0, Value: r.Heat.A0, Unit: "m²·K/W", Clause: clause})
+		Formula: a0Formula, Numbers: a0, Value: r.Heat.A0, Unit: "m²·K/W", Clause: clause})
 	numerator := put(r.Heat.A0)
 	for k, b := range r.Heat.B {
 		var parts []string
@@ -179,10 +220,10 @@ func workG(r *Rating) Chapter {
 			Numbers: strings.Join(parts, " + "), Value: b, Clause: clause})
 		numerator += " + " + put(b) + "/" + put(gaps[k].Total)
 	}
-	total := resistance(he, hi, of, gaps, r.Heat.Resistance, clause)
+	total := resistance(he, hi, glass, gaps, r.Heat.Resistance, clause)
 	g := r.G.Number
 	c.Steps = append(c.Steps, total,
-		Step{Symbol: "qi", Meaning: "secondary heat towards the inside", Formula: "(a0 + Σ b/hs)/R", Numbers: "(" + numerator + ")/" + put(total.Value), Value: r.SecondaryHeat.Number, Clause: clause},
+		Step{Symbol: "qi", Meaning: "secondary heat towards the inside", Formula: "(a0 + Σ b/hs)/Rt", Numbers: "(" + numerator + ")/" + put(total.Value), Value: r.SecondaryHeat.Number, Clause: clause},
 		Step{Symbol: "g", Meaning: "total solar energy transmittance", Formula: "τe + qi", Numbers: put(r.Solar.Transmittance.Number) + " + " + put(r.SecondaryHeat.Number), Value: g, Clause: "EN 410, 5.4.1"},
 		Step{Symbol: "SC", Meaning: "shading coefficient", Formula: "g/0.87", Numbers: put(g) + "/" + put(shadingReference), Value: r.ShadingCoefficient.Number, Clause: "EN 410, 5.7"})
 	if r.LightToSolarGain.Known {

@@ -6,6 +6,7 @@ import (
 	"fmt"
 	"slices"
 	"strconv"
+	"strings"
 
 	"panewright/thermal"
 )
@@ -26,9 +27,22 @@ func workFills(r *Rating) Chapter {
 		c.lack("U of other fills", err.Error())
 		return c
 	}
-	c.remark("Gas leaks and air takes its place; a seal that meets EN 1279-3 loses less than 1 % of the gas a year (from memory). U of the same make-up where gas fills this share of each gap that has any, and air the rest:")
-	c.Rows = &Rows{Head: []string{"gas"}}
-	cells := []string{"U, W/(m²·K)"}
+	var rated []string // shares, each once
+	least := 1.0
+	for _, g := range r.Makeup.Gaps {
+		if share := fill(g.Gas); share > 0 {
+			least = min(least, share)
+			if text := strconv.FormatFloat(100*share, 'g', 6, 64); !slices.Contains(rated, text) {
+				rated = append(rated, text)
+			}
+		}
+	}
+	c.remark("Gas leaks and air takes its place; a seal that meets EN 1279-3 loses less than 1 % of the gas a year (from memory). U as rated, and of the same make-up where gas fills this share of each gap that has any, and air the rest.")
+	if len(fills) > 0 && least < fills[0].Share {
+		c.remark("A share above the rated one is what a fuller gap would have, and not what comes of leaking.")
+	}
+	c.Rows = &Rows{Head: []string{"gas", "as rated " + strings.Join(rated, "/") + " %"}}
+	cells := []string{"U, W/(m²·K)", strconv.FormatFloat(r.U.Number, 'g', 6, 64)}
 	for _, f := range fills {
 		c.Rows.Head = append(c.Rows.Head, PrintRounded(100*f.Share, 0)+" %")
 		cells = append(cells, strconv.FormatFloat(f.UWM2K, 'g', 6, 64))

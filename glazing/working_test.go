@@ -3,6 +3,7 @@ package glazing
 import (
 	"math"
 	"slices"
+	"strconv"
 	"strings"
 	"testing"
 
@@ -208,14 +209,17 @@ func TestWorkingOfFills(t *testing.T) {
 	for _, tt := range []struct {
 		gas   map[string]float64
 		title string
+		rated string // share in the head
 		rows  int
 	}{
-		{map[string]float64{"argon": 0.9, "air": 0.1}, "Argon and time", 1},
-		{map[string]float64{"argon": 0.5, "krypton": 0.5}, "Gas and time", 1},
-		{map[string]float64{"air": 1}, "Gas and time", 0},
-		{map[string]float64{"argon": 0, "air": 1}, "Gas and time", 0},
+		{map[string]float64{"argon": 0.9, "air": 0.1}, "Argon and time", "90", 1},
+		{map[string]float64{"argon": 0.6, "air": 0.4}, "Argon and time", "60", 1},
+		{map[string]float64{"argon": 0.5, "krypton": 0.5}, "Gas and time", "100", 1},
+		{map[string]float64{"air": 1}, "Gas and time", "", 0},
+		{map[string]float64{"argon": 0, "air": 1}, "Gas and time", "", 0},
 	} {
-		chapters := Working(rateOne(t, doubleOf(t, 12, tt.gas, 0.837, 0.04, 0.837), EN, Options{}))
+		r := rateOne(t, doubleOf(t, 12, tt.gas, 0.837, 0.04, 0.837), EN, Options{})
+		chapters := Working(r)
 		at := slices.IndexFunc(chapters, func(c Chapter) bool { return c.Title == tt.title })
 		if at < 0 {
 			t.Errorf("%v: no chapter %q", tt.gas, tt.title)
@@ -224,14 +228,84 @@ func TestWorkingOfFills(t *testing.T) {
 		rows := 0
 		if c := chapters[at]; c.Rows != nil {
 			rows = len(c.Rows.Cells)
-			if strings.Join(c.Rows.Head, " ") != "gas 90 % 85 % 80 %" {
-				t.Errorf("%v: heads %v", tt.gas, c.Rows.Head)
+			if got, want := strings.Join(c.Rows.Head, " "), "gas as rated "+tt.rated+" % 90 % 85 % 80 %"; got != want {
+				t.Errorf("%v: heads %q, want %q", tt.gas, got, want)
+			}
+			if got, want := c.Rows.Cells[0][1], strconv.FormatFloat(r.U.Number, 'g', 6, 64); got != want {
+				t.Errorf("%v: U as rated is %s, want %s", tt.gas, got, want)
+			}
+			if got, want := strings.Contains(c.Note, "a fuller gap would have"), tt.rated == "60"; got != want {
+				t.Errorf("%v: note %q", tt.gas, c.Note)
 			}
 		} else if !strings.Contains(c.Note, "filled with air") {
 			t.Errorf("%v: note %q", tt.gas, c.Note)
 		}
 		if rows != tt.rows || len(chapters[at+1].Rows.Cells) != 5 {
 			t.Errorf("%v: %d rows of fills, %d of sensitivities, want %d and 5", tt.gas, rows, len(chapters[at+1].Rows.Cells), tt.rows)
+		}
+	}
+}
+
+// Thickness and mass by hand: 4 + 12 + 4 mm, and 2·0.004 m of 2500 kg/m³; of a laminate, ply by ply.
+func TestWorkingOfThicknessAndMass(t *testing.T) {
+	m := doubleOf(t, 12, map[string]float64{"air": 1}, 0.837, 0.04, 0.837)
+	got := stepsOf(Working(rateOne(t, m, EN, Options{})), "Thickness")
+	if d := got["d"][0]; d.Numbers != "4 + 12 + 4" || math.Abs(d.Value-20) > 1e-12 {
+		t.Errorf("d is %s = %v", d.Numbers, d.Value)
+	}
+	if kg := got["m"][0]; kg.Numbers != "0.004·2500 + 0.004·2500" || math.Abs(kg.Value-20) > 1e-12 {
+		t.Errorf("m is %s = %v", kg.Numbers, kg.Value)
+	}
+	laminate := *m.Panes[1].Pane
+	laminate.Plies = []Ply{{ThicknessMM: 4, ConductivityWMK: 1, DensityKGM3: 2500}, {ThicknessMM: 0.8, ConductivityWMK: 0.2, DensityKGM3: 1000, Interlayer: true},
+		{ThicknessMM: 3, ConductivityWMK: 1, DensityKGM3: 2500}}
+	m.Panes[1].Pane = &laminate
+	chapters := Working(rateOne(t, m, EN, Options{}))
+	got = stepsOf(chapters, "Thickness")
+	if d, kg := got["d"][0], got["m"][0]; d.Numbers != "4 + 12 + 4 + 0.8 + 3" || kg.Numbers != "0.004·2500 + 0.004·2500 + 0.0008·1000 + 0.003·2500" || math.Abs(kg.Value-28.3) > 1e-12 {
+		t.Errorf("d is %s, m is %s = %v", d.Numbers, kg.Numbers, kg.Value)
+	}
+	// Each pane has its resistance: 0.004/1, and 0.004/1 + 0.0008/0.2 + 0.003/1 = 0.011.
+	for _, title := range []string{"U-value", "g-value"} {
+		got := stepsOf(chapters, title)
+		for symbol, want := range map[string]float64{"Rg1": 0.004, "Rg2": 0.011, "Rg": 0.015} {
+			if len(got[symbol]) != 1 || math.Abs(got[symbol][0].Value-want) > 1e-12 {
+				t.Errorf("%s: %s is %+v, want %v", title, symbol, got[symbol], want)
+			}
+		}
+		if len(got["Rt"]) != 1 || len(got["R"]) > 0 {
+			t.Errorf("%s: the whole resistance is called %+v, %+v", title, got["Rt"], got["R"])
+		}
+	}
+}
+
+// The constants of a tilt by hand from those of EN 673:2011, 5.3 (from memory): A 0.16, 0.10, 0.035
+// and n 0.28, 0.31, 0.38 at 0, 45 and 90°.
+func TestWorkingOfTilts(t *testing.T) {
+	for _, tt := range []struct {
+		deg         float64
+		a, n        string // numbers put in
+		valueA, n30 float64
+	}{
+		{0, "0.16", "0.28", 0.16, 0.28},
+		{30, "0.16 + (0.1 − 0.16)·(30 − 0)/45", "0.28 + (0.31 − 0.28)·(30 − 0)/45", 0.12, 0.30},
+		{45, "0.1", "0.31", 0.10, 0.31},
+		{60, "0.1 + (0.035 − 0.1)·(60 − 45)/45", "0.31 + (0.38 − 0.31)·(60 − 45)/45", 0.1 - 0.065/3, 0.31 + 0.07/3},
+		{90, "0.035", "0.38", 0.035, 0.38},
+		{120, "0.1 + (0.035 − 0.1)·((180 − 120) − 45)/45", "0.31 + (0.38 − 0.31)·((180 − 120) − 45)/45", 0.1 - 0.065/3, 0.31 + 0.07/3},
+	} {
+		m := doubleOf(t, 16, map[string]float64{"air": 1}, 0.837, 0.04, 0.837)
+		m.Tilt = TiltDeg(tt.deg)
+		got := stepsOf(Working(rateOne(t, m, EN, Options{})), "Gap 1: ")
+		if a, n := got["A"][0], got["n"][0]; a.Numbers != tt.a || n.Numbers != tt.n || math.Abs(a.Value-tt.valueA) > 1e-12 || math.Abs(n.Value-tt.n30) > 1e-12 {
+			t.Errorf("%g°: A %s = %v, n %s = %v, want %s = %v, %s = %v", tt.deg, a.Numbers, a.Value, n.Numbers, n.Value, tt.a, tt.valueA, tt.n, tt.n30)
+		}
+		if nu := got["Nu"][0]; nu.Value <= 1 || !strings.Contains(nu.Numbers, put(got["A"][0].Value)+"·") || !strings.HasSuffix(nu.Numbers, "^"+put(got["n"][0].Value)+")") {
+			t.Errorf("%g°: Nu is %s", tt.deg, nu.Numbers)
+		}
+		m.HeatFlow = FlowDown
+		if got := stepsOf(Working(rateOne(t, m, EN, Options{})), "Gap 1: "); (len(got["A"]) > 0) != (tt.deg == 90) {
+			t.Errorf("%g°, heat down: A is %+v", tt.deg, got["A"])
 		}
 	}
 }

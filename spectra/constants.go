@@ -18,7 +18,7 @@ const (
 // error is Errors, or that of r.
 func ReadConstantsCSV(r io.Reader, file string) (n, k Curve, err error) {
 	const leastRows = 2
-	rows, err := readRows(r, file, leastRows)
+	rows, err := readRows(r, file, leastRows, false)
 	if err != nil {
 		return Curve{}, Curve{}, err
 	}
@@ -28,10 +28,10 @@ func ReadConstantsCSV(r io.Reader, file string) (n, k Curve, err error) {
 			rows.fail(rows.headLine, 0, "unknown column %q; optical constants have wavelength_nm or wavelength_um, n, k", clip(head))
 		}
 	}
-	if len(rows.faults) == 0 && (cn.Len() != len(rows.line) || ck.Len() != len(rows.line)) {
+	if !rows.faults.any() && (cn.Len() != len(rows.line) || ck.Len() != len(rows.line)) {
 		rows.fail(rows.headLine, 0, "n and k are needed in every row")
 	}
-	return cn.Curve, ck.Curve, rows.err()
+	return cn.Curve, ck.Curve, rows.faults.err()
 }
 
 func positive(v float64) string {

@@ -12,49 +12,7 @@ import (
 	"slices"
 	"strconv"
 	"strings"
-	"unicode"
 )
-
-// MaxBytes is the size beyond which a spectrum file is refused.
-const MaxBytes = 64 << 20
-
-// A RowError says what is wrong with a spectrum file, where, and what would be right.
-type RowError struct {
-	File string
-	Line int     // 0 when the whole file is meant
-	NM   float64 // 0 when no wavelength is meant
-	Text string
-}
-
-func (e *RowError) Error() string {
-	s := e.File
-	if e.Line > 0 {
-		s += ":" + strconv.Itoa(e.Line)
-	}
-	if e.NM != 0 {
-		s += ": at " + short(e.NM) + " nm"
-	}
-	return s + ": " + e.Text
-}
-
-// Errors are all the faults found in one spectrum; it is never empty when returned.
-type Errors []*RowError
-
-func (e Errors) Error() string {
-	if len(e) == 1 {
-		return e[0].Error()
-	}
-	return fmt.Sprintf("%v (and %d more)", e[0], len(e)-1)
-}
-
-// Unwrap lets errors.As find each fault.
-func (e Errors) Unwrap() []error {
-	out := make([]error, len(e))
-	for i, x := range e {
-		out[i] = x
-	}
-	return out
-}
 
 // A Column is one quantity of a spectrum file: the curve, and for each point the line that it
 // was read from.
@@ -67,6 +25,7 @@ type Column struct {
 // Columns are the quantities of one spectrum file; a column that the file lacks is empty.
 type Columns struct {
 	Tau, RhoFront, RhoBack Column
+	Comments               []string // the first lines of comment of the file, clipped
 }
 
 // The heads that a spectrum file may have.
@@ -84,7 +43,7 @@ const (
 // file name serves errors only. It checks what can be checked in each column; Join checks them
 // together. An error is Errors, or that of r.
 func ReadCSV(r io.Reader, file string) (Columns, error) {
-	rows, err := readRows(r, file, minimumRows)
+	rows, err := readRows(r, file, minimumRows, true)
 	if err != nil {
 		return Columns{}, err
 	}
@@ -92,23 +51,24 @@ func ReadCSV(r io.Reader, file string) (Columns, error) {
 		Tau:      rows.column(headTau, fraction),
 		RhoFront: rows.column(headRhoFront, fraction),
 		RhoBack:  rows.column(headRhoBack, fraction),
+		Comments: rows.comments,
 	}
 	for _, head := range rows.heads {
 		if head != "" && !slices.Contains([]string{headNM, headUM, headTau, headRhoFront, headRhoBack}, head) {
 			rows.fail(rows.headLine, 0, "unknown column %q; a spectrum has wavelength_nm or wavelength_um, tau, rho_front, rho_back", clip(head))
 		}
 	}
-	if c.Tau.Len()+c.RhoFront.Len()+c.RhoBack.Len() == 0 && len(rows.faults) == 0 {
+	if c.Tau.Len()+c.RhoFront.Len()+c.RhoBack.Len() == 0 && !rows.faults.any() {
 		rows.fail(rows.headLine, 0, "no column tau, rho_front or rho_back")
 	}
-	return c, rows.err()
+	return c, rows.faults.err()
 }
 
 // ReadSunCSV reads a solar spectrum: columns wavelength_nm or wavelength_um and irradiance, or
 // irradiance with its unit, such as irradiance_w_m2_nm (any unit per wavelength; only the shape
 // counts). It returns the weighting by the trapezoid rule within 300–2500 nm.
 func ReadSunCSV(r io.Reader, file string) (Weighting, error) {
-	rows, err := readRows(r, file, minimumRows)
+	rows, err := readRows(r, file, minimumRows, false)
 	if err != nil {
 		return Weighting{}, err
 	}
@@ -125,13 +85,13 @@ func ReadSunCSV(r io.Reader, file string) (Weighting, error) {
 	for _, g := range c.Gaps {
 		rows.fail(0, g.FromNM, "values are missing (?) from here to %s nm; a sun needs them all", short(g.ToNM))
 	}
-	if err := rows.err(); err != nil {
+	if err := rows.faults.err(); err != nil {
 		return Weighting{}, err
 	}
 	w := Trapezoid(c.Curve, SolarFirstNM, SolarLastNM)
 	if sum := total(w.Weight); sum <= 0 || math.IsInf(sum, 0) {
 		rows.fail(rows.headLine, 0, "the column irradiance adds to nothing between %d and %d nm", SolarFirstNM, SolarLastNM)
-		return Weighting{}, rows.err()
+		return Weighting{}, rows.faults.err()
 	}
 	w.Name, w.Source = "solar", "the user's "+file+", trapezoid rule"
 	return w, nil
@@ -147,27 +107,21 @@ type rows struct {
 	nm       []float64                                     // of each row
 	cells    []string                                      // row after row
 	read     func(cell string) (v float64, problem string) // nil: number
-	faults   Errors
+	comments []string                                      // the first of the file
+	faults   faultList
 }
 
 func (r *rows) fail(line int, nm float64, format string, args ...any) {
-	r.faults = append(r.faults, &RowError{r.file, line, nm, fmt.Sprintf(format, args...)})
+	r.faults.add(&RowError{r.file, line, nm, fmt.Sprintf(format, args...)})
 }
 
 // cell returns the text of a row under a head.
 func (r *rows) cell(row, column int) string { return r.cells[row*len(r.heads)+column] }
 
-func (r *rows) err() error {
-	if len(r.faults) == 0 {
-		return nil
-	}
-	return r.faults
-}
-
 // readRows reads header, wavelengths and cells, and checks the wavelengths. Faults that leave
 // the rows unreadable are returned; others are kept in faults. least is how many rows there must
-// be.
-func readRows(in io.Reader, file string, least int) (*rows, error) {
+// be; converts says that panewright spectrum turns other layouts into such a file.
+func readRows(in io.Reader, file string, least int, converts bool) (*rows, error) {
 	r := &rows{file: file, least: least}
 	text, err := readText(in, file)
 	if err != nil {
@@ -175,8 +129,9 @@ func readRows(in io.Reader, file string, least int) (*rows, error) {
 	}
 	if bytes.HasPrefix(bytes.TrimSpace(text), []byte("##TITLE")) {
 		r.fail(0, 0, "is JCAMP-DX, and CSV is needed here")
-		return nil, r.err()
+		return nil, r.faults.err()
 	}
+	r.comments = commentsOf(text)
 	cr := csv.NewReader(bytes.NewReader(text))
 	cr.Comment, cr.FieldsPerRecord, cr.TrimLeadingSpace, cr.ReuseRecord = '#', -1, true, true
 	for {
@@ -190,7 +145,7 @@ func readRows(in io.Reader, file string, least int) (*rows, error) {
 				line, err = pe.Line, pe.Err
 			}
 			r.fail(line, 0, "not readable as CSV: %v", err)
-			return nil, r.err()
+			return nil, r.faults.err()
 		}
 		line, _ := cr.FieldPos(0)
 		for i := range record {
@@ -202,8 +157,11 @@ func readRows(in io.Reader, file string, least int) (*rows, error) {
 		if r.heads == nil {
 			r.heads, r.headLine = slices.Clone(record), line
 			if problem := notHeads(record); problem != "" {
+				if converts {
+					problem += wayFrom(record, text)
+				}
 				r.fail(line, 0, "%s", problem)
-				return nil, r.err()
+				return nil, r.faults.err()
 			}
 			lines := bytes.Count(text, []byte("\n"))
 			r.line, r.cells = make([]int, 0, lines), make([]string, 0, lines*len(record))
@@ -224,29 +182,12 @@ func readRows(in io.Reader, file string, least int) (*rows, error) {
 	}
 	if r.heads == nil {
 		r.fail(0, 0, "empty; a spectrum begins with a row of column heads such as wavelength_nm,tau,rho_front,rho_back")
-		return nil, r.err()
+		return nil, r.faults.err()
 	}
 	if err := r.readWavelengths(); err != nil {
 		return nil, err
 	}
 	return r, nil
-}
-
-// readText reads a text file of bounded size, without the mark of its byte order and with line ends
-// that hold a line feed.
-func readText(in io.Reader, file string) ([]byte, error) {
-	text, err := io.ReadAll(io.LimitReader(in, MaxBytes+1))
-	if err != nil {
-		return nil, fmt.Errorf("%s: %w", file, err)
-	}
-	if problem := notText(text); problem != "" {
-		return nil, Errors{{File: file, Text: problem}}
-	}
-	text = bytes.TrimPrefix(text, []byte("\ufeff"))
-	if !bytes.ContainsRune(text, '\n') { // line ends of old files
-		text = bytes.ReplaceAll(text, []byte("\r"), []byte("\n"))
-	}
-	return text, nil
 }
 
 // maxColumns is how many columns are looked at at all.
@@ -257,23 +198,10 @@ func notHeads(record []string) string {
 	switch _, problem := number(record[0]); {
 	case len(record) > maxColumns:
 		return fmt.Sprintf("%d columns; a spectrum has four", len(record))
-	case strings.ContainsAny(strings.Join(record, ","), ";\t"):
-		return "columns are separated by semicolons or tabs; use commas, and points in numbers"
+	case separatorIn(record) != 0:
+		return "columns are separated by " + separatorName(separatorIn(record)) + "; use commas, and points in numbers"
 	case problem == "":
 		return "the first row must hold the column heads, such as wavelength_nm,tau,rho_front,rho_back"
-	}
-	return ""
-}
-
-// notText names the reason for which bytes cannot be a text in UTF-8, or returns "".
-func notText(b []byte) string {
-	switch {
-	case len(b) > MaxBytes:
-		return fmt.Sprintf("larger than %d MB; a spectrum has some hundred rows", MaxBytes>>20)
-	case bytes.HasPrefix(b, []byte{0xff, 0xfe}), bytes.HasPrefix(b, []byte{0xfe, 0xff}):
-		return "is UTF-16; save it as UTF-8"
-	case bytes.IndexByte(b, 0) >= 0:
-		return "is binary, or UTF-16; a spectrum is CSV text in UTF-8"
 	}
 	return ""
 }
@@ -300,8 +228,8 @@ func (r *rows) readWavelengths() error {
 	case nmAt < 0 && umAt < 0:
 		r.fail(r.headLine, 0, "no column wavelength_nm or wavelength_um; the first row must hold the column heads")
 	}
-	if len(r.faults) > 0 && (nmAt < 0) == (umAt < 0) {
-		return r.err()
+	if r.faults.any() && (nmAt < 0) == (umAt < 0) {
+		return r.faults.err()
 	}
 	at, scale := nmAt, 1.0
 	if nmAt < 0 {
@@ -329,7 +257,7 @@ func (r *rows) readWavelengths() error {
 		last = r.nm[i]
 	}
 	switch {
-	case len(r.line) < r.least && len(r.faults) == 0:
+	case len(r.line) < r.least && !r.faults.any():
 		r.fail(0, 0, "%d rows; at least %d are needed", len(r.line), r.least)
 	case scale == 1 && last > 0 && last < leastLastNM:
 		r.fail(r.line[len(r.line)-1], 0, "the last wavelength is %s nm: µm in a column of nm? name it wavelength_um", short(last))
@@ -466,25 +394,4 @@ func notNegative(v float64) string {
 		return "below 0"
 	}
 	return ""
-}
-
-// short prints a number as briefly as it can be read back.
-func short(v float64) string { return strconv.FormatFloat(v, 'g', -1, 64) }
-
-// clip shortens a cell for a message.
-func clip(s string) string { return Clip(s, 40) }
-
-// Clip shortens a text of a user's for a message to a number of letters, and takes out what would
-// steer a terminal.
-func Clip(s string, letters int) string {
-	s = strings.Map(func(c rune) rune {
-		if unicode.IsControl(c) {
-			return unicode.ReplacementChar
-		}
-		return c
-	}, s)
-	if r := []rune(s); len(r) > letters {
-		return string(r[:letters]) + "…"
-	}
-	return s
 }

@@ -5,7 +5,6 @@ package spectra
 
 import (
 	"bytes"
-	"cmp"
 	"fmt"
 	"io"
 	"slices"
@@ -32,7 +31,8 @@ func ReadForeign(r io.Reader, file string, l Layout) (c Columns, understood []st
 	if n := bytes.Count(text, []byte("\n")); n > maxLines {
 		return Columns{}, nil, Errors{{File: file, Text: fmt.Sprintf("%d lines; a spectrum has some thousand", n)}}
 	}
-	f := &foreign{Layout: l, rows: rows{file: file}}
+	f := &foreign{Layout: l, rows: rows{file: file, comments: commentsOf(text)}, quoted: quotedComma.Match(text)}
+	f.faults.most = maxFaults
 	n := 0
 	for line := range strings.Lines(string(text)) {
 		if n++; strings.TrimSpace(line) != "" {
@@ -40,9 +40,8 @@ func ReadForeign(r io.Reader, file string, l Layout) (c Columns, understood []st
 		}
 	}
 	c = f.columns()
-	if len(f.faults) > 0 {
-		slices.SortStableFunc(f.faults, func(a, b *RowError) int { return cmp.Compare(a.Line, b.Line) })
-		return Columns{}, f.understood, f.faults
+	if f.faults.any() {
+		return Columns{}, f.understood, f.faults.errors().byLine()
 	}
 	return c, f.understood, nil
 }
@@ -55,6 +54,7 @@ type foreign struct {
 	places     map[string]int // of the quantities, counted from 1, once they are known
 	understood []string
 	percent    bool // whether it was said that values look like per cent
+	quoted     bool // whether numbers with commas stand in quotes, so that a comma may separate as well
 }
 
 type numbered struct {
@@ -69,7 +69,14 @@ func (f *foreign) say(format string, args ...any) {
 // columns reads the file in the order in which a person would: where the rows are, what separates
 // their cells, what the columns are, the numbers. What is wrong stands in faults.
 func (f *foreign) columns() (c Columns) {
-	if len(f.Columns) > 0 {
+	switch {
+	case len(f.lines) == 0:
+		f.fail(0, 0, "is empty")
+		return c
+	case f.Separator == ',' && f.DecimalComma && !f.quoted:
+		f.fail(0, 0, "a comma cannot both separate cells and stand in numbers, unless such numbers are in quotes")
+		return c
+	case len(f.Columns) > 0:
 		f.places = f.placed()
 	}
 	t := f.body()
@@ -102,13 +109,14 @@ func (f *foreign) columns() (c Columns) {
 		return c
 	}
 	f.gather(t)
-	if len(f.faults) > 0 {
+	f.leftOut(t)
+	if f.faults.any() {
 		return c
 	}
 	if n := len(f.lines) - 1 - t.last; n > 0 {
 		f.say("left out %s after the last row of numbers, which is line %d; the first of them reads %q", plural(n, "line"), last.number, clip(f.lines[t.last+1].text))
 	}
-	if f.wavelengths(); len(f.faults) > 0 {
+	if f.wavelengths(); f.faults.any() {
 		return c
 	}
 	f.read = f.quantity
@@ -116,11 +124,12 @@ func (f *foreign) columns() (c Columns) {
 		Tau:      f.column(headTau, f.fraction),
 		RhoFront: f.column(headRhoFront, f.fraction),
 		RhoBack:  f.column(headRhoBack, f.fraction),
+		Comments: f.comments,
 	}
-	if len(f.faults) > 0 {
+	if f.faults.any() {
 		return c
 	}
-	f.say("%s of numbers, %s to %s nm", plural(len(f.nm), "row"), short(f.nm[0]), short(f.nm[len(f.nm)-1]))
+	f.say("%s of numbers, %s to %s nm", plural(len(f.nm), "row"), shortNM(f.nm[0]), shortNM(f.nm[len(f.nm)-1]))
 	largest := 0.0
 	for _, x := range c.named() {
 		largest = max(largest, slices.Max(x.Value))
@@ -129,153 +138,6 @@ func (f *foreign) columns() (c Columns) {
 		f.say("no value is above 1 per cent: if the file has fractions of one, leave --percent out")
 	}
 	return c
-}
-
-// A body is the rows of numbers of a file, under one separator.
-type body struct {
-	separator   rune
-	cells       int  // in each row
-	rows        int  // how many there are
-	first, last int  // the lines of the first and the last, counted from 0
-	commas      bool // whether commas separate that may as well be decimal
-}
-
-// separators are those that can be told from the rows.
-var separators = [...]rune{';', '\t', ',', ' '}
-
-// body finds the rows of numbers, under the separator that gives most of them.
-func (f *foreign) body() (best body) {
-	for _, s := range separators {
-		if f.Separator == 0 && !(s == ',' && f.DecimalComma) {
-			if t := f.bodyUnder(s); t.rows > best.rows {
-				best = t
-			}
-		}
-	}
-	if f.Separator != 0 {
-		return f.bodyUnder(f.Separator)
-	}
-	return best
-}
-
-// bodyUnder finds the rows of as many cells as the longest run of rows has.
-func (f *foreign) bodyUnder(separator rune) body {
-	counts := make([]int, len(f.lines)) // cells of each row; 0 where a line is none
-	longest, run, cells := 0, 0, 0
-	for i, line := range f.lines {
-		if row := split(line.text, separator); f.isRow(row) {
-			counts[i] = len(row)
-		}
-		if i == 0 || counts[i] != counts[i-1] {
-			run = 0
-		}
-		if run++; counts[i] > 0 && run > longest {
-			longest, cells = run, counts[i]
-		}
-	}
-	t := body{separator: separator, cells: cells, commas: separator == ',' && cells > 2}
-	if cells == 0 {
-		return t
-	}
-	for i, n := range counts {
-		if n != cells {
-			continue
-		}
-		if t.rows == 0 {
-			t.first = i
-		}
-		t.last = i
-		t.rows++
-		t.commas = t.commas && !strings.Contains(f.lines[i].text, ".")
-	}
-	// a line beside the rows that begins like one is meant to be one
-	like := func(i int) bool {
-		row := split(f.lines[i].text, separator)
-		return len(row) == cells && f.begins(row)
-	}
-	for t.first > 0 && like(t.first-1) {
-		t.first--
-	}
-	for t.last < len(f.lines)-1 && like(t.last+1) {
-		t.last++
-	}
-	return t
-}
-
-// begins reports whether a row has a number in the place of the wavelength.
-func (f *foreign) begins(row []string) bool {
-	at := 0
-	if f.places != nil {
-		at = f.places[Wavelength] - 1
-	}
-	if at >= len(row) {
-		return false
-	}
-	_, problem := f.plain(row[at])
-	return problem == ""
-}
-
-// isRow reports whether cells are a row of numbers: a wavelength and at least one value, and nothing
-// else in the columns that are used, which are all while nothing is known of them.
-func (f *foreign) isRow(cells []string) bool {
-	if len(cells) > maxColumns || !f.begins(cells) {
-		return false
-	}
-	values := 0
-	isValue := func(cell string) bool {
-		if cell == "" || cell == missingCell {
-			return true
-		}
-		_, problem := f.quantity(cell)
-		values++
-		return problem == ""
-	}
-	if f.places == nil {
-		for _, cell := range cells[1:] {
-			if !isValue(cell) {
-				return false
-			}
-		}
-		return values > 0
-	}
-	for _, head := range LayoutColumns()[1:] {
-		if n := f.places[head]; n > len(cells) || n > 0 && !isValue(cells[n-1]) {
-			return false
-		}
-	}
-	return values > 0
-}
-
-// strayRows is how many lines may look like rows under another layout and be left at that.
-const strayRows = 2
-
-// otherwise says which other layout would make rows of the file, or more of them, or returns ""
-// where the body that was found is the best.
-func (f *foreign) otherwise(t body) string {
-	other := *f
-	if other.DecimalComma = !f.DecimalComma; other.Separator == ',' {
-		other.Separator = 0
-	}
-	if more := other.body(); more.rows > t.rows+strayRows || t.rows == 0 && more.rows > 0 {
-		with, hint := "decimal commas", "add --decimal-comma"
-		if f.DecimalComma {
-			with, hint = "decimal points", "leave --decimal-comma out"
-		}
-		return fmt.Sprintf("%s of numbers, and %d with %s, the first in line %d: %s", plural(t.rows, "row"), more.rows, with, f.lines[more.first].number, hint)
-	}
-	if t.rows > 0 {
-		return ""
-	}
-	other = *f
-	other.Separator = 0
-	if more := other.body(); more.rows > 0 {
-		return fmt.Sprintf("no row of numbers separated by %s; in line %d they are by %s", separatorName(f.Separator), f.lines[more.first].number, separatorName(more.separator))
-	}
-	other.places = nil
-	if more := other.body(); more.rows > 0 {
-		return fmt.Sprintf("no row has numbers in the columns that were named; line %d has %s", f.lines[more.first].number, plural(more.cells, "column"))
-	}
-	return "no row of numbers, such as a wavelength and a transmittance"
 }
 
 // identify settles what the columns are and says it, or returns why it cannot.
@@ -373,7 +235,7 @@ func (f *foreign) headed(heads []string, cells int) bool {
 	return true
 }
 
-// maxFaults is after how many lines that are no rows nothing more is looked at.
+// maxFaults is after how many faults of different kinds nothing more is looked at.
 const maxFaults = 100
 
 // gather takes the cells of the columns that are used from the lines of the body.
@@ -386,10 +248,14 @@ func (f *foreign) gather(t body) {
 	for _, line := range f.lines[t.first : t.last+1] {
 		row := split(line.text, t.separator)
 		switch ok := f.begins(row); {
-		case len(f.faults) == maxFaults:
+		case f.faults.full():
 			return
 		case !ok:
-			f.fail(line.number, 0, "%q between rows of numbers, which begin in line %d", clip(line.text), f.lines[t.first].number)
+			hint := ""
+			if at := f.places[Wavelength] - 1; at < len(row) {
+				hint = f.thousands(row[at])
+			}
+			f.fail(line.number, 0, "%q between rows of numbers, which begin in line %d%s", clip(line.text), f.lines[t.first].number, hint)
 		case len(row) != t.cells:
 			f.fail(line.number, 0, "%s where the other rows have %d", plural(len(row), "cell"), t.cells)
 		default:
@@ -399,7 +265,7 @@ func (f *foreign) gather(t body) {
 			}
 		}
 	}
-	if len(f.line) < minimumRows && len(f.faults) == 0 {
+	if len(f.line) < minimumRows && !f.faults.any() {
 		f.fail(0, 0, "%s of numbers; a spectrum has at least %d", plural(len(f.line), "row"), minimumRows)
 	}
 }
@@ -420,7 +286,7 @@ func (f *foreign) wavelengths() {
 		if f.nm = append(f.nm, nm); v > 0 && nm >= foreignFirstNM && nm <= foreignLastNM {
 			continue
 		}
-		f.fail(line, 0, "wavelength %q: not from %d nm to 1 mm; is the unit right? --unit is one of %s", clip(cell), foreignFirstNM, strings.Join(LayoutUnits(), ", "))
+		f.fail(line, 0, "wavelength %q: not from %d nm to 1 mm; is the unit right? --unit is one of %s%s", clip(cell), foreignFirstNM, strings.Join(LayoutUnits(), ", "), f.thousands(cell))
 		return
 	}
 	if f.nm[0] > f.nm[len(f.nm)-1] {
@@ -439,7 +305,7 @@ func (f *foreign) wavelengths() {
 		case f.nm[i] == f.nm[i-1]:
 			f.fail(f.line[i], f.nm[i], "this wavelength stands twice, also in line %d", f.line[i-1])
 		case f.nm[i] < f.nm[i-1]:
-			f.fail(f.line[i], f.nm[i], "wavelengths go to and fro; line %d has %s nm", f.line[i-1], short(f.nm[i-1]))
+			f.fail(f.line[i], f.nm[i], "wavelengths go to and fro; line %d has %s nm%s", f.line[i-1], shortNM(f.nm[i-1]), f.thousands(f.cell(i, 0)))
 		}
 	}
 }
@@ -459,12 +325,4 @@ func (f *foreign) fraction(v float64) string {
 		return "not in 0..1; in per cent? add --percent"
 	}
 	return problem
-}
-
-// plural counts things whose name takes an s.
-func plural(n int, name string) string {
-	if n == 1 {
-		return "1 " + name
-	}
-	return strconv.Itoa(n) + " " + name + "s"
 }

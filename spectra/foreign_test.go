@@ -174,9 +174,9 @@ func TestReadForeignRefuses(t *testing.T) {
 		layout     Layout
 		want       [][]string
 	}{
-		{"empty", "", tau, [][]string{{"scan.txt: no row of numbers"}}},
+		{"empty", " \n\n", tau, [][]string{{"scan.txt: is empty"}}},
 		{"prose", "a\nb c\n1\n", tau, [][]string{{"scan.txt: no row of numbers"}}},
-		{"binary", "PK\x03\x04\x00\x00\x08", tau, [][]string{{"scan.txt: is binary"}}},
+		{"binary", "\x01\x00\x08", tau, [][]string{{"scan.txt: is binary"}}},
 		{"UTF-16", "\xff\xfe4\x000\x00", tau, [][]string{{"scan.txt: ", "UTF-16"}}},
 		{"too many lines", strings.Repeat("\n", maxLines+1), tau, [][]string{{"scan.txt: 1048577 lines"}}},
 		{"nine rows", foreignRows(9, 400, 10, func(nm float64) string { return fmt.Sprintf("%g;0.5", nm) }), tau, [][]string{{"scan.txt: 9 rows of numbers; a spectrum has at least 10"}}},
@@ -210,7 +210,7 @@ func TestReadForeignRefuses(t *testing.T) {
 		{"a column that is not there", rows("%g;0.5"), Layout{Columns: tauAt(5)}, [][]string{{"scan.txt: no row has numbers in the columns that were named; line 1 has 2 columns"}}},
 		{"another separator", rows("%g\t0.5"), Layout{Separator: ';', Columns: tauAt(2)}, [][]string{{"scan.txt: no row of numbers separated by semicolons; in line 1 they are by tabs"}}},
 		{"more columns than are looked at", rows("%g" + strings.Repeat(";1", maxColumns)), tau, [][]string{{"scan.txt: no row of numbers"}}},
-		{"comma for two things", "", Layout{Separator: ',', DecimalComma: true}, [][]string{{"scan.txt: a comma cannot both"}}},
+		{"comma for two things", "400,0,5\n", Layout{Separator: ',', DecimalComma: true}, [][]string{{"scan.txt: a comma cannot both separate cells and stand in numbers, unless such numbers are in quotes"}}},
 		{"a digit separates", "", Layout{Separator: '1'}, [][]string{{"scan.txt: '1' cannot separate cells"}}},
 		{"an unknown unit", "", Layout{Unit: "mm"}, [][]string{{`scan.txt: unit "mm"`, "nm, um, 1/cm"}}},
 		{"an unknown quantity", "", Layout{Columns: map[string]int{"sigma": 2}}, [][]string{{`scan.txt: unknown quantity "sigma"`}}},
@@ -226,6 +226,103 @@ func TestReadForeignRefuses(t *testing.T) {
 				t.Errorf("a fault, and yet %v", c)
 			}
 		})
+	}
+}
+
+// Nothing that looks like a row is left out above or below the rows: rows with signs between their
+// thousands, and rows of another number of cells.
+func TestReadForeignLeavesNoRowOut(t *testing.T) {
+	rows := func(n int, first, step float64, sign string, cells string) string {
+		return foreignRows(n, first, step, func(nm float64) string {
+			s := fmt.Sprintf("%g", nm)
+			if len(s) > 3 {
+				s = s[:len(s)-3] + sign + s[len(s)-3:]
+			}
+			return s + cells
+		})
+	}
+	percent := Layout{Percent: true, DecimalComma: true, Columns: tauAt(2)}
+	points := Layout{Columns: tauAt(2)}
+	for _, tt := range []struct {
+		name, text string
+		layout     Layout
+		want       [][]string
+	}{
+		{"a thousands point", "nm;T\n" + rows(151, 300, 10, ".", ";57,493"), percent, [][]string{
+			{`scan.txt:72: "1.000;57,493" stands after the last row of numbers, which is line 71`, "a thousands point? write 1000", "81 faults like this, the last in line 152"}}},
+		{"descending", "Date;1.2.2026\nnm;T\n" + rows(150, 1790, -10, ".", ";57,493"), percent, [][]string{
+			{`scan.txt:3: "1.790;57,493" stands before the first row of numbers, which is line 83`, "a thousands point? write 1790", "80 faults like this, the last in line 82"}}},
+		{"a thousands comma", rows(75, 300, 10, ",", ";0.5"), points, [][]string{{`scan.txt:71: "1,000;0.5" stands after`, "a thousands comma? write 1000", "5 faults like this"}}},
+		{"a blank", rows(72, 300, 10, " ", ";0.5"), points, [][]string{{`scan.txt:71: "1 000;0.5" stands after`, "a blank between thousands? write 1000"}, {"scan.txt:72: "}}},
+		{"an apostrophe", rows(71, 300, 10, "\u2019", ";0.5"), points, [][]string{{"scan.txt:71: ", "an apostrophe between thousands? write 1000"}}},
+		{"decimals as well", rows(70, 300, 10, "", ";0,5") + "1.000,5;0,5\n", Layout{DecimalComma: true, Columns: tauAt(2)}, [][]string{{"scan.txt:71: ", "a thousands point? write 1000"}}},
+		{"between rows", rows(20, 300, 10, "", ";0,5") + "1.000;0,5\n" + rows(20, 600, 10, "", ";0,5"), Layout{DecimalComma: true, Columns: tauAt(2)}, [][]string{
+			{`scan.txt:21: "1.000;0,5" between rows of numbers, which begin in line 1; a thousands point? write 1000`}}},
+		{"a thousands point among decimal points", rows(75, 300, 10, ".", ";0.5"), points, [][]string{{`scan.txt:71: wavelength "1.000": not from 100 nm to 1 mm`, "a thousands point? write 1000"}}},
+		{"a thousands comma among commas", rows(100, 300, 10, ",", ",0.5"), points, [][]string{{`scan.txt:71: "1,000,0.5" has 3 cells, where the rows of lines 1 to 70 have 2`, "30 faults like this, the last in line 100"}}},
+		{"a unit in the cell", rows(20, 300, 10, "", ";0.5") + "500 nm;0.5\n", points, [][]string{{`scan.txt:21: "500 nm;0.5" stands after the last row of numbers, which is line 20, and has digits where those have the wavelength; if it is no row, take it out`}}},
+		{"a unit in the first cell", "nm;T\n290 nm;0.5\n" + rows(20, 300, 10, "", ";0.5"), points, [][]string{{`scan.txt:2: "290 nm;0.5" stands before`}}},
+		{"rows of other cells before", rows(5, 300, 10, "", ";0.5") + rows(20, 400, 10, "", ";0.5;"), points, [][]string{{`scan.txt:1: "300;0.5" has 2 cells, where the rows of lines 6 to 25 have 3`, "5 faults like this, the last in line 5"}}},
+		{"a row of other cells just after", rows(20, 300, 10, "", ";0.5") + "500;0.5;7\n", points, [][]string{{`scan.txt:21: "500;0.5;7" has 3 cells`}}},
+	} {
+		t.Run(tt.name, func(t *testing.T) {
+			c, _, err := ReadForeign(strings.NewReader(tt.text), "scan.txt", tt.layout)
+			checkFaults(t, err, tt.want)
+			if !sameColumns(c, Columns{}) {
+				t.Errorf("a fault, and yet %v", c)
+			}
+		})
+	}
+	// what is no row may stand there
+	for _, around := range [][2]string{{"Date;12.3.2026\n12.3.2026;10:45\n2026;7;31\nScan 7;T\n3 mm;clear\n", "\nend of scan\nmean;0.5\n"}, {"10 12 2025\n", "end 7 8\n"}} {
+		for _, sign := range []string{";", "\t"} {
+			text := around[0] + rows(20, 300, 10, "", sign+"0.5") + around[1]
+			if c, _, err := ReadForeign(strings.NewReader(text), "scan.txt", points); err != nil || c.Tau.Len() != 20 {
+				t.Errorf("%q: %v, %d values", around, err, c.Tau.Len())
+			}
+		}
+	}
+}
+
+// Numbers with decimal commas in quotes may stand between commas.
+func TestReadForeignQuoted(t *testing.T) {
+	for name, row := range map[string]string{
+		"all in quotes": "\"%g\",\"0,574\",\"0,2\"", "as needed": "%g,\"0,574\",\"0,2\"", "blanks": " \"%g\" , \"0,574\" ,\"0,2\" ", "quotes and semicolons": "\"%g\";\"0,574\";\"0,2\"",
+	} {
+		text := "\"wavelength_nm\",\"tau\",\"rho_front\"\n"
+		if strings.Contains(row, ";") {
+			text = strings.ReplaceAll(text, ",", ";")
+		}
+		text += foreignRows(12, 400, 10, func(nm float64) string { return fmt.Sprintf(row, nm) })
+		c, _, err := ReadForeign(strings.NewReader(text), "scan.txt", Layout{DecimalComma: true})
+		if err != nil || c.Tau.Len() != 12 || c.Tau.Value[11] != 0.574 || c.RhoFront.Value[0] != 0.2 || c.Tau.Last() != 510 {
+			t.Errorf("%s: %v, %v", name, err, c.Tau)
+		}
+		if !strings.Contains(row, ";") {
+			if c, _, err := ReadForeign(strings.NewReader(text), "scan.txt", Layout{DecimalComma: true, Separator: ','}); err != nil || c.Tau.Len() != 12 {
+				t.Errorf("%s, with the separator: %v", name, err)
+			}
+		}
+		_, _, err = ReadForeign(strings.NewReader(text), "scan.txt", Layout{})
+		checkFaults(t, err, [][]string{{"scan.txt: 0 rows of numbers, and 12 with decimal commas, the first in line 2: add --decimal-comma"}})
+	}
+	for line, want := range map[string][]string{
+		`a,"b,c", d `: {"a", "b,c", "d"}, `"a"b,c`: {`"a"b`, "c"}, `"a,b`: {`"a`, "b"}, `"",""`: {"", ""}, ``: {""}, `,`: {"", ""}, ` "a" `: {"a"}, `"a","b`: {"a", `"b`},
+	} {
+		if got := split(line, ','); !slices.Equal(got, want) {
+			t.Errorf("%s is split into %q, want %q", line, got, want)
+		}
+	}
+}
+
+func TestUnitNamed(t *testing.T) {
+	for name, want := range map[string]string{
+		"nm": UnitNM, "NM": UnitNM, "um": UnitUM, "\u00b5m": UnitUM, "\u03bcm": UnitUM, "1/cm": UnitReciprocal, "cm-1": UnitReciprocal, "cm\u207b\u00b9": UnitReciprocal,
+		"": "", "mm": "", "A": "", "\u00c5": "", "m": "",
+	} {
+		if got := UnitNamed(name); got != want {
+			t.Errorf("%q is %q, want %q", name, got, want)
+		}
 	}
 }
 

@@ -95,10 +95,10 @@ func TestCoarseReflectance(t *testing.T) {
 		c    Columns
 		want string
 	}{
-		{Columns{fine.Tau, fine.RhoFront, fine.RhoBack}, ""},
-		{Columns{coarse.Tau, fine.RhoFront, fine.RhoBack}, "coarse.csv"},
-		{Columns{fine.Tau, coarse.RhoFront, fine.RhoBack}, "coarse.csv"},
-		{Columns{fine.Tau, fine.RhoFront, coarse.RhoBack}, "coarse.csv"},
+		{Columns{Tau: fine.Tau, RhoFront: fine.RhoFront, RhoBack: fine.RhoBack}, ""},
+		{Columns{Tau: coarse.Tau, RhoFront: fine.RhoFront, RhoBack: fine.RhoBack}, "coarse.csv"},
+		{Columns{Tau: fine.Tau, RhoFront: coarse.RhoFront, RhoBack: fine.RhoBack}, "coarse.csv"},
+		{Columns{Tau: fine.Tau, RhoFront: fine.RhoFront, RhoBack: coarse.RhoBack}, "coarse.csv"},
 	} {
 		m, err := Join(tt.c, Column{}, Column{})
 		if err != nil {
@@ -114,7 +114,7 @@ func TestCoarseReflectance(t *testing.T) {
 func TestFilesThatAreNoSpectra(t *testing.T) {
 	for _, tt := range []struct{ what, text, want string }{
 		{"semicolons and decimal commas", "wavelength_nm;tau;rho_front;rho_back\n300;0,5;0,1;0,1\n310;0,5;0,1;0,1\n", "p.csv:1: columns are separated by semicolons"},
-		{"tabs", "wavelength_nm\ttau\n300\t0.5\n", "p.csv:1: columns are separated by semicolons or tabs"},
+		{"tabs", "wavelength_nm\ttau\n300\t0.5\n", "p.csv:1: columns are separated by tabs"},
 		{"JCAMP-DX", "##TITLE=glass\n##JCAMP-DX=4.24\n##XYDATA=(X++(Y..Y))\n300 1 2 3\n", "p.csv: is JCAMP-DX"},
 		{"no heads", "300,0.5,0.1,0.1\n310,0.5,0.1,0.1\n", "p.csv:1: the first row must hold the column heads"},
 		{"a head of 100 000 columns", strings.Repeat("x,", 100000) + "x\n" + strings.Repeat("\n", 100000), "p.csv:1: 100001 columns; a spectrum has four"},

@@ -30,7 +30,8 @@ type Block struct {
 	Title    string
 	Quantity Quantity
 	Column
-	Notes []string // what the reader understood and converted, in words for the user
+	Notes    []string // what the reader understood and converted, in words for the user
+	Comments []string // title, origin and owner as the file has them, also those of what the block lies in
 }
 
 // The bounds of a file; what lies beyond is refused before it takes memory or time.
@@ -139,11 +140,17 @@ type jcamp struct {
 	kept    *jcampLabel   // the label that a further line belongs to, if it is one that is used
 	points  int
 	out     []Block
-	passed  Errors // the blocks passed over, and why
+	passed  []passedBlock
 	notes   []string
 	faults  Errors
 	stopped bool // the rest of the file cannot be read
 	space   [labelBytes]byte
+}
+
+// A passedBlock is one passed over, and why.
+type passedBlock struct {
+	line int // where it begins
+	*RowError
 }
 
 // fail notes a fault that leaves the rest of the file unreadable.
@@ -241,13 +248,11 @@ type jcampBlock struct {
 	table   *ordinates             // nil: none yet
 	reading bool                   // the lines that come belong to the table
 	other   string                 // what it holds beside a table or instead of one, in words
-	faults  Errors
+	faults  faultList
 }
 
 func (b *jcampBlock) fail(line int, nm float64, format string, args ...any) {
-	if len(b.faults) < maxBlockFaults {
-		b.faults = append(b.faults, &RowError{b.file, line, nm, fmt.Sprintf(format, args...)})
-	}
+	b.faults.add(&RowError{b.file, line, nm, fmt.Sprintf(format, args...)})
 }
 
 // value returns the text of a label, "" where there is none.
@@ -319,15 +324,31 @@ func (j *jcamp) label(name, value []byte) {
 	case "JCAMPCS":
 		b.other = holdsStructure
 	case "DATATYPE", "DATACLASS", "BLOCKS", "XUNITS", "YUNITS", "XFACTOR", "YFACTOR", "FIRSTX", "LASTX",
-		"NPOINTS", "DELTAX", "FIRSTY", "MAXX", "MINX", "MAXY", "MINY":
+		"NPOINTS", "DELTAX", "FIRSTY", "MAXX", "MINX", "MAXY", "MINY", labelOrigin, labelOwner:
 		l := &jcampLabel{line: j.line}
 		l.add(value)
 		if old := b.labels[string(name)]; old == nil {
 			b.labels[string(name)], j.kept = l, l
-		} else if !bytes.Equal(old.text, l.text) {
+		} else if string(name) != labelOrigin && string(name) != labelOwner && !bytes.Equal(old.text, l.text) {
 			b.fail(j.line, 0, "##%s= stands at line %d as well, with another value", name, old.line)
 		}
 	}
+}
+
+// The labels that are kept as comments, beside the title.
+const (
+	labelOrigin = "ORIGIN"
+	labelOwner  = "OWNER"
+)
+
+// comments returns the lines of a block that say what it is and where it comes from.
+func (b *jcampBlock) comments() (list []string) {
+	for _, x := range [][2]string{{"TITLE", strings.TrimSpace(latin(b.title.text))}, {labelOrigin, b.value(labelOrigin)}, {labelOwner, b.value(labelOwner)}} {
+		if x[1] != "" {
+			list = append(list, Clip(x[0]+"= "+x[1], commentLetters))
+		}
+	}
+	return list
 }
 
 // begin opens a block.
@@ -344,7 +365,7 @@ func (j *jcamp) begin() bool {
 		j.fail(j.line, "more than %d blocks, or more than %d in one another", maxBlocks, maxNesting)
 		return false
 	}
-	j.open = append(j.open, &jcampBlock{file: j.file, line: j.line, labels: map[string]*jcampLabel{}})
+	j.open = append(j.open, &jcampBlock{file: j.file, line: j.line, labels: map[string]*jcampLabel{}, faults: faultList{most: maxBlockFaults}})
 	return true
 }
 
@@ -361,16 +382,21 @@ func (j *jcamp) finish(b *jcampBlock) {
 		}
 		return
 	}
-	if why := b.unfit(); why != "" {
-		j.passed = append(j.passed, &RowError{j.file, b.line, 0, why})
+	if why := b.unfit(); why != nil {
+		j.passed = append(j.passed, passedBlock{b.line, why})
 		return
 	}
 	j.points += len(b.table.y)
-	if spectrum, ok := b.spectrum(); ok {
-		j.out = append(j.out, spectrum)
-	} else {
-		j.faults = append(j.faults, b.faults...)
+	spectrum, ok := b.spectrum()
+	if !ok {
+		j.faults = append(j.faults, b.faults.errors()...)
+		return
 	}
+	for _, outer := range j.open { // which the block lies in
+		spectrum.Comments = append(spectrum.Comments, outer.comments()...)
+	}
+	spectrum.Comments = append(spectrum.Comments, b.comments()...)
+	j.out = append(j.out, spectrum)
 }
 
 // end takes the end of the file.
@@ -379,8 +405,8 @@ func (j *jcamp) end() {
 	case len(j.open) > 0:
 		b := j.open[len(j.open)-1]
 		j.fail(j.line, "the file ends without ##END= of the block begun at line %d; it seems cut", b.line)
-		if b.unfit() == "" {
-			j.faults = append(j.faults, b.faults...)
+		if b.unfit() == nil {
+			j.faults = append(j.faults, b.faults.errors()...)
 		}
 	case len(j.faults) > 0:
 	case j.blocks == 0:
@@ -388,11 +414,13 @@ func (j *jcamp) end() {
 	case len(j.out) == 0 && len(j.passed) == 0:
 		j.fail(0, "no block with a spectrum in it; one has ##XYDATA= or ##XYPOINTS=")
 	case len(j.out) == 0:
-		j.faults = j.passed
+		for _, p := range j.passed {
+			j.faults = append(j.faults, p.RowError)
+		}
 	default:
 		const named = 5
 		for _, p := range j.passed[:min(len(j.passed), named)] {
-			j.notes = append(j.notes, fmt.Sprintf("the block at line %d was passed over: it %s", p.Line, p.Text))
+			j.notes = append(j.notes, fmt.Sprintf("the block at line %d was passed over: it %s", p.line, p.Text))
 		}
 		if n := len(j.passed) - named; n > 0 {
 			j.notes = append(j.notes, fmt.Sprintf("%d more blocks were passed over", n))
@@ -401,35 +429,43 @@ func (j *jcamp) end() {
 	}
 }
 
-// unfit says why a block is not an optical spectrum, or returns "". A label that is missing is a
-// fault of the block, not a reason to pass it over.
-func (b *jcampBlock) unfit() string {
+// unfit says why a block is not an optical spectrum, and in which line, or returns nil. A label that is
+// missing is a fault of the block, not a reason to pass it over.
+func (b *jcampBlock) unfit() *RowError {
 	const wanted = "; a spectrum of a pane is transmittance, reflectance or absorbance over wavelength"
 	const asCurve = "; write the spectrum as ##XYDATA= (X++(Y..Y))"
+	// at returns a reason in the line of a label, or where the block begins.
+	at := func(label, format string, args ...any) *RowError {
+		line := b.line
+		if l := b.labels[label]; l != nil {
+			line = l.line
+		}
+		return &RowError{b.file, line, 0, fmt.Sprintf(format, args...)}
+	}
 	kind, class := b.value("DATATYPE"), bare(b.value("DATACLASS"))
 	switch {
 	case b.other == holdsStructure:
-		return "holds " + holdsStructure + wanted
+		return at("", "holds %s%s", holdsStructure, wanted)
 	case notOptical(kind):
-		return fmt.Sprintf("holds %q%s", clip(kind), wanted)
+		return at("DATATYPE", "holds %q%s", clip(kind), wanted)
 	case b.other == holdsPages || class == "NTUPLES":
-		return "holds " + holdsPages + asCurve
+		return at("", "holds %s%s", holdsPages, asCurve)
 	case b.table == nil && b.other != "":
-		return "holds " + b.other + " and no curve" + asCurve
+		return at("", "holds %s and no curve%s", b.other, asCurve)
 	case b.table == nil && (class == "PEAKTABLE" || class == "ASSIGNMENTS"), b.table != nil && b.table.form == formPeaks:
-		return "holds peaks and no curve" + asCurve
+		return at("", "holds peaks and no curve%s", asCurve)
 	case b.table == nil:
-		return "holds no table of points" + asCurve
+		return at("", "holds no table of points%s", asCurve)
 	case b.table.form == formComplex:
-		return "holds complex data, as before or after a Fourier transform" + wanted
+		return at("", "holds complex data, as before or after a Fourier transform%s", wanted)
 	}
 	if x := b.value("XUNITS"); x != "" && unitOfX(x).name == "" {
-		return fmt.Sprintf("has x in %q; an optical spectrum has nm, µm or 1/cm (NANOMETERS, MICROMETERS, 1/CM)", clip(x))
+		return at("XUNITS", "has x in %q; an optical spectrum has nm, µm or 1/cm (NANOMETERS, MICROMETERS, 1/CM)", clip(x))
 	}
 	if y := b.value("YUNITS"); y != "" && unitOfY(y).quantity == "" {
-		return fmt.Sprintf("has ordinates in %q; a spectrum of a pane has TRANSMITTANCE or REFLECTANCE, as a fraction or in %%, or ABSORBANCE", clip(y))
+		return at("YUNITS", "has ordinates in %q; a spectrum of a pane has TRANSMITTANCE or REFLECTANCE, as a fraction or in %%, or ABSORBANCE", clip(y))
 	}
-	return ""
+	return nil
 }
 
 // notOptical reports whether a ##DATA TYPE= is plainly something else than transmittance or

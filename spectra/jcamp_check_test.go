@@ -22,6 +22,8 @@ func TestJCAMPRefuses(t *testing.T) {
 		// what the file says twice
 		{"NPOINTS", tenPoints(tenAFFN, "= 10", "= 11"), [][]string{
 			{"pane.jdx:14: 10 points up to here, ##NPOINTS= at line 10 says 11", "lost or damaged"}, {"pane.jdx:14: the line begins with x 450, ", "445"}}},
+		{"NPOINTS, large", tenPoints(tenAFFN, "= 10", "= 1E7"), [][]string{
+			{"pane.jdx:14: 10 points up to here, ##NPOINTS= at line 10 says 10000000; "}}},
 		{"NPOINTS is no number", tenPoints(tenAFFN, "= 10", "= ten"), [][]string{{"pane.jdx:10: ##NPOINTS= \"ten\": not a finite number"}}},
 		{"a line lost", tenPoints("400 -15 8\n420 120 1234\n460 5021 7903\n480 7890 7890"), [][]string{
 			{"pane.jdx:16: 8 points up to here, ##NPOINTS= at line 10 says 10"}, {"pane.jdx:15: the line begins with x 460, ", " it is 440"}}},
@@ -84,11 +86,11 @@ func TestJCAMPRefuses(t *testing.T) {
 		{"neither NPOINTS nor LASTX", tenPoints(tenAFFN, "##LASTX= 490", "##DELTAX= 10", "##NPOINTS= 10", ""), [][]string{{"pane.jdx:12: ##NPOINTS= and ##LASTX= must be there", "##DELTAX="}}},
 		{"no step", tenPoints(tenAFFN, "##LASTX= 490", ""), [][]string{{"pane.jdx:12: ##NPOINTS= and ##LASTX= must be there"}}},
 		{"x stands still", tenPoints("400 1 2 3 4 5 6 7 8 9 10", "LASTX= 490", "LASTX= 400", "-0.0015", "0.0001"), [][]string{{"pane.jdx:12: x goes from 400 to 400"}}},
-		{"hertz", tenPoints(tenAFFN, "NANOMETERS", "HZ"), [][]string{{"pane.jdx:1: has x in \"HZ\"; an optical spectrum has nm, µm or 1/cm"}}},
-		{"Kubelka-Munk", tenPoints(tenAFFN, "TRANSMITTANCE", "KUBELKA-MUNK"), [][]string{{"pane.jdx:1: has ordinates in \"KUBELKA-MUNK\"", "TRANSMITTANCE or REFLECTANCE", "ABSORBANCE"}}},
-		{"NMR", tenPoints(tenAFFN, "UV/VIS SPECTRUM", "NMR SPECTRUM", "##XUNITS= NANOMETERS", ""), [][]string{{"pane.jdx:1: holds \"NMR SPECTRUM\"", "transmittance, reflectance or absorbance over wavelength"}}},
-		{"Raman", tenPoints(tenAFFN, "UV/VIS SPECTRUM", "RAMAN SPECTRUM"), [][]string{{"pane.jdx:1: holds \"RAMAN SPECTRUM\""}}},
-		{"mass spectrum", tenPoints(tenPairs, "UV/VIS SPECTRUM", "MASS SPECTRUM", "##XYDATA= (X++(Y..Y))", "##PEAK TABLE= (XY..XY)"), [][]string{{"pane.jdx:1: holds \"MASS SPECTRUM\""}}},
+		{"hertz", tenPoints(tenAFFN, "NANOMETERS", "HZ"), [][]string{{"pane.jdx:4: has x in \"HZ\"; an optical spectrum has nm, µm or 1/cm"}}},
+		{"Kubelka-Munk", tenPoints(tenAFFN, "TRANSMITTANCE", "KUBELKA-MUNK"), [][]string{{"pane.jdx:5: has ordinates in \"KUBELKA-MUNK\"", "TRANSMITTANCE or REFLECTANCE", "ABSORBANCE"}}},
+		{"NMR", tenPoints(tenAFFN, "UV/VIS SPECTRUM", "NMR SPECTRUM", "##XUNITS= NANOMETERS", ""), [][]string{{"pane.jdx:3: holds \"NMR SPECTRUM\"", "transmittance, reflectance or absorbance over wavelength"}}},
+		{"Raman", tenPoints(tenAFFN, "UV/VIS SPECTRUM", "RAMAN SPECTRUM"), [][]string{{"pane.jdx:3: holds \"RAMAN SPECTRUM\""}}},
+		{"mass spectrum", tenPoints(tenPairs, "UV/VIS SPECTRUM", "MASS SPECTRUM", "##XYDATA= (X++(Y..Y))", "##PEAK TABLE= (XY..XY)"), [][]string{{"pane.jdx:3: holds \"MASS SPECTRUM\""}}},
 		{"peak table", tenPoints(tenPairs, "##XYDATA= (X++(Y..Y))", "##PEAK TABLE= (XY..XY)"), [][]string{{"pane.jdx:1: holds a peak table and no curve", "##XYDATA="}}},
 		{"peak table by its class", tenPoints("", "##XYDATA= (X++(Y..Y))", "##DATA CLASS= PEAK TABLE"), [][]string{{"pane.jdx:1: holds peaks and no curve"}}},
 		{"peak assignments", tenPoints("(400, 1, <line>)", "##XYDATA= (X++(Y..Y))", "##PEAK ASSIGNMENTS= (XYA)"), [][]string{{"pane.jdx:1: holds peak assignments and no curve"}}},
@@ -100,12 +102,11 @@ func TestJCAMPRefuses(t *testing.T) {
 		{"structure", "##TITLE= a\n##JCAMP-CS= 3.7\n##MOLFORM= SiO2\n##END=\n", [][]string{{"pane.jdx:1: holds a chemical structure"}}},
 		{"words alone", "##TITLE= a\n##NAMES= soda-lime glass\n##END=\n", [][]string{{"pane.jdx:1: holds no table of points", "##XYDATA="}}},
 		{"a link without blocks", "##TITLE= a\n##DATA TYPE= LINK\n##BLOCKS= 0\n##END=\n", [][]string{{"pane.jdx: no block with a spectrum in it"}}},
-		{"two blocks of no use", tenPoints(tenAFFN, "NANOMETERS", "HZ") + tenPoints(tenAFFN, "UV/VIS", "MASS"), [][]string{{"pane.jdx:1: has x in \"HZ\""}, {"pane.jdx:16: holds \"MASS SPECTRUM\""}}},
+		{"two blocks of no use", tenPoints(tenAFFN, "NANOMETERS", "HZ") + tenPoints(tenAFFN, "UV/VIS", "MASS"), [][]string{{"pane.jdx:4: has x in \"HZ\""}, {"pane.jdx:18: holds \"MASS SPECTRUM\""}}},
 
 		// values
 		{"per cent", tenPoints(tenAFFN, "0.0001", "0.01", "-0.0015", "-0.15"), [][]string{
-			{"pane.jdx:13: at 400 nm: transmittance -0.15: not in 0..1"}, {"pane.jdx:13: at 420 nm: transmittance 1.2: not in 0..1; per cent?", "##YUNITS= must say so, as % TRANSMITTANCE"},
-			{"pane.jdx:13: at 430 nm: "}, {"pane.jdx:13: at 440 nm: "}, {"pane.jdx:14: at 450 nm: "}, {"pane.jdx:14: at 460 nm: "}, {"pane.jdx:14: at 470 nm: "}, {"pane.jdx:14: at 480 nm: "}, {"pane.jdx:14: at 490 nm: "}}},
+			{"pane.jdx:13: at 400 nm: transmittance -0.15: not in 0..1"}, {"pane.jdx:13: at 420 nm: transmittance 1.2: not in 0..1; per cent?", "##YUNITS= must say so, as % TRANSMITTANCE; 8 faults like this, the last in line 14 at 490 nm"}}},
 		{"0.0021 below", tenPoints(strings.Replace(tenAFFN, "-15", "-21", 1), "-0.0015", "-0.0021"), [][]string{{"pane.jdx:13: at 400 nm: transmittance -0.0021: not in 0..1"}}},
 		{"0.0021 above", tenPoints(strings.Replace(tenAFFN, "5021", "10021", 1)), [][]string{{"pane.jdx:14: at 460 nm: transmittance 1.0021: not in 0..1"}}},
 		{"per cent above 100", tenPoints(strings.Replace(tenAFFN, "5021", "10021", 1), "TRANSMITTANCE", "% REFLECTANCE", "0.0001", "0.01", "-0.0015", "-0.15"), [][]string{{"pane.jdx:14: at 460 nm: reflectance 100.21 %: not in 0..100"}}},
@@ -174,6 +175,8 @@ func TestJCAMPNotes(t *testing.T) {
 		{[]string{"##FIRSTY", "##MAXY= 0.79\n##MINY= -0.0015\n##MAXX= 490\n##MINX= 400\n##FIRSTY"}, ""},
 		{[]string{"##FIRSTY", "##MAXY= 0.85\n##FIRSTY"}, "##MAXY= says 0.85, the points have 0.7903"},
 		{[]string{"##FIRSTY", "##MINX= 300\n##FIRSTY"}, "##MINX= says 300, the points have 400"},
+		{[]string{"##FIRSTY", "##DELTAX= 10\n##FIRSTY"}, ""},
+		{[]string{"##FIRSTY", "##DELTAX= -10\n##FIRSTY"}, "##DELTAX= says -10, but x goes from 400 to 490; its sign was passed over"},
 	} {
 		blocks, err := ReadJCAMP(strings.NewReader(tenPoints(tenAFFN, tt.changes...)), "pane.jdx")
 		if err != nil {
@@ -312,7 +315,7 @@ func TestJCAMPBounds(t *testing.T) {
 		{"a repetition without end", strings.NewReader(tenPoints("400AS999999999")), []string{"pane.jdx:13: an ordinate 1999999999 times in all; a table has at most 1000000 points"}},
 		{"of more digits than fit", strings.NewReader(tenPoints("400AS" + strings.Repeat("9", 400))), []string{"pane.jdx:13: an ordinate +Inf times"}},
 		{"many repetitions", strings.NewReader(tenPoints("400" + strings.Repeat("As", 200_000))), []string{"pane.jdx:13: an ordinate 9 times in all"}},
-		{"ten million points", strings.NewReader(tenPoints(strings.Repeat(line(1000), 10_000))), []string{"pane.jdx:1013: more than 1000000 points"}},
+		{"ten million points", strings.NewReader(tenPoints(strings.Repeat(line(1000), 10_000))), []string{"pane.jdx:1013: more than 1000000 points; a spectrum of a pane needs some hundred: export it in wider steps"}},
 		{"ten million lines of checks", strings.NewReader(tenPoints("400AJ\n" + strings.Repeat("400B%\n", 2_000_000))), []string{"pane.jdx:1000012: more than 1000000 points"}},
 		{"ten million pairs", strings.NewReader(tenPoints(strings.Repeat("400 1\n", 2_000_000), "(X++(Y..Y))", "(XY..XY)")), []string{"pane.jdx:1000013: more than 1000000 points"}},
 		{"three blocks", strings.NewReader(strings.Repeat(tenPoints("400A00s00000", "= 10", "= 900000", "-0.0015", "0.01"), 3)), []string{"pane.jdx:41: an ordinate 900000 times in all; a table has at most 200000 points"}},
@@ -333,8 +336,11 @@ func TestJCAMPBounds(t *testing.T) {
 	if _, err := ReadJCAMP(broken{}, "pane.jdx"); err == nil || err.Error() != "pane.jdx: the disk is gone" {
 		t.Errorf("got %v", err)
 	}
-	// Faults are counted up to a bound.
+	// Faults of one kind are counted.
 	_, err := ReadJCAMP(strings.NewReader(tenPoints(strings.Repeat("400 30000\n", 100), "= 10", "= 100", "490", "400.5", "##FIRSTY= -0.0015", "")), "pane.jdx")
+	checkFaults(t, err, [][]string{{"pane.jdx:13: at 400 nm: transmittance 3: not in 0..1; per cent?", "100 faults like this, the last in line 112 at 400.5 nm"}})
+	// Blocks at fault are told up to a bound.
+	_, err = ReadJCAMP(strings.NewReader(strings.Repeat(tenPoints(tenAFFN, "= 10", "= ten"), 100)), "pane.jdx")
 	if faults, ok := err.(Errors); !ok || len(faults) != maxBlockFaults {
 		t.Errorf("%v", err)
 	}

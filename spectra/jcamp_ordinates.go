@@ -35,6 +35,9 @@ const (
 // maxOrdinate is up to where ordinates, and sums of differences, are exact.
 const maxOrdinate = 1e15
 
+// wider says what to do about a table of too many points.
+const wider = "a spectrum of a pane needs some hundred: export it in wider steps, or each spectrum into a file of its own"
+
 // ordinates are a table of points as it is printed, before the factors.
 type ordinates struct {
 	block   *jcampBlock
@@ -124,7 +127,7 @@ func (t *ordinates) steps(s []byte, line int) {
 		t.fail(line, "x %s without an ordinate", clip(latin(s)))
 		return
 	case len(t.heads) > t.room:
-		t.fail(line, "more than %d lines of points", t.room)
+		t.fail(line, "more than %d lines of points; %s", t.room, wider)
 		return
 	}
 	// After a difference the next line begins with the ordinate that it led to, as a check.
@@ -202,7 +205,7 @@ func (t *ordinates) take(kind ordinateKind, v numeral, line int) {
 		case t.item == 0 || repeated:
 			t.fail(line, "a repetition (DUP) without an ordinate before it")
 		case v.value-1 > float64(room):
-			t.fail(line, "an ordinate %.0f times in all; a table has at most %d points", v.value, t.room)
+			t.fail(line, "an ordinate %.0f times in all; a table has at most %d points; %s", v.value, t.room, wider)
 		default:
 			for range int(v.value) - 1 {
 				t.last += t.step
@@ -219,7 +222,7 @@ func (t *ordinates) take(kind ordinateKind, v numeral, line int) {
 		}
 		t.item, t.last, t.step = kind, v.value, 0
 	case room == 0:
-		t.fail(line, "more than %d points", t.room)
+		t.fail(line, "more than %d points; %s", t.room, wider)
 	case kind == kindDifference && (t.item == 0 || t.item == kindMissing):
 		t.fail(line, "a difference (DIF) without an ordinate before it")
 	case kind == kindDifference:
@@ -386,7 +389,7 @@ func (t *ordinates) pairs(s []byte, line int) {
 			t.fail(line, "a number of %.3g; they are read up to %.0e", v, maxOrdinate)
 			return
 		case !t.wantY && len(t.y) >= t.room:
-			t.fail(line, "more than %d points", t.room)
+			t.fail(line, "more than %d points; %s", t.room, wider)
 			return
 		case !t.wantY:
 			t.x, t.lastX = append(t.x, v), numeral{v, unit}

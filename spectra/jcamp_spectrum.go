@@ -67,7 +67,7 @@ func (b *jcampBlock) spectrum() (spectrum Block, ok bool) {
 	case len(t.y) == 0:
 		b.fail(t.line, 0, "##%s= holds no points", t.name)
 	}
-	if len(b.faults) > 0 {
+	if b.faults.any() {
 		return Block{}, false
 	}
 	x := b.abscissa(xFactor)
@@ -76,10 +76,10 @@ func (b *jcampBlock) spectrum() (spectrum Block, ok bool) {
 		y := t.firstY.value * yFactor
 		unscaled = yFactor != 1 && first.value == t.firstY.value
 		if !unscaled && apart(y, first.value, first.unit, math.Abs(t.firstY.unit*yFactor), 1e-4*math.Abs(first.value)) {
-			b.fail(t.lines[0], 0, "the first ordinate, times ##YFACTOR=, is %s; ##FIRSTY= at line %d says %s", briefly(y), first.line, short(first.value))
+			b.fail(t.lines[0], 0, "the first ordinate, times ##YFACTOR=, is %s; ##FIRSTY= at line %d says %s", Brief(y), first.line, short(first.value))
 		}
 	}
-	if len(b.faults) > 0 {
+	if b.faults.any() {
 		return Block{}, false
 	}
 	spectrum = Block{Title: Clip(strings.TrimSpace(latin(b.title.text)), maxTitle), Notes: []string{"table " + t.shape()}}
@@ -89,9 +89,12 @@ func (b *jcampBlock) spectrum() (spectrum Block, ok bool) {
 	if t.form == formPairs && b.number("NPOINTS").line == 0 {
 		spectrum.Notes = append(spectrum.Notes, "no ##NPOINTS=; that no line is lost cannot be seen")
 	}
+	if delta := b.number("DELTAX"); delta.value != 0 && (delta.value > 0) != (x[len(x)-1] > x[0]) {
+		spectrum.Notes = append(spectrum.Notes, fmt.Sprintf("##DELTAX= says %s, but x goes from %s to %s; its sign was passed over", short(delta.value), Brief(x[0]), Brief(x[len(x)-1])))
+	}
 	spectrum.Notes = append(spectrum.Notes, b.extremes(x, yFactor)...)
 	b.curve(&spectrum, x, yFactor)
-	return spectrum, len(b.faults) == 0
+	return spectrum, !b.faults.any()
 }
 
 // abscissa returns x of each point in the unit of the file, and checks it against all that the
@@ -115,7 +118,7 @@ func (b *jcampBlock) abscissa(factor float64) []float64 {
 			line  int
 		}{{"FIRSTX", first, t.x[0], t.firstX.unit, t.lines[0]}, {"LASTX", last, t.x[n-1], t.lastX.unit, t.end}} {
 			if e.label.line > 0 && apart(e.x, e.label.value, e.label.unit, math.Abs(e.unit*factor)) {
-				b.fail(e.line, 0, "x %s, ##%s= at line %d says %s; a line is lost or damaged", briefly(e.x), e.name, e.label.line, short(e.label.value))
+				b.fail(e.line, 0, "x %s, ##%s= at line %d says %s; a line is lost or damaged", Brief(e.x), e.name, e.label.line, short(e.label.value))
 			}
 		}
 		return t.x
@@ -141,7 +144,7 @@ func (b *jcampBlock) abscissa(factor float64) []float64 {
 		reach := math.Abs(last.value - first.value)
 		slack := max(math.Abs(delta.value)/2, steps*min(delta.unit/2, math.Abs(delta.value)/1000)) // delta may be rounded
 		if got := math.Abs(steps * delta.value); apart(got, reach, slack) {
-			b.fail(last.line, 0, "##LASTX= is %s from the first x; %d points in steps of ##DELTAX= reach %s", briefly(reach), points, briefly(got))
+			b.fail(last.line, 0, "##LASTX= is %s from the first x; %d points in steps of ##DELTAX= reach %s", Brief(reach), points, Brief(got))
 		}
 	}
 	at := func(i int) float64 {
@@ -155,8 +158,8 @@ func (b *jcampBlock) abscissa(factor float64) []float64 {
 	for _, h := range t.heads {
 		x, slack := h.value*factor, max(step/2, math.Abs(h.unit*factor))
 		// Some programs write the x of the first new ordinate where a check comes before it.
-		if apart(x, at(h.at), slack) && !(h.check && !apart(x, at(h.at+1), slack)) {
-			b.fail(h.line, 0, "the line begins with x %s, by ##FIRSTX=, ##LASTX= and the number of points it is %s; a line is lost or damaged", briefly(x), briefly(at(h.at)))
+		if apart(x, at(h.at), slack) && !(h.check && h.at+1 < n && !apart(x, at(h.at+1), slack)) {
+			b.fail(h.line, 0, "the line begins with x %s, by ##FIRSTX=, ##LASTX= and the number of points it is %s; a line is lost or damaged", Brief(x), Brief(at(h.at)))
 			break
 		}
 	}
@@ -186,7 +189,7 @@ func (b *jcampBlock) extremes(x []float64, yFactor float64) (notes []string) {
 	} {
 		label := b.number(e.name)
 		if label.line > 0 && apart(e.is, label.value, label.unit, e.slack, 1e-3*math.Abs(label.value)) {
-			notes = append(notes, fmt.Sprintf("##%s= says %s, the points have %s", e.name, short(label.value), briefly(e.is)))
+			notes = append(notes, fmt.Sprintf("##%s= says %s, the points have %s", e.name, short(label.value), Brief(e.is)))
 		}
 	}
 	return notes
@@ -206,14 +209,14 @@ func (b *jcampBlock) curve(out *Block, x []float64, yFactor float64) {
 		}
 		line, nm := t.lines[i], ux.wavelength(x[i])
 		if !(x[i] > 0 && nm > 0) || math.IsInf(x[i], 0) || math.IsInf(nm, 0) {
-			b.fail(line, 0, "x is %s %s; it must be above 0, and finite", briefly(x[i]), ux.name)
+			b.fail(line, 0, "x is %s %s; it must be above 0, and finite", Brief(x[i]), ux.name)
 			return
 		}
 		v, problem := uy.fraction(y * yFactor)
 		if problem != "" {
 			b.fail(line, nm, "%s", problem)
 		}
-		if len(b.faults) == maxBlockFaults {
+		if b.faults.full() {
 			return
 		}
 		switch last := len(c.NM) - 1; {
@@ -222,7 +225,7 @@ func (b *jcampBlock) curve(out *Block, x []float64, yFactor float64) {
 		case nm == c.NM[last]:
 			b.fail(line, nm, "this wavelength stands twice")
 		case last > 0 && (nm > c.NM[last]) != (c.NM[1] > c.NM[0]):
-			b.fail(line, nm, "x must ascend or descend throughout; the point before is at %s nm", short(c.NM[last]))
+			b.fail(line, nm, "x must ascend or descend throughout; the point before is at %s nm", shortNM(c.NM[last]))
 		case lost > 0 && len(c.Gaps) == maxGaps:
 			b.fail(line, nm, "ordinates are missing (?) in more than %d places; that is no spectrum", maxGaps)
 			return

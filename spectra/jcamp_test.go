@@ -299,6 +299,7 @@ func TestJCAMPMissing(t *testing.T) {
 func TestJCAMPUnits(t *testing.T) {
 	for name, want := range map[string]string{
 		"NANOMETERS": "nm", "nm": "nm", "Nanometres": "nm", "WAVELENGTH (NM)": "nm", "Wavelength/nm": "nm", "wavelength in nm": "nm",
+		"Nanometers (nm)": "nm", "NANOMETRES [nm]": "nm", "Micrometers (µm)": "µm", "Wavenumbers (1/cm)": "1/cm", "Nanometers (µm)": "", "Time (nm)": "",
 		"MICROMETERS": "µm", "MICRONS": "µm", "UM": "µm", "µm": "µm", "μm": "µm", "\xb5m": "µm", "Wavelength [µm]": "µm",
 		"1/CM": "1/cm", "CM-1": "1/cm", "cm^-1": "1/cm", "cm**-1": "1/cm", "cm⁻¹": "1/cm", "cm\xaf\xb9": "1/cm", "WAVENUMBERS": "1/cm",
 		"Wavenumber (cm-1)": "1/cm", "wavenumbers, 1/cm": "1/cm", "Wavenumber/cm-1": "1/cm", "wavenumber 1/cm": "1/cm", "RECIPROCAL CENTIMETERS": "1/cm", "/CM": "1/cm",

@@ -37,6 +37,12 @@ type unitX struct {
 }
 
 func unitOfX(s string) unitX {
+	// "Nanometers (nm)" names the unit twice
+	if i := strings.IndexAny(s, "(["); i >= 0 {
+		if u := unitOfX(s[:i]); u.name != "" && u == unitOfX(s[i+1:]) {
+			return u
+		}
+	}
 	unit := bare(s)
 	for _, quantity := range []string{"WAVELENGTHS", "WAVELENGTH", "WAVENUMBERS", "WAVENUMBER"} {
 		rest, ok := strings.CutPrefix(unit, quantity)
@@ -113,6 +119,9 @@ func unitOfY(s string) unitY {
 	return unitY{}
 }
 
+// mostAbsorbance is beyond what any spectrometer reads; common practice, no source.
+const mostAbsorbance = 12
+
 // fraction turns an ordinate into a fraction of one; problem says why it is none.
 func (u unitY) fraction(y float64) (v float64, problem string) {
 	switch {
@@ -125,14 +134,16 @@ func (u unitY) fraction(y float64) (v float64, problem string) {
 	}
 	problem = fraction(v)
 	switch {
+	case u.absorbance && y > mostAbsorbance:
+		return v, fmt.Sprintf("absorbance %s: no instrument reads beyond %d; two numbers run together?", Brief(y), mostAbsorbance)
 	case problem == "":
 		return v, ""
 	case u.absorbance:
-		return v, fmt.Sprintf("absorbance %s: a transmittance of %s, not in 0..1", briefly(y), briefly(v))
+		return v, fmt.Sprintf("absorbance %s: a transmittance of %s, not in 0..1", Brief(y), Brief(v))
 	case u.percent:
-		return v, fmt.Sprintf("%s %s %%: not in 0..100", u.quantity, briefly(y))
+		return v, fmt.Sprintf("%s %s %%: not in 0..100", u.quantity, Brief(y))
 	case v > 1 && v <= 100+100*Slack:
-		return v, fmt.Sprintf("%s %s: not in 0..1; per cent? ##YUNITS= must say so, as %% %s", u.quantity, briefly(v), strings.ToUpper(string(u.quantity)))
+		return v, fmt.Sprintf("%s %s: not in 0..1; per cent? ##YUNITS= must say so, as %% %s", u.quantity, Brief(v), strings.ToUpper(string(u.quantity)))
 	}
-	return v, fmt.Sprintf("%s %s: %s", u.quantity, briefly(v), problem)
+	return v, fmt.Sprintf("%s %s: %s", u.quantity, Brief(v), problem)
 }

@@ -40,12 +40,24 @@ func LayoutColumns() []string { return []string{Wavelength, headTau, headRhoFron
 // LayoutUnits returns the units that a foreign wavelength may have.
 func LayoutUnits() []string { return []string{UnitNM, UnitUM, UnitReciprocal} }
 
+// UnitNamed returns the unit of a layout that somebody spells in one of the ways of the trade, such as
+// µm or cm-1; "" of one that is not known.
+func UnitNamed(name string) string {
+	switch unitOfX(name).name {
+	case "nm":
+		return UnitNM
+	case "µm":
+		return UnitUM
+	case "1/cm":
+		return UnitReciprocal
+	}
+	return ""
+}
+
 // Check says why nothing can have such a layout, or returns "".
 func (l Layout) Check() string {
 	switch s := l.Separator; {
 	case s == 0:
-	case s == ',' && l.DecimalComma:
-		return "a comma cannot both separate cells and stand in numbers"
 	case unicode.IsLetter(s) || unicode.IsDigit(s) || unicode.IsControl(s) && s != '\t' || strings.ContainsRune(`.+-"?%`, s) || s == unicode.ReplacementChar:
 		return fmt.Sprintf("%q cannot separate cells", s)
 	}
@@ -137,23 +149,47 @@ const reciprocalNM = 1e7
 // maxLine is how long a line may be, in bytes, that is looked at for numbers.
 const maxLine = 1 << 16
 
-// split returns the cells of a line, or none where they are too many to be looked at.
+// split returns the cells of a line, or none where they are too many to be looked at. A cell in quotes
+// may hold the separator.
 func split(line string, separator rune) []string {
 	if len(line) > maxLine {
 		return nil
 	}
 	if separator == ' ' {
-		return strings.Fields(line)
-	}
-	cells := strings.SplitN(line, string(separator), maxColumns+1)
-	for i, cell := range cells {
-		cell = strings.TrimSpace(cell)
-		if n := len(cell); n > 1 && cell[0] == '"' && cell[n-1] == '"' {
-			cell = strings.TrimSpace(cell[1 : n-1])
+		cells := strings.Fields(line)
+		for i, cell := range cells {
+			cells[i] = unquoted(cell)
 		}
-		cells[i] = cell
+		return cells
+	}
+	var cells []string
+	for more := true; more && len(cells) <= maxColumns; {
+		var cell string
+		cell, line, more = cutCell(line, string(separator))
+		cells = append(cells, unquoted(cell))
 	}
 	return cells
+}
+
+// cutCell cuts the first cell off a line.
+func cutCell(line, separator string) (cell, rest string, more bool) {
+	if begins := strings.TrimLeft(line, " "); strings.HasPrefix(begins, `"`) {
+		quoted, after, closed := strings.Cut(begins[1:], `"`)
+		after = strings.TrimLeft(after, " ")
+		if rest, more = strings.CutPrefix(after, separator); closed && (more || strings.TrimSpace(after) == "") {
+			return quoted, rest, more
+		}
+	}
+	return strings.Cut(line, separator)
+}
+
+// unquoted returns a cell without blanks and without quotes at both its ends.
+func unquoted(cell string) string {
+	cell = strings.TrimSpace(cell)
+	if n := len(cell); n > 1 && cell[0] == '"' && cell[n-1] == '"' {
+		cell = strings.TrimSpace(cell[1 : n-1])
+	}
+	return cell
 }
 
 func separatorName(s rune) string {

@@ -41,36 +41,39 @@ const (
 // is given. Values within Slack of a bound are set to it, with a caution. An error is Errors.
 func Join(c Columns, infraredFront, infraredBack Column) (Measured, error) {
 	var m Measured
-	var faults Errors
+	var faults faultList
 	for _, x := range []struct {
 		name string
 		col  *Column
 	}{{headTau, &c.Tau}, {headRhoFront, &c.RhoFront}, {headRhoBack, &c.RhoBack}} {
 		switch n := x.col.solar().Len(); {
 		case x.col.Len() == 0:
-			faults = append(faults, &RowError{File: x.col.File, Text: "no column " + x.name + ", or nothing in it"})
+			faults.add(&RowError{File: x.col.File, Text: "no column " + x.name + ", or nothing in it"})
 		case n < minimumRows:
-			faults = append(faults, &RowError{File: x.col.File, Text: fmt.Sprintf("%d values of %s up to 2500 nm; at least %d are needed", n, x.name, minimumRows)})
+			faults.add(&RowError{File: x.col.File, Text: fmt.Sprintf("%d values of %s up to 2500 nm; at least %d are needed", n, x.name, minimumRows)})
 		}
 	}
-	if len(faults) > 0 {
-		return m, faults
+	if faults.any() {
+		return m, faults.errors()
 	}
 	bounded := &rowList{}
 	tau := bound(c.Tau, bounded)
 	front, back := bound(c.RhoFront, bounded), bound(c.RhoBack, bounded)
-	faults = append(faults, sumToOne(tau, front, headRhoFront, bounded)...)
-	faults = append(faults, sumToOne(tau, back, headRhoBack, bounded)...)
+	sumToOne(tau, front, headRhoFront, bounded, &faults)
+	sumToOne(tau, back, headRhoBack, bounded, &faults)
 	m.Tau, m.RhoFront, m.RhoBack = tau.solar(), front.solar(), back.solar()
-	var err *RowError
-	if m.InfraredFront, err = infrared(front, infraredFront, "front", bounded, &m.Cautions); err != nil {
-		faults = append(faults, err)
+	for _, x := range []struct {
+		rho, own Column
+		face     string
+		into     *Curve
+	}{{front, infraredFront, "front", &m.InfraredFront}, {back, infraredBack, "back", &m.InfraredBack}} {
+		var err *RowError
+		if *x.into, err = infrared(x.rho, x.own, x.face, bounded, &m.Cautions); err != nil {
+			faults.add(err)
+		}
 	}
-	if m.InfraredBack, err = infrared(back, infraredBack, "back", bounded, &m.Cautions); err != nil {
-		faults = append(faults, err)
-	}
-	if len(faults) > 0 {
-		return Measured{}, faults
+	if faults.any() {
+		return Measured{}, faults.errors()
 	}
 	if c := tau.cut(InfraredFirstNM, math.Inf(1)); c.Last() > InfraredFirstNM {
 		m.InfraredTau = c
@@ -85,6 +88,16 @@ func Join(c Columns, infraredFront, infraredBack Column) (Measured, error) {
 		}
 	}
 	return m, nil
+}
+
+// Impossible returns why no pane can have such columns, as Join would, of those that are there:
+// transmittance and reflectance that add to more than 1. It is nil where a pane can.
+func Impossible(c Columns) Errors {
+	var faults faultList
+	tau := c.Tau.bounded()
+	sumToOne(tau, c.RhoFront.bounded(), headRhoFront, &rowList{}, &faults)
+	sumToOne(tau, c.RhoBack.bounded(), headRhoBack, &rowList{}, &faults)
+	return faults.errors()
 }
 
 // solar returns the points up to 2500 nm; where none stands there, the next as well if it is no
@@ -158,7 +171,7 @@ const binary = 1e-12
 
 // sumToOne checks τ + ρ ≤ 1 at the wavelengths of both, where both are given, and takes an
 // excess within Slack off.
-func sumToOne(tau, rho Column, name string, changed *rowList) (faults Errors) {
+func sumToOne(tau, rho Column, name string, changed *rowList, faults *faultList) {
 	// lower takes off c what exceeds 1 together with the other, at the points of c.
 	lower := func(c Column, other Curve) {
 		values := make([]float64, c.Len())
@@ -168,7 +181,7 @@ func sumToOne(tau, rho Column, name string, changed *rowList) (faults Errors) {
 			switch {
 			case nm < other.First() || nm > other.Last() || other.InGap(nm):
 			case sum > 1+Slack+binary:
-				faults = append(faults, &RowError{c.File, c.Line[i], nm,
+				faults.add(&RowError{c.File, c.Line[i], nm,
 					fmt.Sprintf("tau + %s is %.4f; transmittance and reflectance add to at most 1", name, sum)})
 			case sum > 1:
 				c.Value[i] = 1 - values[i]
@@ -182,7 +195,6 @@ func sumToOne(tau, rho Column, name string, changed *rowList) (faults Errors) {
 	if !slices.Equal(tau.NM, rho.NM) { // a peak may lie between two points of the other
 		lower(tau, rho.Curve)
 	}
-	return faults
 }
 
 // infrared returns the reflectance of a face from 5 to 50 µm, from a column of its own or from

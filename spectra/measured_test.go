@@ -324,3 +324,35 @@ func TestJoinInfrared(t *testing.T) {
 		checkFaults(t, err, [][]string{{"pane.csv: no rows beyond 5 µm", "front"}})
 	})
 }
+
+// What is impossible shows in the columns that are there; what is missing is not.
+func TestImpossible(t *testing.T) {
+	tau, rho := constant(300, 400, 10, 0.9), constant(300, 400, 20, 0.25)
+	tau.File, rho.File = "t.csv", "r.csv"
+	for _, tt := range []struct {
+		name string
+		c    Columns
+		want [][]string
+	}{
+		{"with the front", Columns{Tau: tau, RhoFront: rho}, [][]string{
+			{"r.csv: at 300 nm: tau + rho_front is 1.1500", "6 faults like this"}, {"t.csv: at 300 nm: tau + rho_front is 1.1500", "11 faults like this"}}},
+		{"with the back", Columns{Tau: tau, RhoBack: rho}, [][]string{{"r.csv: at 300 nm: tau + rho_back"}, {"t.csv: at 300 nm: tau + rho_back"}}},
+		{"a transmittance alone", Columns{Tau: tau}, nil},
+		{"reflectances alone", Columns{RhoFront: tau, RhoBack: tau}, nil},
+		{"nothing", Columns{}, nil},
+		{"within the slack", Columns{Tau: tau, RhoBack: constant(300, 400, 10, 0.1+Slack)}, nil},
+		{"side by side", Columns{Tau: tau, RhoFront: constant(500, 600, 10, 0.9)}, nil},
+	} {
+		faults := Impossible(tt.c)
+		if tt.want == nil {
+			if faults != nil {
+				t.Errorf("%s: %v", tt.name, faults)
+			}
+			continue
+		}
+		checkFaults(t, faults, tt.want)
+	}
+	if tau.Value[0] != 0.9 {
+		t.Error("the columns were changed")
+	}
+}

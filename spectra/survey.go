@@ -161,7 +161,9 @@ func extremes(c Curve) (least, greatest Extreme) {
 }
 
 const (
-	noisePoints = 20     // the least that an estimate rests on
+	// NoisePoints is the least number of points, with a neighbour on either side, that an estimate of
+	// noise rests on: those of 300 to 380 nm by 5 nm.
+	NoisePoints = 15
 	normalMAD   = 1.4826 // standard deviation over median absolute deviation of a normal distribution, 1/Φ⁻¹(3/4)
 )
 
@@ -191,8 +193,8 @@ func noiseIn(c Curve, part Span, gaps []Gap) Noise {
 		line := float64(w*c.Value[i-1]) + float64((1-w)*c.Value[i+1])
 		all = append(all, math.Abs(c.Value[i]-line)/math.Sqrt(1+float64(w*w)+float64((1-w)*(1-w))))
 	}
-	if n.Points = len(all); n.Points < noisePoints {
-		n.Why = fmt.Sprintf("%s with neighbours on both sides; %d are needed", plural(n.Points, "point"), noisePoints)
+	if n.Points = len(all); n.Points < NoisePoints {
+		n.Why = fmt.Sprintf("%s with neighbours on both sides; %d are needed", plural(n.Points, "point"), NoisePoints)
 		return n
 	}
 	n.Sigma = normalMAD * median(all)

@@ -145,6 +145,10 @@ func TestNoiseUnknownAndNone(t *testing.T) {
 	if n[0].Why == "" || n[0].Points != 7 || !strings.HasPrefix(n[0].Why, "7 points") || n[0].Sigma != 0 {
 		t.Errorf("9 points from 300 to 380 nm: %+v, want no estimate", n[0])
 	}
+	// by 5 nm there are 17 points from 300 to 380 nm, 15 of which have neighbours
+	if n := Survey(at(0.5, steps(300, 5, 200)...)).Noise[0]; n.Why != "" || n.Points != 15 {
+		t.Errorf("17 points from 300 to 380 nm: %+v, want an estimate", n)
+	}
 	if n[1].Why != "" || n[1].Points != 39 || n[1].Sigma != 0 {
 		t.Errorf("a constant has %+v, want 0", n[1])
 	}

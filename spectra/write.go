@@ -8,7 +8,6 @@ import (
 	"io"
 	"math"
 	"slices"
-	"strconv"
 	"strings"
 )
 
@@ -27,9 +26,6 @@ func (c Columns) named() (list []namedColumn) {
 	}
 	return list
 }
-
-// commentLetters bounds a line of comment.
-const commentLetters = 400
 
 // WriteCSV writes columns as a spectrum file, with a # line for each comment, that ReadCSV reads
 // back bit for bit: points and gaps. A cell is blank beyond the ends of its column and where a
@@ -134,7 +130,7 @@ func (c Columns) OnOneGrid() (Columns, []string) {
 			continue
 		}
 		notes = append(notes, fmt.Sprintf("%s: %d of %d values were interpolated linearly, to have the wavelengths of the other columns; the widest step between two of its own was %s nm, from %s nm",
-			x.head, added, out.Len(), briefly(widest.ToNM-widest.FromNM), short(widest.FromNM)))
+			x.head, added, out.Len(), Brief(widest.ToNM-widest.FromNM), shortNM(widest.FromNM)))
 		switch x.head {
 		case headTau:
 			c.Tau = out
@@ -202,6 +198,3 @@ func (c Columns) WithInfrared(front, back Column) Columns {
 	c.RhoFront, c.RhoBack = join(c.RhoFront, front), join(c.RhoBack, back)
 	return c
 }
-
-// briefly prints a difference of wavelengths without what binary numbers leave behind.
-func briefly(v float64) string { return strconv.FormatFloat(v, 'g', 6, 64) }

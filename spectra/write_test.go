@@ -276,7 +276,7 @@ func TestWithInfrared(t *testing.T) {
 
 // lined gives columns that no file stands behind a line for each point.
 func (c Columns) lined() Columns {
-	return Columns{c.Tau.lined(), c.RhoFront.lined(), c.RhoBack.lined()}
+	return Columns{Tau: c.Tau.lined(), RhoFront: c.RhoFront.lined(), RhoBack: c.RhoBack.lined()}
 }
 
 func (c Column) lined() Column {

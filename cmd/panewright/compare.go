@@ -93,6 +93,9 @@ func compared(path string, names []string, basis string, filesAnywhere bool) (ta
 	}
 	r.Project = p
 	b := p.Bases[0]
+	if strings.Contains(basis, ",") {
+		return r, fmt.Errorf("--basis %s: compare is under one basis; name one", short(basis))
+	}
 	if basis != "" {
 		if b, err = basisNamed(basis); err != nil {
 			return r, err
@@ -114,7 +117,7 @@ func compared(path string, names []string, basis string, filesAnywhere bool) (ta
 		for i := range ratings {
 			rating := &ratings[i]
 			known = append(known, rating.Tint)
-			if one && !rating.InTint(tint) {
+			if one && (tint == "" || !rating.InTint(tint)) {
 				continue
 			}
 			found = true

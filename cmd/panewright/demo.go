@@ -5,6 +5,9 @@ package main
 import (
 	"errors"
 	"fmt"
+	"io/fs"
+	"os"
+	"path/filepath"
 
 	"github.com/spf13/cobra"
 
@@ -19,8 +22,9 @@ func newDemo(s streams) *cobra.Command {
 		DisableFlagsInUseLine: true,
 		Short:                 "Write the demo project into a folder and rate it",
 		Long: `Writes the invented demo project into DIR (panewright-demo when absent), reads
-it back like any project, rates it and prints the schedule. Files that stand in
-DIR and differ are not overwritten.`,
+it back like any project, rates it, prints the schedule and makes the data
+sheets, DIR/sheets.pdf. Files of the project that stand in DIR and differ are
+not overwritten.`,
 		Example: "  panewright demo\n  panewright demo mill",
 		RunE: func(_ *cobra.Command, args []string) error {
 			dir := "panewright-demo"
@@ -32,19 +36,31 @@ DIR and differ are not overwritten.`,
 			case len(args) == 1:
 				dir = args[0]
 			}
+			if info, err := os.Stat(dir); err == nil && !info.IsDir() {
+				return &outputError{"the demo project", fmt.Errorf("%s is a file and no folder", dir)}
+			}
 			path, err := demo.Write(dir)
 			if changed, ok := errors.AsType[*demo.ChangedError](err); ok {
 				return changed
 			}
+			if at, ok := errors.AsType[*fs.PathError](err); ok {
+				return &outputError{at.Path, at.Err}
+			}
 			if err != nil {
-				return &outputError{"the demo project", err}
+				return &outputError{"the demo project", cause(err)}
 			}
 			fmt.Fprintf(s.err, "wrote %s; rate it again with: panewright rate %s\n", path, path)
 			r, err := rate(path, selection{})
 			if err != nil {
 				return err
 			}
-			return s.write("", table.Schedule(r))
+			schedule := table.Schedule(r)
+			sheets := filepath.Join(dir, "sheets.pdf")
+			if err := s.sheets(sheets, r, path, selection{}); err != nil {
+				return err
+			}
+			fmt.Fprintf(s.err, "wrote %s, its data sheets; make them again with: panewright sheet %s -o sheets.pdf\n", sheets, path)
+			return s.write("", schedule)
 		},
 	}
 }

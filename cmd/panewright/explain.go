@@ -20,16 +20,19 @@ func newExplain(s streams) *cobra.Command {
 		Long: `Prints what leads to every figure, in the order of a hand calculation: symbol,
 formula, the formula with the numbers put in, value, unit and clause. One
 weighted sum is written out row by row; of the others the two sums are given.
-Then come U of lower gas fills, and how U and g change with emissivities, fills
+Then come U of other gas fills, and how U and g change with emissivities, fills
 and widths of gaps. Without --tint, a make-up that switches is shown in its
 first tint.`,
 		Example: `  panewright explain panewright-demo/project.yaml --makeup D1
   panewright explain panewright-demo/project.yaml --makeup D1 --basis en,iso
   panewright explain panewright-demo/project.yaml --makeup E1 --tint full`,
 		Args: oneProject,
-		RunE: func(_ *cobra.Command, args []string) error {
+		RunE: func(c *cobra.Command, args []string) error {
 			if len(o.makeups) == 0 {
 				return fmt.Errorf("explain needs the make-up to explain: add --makeup ID")
+			}
+			if err := checkEnding(c.Name(), output, "", []string{"table"}); err != nil {
+				return err
 			}
 			r, err := rate(args[0], o)
 			if err != nil {

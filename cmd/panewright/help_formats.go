@@ -39,6 +39,8 @@ of the project and stay in it, unless --files-anywhere is given.
                   heat_treatment: annealed, heat-strengthened, toughened
   makeups         id, title, tilt_deg, and outside_to_inside: panes (turned:,
                   tint:) and gaps (gap_mm, gas: shares that add to 1)
+                  typed: {NAME: TEXT}, carried to every output and marked as
+                  typed by you
   limits          figure; at_most or at_least, in the unit of the figure; tint:
                   clear, full, each, worst or a name; scope, basis, makeups;
                   source and date; panewright check holds figures against them
@@ -51,12 +53,13 @@ Every key, with its bounds, is in the schema; editors complete from it:
 A SPECTRUM is CSV with a row of column heads: wavelength_nm or wavelength_um,
 tau, rho_front, rho_back in any order, as fractions of one. Lines that begin
 with # are comments. A cell is blank beyond the ends of its column, and ? where
-a value is missing in between: the figures that need it are not known, and
-nothing is put in its place. Rows from 5 to 50 µm give the emissivity of faces.
+a value is missing in between: the figures that need it are not known; where it
+has less than 0.1 % of a figure's weight, it is interpolated, with a caution.
+Rows from 5 to 50 µm give the emissivity of faces.
 
 Or JCAMP-DX, as spectrometers write it: transmittance, reflectance or absorbance
 over nm, µm or 1/cm. It has one quantity a spectrum, so that a pane names its
-files by quantity, under spectra:.
+files by quantity, under spectra:. FILE#2 is the second spectrum of a file.
 
 OPTICAL CONSTANTS are CSV: wavelength_nm or wavelength_um, n, k. Two rows
 suffice; between rows it is linear.
@@ -64,8 +67,8 @@ suffice; between rows it is linear.
 ANY OTHER TEXT with rows of numbers, perhaps in per cent, with decimal commas or
 wavelengths in 1/cm, is looked at and turned into such CSV by spectrum:
 
-  panewright spectrum tau=t.txt rho_front=r.txt rho_back=r.txt --percent \
-    --decimal-comma --as csv -o pane.csv
+  panewright spectrum tau=t.txt rho_front=r.txt --percent --decimal-comma \
+    --as csv -o pane.csv
 
 OUTPUTS. Results go to standard output or, whole or not at all, to the file of
 -o; all else goes to standard error.
@@ -84,7 +87,7 @@ The names of figures: panewright help figures.
 EXIT CODES
 
   0               done
-  1               an output could not be written
+  1               an output could not be written, or a published check is missed
   2               wrong usage, or wrong input
   3               not every limit that was checked is met
 `

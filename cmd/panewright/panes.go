@@ -5,6 +5,7 @@ package main
 import (
 	"bytes"
 	"fmt"
+	"path/filepath"
 	"slices"
 	"strings"
 
@@ -49,7 +50,7 @@ of the pane named, for a project's spectrum: key.`,
 	c.Flags().StringVar(&o.basis, "basis", glazing.EN.Name, "figures under basis `NAME`: "+strings.Join(glazing.BasisNames(), ", "))
 	c.Flags().StringVar(&o.tint, "tint", "", "show only tint `NAME`")
 	c.Flags().StringVar(&o.project, "project", "", "the panes of project `FILE` as well")
-	c.Flags().StringVar(&o.as, "as", "table", "print as `FORMAT`: table, or csv with an ID")
+	c.Flags().StringVar(&o.as, "as", "", "print as `FORMAT`: table, csv with an ID; table when absent, or what the end of -o says")
 	c.Flags().BoolVar(&o.filesAnywhere, "files-anywhere", false, "let the project name files outside its folder")
 	outputFlag(c, &o.output)
 	return c
@@ -104,13 +105,30 @@ func (s shelf) report(panes ...*glazing.Pane) (table.Report, error) {
 	return r, nil
 }
 
+// form settles the format.
+func (o *panesOptions) form() error {
+	formats := []string{"table", "csv"}
+	if o.as != "" && !slices.Contains(formats, o.as) {
+		return fmt.Errorf("--as %s is not known; %s", short(o.as), project.Offer(o.as, formats))
+	}
+	if err := checkEnding("panes", o.output, o.as, formats); err != nil {
+		return err
+	}
+	if o.as == "" {
+		o.as = "table"
+		if strings.EqualFold(filepath.Ext(o.output), ".csv") {
+			o.as = "csv"
+		}
+	}
+	return nil
+}
+
 func runPanes(s streams, o panesOptions) error {
-	switch o.as {
-	case "table":
-	case "csv":
+	if err := o.form(); err != nil {
+		return err
+	}
+	if o.as == "csv" {
 		return fmt.Errorf("--as csv writes the spectrum of one pane; name it, such as: panewright panes soda-lime-6 --as csv")
-	default:
-		return fmt.Errorf("--as %s is not known; %s", short(o.as), project.Offer(o.as, []string{"table", "csv"}))
 	}
 	if o.tint != "" {
 		return fmt.Errorf("--tint needs the pane to show")
@@ -138,8 +156,8 @@ func runPanes(s streams, o panesOptions) error {
 }
 
 func runPane(s streams, id string, o panesOptions) error {
-	if o.as != "table" && o.as != "csv" {
-		return fmt.Errorf("--as %s is not known; %s", short(o.as), project.Offer(o.as, []string{"table", "csv"}))
+	if err := o.form(); err != nil {
+		return err
 	}
 	from, err := o.shelf()
 	if err != nil {

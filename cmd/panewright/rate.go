@@ -3,6 +3,7 @@ package main
 // panewright rate: which make-ups, tints and bases of a project to rate, and in which form to print.
 
 import (
+	"cmp"
 	"fmt"
 	"math"
 	"os"
@@ -26,25 +27,30 @@ type selection struct {
 }
 
 func (o *selection) flags(c *cobra.Command) {
-	c.Flags().StringSliceVar(&o.makeups, "makeup", nil, "rate only make-up `ID` (may be repeated)")
-	c.Flags().StringSliceVar(&o.tints, "tint", nil, "rate only tint `NAME` (may be repeated)")
-	c.Flags().StringSliceVar(&o.bases, "basis", nil, "rate under bases `NAME,NAME` instead of the project's: "+strings.Join(glazing.BasisNames(), ", "))
+	verb := "rate"
+	if c.Name() == "explain" {
+		verb = c.Name()
+	}
+	c.Flags().StringSliceVar(&o.makeups, "makeup", nil, verb+" only make-up `ID` (may be repeated)")
+	c.Flags().StringSliceVar(&o.tints, "tint", nil, verb+" only tint `NAME` (may be repeated)")
+	c.Flags().StringSliceVar(&o.bases, "basis", nil, verb+" under bases `NAME,NAME` instead of the project's: "+strings.Join(glazing.BasisNames(), ", "))
 	c.Flags().BoolVar(&o.filesAnywhere, "files-anywhere", false, "let the project name files outside its folder")
 }
 
 func outputFlag(c *cobra.Command, output *string) {
-	c.Flags().StringVarP(output, "output", "o", "", "write to `FILE` instead of standard output")
+	c.Flags().StringVarP(output, "output", "o", "", "write to `FILE`; to standard output when absent or -")
 }
 
 // page is how to print: the form, the file, the figures and their units.
 type page struct {
+	command    string // whose page it is
 	as, output string
 	formats    []string // offered
 	figures    []string
 	units      string
 	csv        struct {
-		separator          string
-		decimalComma, rows bool
+		separator               string
+		decimalComma, rows, bom bool
 	}
 }
 
@@ -57,17 +63,19 @@ func (p *page) flags(c *cobra.Command, formats ...string) {
 
 // formatFlags are those of a page whose figures and units are settled.
 func (p *page) formatFlags(c *cobra.Command, formats ...string) {
-	p.formats, p.units = formats, "si"
+	p.command, p.formats, p.units = c.Name(), formats, "si"
 	c.Flags().StringVar(&p.as, "as", "", "print as `FORMAT`: "+strings.Join(formats, ", ")+"; table when absent, or what the end of -o says")
 	c.Flags().StringVar(&p.csv.separator, "separator", "", "with --as csv: `SIGN` between cells: comma, semicolon or tab (default comma)")
 	c.Flags().BoolVar(&p.csv.decimalComma, "decimal-comma", false, "with --as csv: write 0,25 for 0.25")
+	c.Flags().BoolVar(&p.csv.bom, "bom", false, "with --as csv: begin with a byte-order mark, for spreadsheets that take UTF-8 for something else")
 	outputFlag(c, &p.output)
 }
 
 // spreadsheetText is help that commands which print CSV or XLSX share.
-const spreadsheetText = `CSV is UTF-8 without a byte-order mark; lines end with a line feed. A text that
-a spreadsheet would take for a formula (it begins with = + - @, a tab or a
-carriage return, also after blanks) has an apostrophe put before it.`
+const spreadsheetText = `CSV is UTF-8, without a byte-order mark unless --bom is given; lines end with a
+line feed. A text that a spreadsheet would take for a formula (it begins with
+= + - @, a tab or a carriage return, also after blanks) has an apostrophe put
+before it.`
 
 // figureNames lists the short names of figures, folded for a help text.
 func figureNames() string {
@@ -112,9 +120,10 @@ which are their paths in JSON, with panes, gaps and surfaces counted from 1.
 XLSX also has the units, editions, cautions, and a chart of the spectra.
 ` + spreadsheetText + `
 
---figures takes keys, such as solar.g or surfaces.3.emissivity, and the short
-names below. A figure of panes, gaps or surfaces without a number stands for all
-of them; in JSON its list is always whole.
+--figures takes keys, such as solar.g or surfaces.3.emissivity, symbols as the
+tables print them, such as τv or ε3, and the short names below. A figure of
+panes, gaps or surfaces without a number stands for all of them; in JSON its
+list is always whole.
 
 ` + figureNames(),
 		Example: `  panewright rate panewright-demo/project.yaml
@@ -212,32 +221,36 @@ func (p *page) choose(r *table.Report) error {
 	return nil
 }
 
-// ends are the formats that the end of a file's name says.
-var ends = map[string]string{".json": "json", ".csv": "csv", ".xlsx": "xlsx", ".md": "markdown", ".pdf": "pdf"}
-
 // separators are what may stand between the cells of CSV, by name and as they are.
 var separators = map[string]rune{"": 0, "comma": ',', ",": ',', "semicolon": ';', ";": ';', "tab": '\t', "\t": '\t', `\t`: '\t'}
 
 // form settles the format and checks what goes with it.
 func (p *page) form() (table.CSVForm, error) {
 	var none table.CSVForm
-	switch end := ends[strings.ToLower(filepath.Ext(p.output))]; {
-	case p.as == "md":
+	if p.as == "md" {
 		p.as = "markdown"
-	case p.as != "":
-	case slices.Contains(p.formats, end):
-		p.as = end
-	default:
-		p.as = "table"
 	}
-	if !slices.Contains(p.formats, p.as) {
+	if p.as != "" && !slices.Contains(p.formats, p.as) {
 		return none, fmt.Errorf("--as %s is not known; %s", short(p.as), project.Offer(p.as, p.formats))
+	}
+	tabs := p.as == "csv" && separators[p.csv.separator] == '\t' && strings.EqualFold(filepath.Ext(p.output), ".tsv")
+	if !tabs {
+		if err := checkEnding(cmp.Or(p.command, "this command"), p.output, p.as, p.formats); err != nil {
+			return none, err
+		}
+	}
+	if p.as == "" {
+		p.as = "table"
+		if end := ends[strings.ToLower(filepath.Ext(p.output))]; end != "" {
+			p.as = end
+		}
 	}
 	switch units := []string{"si", "ip"}; {
 	case !slices.Contains(units, p.units):
 		return none, fmt.Errorf("--units %s is not known; %s", short(p.units), project.OfferAll(p.units, units))
 	case p.units == "ip" && p.as == "json":
-		return none, fmt.Errorf("--units ip is not for JSON, whose keys name SI units; use --as csv or xlsx")
+		others := slices.DeleteFunc(slices.Clone(p.formats), func(f string) bool { return f == "json" })
+		return none, fmt.Errorf("--units ip is not for JSON, whose keys name SI units; it goes with --as %s", strings.Join(others, ", "))
 	}
 	if p.figures != nil && len(p.figures) == 0 {
 		return none, fmt.Errorf("--figures names no figure; write light,g,u")
@@ -246,7 +259,7 @@ func (p *page) form() (table.CSVForm, error) {
 		for _, x := range []struct {
 			name string
 			set  bool
-		}{{"--separator", p.csv.separator != ""}, {"--decimal-comma", p.csv.decimalComma}, {"--units-row", p.csv.rows}} {
+		}{{"--separator", p.csv.separator != ""}, {"--decimal-comma", p.csv.decimalComma}, {"--units-row", p.csv.rows}, {"--bom", p.csv.bom}} {
 			if x.set {
 				return none, fmt.Errorf("%s is for CSV; add --as csv", x.name)
 			}
@@ -259,7 +272,7 @@ func (p *page) form() (table.CSVForm, error) {
 	if p.csv.decimalComma && (sign == 0 || sign == ',') {
 		return none, fmt.Errorf("--decimal-comma needs another sign between cells; add --separator semicolon")
 	}
-	return table.CSVForm{Separator: sign, DecimalComma: p.csv.decimalComma, UnitsRow: p.csv.rows}, nil
+	return table.CSVForm{Separator: sign, DecimalComma: p.csv.decimalComma, UnitsRow: p.csv.rows, ByteOrderMark: p.csv.bom}, nil
 }
 
 // terminal reports whether standard output is a terminal.

@@ -10,6 +10,7 @@ import (
 	"io/fs"
 	"os"
 	"path/filepath"
+	"slices"
 	"strings"
 
 	"github.com/spf13/cobra"
@@ -97,6 +98,7 @@ declaration. Local authorities and licensed practitioners decide.`,
 	root.CompletionOptions.DisableDefaultCmd = true
 	root.SetUsageTemplate(usage + "{{if not .HasParent}}\nTopics, such as panewright help formats:\n" + topicList() + "\n{{end}}")
 	root.SetFlagErrorFunc(flagError)
+	root.PersistentPreRunE = func(c *cobra.Command, _ []string) error { return settle(c) }
 	root.AddCommand(newDemo(s), newRate(s), newCompare(s), newCheck(s), newExplain(s), newSection(s), newPlot(s), newSchema(s), newPanes(s), newSheet(s), newSpectrum(s), newVerify(s), newCompletion(s))
 	root.AddCommand(generators(s)...)
 	root.SetHelpCommand(newHelp())
@@ -121,8 +123,50 @@ Options:
 {{.LocalFlags.FlagUsagesWrapped 80 | trimTrailingWhitespaces}}{{end}}
 `
 
-// flagError offers the options nearest to one that is not known.
+// settle refuses options whose value is empty, and takes - as the file of -o for standard output.
+func settle(c *cobra.Command) error {
+	var fault error
+	c.Flags().Visit(func(f *pflag.Flag) {
+		var values []string
+		if list, ok := f.Value.(pflag.SliceValue); ok {
+			values = list.GetSlice()
+		} else {
+			values = []string{f.Value.String()}
+		}
+		some := slices.ContainsFunc(values, func(s string) bool { return s != "" })
+		switch kind, _ := pflag.UnquoteUsage(f); {
+		case fault != nil:
+		case !some && kind == "FILE":
+			fault = fmt.Errorf("--%s needs the name of a file", f.Name)
+		case !some:
+			fault = fmt.Errorf("--%s is empty; write --%s %s", f.Name, f.Name, kind)
+		case slices.Contains(values, ""):
+			fault = fmt.Errorf("--%s %s: a name between the commas is empty", f.Name, short(strings.Join(values, ",")))
+		case f.Name == "output" && values[0] == "-":
+			fault = f.Value.Set("")
+		}
+	})
+	return fault
+}
+
+// flagError words what is wrong with an option, and offers those nearest to one that is not known.
 func flagError(c *cobra.Command, err error) error {
+	if missing, ok := errors.AsType[*pflag.ValueRequiredError](err); ok {
+		name := "--" + missing.GetSpecifiedName()
+		if missing.GetSpecifiedShortnames() != "" {
+			name = name[1:]
+		}
+		kind, _ := pflag.UnquoteUsage(missing.GetFlag())
+		return fmt.Errorf("%s needs a value; write %s %s", name, name, kind)
+	}
+	if wrong, ok := errors.AsType[*pflag.InvalidValueError](err); ok {
+		kind, _ := pflag.UnquoteUsage(wrong.GetFlag()) // "" of an option that is on or off
+		name := "--" + wrong.GetFlag().Name
+		return fmt.Errorf("%s: %q is no value for it; write %s", name, short(wrong.GetValue()), strings.TrimSpace(name+" "+kind))
+	}
+	if odd, ok := errors.AsType[*pflag.InvalidSyntaxError](err); ok {
+		return fmt.Errorf("%s is no option; see %s --help", short(odd.GetSpecifiedFlag()), c.CommandPath())
+	}
 	unknown, ok := errors.AsType[*pflag.NotExistError](err)
 	if !ok {
 		return err
@@ -204,9 +248,60 @@ func (s streams) write(path string, content []byte) error {
 		return nil
 	}
 	if err := writeFile(path, content); err != nil {
-		return &outputError{path, err}
+		return &outputError{path, cause(err)}
 	}
 	return nil
+}
+
+// ends are the formats that the end of a file's name says; "" of what no command writes. A file of
+// any other end, or of none, gets what is asked for, a table at least.
+var ends = map[string]string{
+	".json": "json", ".csv": "csv", ".xlsx": "xlsx", ".md": "markdown", ".pdf": "pdf", ".svg": "svg",
+	".tsv": "", ".xls": "", ".xlsm": "", ".ods": "", ".doc": "", ".docx": "", ".odt": "", ".rtf": "",
+	".html": "", ".htm": "", ".xml": "", ".png": "", ".jpg": "", ".jpeg": "",
+}
+
+// checkEnding refuses the file of -o if the end of its name says another format than would stand in
+// it. as is what --as says, "" where it is absent; formats are those that the command writes, "table"
+// among them if it writes text.
+func checkEnding(command, output, as string, formats []string) error {
+	end := strings.ToLower(filepath.Ext(output))
+	format, known := ends[end]
+	endOf := func(format string) string {
+		switch format {
+		case "table":
+			return ".txt"
+		case "markdown":
+			return ".md"
+		}
+		return "." + format
+	}
+	offered := slices.Contains(formats, format)
+	switch {
+	case !known, as == "" && offered, as != "" && as == format:
+		return nil
+	case as == "":
+		var written []string
+		for _, f := range formats {
+			written = append(written, endOf(f))
+		}
+		return fmt.Errorf("-o %s: %s writes no %s; it writes %s", short(output), command, end, strings.Join(written, ", "))
+	case offered:
+		return fmt.Errorf("-o %s is not the name of what --as %s writes; end it in %s, or write --as %s", short(output), as, endOf(as), format)
+	}
+	return fmt.Errorf("-o %s is not the name of what --as %s writes; end it in %s", short(output), as, endOf(as))
+}
+
+// cause returns what lies behind an error of the file system, without the name of the file and of
+// the call.
+func cause(err error) error {
+	if e, ok := errors.AsType[*fs.PathError](err); ok {
+		return e.Err
+	}
+	if e, ok := errors.AsType[*os.LinkError](err); ok {
+		return e.Err
+	}
+	return err
 }
 
 // writeFile writes a file under a temporary name in its folder and renames it, so that nothing
@@ -226,10 +321,15 @@ func writeFile(path string, content []byte) (err error) {
 		}
 	}
 	f, err := os.CreateTemp(filepath.Dir(path), ".panewright-*")
-	if errors.Is(err, fs.ErrNotExist) {
-		return fmt.Errorf("there is no folder %s", filepath.Dir(path))
-	}
 	if err != nil {
+		switch info, missing := os.Stat(filepath.Dir(path)); {
+		case missing == nil && !info.IsDir():
+			return fmt.Errorf("%s is no folder", filepath.Dir(path))
+		case missing == nil && errors.Is(err, fs.ErrNotExist): // as under /proc
+			return fmt.Errorf("no file can be made in %s", filepath.Dir(path))
+		case errors.Is(missing, fs.ErrNotExist):
+			return fmt.Errorf("there is no folder %s", filepath.Dir(path))
+		}
 		return err
 	}
 	defer func() {

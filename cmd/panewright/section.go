@@ -34,6 +34,9 @@ installed, else in another.`,
   panewright section panewright-demo/project.yaml --makeup E1 --tint full`,
 		Args: oneProject,
 		RunE: func(c *cobra.Command, args []string) error {
+			if err := checkEnding(c.Name(), output, "", []string{"svg"}); err != nil {
+				return err
+			}
 			r, err := oneMakeup(c.Name(), args[0], o)
 			if err != nil {
 				return err

@@ -7,6 +7,7 @@ import (
 	"fmt"
 	"os"
 	"path/filepath"
+	"regexp"
 	"slices"
 	"strconv"
 	"strings"
@@ -37,7 +38,10 @@ names of the files are printed.`,
   panewright sheet panewright-demo/project.yaml --makeup E1 -o e1.pdf
   panewright sheet panewright-demo/project.yaml --each sheets`,
 		Args: oneProject,
-		RunE: func(_ *cobra.Command, args []string) error {
+		RunE: func(c *cobra.Command, args []string) error {
+			if err := checkEnding(c.Name(), output, "", []string{"pdf"}); err != nil {
+				return err
+			}
 			if each != "" && output != "" {
 				return errors.New("--each names a folder for many files, -o one file; give one of them")
 			}
@@ -54,22 +58,27 @@ names of the files are printed.`,
 			if output == "" && s.terminal() {
 				return errors.New("a PDF is not for a terminal; add -o FILE")
 			}
-			limits, err := entered(&r, args[0], o)
-			if err != nil {
-				return err
-			}
-			f, err := sheet.Project(r, limits)
-			if err != nil {
-				return err
-			}
-			s.replaced(f)
-			return s.write(output, f.PDF)
+			return s.sheets(output, r, args[0], o)
 		},
 	}
 	o.flags(c)
 	outputFlag(c, &output)
 	c.Flags().StringVar(&each, "each", "", "write a file for each make-up into folder `DIR`, which is made if need be")
 	return c
+}
+
+// sheets writes the sheets of what is rated of a project.
+func (s streams) sheets(output string, r table.Report, path string, o selection) error {
+	limits, err := entered(&r, path, o)
+	if err != nil {
+		return err
+	}
+	f, err := sheet.Project(r, limits)
+	if err != nil {
+		return err
+	}
+	s.replaced(f)
+	return s.write(output, f.PDF)
 }
 
 // entered holds the project's figures against its limits, where it has any; then no caution says
@@ -94,23 +103,44 @@ func (s streams) writeEach(dir string, r table.Report) error {
 	if err != nil {
 		return err
 	}
+	var names []string
 	for _, f := range files {
-		if err := keepInputs(filepath.Join(dir, f.Makeup+".pdf"), r.Project); err != nil {
+		names = append(names, filepath.Join(dir, fileName(f.Makeup, names, dir)))
+		if err := keepInputs(names[len(names)-1], r.Project); err != nil {
 			return err
 		}
 	}
 	if err := os.MkdirAll(dir, 0o755); err != nil {
-		return &outputError{dir, err}
+		return &outputError{dir, cause(err)}
 	}
-	for _, f := range files {
+	for i, f := range files {
 		s.replaced(f)
-		path := filepath.Join(dir, f.Makeup+".pdf")
-		if err := s.write(path, f.PDF); err != nil {
+		if err := s.write(names[i], f.PDF); err != nil {
 			return err
 		}
-		fmt.Fprintln(s.out, path)
+		fmt.Fprintln(s.out, names[i])
 	}
 	return nil
+}
+
+// devices are names that some systems keep for devices, whatever follows a point in them.
+var devices = regexp.MustCompile(`(?i)^(con|prn|aux|nul|com[0-9]|lpt[0-9])(\.|$)`)
+
+// fileName returns the name of the file of a make-up that any system can store beside those that are
+// taken, also one that does not tell capitals from small letters.
+func fileName(id string, taken []string, dir string) string {
+	const most = 200 // bytes; systems store 255
+	if devices.MatchString(id) {
+		id = "_" + id
+	}
+	if len(id) > most {
+		id = strings.ToValidUTF8(id[:most], "")
+	}
+	name := id + ".pdf"
+	for n := 2; slices.ContainsFunc(taken, func(x string) bool { return strings.EqualFold(x, filepath.Join(dir, name)) }); n++ {
+		name = fmt.Sprintf("%s-%d.pdf", id, n)
+	}
+	return name
 }
 
 // replaced says which letters of the user's no font has.

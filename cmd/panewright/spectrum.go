@@ -43,11 +43,14 @@ rows of numbers.
 
 Files of one quantity each are joined to one pane by KEY=FILE, where KEY is tau,
 rho_front, rho_back, infrared_front or infrared_back. A JCAMP-DX file says
-itself whether it has transmittance or reflectance.
+itself whether it has transmittance or reflectance. One of several spectra in it
+is named behind a #, by its number or its title: rho_back=pane.jdx#3.
 
 With --as csv, prints the spectrum as CSV for the spectrum: key of a project. A
 column without a value at a wavelength of another is interpolated there, which a
-comment in the file says; nothing is made up beyond an end or in a gap.`,
+comment in the file says; nothing is made up beyond an end or in a gap. Comments
+of the files are kept. What no pane can be, such as a transmittance and a
+reflectance that add to more than 1, is not converted.`,
 		Example: `  panewright spectrum panewright-demo/spectra/clear-6.csv
   panewright spectrum panewright-demo/spectra/low-e-6.csv --as csv -o low-e.csv
   panewright spectrum panewright-demo/spectra/clear-6.csv \
@@ -66,9 +69,9 @@ comment in the file says; nothing is made up beyond an end or in a gap.`,
 	}
 	c.Flags().BoolVar(&o.percent, "percent", false, "layout: values are per cent")
 	c.Flags().BoolVar(&o.decimalComma, "decimal-comma", false, "layout: numbers have decimal commas")
-	c.Flags().StringVar(&o.separator, "separator", "", "layout: `CHAR` between cells; also tab, blank; told from the rows when absent")
+	c.Flags().StringVar(&o.separator, "separator", "", "layout: `SIGN` between cells: comma, semicolon, tab, blank or a character; told from the rows when absent")
 	c.Flags().StringVar(&o.columns, "columns", "", "layout: the columns that are read, a `LIST` such as wavelength=1,tau=2; also rho_front, rho_back")
-	c.Flags().StringVar(&o.unit, "unit", "", "layout: `UNIT` of the wavelength: "+strings.Join(spectra.LayoutUnits(), ", ")+" (nm when absent)")
+	c.Flags().StringVar(&o.unit, "unit", "", "layout: `UNIT` of the wavelength: "+strings.Join(spectra.LayoutUnits(), ", ")+"; also µm, cm-1 (nm when absent)")
 	c.Flags().StringVar(&o.as, "as", "", "print as `FORMAT`: table or csv (csv when -o names a .csv file)")
 	outputFlag(c, &o.output)
 	return c
@@ -76,6 +79,9 @@ comment in the file says; nothing is made up beyond an end or in a gap.`,
 
 func runSpectrum(s streams, args []string, o spectrumOptions, foreign bool) error {
 	formats := []string{"table", "csv"}
+	if err := checkEnding("spectrum", o.output, o.as, formats); err != nil {
+		return err
+	}
 	if o.as == "" {
 		o.as = "table"
 		if strings.EqualFold(filepath.Ext(o.output), ".csv") {
@@ -110,8 +116,8 @@ func runSpectrum(s streams, args []string, o spectrumOptions, foreign bool) erro
 
 // layout reads the options of layout.
 func (o spectrumOptions) layout() (spectra.Layout, error) {
-	l := spectra.Layout{Percent: o.percent, DecimalComma: o.decimalComma, Unit: o.unit}
-	if o.unit != "" && !slices.Contains(spectra.LayoutUnits(), o.unit) {
+	l := spectra.Layout{Percent: o.percent, DecimalComma: o.decimalComma, Unit: spectra.UnitNamed(o.unit)}
+	if o.unit != "" && l.Unit == "" {
 		return l, fmt.Errorf("--unit %s is not known; %s", short(o.unit), project.OfferAll(o.unit, spectra.LayoutUnits()))
 	}
 	switch o.separator {
@@ -120,9 +126,13 @@ func (o spectrumOptions) layout() (spectra.Layout, error) {
 		l.Separator = '\t'
 	case "blank", "space":
 		l.Separator = ' '
+	case "comma":
+		l.Separator = ','
+	case "semicolon":
+		l.Separator = ';'
 	default:
 		if utf8.RuneCountInString(o.separator) != 1 {
-			return l, fmt.Errorf("--separator %s: one character, or tab, or blank", short(o.separator))
+			return l, fmt.Errorf("--separator %s is not known; write comma, semicolon, tab, blank or one character", short(o.separator))
 		}
 		l.Separator, _ = utf8.DecodeRuneInString(o.separator)
 	}
@@ -150,6 +160,12 @@ func (o spectrumOptions) layout() (spectra.Layout, error) {
 	return l, nil
 }
 
+// impossible is why no pane can have the spectrum, of the columns that are there.
+func (in *spectrumInput) impossible() spectra.Errors {
+	c := in.columns
+	return append(spectra.Impossible(c), spectra.Impossible(spectra.Columns{Tau: c.Tau, RhoFront: in.front, RhoBack: in.back})...)
+}
+
 // joined is what a rating would make of the spectrum, or why it would refuse it.
 func (in *spectrumInput) joined() (m spectra.Measured, refused []string) {
 	var lacks []string
@@ -158,17 +174,19 @@ func (in *spectrumInput) joined() (m spectra.Measured, refused []string) {
 			lacks = append(lacks, key)
 		}
 	}
+	faults := in.impossible()
 	if lacks != nil {
-		return m, []string{"it lacks " + strings.Join(lacks, " and ") + "; a pane needs tau, rho_front and rho_back"}
+		refused = []string{"it lacks " + strings.Join(lacks, " and ") + "; a pane needs tau, rho_front and rho_back"}
+	} else {
+		var err error
+		m, err = spectra.Join(in.columns, in.front, in.back)
+		faults, _ = errors.AsType[spectra.Errors](err)
 	}
-	m, err := spectra.Join(in.columns, in.front, in.back)
-	if faults, ok := errors.AsType[spectra.Errors](err); ok {
-		for i, x := range faults {
-			if i == errorsPrinted {
-				return m, append(refused, fmt.Sprintf("and %d faults more", len(faults)-i))
-			}
-			refused = append(refused, clip(x.Error()))
+	for i, x := range faults {
+		if i == errorsPrinted {
+			return m, append(refused, fmt.Sprintf("and %d faults more", len(faults)-i))
 		}
+		refused = append(refused, clip(x.Error()))
 	}
 	return m, refused
 }
@@ -218,7 +236,21 @@ func (in *spectrumInput) page() table.SpectrumPage {
 			p.Faces = append(p.Faces, table.Face{Name: face.name, Emissivity: glazing.InfraredEmissivity(rho, tau)})
 		}
 	}
+	if p.Refused == nil {
+		p.Pane = &glazing.Pane{ID: p.Series[0].Pane, Plies: []glazing.Ply{{ThicknessMM: 6, ConductivityWMK: glazing.GlassWMK, DensityKGM3: glazing.GlassKGM3}},
+			Tints: []glazing.Tint{{Spectrum: m, Front: emissivity(p.Faces, "front"), Back: emissivity(p.Faces, "back")}}}
+	}
 	return p
+}
+
+// emissivity returns that of a face, not known where it has no infrared rows.
+func emissivity(faces []table.Face, name string) glazing.Emissivity {
+	for _, f := range faces {
+		if f.Name == name {
+			return f.Emissivity
+		}
+	}
+	return glazing.NoEmissivity()
 }
 
 // convert prints the spectrum as CSV, and what was done on the side.
@@ -226,17 +258,24 @@ func (in *spectrumInput) convert(s streams, output string) error {
 	if in.looseness != nil {
 		return in.looseness
 	}
+	if faults := in.impossible(); faults != nil {
+		return eachLine(faults)
+	}
 	comments := []string{"written by panewright " + version + " from:"}
+	var own []string // comments of the files
 	for _, f := range in.files {
 		comments = append(comments, fmt.Sprintf("%s, %s, sha256 %x", f.Name, f.Format, f.digest))
 		for _, x := range f.Understood {
 			comments = append(comments, "- "+x)
 		}
+		if f.comments != nil {
+			own = append(append(own, "comments of "+f.Name+":"), f.comments...)
+		}
 	}
 	c, notes := in.columns.WithInfrared(in.front, in.back).OnOneGrid()
 	comments = append(comments, notes...)
 	var b bytes.Buffer
-	if err := spectra.WriteCSV(&b, c, comments); err != nil {
+	if err := spectra.WriteCSV(&b, c, slices.Concat(comments, own)); err != nil {
 		return fmt.Errorf("this cannot be CSV: %w", err)
 	}
 	if err := s.write(output, b.Bytes()); err != nil {
@@ -245,8 +284,9 @@ func (in *spectrumInput) convert(s streams, output string) error {
 	for _, x := range comments[1:] {
 		fmt.Fprintln(s.err, clip(x))
 	}
-	if _, refused := in.joined(); refused != nil {
-		fmt.Fprintln(s.err, clip("a rating refuses this spectrum as it stands: "+strings.Join(refused, "; ")))
+	_, refused := in.joined()
+	for _, x := range refused {
+		fmt.Fprintln(s.err, clip("a rating refuses this spectrum as it stands: "+x))
 	}
 	if output != "" {
 		fmt.Fprintf(s.err, "wrote %s\n", short(output))

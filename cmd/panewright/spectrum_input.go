@@ -11,7 +11,6 @@ import (
 	"os"
 	"path/filepath"
 	"slices"
-	"strconv"
 	"strings"
 
 	"panewright/cmd/panewright/internal/table"
@@ -33,8 +32,18 @@ type spectrumInput struct {
 // spectrumFile is a file that was read.
 type spectrumFile struct {
 	table.SpectrumFile
-	path   string
-	digest [sha256.Size]byte
+	path     string
+	which    string // of its spectra is meant; "" where none is named
+	digest   [sha256.Size]byte
+	comments []string // of its own
+}
+
+// written is how the user names the file, and the spectrum in it.
+func (f *spectrumFile) written() string {
+	if f.which != "" {
+		return f.path + spectra.BlockSign + f.which
+	}
+	return f.path
 }
 
 func (f *spectrumFile) understood(format string, args ...any) {
@@ -44,24 +53,31 @@ func (f *spectrumFile) understood(format string, args ...any) {
 // spectrumKeys are those under which a file may stand, as in a project.
 var spectrumKeys = []string{"tau", "rho_front", "rho_back", "infrared_front", "infrared_back"}
 
-// add reads FILE or KEY=FILE.
+// add reads FILE or KEY=FILE; a file may have the number or title of a spectrum behind a #.
 func (in *spectrumInput) add(arg string, layout *spectra.Layout) error {
-	f := spectrumFile{path: arg}
-	key := ""
-	if before, after, ok := strings.Cut(arg, "="); ok && slices.Contains(spectrumKeys, before) {
-		key, f.path = before, after
-	} else if _, err := os.Stat(arg); ok && errors.Is(err, fs.ErrNotExist) {
+	var f spectrumFile
+	name, key := arg, ""
+	before, after, keyed := strings.Cut(arg, "=")
+	if keyed && slices.Contains(spectrumKeys, before) {
+		if key, name = before, after; name == "" {
+			return fmt.Errorf("%s= needs a file, such as %s=scan.txt", key, key)
+		}
+	}
+	read := func(path string) ([]byte, error) { return project.ReadFile(path, spectra.MaxBytes) }
+	content, path, which, err := project.OpenSpectrum(name, read)
+	switch {
+	case err != nil && keyed && key == "" && errors.Is(err, fs.ErrNotExist):
 		return fmt.Errorf("unknown key %q in KEY=FILE; %s", short(before), project.OfferAll(before, spectrumKeys))
+	case err != nil:
+		return fmt.Errorf("%s: %w", path, err)
 	}
-	f.Name = spectra.Clip(filepath.Base(f.path), 60)
-	content, err := project.ReadFile(f.path, spectra.MaxBytes)
-	if err != nil {
-		return fmt.Errorf("%s: %w", f.path, err)
-	}
-	f.digest = sha256.Sum256(content)
+	f.path, f.which, f.digest = path, which, sha256.Sum256(content)
+	f.Name = spectra.Clip(filepath.Base(path), 60)
 	switch {
 	case spectra.IsJCAMP(content):
 		err = in.addBlocks(&f, key, content, layout != nil)
+	case which != "":
+		err = fmt.Errorf("%s is no JCAMP-DX, which alone has spectra by number or title; write %s", short(path), short(path))
 	case layout != nil:
 		err = in.addForeign(&f, key, content, *layout)
 	default:
@@ -70,20 +86,52 @@ func (in *spectrumInput) add(arg string, layout *spectra.Layout) error {
 	if err != nil {
 		return eachLine(err)
 	}
+	for i := range in.files {
+		if x := &in.files[i]; x.path == f.path && x.digest == f.digest && x.Format == f.Format {
+			x.Understood = append(x.Understood, f.Understood...)
+			x.keep(f.comments)
+			return nil
+		}
+	}
 	in.files = append(in.files, f)
 	return nil
+}
+
+// commentsKept is how many comments of one file are kept.
+const commentsKept = 20
+
+// keep keeps comments, each once.
+func (f *spectrumFile) keep(comments []string) {
+	for _, x := range comments {
+		if !slices.Contains(f.comments, x) && len(f.comments) < commentsKept {
+			f.comments = append(f.comments, x)
+		}
+	}
 }
 
 func (in *spectrumInput) addCSV(f *spectrumFile, key string, content []byte) error {
 	f.Format = "CSV as projects have it"
 	c, err := spectra.ReadCSV(bytes.NewReader(content), f.path)
-	if err != nil && !bytes.Contains(content, []byte("wavelength_")) {
+	if otherLayout(err, content) {
 		return eachLine(err, f.path+": if another program wrote this, say how: --columns wavelength=1,tau=2 and, as need be, --percent, --decimal-comma, --separator, --unit")
 	}
 	if err != nil {
 		return err
 	}
+	f.comments = c.Comments
 	return in.addColumns(f, key, c)
+}
+
+// otherLayout reports whether a file that cannot be read as our CSV may be one of another layout: not
+// what is no text, nor where the fault names the way itself.
+func otherLayout(err error, content []byte) bool {
+	faults, ok := errors.AsType[spectra.Errors](err)
+	if !ok || faults[0].Line == 0 || strings.Contains(faults[0].Text, "panewright spectrum") {
+		return false
+	}
+	return !bytes.Contains(content, []byte("wavelength_")) || slices.ContainsFunc(faults, func(x *spectra.RowError) bool {
+		return strings.Contains(x.Text, "decimal comma") || strings.Contains(x.Text, "percent")
+	})
 }
 
 func (in *spectrumInput) addForeign(f *spectrumFile, key string, content []byte, l spectra.Layout) error {
@@ -99,6 +147,7 @@ func (in *spectrumInput) addForeign(f *spectrumFile, key string, content []byte,
 	if err != nil {
 		return err
 	}
+	f.comments = c.Comments
 	return in.addColumns(f, key, c)
 }
 
@@ -134,8 +183,8 @@ func (in *spectrumInput) addColumns(f *spectrumFile, key string, c spectra.Colum
 // blocksListed is how many blocks of a JCAMP-DX file are shown.
 const blocksListed = 8
 
-// addBlocks takes the spectra of a JCAMP-DX file: the one that the key asks for, or one
-// transmittance and one reflectance. Others stay loose.
+// addBlocks takes the spectra of a JCAMP-DX file: the one that is named or that the key asks for, or
+// one transmittance and one reflectance. Others stay loose.
 func (in *spectrumInput) addBlocks(f *spectrumFile, key string, content []byte, layout bool) error {
 	f.Format = "JCAMP-DX"
 	if layout {
@@ -145,69 +194,105 @@ func (in *spectrumInput) addBlocks(f *spectrumFile, key string, content []byte, 
 	if err != nil {
 		return err
 	}
-	for i, b := range blocks {
-		if i == blocksListed {
-			f.understood("and %d spectra more", len(blocks)-i)
-			break
-		}
-		f.understood("spectrum %d, %q: %s, %d points", i+1, spectra.Clip(b.Title, 60), b.Quantity, b.Len())
-		f.Understood = append(f.Understood, b.Notes...)
+	var quantity spectra.Quantity
+	switch key {
+	case "":
+	case "tau":
+		quantity = spectra.Transmittance
+	default:
+		quantity = spectra.Reflectance
 	}
-	if key != "" {
-		quantity := spectra.Reflectance
-		if key == "tau" {
-			quantity = spectra.Transmittance
-		}
-		column, err := spectra.OneOf(blocks, quantity, f.path)
+	if key != "" || f.which != "" {
+		b, err := spectra.OneOf(blocks, quantity, f.path, f.which)
 		if err != nil {
 			return err
 		}
-		return in.take(f, key, column)
+		f.tell(blocks, slices.IndexFunc(blocks, func(x spectra.Block) bool { return x.Line[0] == b.Line[0] }))
+		return in.takeBlock(f, key, b)
+	}
+	for i := range blocks[:min(len(blocks), blocksListed)] {
+		f.tell(blocks, i)
+	}
+	if n := len(blocks) - blocksListed; n > 0 {
+		f.understood("and %d spectra more", n)
 	}
 	for _, q := range []spectra.Quantity{spectra.Transmittance, spectra.Reflectance} {
 		if !slices.ContainsFunc(blocks, func(b spectra.Block) bool { return b.Quantity == q }) {
 			continue
 		}
-		if _, err := spectra.OneOf(blocks, q, f.path); err != nil {
-			in.looseness = eachLine(err)
-			in.loosen(blocks)
+		if _, err := spectra.OneOf(blocks, q, f.path, ""); err != nil {
+			in.looseness = project.Errors{fmt.Errorf("%w%s", err, f.asPane(blocks))}
+			in.loosen(f, blocks)
 			return nil
 		}
 	}
 	for _, b := range blocks {
-		key = "tau"
-		if b.Quantity == spectra.Reflectance {
-			key = "rho_front"
-			f.understood("the reflectance is taken as rho_front; for the other face write rho_back=%s", f.Name)
-		}
-		if err := in.take(f, key, b.Column); err != nil {
+		if err := in.takeBlock(f, "", b); err != nil {
 			return err
 		}
 	}
 	return nil
 }
 
-// loosen shows blocks side by side that cannot be joined.
-func (in *spectrumInput) loosen(blocks []spectra.Block) {
+// tell says of a spectrum of a JCAMP-DX file how it is named, what it holds and what was understood.
+func (f *spectrumFile) tell(blocks []spectra.Block, i int) {
+	b := blocks[i]
+	name := f.Name
+	if len(blocks) > 1 {
+		name = spectra.BlockName(f.Name, i+1)
+	}
+	f.understood("%s, %q: %s, %d points", name, spectra.Clip(b.Title, 60), b.Quantity, b.Len())
+	f.Understood = append(f.Understood, b.Notes...)
+	f.keep(b.Comments)
+}
+
+// asPane says, for the end of a message, how spectra of a file are joined to one pane, such as the first
+// transmittance and the first two reflectances.
+func (f *spectrumFile) asPane(blocks []spectra.Block) string {
+	keys := map[spectra.Quantity][]string{spectra.Transmittance: {"tau"}, spectra.Reflectance: {"rho_front", "rho_back"}}
+	out := ", as in"
+	for i, b := range blocks {
+		if k := keys[b.Quantity]; len(k) > 0 {
+			out += " " + k[0] + "=" + spectra.BlockName(f.path, i+1)
+			keys[b.Quantity] = k[1:]
+		}
+	}
+	return out
+}
+
+// loosen shows spectra side by side that cannot be joined.
+func (in *spectrumInput) loosen(f *spectrumFile, blocks []spectra.Block) {
 	for i, b := range blocks[:min(len(blocks), blocksListed)] {
 		role := table.RoleTau
 		if b.Quantity == spectra.Reflectance {
-			role = table.RoleRhoFront
+			role = table.RoleReflectance
 		}
-		name := "spectrum " + strconv.Itoa(i+1)
-		in.loose = append(in.loose, table.Series{Name: name, Mark: rune('1' + i), Pane: spectra.Clip(b.Title, 60), Role: role, Column: b.Column})
+		in.loose = append(in.loose, table.Series{Name: spectra.BlockName("", i+1) + " " + spectra.Clip(b.Title, 18), Mark: rune('1' + i),
+			Pane: spectra.Clip(b.Title, 60), Role: role, Column: b.Column})
 	}
+}
+
+// takeBlock takes a spectrum of a JCAMP-DX file; without a key a reflectance is that of the front.
+func (in *spectrumInput) takeBlock(f *spectrumFile, key string, b spectra.Block) error {
+	switch {
+	case key == "" && b.Quantity == spectra.Reflectance:
+		key = "rho_front"
+		f.understood("the reflectance is taken as rho_front; for the other face write rho_back=%s", f.written())
+	case key == "":
+		key = "tau"
+	}
+	return in.take(f, key, b.Column)
 }
 
 // take puts a column in the place of a key, which no other file may hold.
 func (in *spectrumInput) take(f *spectrumFile, key string, c spectra.Column) error {
 	if other := in.from[key]; other != "" {
-		return fmt.Errorf("%s comes from %s and from %s; name one as KEY=FILE", key, short(other), short(f.path))
+		return fmt.Errorf("%s comes from %s and from %s; name one as KEY=FILE", key, short(other), short(f.written()))
 	}
 	if in.from == nil {
 		in.from = map[string]string{}
 	}
-	in.from[key] = f.path
+	in.from[key] = f.written()
 	*in.place(key) = c
 	return nil
 }

@@ -17,7 +17,7 @@ import (
 )
 
 func newVerify(s streams) *cobra.Command {
-	p := page{units: "si", formats: []string{"table", "json", "csv", "markdown", "pdf"}}
+	p := page{command: "verify", units: "si", formats: []string{"table", "json", "csv", "markdown", "pdf"}}
 	var only string
 	c := &cobra.Command{
 		Use:                   "verify [options]",

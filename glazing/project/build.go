@@ -359,7 +359,10 @@ func (b *builder) measured(s *tintSpec, faulty bool) (spectra.Measured, bool) {
 	}
 	m, err := spectra.Join(all, front, back)
 	if err != nil {
-		files := strings.Join([]string{all.Tau.File, all.RhoFront.File, all.RhoBack.File, front.File, back.File}, "\n")
+		files := "" // with the line where each column begins, as a file may hold several spectra
+		for _, c := range []spectra.Column{all.Tau, all.RhoFront, all.RhoBack, front, back} {
+			files += fmt.Sprintln(c.File, c.Line[:min(1, len(c.Line))])
+		}
 		if b.failed[files] == nil { // panes may share a spectrum; its faults are said once
 			b.spectrumFaults(err)
 			b.failed[files] = err

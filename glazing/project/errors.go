@@ -73,10 +73,22 @@ func Offer(word string, names []string) string { return didYouMean(Nearest(word,
 
 // OfferAll offers the nearest names and lists all in any case, for names that are few and short.
 func OfferAll(word string, names []string) string {
-	if near := Nearest(word, names); len(near) > 0 {
-		return didYouMean(near, names) + " " + known(names)
+	all := slices.Sorted(slices.Values(names))
+	list := "write "
+	for i, name := range all {
+		switch {
+		case i == 0:
+		case i == len(all)-1:
+			list += " or "
+		default:
+			list += ", "
+		}
+		list += name
 	}
-	return known(names)
+	if near := Nearest(word, names); len(near) > 0 {
+		return didYouMean(near, names) + " " + list
+	}
+	return list
 }
 
 func didYouMean(near, all []string) string {

@@ -14,6 +14,7 @@ import (
 	"path/filepath"
 	"slices"
 	"strings"
+	"syscall"
 
 	"panewright/spectra"
 )
@@ -66,6 +67,12 @@ func readFile(in filePlace, path string, limit int64) ([]byte, error) {
 
 var errFolder = errors.New("is a folder, not a file")
 
+// missingFile is the error of a file that is not there.
+type missingFile struct{}
+
+func (missingFile) Error() string        { return "there is no such file" }
+func (missingFile) Is(target error) bool { return target == fs.ErrNotExist }
+
 const (
 	copyIt     = "; copy the file there, or allow it with --files-anywhere"
 	leadsOut   = "leads out of the project's folder" + copyIt
@@ -77,7 +84,7 @@ const (
 func reason(err error) error {
 	switch {
 	case errors.Is(err, fs.ErrNotExist):
-		return errors.New("there is no such file")
+		return missingFile{}
 	case errors.Is(err, fs.ErrPermission):
 		return errors.New("may not be read (permission denied)")
 	case strings.Contains(err.Error(), "escapes"): // what os.Root says
@@ -127,11 +134,29 @@ func folder(dir string, free bool) (from source, done func()) {
 	}, func() { root.Close() }
 }
 
+// OpenSpectrum reads a file of spectra that is named as FILE, or with one of its spectra as FILE#N or
+// FILE#TITLE. A file of the whole name comes first, then that of the longest part before a #. It
+// returns the name of the file, and the number or title, "" where none is named; an error of read is
+// about the file that is returned.
+func OpenSpectrum(name string, read func(file string) ([]byte, error)) (content []byte, file, which string, err error) {
+	content, whole := read(name)
+	file, err = name, whole
+	for err != nil && (errors.Is(err, fs.ErrNotExist) || errors.Is(err, syscall.ENAMETOOLONG)) { // a title may be long
+		i := strings.LastIndex(file, spectra.BlockSign)
+		if i <= 0 || strings.TrimSpace(name[i+1:]) == "" {
+			return nil, name, "", whole
+		}
+		file, which = name[:i], strings.TrimSpace(name[i+1:])
+		content, err = read(file)
+	}
+	return content, file, which, err
+}
+
 // fileSet reads each named file once and remembers the order in which the project names them.
 type fileSet struct {
 	read    source
 	content map[string][]byte
-	columns map[string]spectra.Columns // by file, and of a JCAMP-DX file by key as well
+	columns map[string]spectra.Columns // by file, and of a JCAMP-DX file by key and spectrum as well
 	blocks  map[string][]spectra.Block
 	failed  map[string]error
 	named   []named
@@ -144,12 +169,17 @@ type named struct {
 
 func (l *fileSet) bytesOf(t text) ([]byte, error) {
 	l.named = append(l.named, named{t.at, t.value})
-	if content, ok := l.content[t.value]; ok {
+	return l.once(t.value)
+}
+
+// once reads a file unless it was read before.
+func (l *fileSet) once(name string) ([]byte, error) {
+	if content, ok := l.content[name]; ok {
 		return content, nil
 	}
-	content, err := l.read(t.value)
+	content, err := l.read(name)
 	if err == nil {
-		l.content[t.value] = content
+		l.content[name] = content
 	}
 	return content, err
 }
@@ -176,64 +206,86 @@ func (l *fileSet) digest(project []byte) string {
 }
 
 // spectrum reads the columns of a spectrum file, once. Of a JCAMP-DX file it is the one that the key
-// asks for. A fault of the file is reported once.
+// asks for, or the one named behind the file. A fault of the file is reported once.
 func (l *fileSet) spectrum(r *reader, t text, key string) (spectra.Columns, bool) {
-	content, err := l.bytesOf(t)
-	asked := t.value
-	if err == nil && spectra.IsJCAMP(content) {
-		asked += "\n" + key
+	content, file, which, err := OpenSpectrum(t.value, l.once)
+	l.named = append(l.named, named{t.at, file})
+	asked := file
+	jcamp := err == nil && spectra.IsJCAMP(content)
+	if err == nil && (jcamp || which != "") {
+		asked += "\n" + key + "\n" + which
 	}
 	if c, ok := l.columns[asked]; ok {
 		return c, true
 	}
-	if l.failed[t.value] != nil || l.failed[asked] != nil {
+	if l.failed[file] != nil || l.failed[asked] != nil {
 		return spectra.Columns{}, false
 	}
+	var c spectra.Columns
 	switch {
 	case err != nil:
-		r.fail(t.at, key, "%s: %v", clip(t.value), err)
-	case asked != t.value:
-		blocks, read := l.blocks[t.value]
+		r.fail(t.at, key, "%s: %v", clip(file), err)
+	case which != "" && !jcamp:
+		err = fmt.Errorf("%s is no JCAMP-DX, which alone has spectra by number or title; write %s", clip(file), clip(file))
+		r.fail(t.at, key, "%v", err)
+	case jcamp:
+		blocks, read := l.blocks[file]
 		if !read {
-			if blocks, err = spectra.ReadJCAMP(bytes.NewReader(content), t.value); err != nil {
-				asked = t.value // of no use for any key
+			if blocks, err = spectra.ReadJCAMP(bytes.NewReader(content), file); err != nil {
+				asked = file // of no use for any key
+				r.spectrumFaults(err)
+				break
 			}
-			l.blocks[t.value] = blocks
+			l.blocks[file] = blocks
 		}
-		var c spectra.Columns
-		if err == nil {
-			c, err = blockFor(key, blocks, t.value)
+		if c, err = blockFor(key, blocks, file, which); err != nil {
+			r.fail(t.at, key, "%v", err)
 		}
-		if err == nil {
-			l.columns[asked] = c
-			return c, true
-		}
-		r.spectrumFaults(err)
 	default:
-		var c spectra.Columns
-		if c, err = spectra.ReadCSV(bytes.NewReader(content), t.value); err == nil {
-			l.columns[asked] = c
-			return c, true
+		if c, err = spectra.ReadCSV(bytes.NewReader(content), file); err != nil {
+			r.spectrumFaults(err)
 		}
-		r.spectrumFaults(err)
 	}
-	l.failed[asked] = err
-	return spectra.Columns{}, false
+	if err != nil {
+		l.failed[asked] = err
+		return spectra.Columns{}, false
+	}
+	l.columns[asked] = c
+	return c, true
 }
 
 // blockFor returns the column of a JCAMP-DX file that a key asks for.
-func blockFor(key string, blocks []spectra.Block, file string) (c spectra.Columns, err error) {
+func blockFor(key string, blocks []spectra.Block, file, which string) (c spectra.Columns, err error) {
 	quantity, into := spectra.Reflectance, &c.RhoFront
 	switch key {
 	case "spectrum":
-		return c, spectra.Errors{{File: file, Text: "is JCAMP-DX, which has one quantity a spectrum; name its files by quantity: spectra: {tau: FILE, rho_front: FILE, rho_back: FILE}"}}
+		return c, spectra.Errors{{File: file, Text: "is JCAMP-DX, which has one quantity a spectrum; name its files by quantity: " + byQuantity(blocks, file)}}
 	case "tau":
 		quantity, into = spectra.Transmittance, &c.Tau
 	case "rho_back", "infrared_back":
 		into = &c.RhoBack
 	}
-	*into, err = spectra.OneOf(blocks, quantity, file)
+	b, err := spectra.OneOf(blocks, quantity, file, which)
+	*into = b.Column
 	return c, err
+}
+
+// byQuantity says how a project names the spectra of a JCAMP-DX file; where it has all of one pane, by
+// its own name.
+func byQuantity(blocks []spectra.Block, file string) string {
+	var tau, rho []string
+	for i, b := range blocks {
+		list := &rho
+		if b.Quantity == spectra.Transmittance {
+			list = &tau
+		}
+		*list = append(*list, spectra.BlockName(file, i+1))
+	}
+	if len(tau) != 1 || len(rho) != 2 {
+		return "spectra: {tau: FILE, rho_front: FILE, rho_back: FILE}"
+	}
+	return fmt.Sprintf("spectra: {tau: %s, rho_front: %s, rho_back: %s}, if number %s is that of the front",
+		tau[0], rho[0], rho[1], strings.TrimPrefix(rho[0], file+spectra.BlockSign))
 }
 
 // spectrumFaults takes over the faults of a spectrum file, which name their own place.

@@ -80,7 +80,7 @@ type paneSpec struct {
 	HeatSoaked      flag              `key:"heat_soaked" doc:"true if heat soaked (EN 14179)"`
 	Origin          text              `key:"origin" one:"measured modelled invented" doc:"where the spectrum comes from; measured when absent"`
 	Spectrum        text              `key:"spectrum" file:"yes" doc:"CSV of wavelength, tau, rho_front, rho_back"`
-	Spectra         *spectraSpec      `key:"spectra" doc:"the same from several files"`
+	Spectra         *spectraSpec      `key:"spectra" doc:"the same from several files, or from several spectra of one JCAMP-DX file: FILE#2 is its second, FILE#TITLE the one of that title"`
 	EmissivityFront number            `key:"emissivity_front" above:"0" from:"0.0001" upto:"1" doc:"corrected (hemispherical) emissivity of the front"`
 	EmissivityBack  number            `key:"emissivity_back" above:"0" from:"0.0001" upto:"1" doc:"corrected (hemispherical) emissivity of the back"`
 	NormalFront     number            `key:"emissivity_normal_front" above:"0" from:"0.0001" upto:"1" doc:"normal emissivity of the front"`
@@ -104,11 +104,11 @@ type plySpec struct {
 type spectraSpec struct {
 	_ struct{} `called:"spectra"`
 	object
-	Tau           text `key:"tau" need:"yes" file:"yes" doc:"transmittance"`
-	RhoFront      text `key:"rho_front" need:"yes" file:"yes" doc:"reflectance of the front"`
-	RhoBack       text `key:"rho_back" need:"yes" file:"yes" doc:"reflectance of the back"`
-	InfraredFront text `key:"infrared_front" file:"yes" doc:"reflectance of the front, 5 to 50 µm"`
-	InfraredBack  text `key:"infrared_back" file:"yes" doc:"reflectance of the back, 5 to 50 µm"`
+	Tau           text `key:"tau" need:"yes" file:"yes" doc:"transmittance; FILE, FILE#2 or FILE#TITLE"`
+	RhoFront      text `key:"rho_front" need:"yes" file:"yes" doc:"reflectance of the front; FILE, FILE#2 or FILE#TITLE"`
+	RhoBack       text `key:"rho_back" need:"yes" file:"yes" doc:"reflectance of the back; FILE, FILE#2 or FILE#TITLE"`
+	InfraredFront text `key:"infrared_front" file:"yes" doc:"reflectance of the front, 5 to 50 µm; FILE, FILE#2 or FILE#TITLE"`
+	InfraredBack  text `key:"infrared_back" file:"yes" doc:"reflectance of the back, 5 to 50 µm; FILE, FILE#2 or FILE#TITLE"`
 }
 
 type coatingSpec struct {
@@ -136,7 +136,7 @@ type tintSpec struct {
 	Charge          number       `key:"charge_mc_cm2" doc:"inserted charge density, mC/cm²"`
 	Temperature     number       `key:"temperature_c" above:"-273.15" doc:"temperature of a thermochromic state, °C"`
 	Spectrum        text         `key:"spectrum" file:"yes" doc:"CSV of wavelength, tau, rho_front, rho_back"`
-	Spectra         *spectraSpec `key:"spectra" doc:"the same from several files"`
+	Spectra         *spectraSpec `key:"spectra" doc:"the same from several files, or from several spectra of one JCAMP-DX file: FILE#2 is its second, FILE#TITLE the one of that title"`
 	EmissivityFront number       `key:"emissivity_front" above:"0" from:"0.0001" upto:"1" doc:"corrected emissivity of the front in this tint"`
 	EmissivityBack  number       `key:"emissivity_back" above:"0" from:"0.0001" upto:"1" doc:"corrected emissivity of the back in this tint"`
 	NormalFront     number       `key:"emissivity_normal_front" above:"0" from:"0.0001" upto:"1" doc:"normal emissivity of the front in this tint"`

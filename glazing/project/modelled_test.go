@@ -147,9 +147,9 @@ func TestSpectraInJCAMP(t *testing.T) {
 		}
 	}
 	for spec, words := range map[string]string{
-		"spectrum: t.jdx": "t.jdx: is JCAMP-DX, which has one quantity a spectrum; name its files by quantity",
-		"spectra: {tau: f.jdx, rho_front: f.jdx, rho_back: r.jdx}":   "f.jdx: holds no spectrum of transmittance, but: f (reflectance)",
-		"spectra: {tau: t.jdx, rho_front: two.jdx, rho_back: r.jdx}": "two.jdx: holds several spectra of reflectance: f; r",
+		"spectrum: t.jdx": "t.jdx: is JCAMP-DX, which has one quantity a spectrum; name its files by quantity: spectra: {tau: FILE, rho_front: FILE, rho_back: FILE}",
+		"spectra: {tau: f.jdx, rho_front: f.jdx, rho_back: r.jdx}":   `: tau: f.jdx: holds no spectrum of transmittance, but: f.jdx#1 (reflectance, "f")`,
+		"spectra: {tau: t.jdx, rho_front: two.jdx, rho_back: r.jdx}": `: rho_front: two.jdx: holds several spectra of reflectance; write which: two.jdx#1 (reflectance, "f"); two.jdx#2 (reflectance, "r")`,
 	} {
 		faults := faultsOf(change(t, "spectrum: a.csv", spec), memory(files))
 		if len(faults) != 1 || !strings.Contains(faults[0].Error(), words) {

@@ -159,6 +159,25 @@ func TestSVGTextStays(t *testing.T) {
 	}
 }
 
+// Turned by a quarter, text runs upwards, and what stands lower stands to the right.
+func TestTurnedText(t *testing.T) {
+	const k = 72 / 25.4
+	c := New(100, 80)
+	c.Text(20, 50, "a_{b}", Type{Size: 20, Markup: true, Turn: 90})
+	pdf, err := PDF(Document{Pages: []*Canvas{c}, Plain: true})
+	if err != nil {
+		t.Fatal(err)
+	}
+	for _, want := range []string{
+		fmt.Sprintf("BT 0 1 -1 0 %s %s Tm (a) Tj ET", appendShort(nil, 20*k, 2), appendShort(nil, 30*k, 2)),
+		fmt.Sprintf("BT 0 1 -1 0 %s %s Tm (b) Tj ET", appendShort(nil, 20*k+0.16*20, 2), appendShort(nil, (30+Width("a", Type{Size: 20}))*k, 2)),
+	} {
+		if !bytes.Contains(pdf, []byte(want)) {
+			t.Errorf("PDF lacks %s", want)
+		}
+	}
+}
+
 // A coordinate that is no number stops the drawing and reaches no file.
 func TestNotFinite(t *testing.T) {
 	nan, inf := math.NaN(), math.Inf(1)

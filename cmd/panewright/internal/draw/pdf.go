@@ -1,10 +1,12 @@
 package draw
 
-// The back end that writes PDF. No other file names the PDF library.
+// The back end that writes PDF. Beside this file pdf_font.go alone names the PDF library.
 
 import (
 	"bytes"
+	"compress/zlib"
 	"fmt"
+	"io"
 	"math"
 	"slices"
 	"strconv"
@@ -75,10 +77,13 @@ func PDF(d Document) ([]byte, error) {
 		}
 	}
 	var embedded [faces]pdfFace
+	packer, err := zlib.NewWriterLevel(io.Discard, zlib.BestSpeed)
+	if err != nil {
+		return nil, err
+	}
 	for face := range letters {
 		if list := letters[face].list(); len(list) > 0 {
-			var err error
-			if embedded[face], err = Face(face).font().embed(f, pdfNames[face], list); err != nil {
+			if embedded[face], err = Face(face).font().embed(f, pdfNames[face], list, packer); err != nil {
 				return nil, err
 			}
 		}
@@ -118,7 +123,7 @@ func basic(s string) string {
 }
 
 // A pdfPage writes the steps of one page. Every shape stands between q and Q, so that none leaves
-// a state behind; fonts and colours of text are the library's.
+// a state behind; text leaves its font, which the library sets, and its ink.
 type pdfPage struct {
 	f      *gofpdf.Fpdf
 	faces  *[faces]pdfFace
@@ -128,7 +133,8 @@ type pdfPage struct {
 		family string
 		size   float64
 	}
-	lost bool // the end of a clip took back the font that the library believes set
+	ink  Colour // of the text that was written last
+	lost bool   // the end of a clip took back font and ink
 }
 
 func (p *pdfPage) play(ops []op) {
@@ -288,7 +294,6 @@ func (p *pdfPage) textOp(o *op) {
 		case Right:
 			left -= o.size
 		}
-		p.f.SetTextColor(int(t.Colour.R), int(t.Colour.G), int(t.Colour.B))
 		sin, cos := math.Sincos(t.Turn * math.Pi / 180)
 		for _, r := range o.runs {
 			face, size := &p.faces[t.Face], t.Size*r.script.size()
@@ -296,27 +301,45 @@ func (p *pdfPage) textOp(o *op) {
 			for s := r.s; s != ""; {
 				family, codes, n := face.share(s)
 				p.setFont(family, size)
+				if p.ink != t.Colour {
+					p.ink = t.Colour
+					p.colour(t.Colour, "rg ")
+				}
 				if t.Turn == 0 {
-					p.flush()
-					p.f.Text(at.X+x, at.Y+y, string(codes))
-				} else {
-					// the page is turned about the point; the font is set before, or the end would take it back
-					p.b = append(p.b, "q "...)
+					p.b = append(p.b, "BT "...)
+					p.point(Point{at.X + x, at.Y + y})
+					p.b = append(p.b, "Td "...)
+				} else { // the text is turned about the point
+					p.b = append(p.b, "BT "...)
 					for _, v := range []float64{cos, sin, -sin, cos} {
 						p.b = append(appendShort(p.b, v, 5), ' ')
 					}
-					p.point(at)
-					p.b = append(p.b, "cm\n"...)
-					p.flush()
-					// from here the point is the origin, which the library puts at the bottom left
-					p.f.Text(x, p.height+y, string(codes))
-					p.b = append(p.b, "Q\n"...)
+					p.point(Point{at.X + x*cos + y*sin, at.Y - x*sin + y*cos})
+					p.b = append(p.b, "Tm "...)
 				}
+				p.literal(codes)
+				p.b = append(p.b, " Tj ET\n"...)
 				x += Width(s[:n], Type{Face: t.Face, Size: size})
 				s = s[n:]
 			}
 		}
 	})
+}
+
+// literal writes codes as a string.
+func (p *pdfPage) literal(codes []byte) {
+	p.b = append(p.b, '(')
+	for _, code := range codes {
+		switch code {
+		case '(', ')', '\\':
+			p.b = append(p.b, '\\')
+		case '\r':
+			p.b = append(p.b, `\r`...)
+			continue
+		}
+		p.b = append(p.b, code)
+	}
+	p.b = append(p.b, ')')
 }
 
 func (p *pdfPage) setFont(family string, size float64) {
@@ -325,6 +348,9 @@ func (p *pdfPage) setFont(family string, size float64) {
 	}
 	p.flush()
 	p.f.SetFont(family, "", size)
+	if p.lost {
+		p.ink = Colour{} // of no text
+	}
 	p.lost, p.font.family, p.font.size = false, family, size
 }
 

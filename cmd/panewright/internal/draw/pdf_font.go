@@ -49,7 +49,7 @@ type pdfFace struct {
 }
 
 // embed gives the letters of a face to the library.
-func (f *font) embed(pdf *gofpdf.Fpdf, name string, letters []rune) (p pdfFace, err error) {
+func (f *font) embed(pdf *gofpdf.Fpdf, name string, letters []rune, w *zlib.Writer) (p pdfFace, err error) {
 	p.at, p.code = map[rune]uint8{}, map[rune]byte{}
 	beyond, _ := slices.BinarySearch(letters, firstCode)
 	ascii, beyondASCII := letters[:beyond], letters[beyond:]
@@ -71,7 +71,7 @@ func (f *font) embed(pdf *gofpdf.Fpdf, name string, letters []rune) (p pdfFace, 
 			names = append(names, "/"+glyphName(r))
 		}
 		cut := f.cut(held)
-		packed, err := pack(cut)
+		packed, err := pack(cut, w)
 		if err != nil {
 			return p, err
 		}
@@ -110,16 +110,14 @@ func subsetTag(letters []rune) string {
 	return string(tag) + "+"
 }
 
-func pack(b []byte) ([]byte, error) {
+// pack compresses a font; the writer is used again and again, for it is large.
+func pack(b []byte, w *zlib.Writer) ([]byte, error) {
 	var out bytes.Buffer
-	w, err := zlib.NewWriterLevel(&out, zlib.BestSpeed)
-	if err != nil {
-		return nil, err
+	w.Reset(&out)
+	_, err := w.Write(b)
+	if closing := w.Close(); err == nil {
+		err = closing
 	}
-	if _, err := w.Write(b); err != nil {
-		return nil, err
-	}
-	err = w.Close()
 	return out.Bytes(), err
 }
 

@@ -1,6 +1,6 @@
 package sheet
 
-// What pages are made of: headings, wrapped text, tables.
+// What pages are made of: headings, blocks, text in columns, and how they go on over pages.
 
 import (
 	"slices"
@@ -16,133 +16,195 @@ func add[T comparable](list []T, x T) []T {
 	return append(list, x)
 }
 
-// heading sets the title of a block and returns the baseline of what follows.
+// headTall is how far below the rule of a heading its block begins, and apart how far blocks stand
+// from each other, in mm.
+const (
+	headTall = 5.8
+	apart    = 4.0
+)
+
+// heading sets the title of a block, and returns where the block begins.
 func heading(c *draw.Canvas, x, y, w float64, s string) float64 {
 	c.Line(x, y, x+w, y, rule)
-	c.Text(x, y+4, s, headType)
-	return y + 8
+	c.Text(x, y+4, draw.Fit(s, w, headType), headType)
+	return y + headTall
 }
 
-// paragraph sets wrapped text and returns the baseline that would follow.
+// paragraph sets wrapped text below y, and returns where it ends.
 func paragraph(c *draw.Canvas, x, y, w float64, s string, t draw.Type) float64 {
-	return c.Lines(x, y, draw.Wrap(s, w, t), t)
+	lines := draw.Wrap(s, w, t)
+	c.Lines(x, y+t.CapHeight()+0.6, lines, t)
+	return y + float64(len(lines))*t.Leading()
 }
 
-// A col is a column of a table on paper.
-type col struct {
-	w     float64
-	align draw.Align
-	t     draw.Type
-	head  string
-	// symbol says that the head is markup, that of a figure's symbol.
-	symbol bool
-}
-
-// A grid is a table on paper: rows of cells, wrapped in their columns.
-type grid struct {
-	cols []col
-	rows [][]string
-	// strong rows are set in semibold, and rows have at least the height.
-	strong map[int]bool
-	height float64
-}
-
-// gridGap is the space between columns.
-const gridGap = 1.6
-
-// at returns where a column's text stands, and how wide it may be.
-func (g *grid) at(x float64, k int) (anchor, room float64) {
-	for _, c := range g.cols[:k] {
-		x += c.w
+// next begins a page.
+func (p *paper) next() {
+	p.c = draw.New(pageW, pageH)
+	p.pages = append(p.pages, p.c)
+	p.y = top
+	if p.head != nil {
+		p.y = p.head()
 	}
-	room = g.cols[k].w - gridGap
-	switch g.cols[k].align {
-	case draw.Right:
-		return x + g.cols[k].w - gridGap, room
-	case draw.Centre:
-		return x + room/2, room
-	}
-	return x, room
+	p.fresh = p.y
 }
 
-// lines returns the wrapped cells of a row, and its height.
-func (g *grid) lines(i int) (cells [][]string, h float64) {
-	h = g.height
-	for k, c := range g.cols {
-		_, room := g.at(0, k)
-		var lines []string
-		if i < 0 {
-			lines = draw.Wrap(c.head, room, g.cellType(-1, k))
-		} else if g.rows[i][k] != "" {
-			lines = draw.Wrap(g.rows[i][k], room, g.cellType(i, k))
+// room makes sure that a block of a height finds place, on another page if need be.
+func (p *paper) room(h float64) {
+	if p.y+h > bottom && p.y > p.fresh {
+		p.next()
+	}
+}
+
+// A block is a part of a page whose height is known before it is set.
+type block struct {
+	tall float64
+	set  func(y float64)
+}
+
+// tall returns the height of blocks below each other.
+func tall(blocks []block) float64 {
+	sum := -apart
+	for _, b := range blocks {
+		sum += b.tall + apart
+	}
+	return max(sum, 0)
+}
+
+// pile sets blocks below each other.
+func pile(blocks []block, y float64) {
+	for _, b := range blocks {
+		b.set(y)
+		y += b.tall + apart
+	}
+}
+
+// beside sets two piles of blocks beside each other.
+func (p *paper) beside(drawings, tables []block) {
+	h := max(tall(drawings), tall(tables))
+	p.room(h)
+	pile(drawings, p.y)
+	pile(tables, p.y)
+	p.y += h + apart
+}
+
+// A list is short paragraphs under a title.
+type list struct {
+	title string
+	items []string
+	mark  string // before each
+}
+
+// indent is how far the text of a marked paragraph stands from its mark.
+const indent = 2.4
+
+func (l list) indent() float64 {
+	if l.mark == "" {
+		return 0
+	}
+	return indent
+}
+
+// wrapped returns the lines of each paragraph in a column. Those that columns may break are each cut
+// into its lines, and any that is very long.
+func (l list) wrapped(w float64) (paragraphs [][]string) {
+	const long, most = 6, 40
+	for _, s := range l.items {
+		lines, n := draw.Wrap(s, w-l.indent(), listType), most
+		if l.mark == "" && len(lines) > long {
+			n = 1
 		}
-		t := g.cellType(i, k)
-		if len(lines) > 0 {
-			h = max(h, float64(len(lines)-1)*t.Leading()+g.height)
+		paragraphs = slices.AppendSeq(paragraphs, slices.Chunk(lines, n))
+	}
+	return paragraphs
+}
+
+// set sets paragraphs and returns where they end.
+func (l list) set(c *draw.Canvas, x, y float64, paragraphs [][]string) float64 {
+	base := y + listType.CapHeight() + 0.6
+	for _, lines := range paragraphs {
+		c.Text(x, base, l.mark, listType)
+		base = c.Lines(x+l.indent(), base, lines, listType)
+	}
+	return base - listType.CapHeight() - 0.6
+}
+
+// block returns the list in one column.
+func (l list) block(p *paper, x, w float64) block {
+	paragraphs := l.wrapped(w)
+	lines := 0
+	for _, x := range paragraphs {
+		lines += len(x)
+	}
+	return block{headTall + float64(lines)*listType.Leading(), func(y float64) {
+		l.set(p.c, x, heading(p.c, x, y, w, l.title), paragraphs)
+	}}
+}
+
+// columns sets a list in two columns, on as many pages as it needs.
+func (p *paper) columns(l list) {
+	paragraphs := l.wrapped(half)
+	if len(paragraphs) == 0 {
+		return
+	}
+	leading := listType.Leading()
+	lines := func(h float64) int { return int(h / leading) }
+	var sizes []int
+	total := 0
+	for _, x := range paragraphs {
+		sizes, total = append(sizes, len(x)), total+len(x)
+	}
+	// What does not fit goes on over the page if a good part stands on either, else as a whole.
+	const part = 8
+	here := lines(bottom - p.y - headTall)
+	if _, both := divided(sizes, here); both < len(sizes) && (here < part || total < 2*here+part) && total < lines(bottom-top) {
+		p.room(bottom)
+	}
+	p.room(headTall + leading*float64(max(sizes[0], 3)))
+	y := heading(p.c, left, p.y, width, l.title)
+	for {
+		first, both := divided(sizes, lines(bottom-y))
+		p.y = max(l.set(p.c, left, y, paragraphs[:first]), l.set(p.c, left+half+gutter, y, paragraphs[first:both])) + apart
+		if paragraphs, sizes = paragraphs[both:], sizes[both:]; len(sizes) == 0 {
+			return
 		}
-		cells = append(cells, lines)
+		p.next()
+		y = p.y
 	}
-	return cells, h
 }
 
-func (g *grid) cellType(i, k int) draw.Type {
-	t := g.cols[k].t
-	if i < 0 {
-		t = softType
-		t.Markup = g.cols[k].symbol
-	} else if g.strong[i] {
-		t.Face = draw.Semibold
+// tall returns the height of the list in two columns.
+func (l list) tall() float64 {
+	var sizes []int
+	total := 0
+	for _, x := range l.wrapped(half) {
+		sizes, total = append(sizes, len(x)), total+len(x)
 	}
-	return t.To(g.cols[k].align)
+	first, _ := divided(sizes, total)
+	lines := 0
+	for _, n := range sizes[:first] {
+		lines += n
+	}
+	return headTall + listType.Leading()*float64(max(lines, total-lines))
 }
 
-// set draws row i, -1 for the heads, with its top at y, and returns its bottom.
-func (g *grid) set(c *draw.Canvas, x, y float64, i int) float64 {
-	cells, h := g.lines(i)
-	total := 0.0
-	for k := range g.cols {
-		total += g.cols[k].w
-		anchor, _ := g.at(x, k)
-		t := g.cellType(i, k)
-		c.Lines(anchor, y+(g.height+t.CapHeight())/2, cells[k], t)
-	}
-	stroke := hair
-	if i < 0 {
-		stroke = draw.Stroke{Colour: draw.Faint, Width: 0.2}
-	}
-	c.Line(x, y+h, x+total-gridGap, y+h, stroke)
-	return y + h
-}
-
-// tall returns the height of the whole table.
-func (g *grid) tall() float64 {
-	sum := 0.0
-	for i := -1; i < len(g.rows); i++ {
-		_, h := g.lines(i)
-		sum += h
-	}
-	return sum
-}
-
-// all draws the whole table and returns its bottom.
-func (g *grid) all(c *draw.Canvas, x, y float64) float64 {
-	for i := -1; i < len(g.rows); i++ {
-		y = g.set(c, x, y, i)
-	}
-	return y
-}
-
-// flow sets the table on as many pages as it needs.
-func (p *paper) flow(g *grid) {
-	_, h := g.lines(-1)
-	_, first := g.lines(0)
-	p.room(h + first)
-	p.y = g.set(p.c, left, p.y, -1)
-	for i := range g.rows {
-		if _, h := g.lines(i); p.y+h > bottom {
-			p.next()
-			p.y = g.set(p.c, left, p.y, -1)
+// divided returns how many of some paragraphs of so many lines stand in the first column, and how
+// many in both, of at most so many lines each: as short as can be, if all find place.
+func divided(sizes []int, most int) (first, both int) {
+	take := func(from, lines int) int {
+		for from < len(sizes) && sizes[from] <= lines {
+			lines -= sizes[from]
+			from++
 		}
-		p.y = g.set(p.c, left, p.y, i)
+		return from
+	}
+	total := 0
+	for _, n := range sizes {
+		total += n
+	}
+	for h := min((total+1)/2, most); ; h++ {
+		first = take(0, h)
+		if both = take(first, h); both == len(sizes) || h >= most {
+			return first, both
+		}
 	}
 }

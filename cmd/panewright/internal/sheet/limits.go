@@ -1,8 +1,9 @@
 package sheet
 
-// The page of limits: how the figures stand to what the user entered.
+// The pages of limits: how the figures stand to what the user entered.
 
 import (
+	"slices"
 	"strings"
 
 	"panewright/cmd/panewright/internal/draw"
@@ -11,51 +12,99 @@ import (
 	"panewright/glazing/limits"
 )
 
+const marginNote = "Values are rounded as outputs round; the margin is the distance of the unrounded figure to the limit, above 0 where it is met."
+
 // limits sets the pages of limits.
 func (p *paper) limits(c table.Check) {
-	p.begin("Limits", "Figures against entered limits")
-	for _, s := range c.Notice() {
-		p.y = paragraph(p.c, left, p.y, width, s, textType)
+	p.begin("Limits", "Figures against entered limits", fact{"project", p.r.Project.Title})
+	p.facts(p.saidBy())
+	for _, s := range append(slices.Clone(c.Notice()), marginNote) {
+		p.y = paragraph(p.c, left, p.y, width, s, smallType)
 	}
-	p.y = paragraph(p.c, left, p.y+1, width, strings.Join(c.Counts(), "   "), strongType) + 1
-	g := &grid{height: 4.3}
-	widths := []float64{24, 10, 16, 26, 17, 20, 19, 44}
-	for k, head := range append([]string{"make-up"}, table.CheckHeads()...) {
-		x := col{w: widths[k], t: textType, head: head}
-		if head == "value" || head == "margin" || head == "limit" {
-			x.align = draw.Right
-		}
-		if head == "figure" {
-			x.t = symbolType
-		}
-		g.cols = append(g.cols, x)
+	p.y += 2
+	p.table("Results: "+strings.Join(c.Counts(), ", "), limitsTable(c))
+	entered := &grid{height: 4.2, bare: true, cols: []col{{w: 6, t: strongType}, {w: width - 6, t: textType}}}
+	for _, s := range c.Entered() {
+		number, s, _ := strings.Cut(oneLine(s), "  ")
+		entered.rows = append(entered.rows, []string{number, s})
 	}
-	g.strong = map[int]bool{}
+	p.table("Limits, typed by the user", entered)
+	p.columns(list{title: "Too close to call, or not judged", items: c.Reasons()})
+	p.columns(list{title: "On the limits", items: c.Remarked()})
+	var bases []string
+	var figures []table.Choice
+	for i := range c.Ratings {
+		m := c.Ratings[i].Method
+		bases = add(bases, m.Basis.Name+": "+m.Editions()+".")
+	}
+	for i := range c.Results {
+		x := table.Choice{Figure: c.Results[i].Limit.Figure, Index: c.Results[i].Index}
+		if !slices.ContainsFunc(figures, func(o table.Choice) bool { return o.Path() == x.Path() }) {
+			figures = append(figures, x)
+		}
+	}
+	p.columns(list{title: "Bases", items: bases})
+	p.key(figures)
+	p.inFull()
+	p.sign()
+}
+
+// limitsTable has a row a result. What does not meet its limit is in semibold, and has the accent.
+func limitsTable(c table.Check) *grid {
+	const number, figure, value, entered, margin, result = 11.0, 13.0, 15.0, 19.0, 18.0, 40.0
+	g := &grid{height: 4.4, strong: map[int]bool{}, types: map[[2]int]draw.Type{}}
+	idW, tintW := 14.0, 0.0
+	for i := range c.Results {
+		x := &c.Results[i]
+		idW = max(idW, draw.Width(x.Makeup.ID, strongType)+gridGap+2)
+		tintW = max(tintW, draw.Width(x.Tint, textType)+gridGap+2)
+	}
+	rest := width - number - figure - value - entered - margin - result
+	tintW = min(tintW, rest/2)
+	idW = min(idW, rest-tintW)
+	slack := (rest - idW - tintW) / 2
+	g.cols = []col{
+		{w: idW + slack, t: strongType, head: "make-up"},
+		{w: tintW + slack, t: textType, head: "tint"},
+		{w: number, t: textType, head: "limit"},
+		{w: figure, t: symbolType, head: "figure"},
+		{w: entered, t: textType, head: "entered"},
+		{w: value, align: draw.Right, t: textType, head: "value"},
+		{w: margin, align: draw.Right, t: textType, head: "margin"},
+		{w: result, t: textType, head: "result"},
+	}
+	if tintW == 0 {
+		g.cols[1].head = ""
+	}
+	verdict := strongType.In(draw.Accent)
 	var last *glazing.Makeup
 	for i := range c.Results {
 		x := &c.Results[i]
-		row := c.Cells(x)
-		row[2] = draw.Symbol(row[2])
+		cells := c.Cells(x) // make-up, limit, figure, tint, value, entered, margin, result
+		for k := range cells {
+			cells[k] = strings.Replace(oneLine(cells[k]), "-", minusIn(k), 1)
+		}
+		row := []string{cells[0], cells[3], cells[1], draw.Symbol(cells[2]), cells[5], cells[4], cells[6], cells[7]}
+		g.leads = append(g.leads, row[0])
 		if x.Makeup == last {
 			row[0] = ""
 		}
 		last = x.Makeup
-		for k := range row {
-			row[k] = strings.ReplaceAll(row[k], "\n", " ")
-		}
 		if x.Verdict != limits.Meets {
 			g.strong[len(g.rows)] = true
 		}
+		if x.Verdict == limits.DoesNotMeet {
+			g.types[[2]int{len(g.rows), len(row) - 1}] = verdict
+		}
 		g.rows = append(g.rows, row)
 	}
-	p.flow(g)
-	p.y += 4
-	p.block("Limits, typed by the user", c.Entered(), smallType)
-	if list := c.Reasons(); list != nil {
-		p.block("Too close to call, or not judged", list, smallType)
+	return g
+}
+
+// minusIn returns how a cell of a result writes a hyphen: numbers have a true minus.
+func minusIn(cell int) string {
+	if cell == 4 || cell == 6 {
+		return "−"
 	}
-	if list := c.Remarked(); list != nil {
-		p.block("On the limits", list, smallType)
-	}
-	p.sign()
+	return "-"
 }

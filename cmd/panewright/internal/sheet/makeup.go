@@ -1,83 +1,39 @@
 package sheet
 
-// The data sheet of one make-up under one basis, in all its tints.
+// The data sheet of one make-up under one basis, in all its tints. The sheet of one tint has drawings
+// at the left and tables at the right; that of several begins with the lightest and the darkest.
 
 import (
 	"fmt"
 	"slices"
+	"strconv"
 	"strings"
 
 	"panewright/cmd/panewright/internal/draw"
 	"panewright/glazing"
 )
 
-// makeup sets the sheet of a make-up from its ratings, one a tint.
-func (p *paper) makeup(ratings []*glazing.Rating) {
+// makeup sets the sheet of a make-up from its ratings, one a tint; last says that nothing of the
+// document follows.
+func (p *paper) makeup(ratings []*glazing.Rating, last bool) {
 	m := ratings[0].Makeup
-	p.head = nil
-	p.next()
-	p.y = p.title(m, ratings[0])
-	p.head = func() float64 { return p.again(m, ratings[0]) }
+	p.heads(m, ratings[0])
 	p.headline(ratings)
-	p.drawing(ratings)
-	p.figures(ratings)
-	p.told(m)
-	p.cautions(ratings)
+	var rest []list
+	if len(ratings) == 1 {
+		rest = p.single(ratings[0])
+	} else {
+		p.switching(ratings)
+		rest = p.told(ratings)
+	}
+	for _, l := range rest {
+		p.columns(l)
+	}
+	if last && p.r.Project.Notes != "" {
+		p.columns(list{title: "Notes of the project", items: []string{p.r.Project.Notes}})
+	}
+	p.inFull()
 	p.sign()
-}
-
-// fitted returns a type made smaller, but not below a size, so that text fits a width.
-func fitted(s string, w float64, t draw.Type, least float64) draw.Type {
-	for t.Size > least && draw.Width(s, t) > w {
-		t.Size = max(least, t.Size-0.5)
-	}
-	return t
-}
-
-// titleLines is how many lines of a title stand at the head of a sheet; a longer one stands in full
-// below.
-const titleLines = 2
-
-// title sets the head of a sheet and returns where the next block begins.
-func (p *paper) title(m *glazing.Makeup, r *glazing.Rating) float64 {
-	c, y := p.c, top
-	c.Text(right, y, "Data sheet", softType.To(draw.Right))
-	c.Text(left, y, draw.Fit(p.r.Project.Title, width-30, softType), softType)
-	y += 9.5
-	t := fitted(m.ID, width, titleType, 9)
-	for i, line := range draw.Wrap(m.ID, width, t) {
-		if i > 0 {
-			y += t.Leading()
-		}
-		c.Text(left, y, line, t)
-	}
-	if lines := draw.Wrap(m.Title, width, nameType); len(lines) > 0 {
-		y += 1
-		for i, line := range lines[:min(len(lines), titleLines)] {
-			y += nameType.Leading()
-			if i == titleLines-1 && len(lines) > titleLines {
-				line = draw.Fit(line+" "+lines[i+1], width, nameType)
-			}
-			c.Text(left, y, line, nameType)
-		}
-	}
-	y += 4.6
-	line := "Basis " + r.Method.Basis.Name + ": " + r.Method.Editions() + "."
-	if about := p.about(); about != "" {
-		line = draw.Fit(about, 220, softType) + " · " + line
-	}
-	y = paragraph(c, left, y, width, line, softType)
-	c.Line(left, y-0.6, left+24, y-0.6, accentRule)
-	return y + 3
-}
-
-// again sets the head of a page that goes on.
-func (p *paper) again(m *glazing.Makeup, r *glazing.Rating) float64 {
-	t := draw.Type{Face: draw.Semibold, Size: 9}
-	p.c.Text(left, top, draw.Fit(strings.TrimSpace(m.ID+"  "+m.Title), width-40, t), t)
-	p.c.Text(right, top, "basis "+r.Method.Basis.Name+", continued", softType.To(draw.Right))
-	p.c.Line(left, top+2.2, right, top+2.2, hair)
-	return top + 8
 }
 
 // headlines are the figures that stand large.
@@ -87,8 +43,13 @@ var headlines = []string{"u", "g", "light", "light_outside", "ra"}
 // tint.
 func (p *paper) headline(ratings []*glazing.Rating) {
 	lightest, darkest := extremes(ratings)
-	cell := width / float64(len(headlines))
-	label := draw.Type{Size: 6.3, Colour: draw.Soft, Markup: true}
+	cell := (width + gutter) / float64(len(headlines))
+	label := draw.Type{Size: 6.5, Colour: draw.Soft, Markup: true}
+	if lightest != darkest {
+		s := "From the lightest tint, " + lightest.Tint + ", to the darkest, " + darkest.Tint
+		p.c.Text(left, p.y+softType.CapHeight(), draw.Fit(s, width, softType), softType)
+		p.y += 3.6
+	}
 	lowest := p.y
 	for i, alias := range headlines {
 		f, ok := named(p.r.Figures, alias)
@@ -96,28 +57,27 @@ func (p *paper) headline(ratings []*glazing.Rating) {
 			continue
 		}
 		x := left + float64(i)*cell
-		value := f.Print(lightest, 0)
+		value, unit := f.Print(lightest, 0), f.Unit
 		if other := f.Print(darkest, 0); other != value {
-			value += " – " + other
+			value += " → " + other
+		} else if value == unknown {
+			unit = ""
 		}
-		unit := 0.0
-		if f.Unit != "" {
-			unit = draw.Width(f.Unit, softType) + 1
+		beside := 0.0
+		if unit != "" {
+			beside = draw.Width(unit, softType) + 1
 		}
-		t := fitted(value, cell-3-unit, numberType, 8)
+		t := fitted(value, cell-gutter-beside, numberType, 8)
 		p.c.Text(x, p.y+6, value, t)
-		p.c.Text(x+draw.Width(value, t)+1, p.y+6, f.Unit, softType)
-		lines := draw.Wrap(draw.Symbol(f.Symbol)+"  "+draw.Escape(f.Meaning), cell-4, label)
+		p.c.Text(x+draw.Width(value, t)+1, p.y+6, unit, softType)
+		lines := draw.Wrap(draw.Symbol(f.Symbol)+"  "+p.worded(f.Meaning), cell-gutter, label)
 		lowest = max(lowest, p.c.Lines(x, p.y+10, lines, label))
 	}
-	p.y = lowest - 0.5
-	if lightest != darkest {
-		p.y += 1
-		p.c.Text(left, p.y, "From tint "+lightest.Tint+" to tint "+darkest.Tint+".", softType)
-		p.y += 3
-	}
-	p.y += 1.5
+	p.y = lowest + 0.5
 }
+
+// unknown is how a figure is printed that is not known.
+const unknown = "–"
 
 // extremes returns the ratings of the highest and the lowest light transmittance.
 func extremes(ratings []*glazing.Rating) (lightest, darkest *glazing.Rating) {
@@ -143,134 +103,242 @@ func named(list []glazing.Figure, alias string) (glazing.Figure, bool) {
 	return list[i], true
 }
 
-// drawing sets the section and the list of panes and gaps beside it.
-func (p *paper) drawing(ratings []*glazing.Rating) {
-	const gap, sectionW = 7.0, 84.0
-	lightest, _ := extremes(ratings)
-	list := p.buildUp(lightest, width-sectionW-gap)
-	h := max(draw.SectionHeight(lightest, sectionW, 33), list.tall())
-	p.room(h + 12)
-	title := "Section, outside at the left"
-	if lightest.Tint != "" {
-		title += ", in tint " + lightest.Tint
+// The height of glass in a section, in mm, and how much less it is where room is short, and more where
+// there is plenty; so is that of the frame of a plot.
+const (
+	glassTall, frameTall = 33.0, 36.0
+	less, most           = -5.0, 14.0
+)
+
+// single sets the sheet of one tint, and returns the lists that found no place on it.
+func (p *paper) single(r *glazing.Rating) (rest []list) {
+	const at = left + drawn + gutter
+	ratings := []*glazing.Rating{r}
+	tables := []block{p.buildUp(r, written).block(p, at, panesTitle), p.figureTables(ratings, written)[0].block(p, at, figuresTitle)}
+
+	curves := draw.MakeupCurves(r)
+	colours := p.colour(r, left, drawn)
+	with := func(glass, frame float64) []block {
+		section, plot := draw.SectionHeight(r, drawn, glass), draw.PlotHeight(curves, drawn, frame)
+		return []block{{headTall + section, func(y float64) {
+			y = heading(p.c, left, y, drawn, sectionTitle(r))
+			draw.Section(p.c, draw.Rect{X: left, Y: y, W: drawn, H: section}, r)
+		}}, {headTall + plot - 2, func(y float64) {
+			y = heading(p.c, left, y, drawn, "Spectra")
+			draw.Plot(p.c, draw.Rect{X: left, Y: y - 1, W: drawn, H: plot}, curves)
+		}}, colours}
 	}
-	y := heading(p.c, left, p.y, sectionW, draw.Fit(title, sectionW, headType)) - 2.5
-	heading(p.c, left+sectionW+gap, p.y, width-sectionW-gap, "Panes and gaps, from outside")
-	draw.Section(p.c, draw.Rect{X: left, Y: y, W: sectionW, H: h}, lightest)
-	list.all(p.c, left+sectionW+gap, y-1)
-	p.y = y + h + 4
+	drawings := with(glassTall, frameTall)
+	space := bottom - p.y
+	if max(tall(drawings), tall(tables)) > space {
+		// drawings of the make-up beside its list, those of the figures beside theirs
+		p.beside(drawings[:1], tables[:1])
+		p.beside(drawings[1:], tables[1:])
+		return p.told(ratings)
+	}
+	low := tall(with(glassTall+less, frameTall+less))
+	var below []block // the drawings
+	for _, l := range p.told(ratings) {
+		b, narrow := l.block(p, at, written), l.block(p, left, drawn)
+		switch {
+		case rest == nil && tall(tables) <= low && tall(append(tables, b)) <= space, rest == nil && low+apart+narrow.tall > space && tall(append(tables, b)) <= space:
+			tables = append(tables, b)
+		case rest == nil && low+apart+narrow.tall <= space:
+			below = append(below, narrow)
+			low += apart + narrow.tall
+		default:
+			rest = append(rest, l)
+			space -= apart + l.tall()
+		}
+	}
+	more := (min(tall(tables), space) - tall(append(drawings, below...))) / 2
+	more = min(max(more, less), most)
+	p.beside(append(with(glassTall+more, frameTall+more), below...), tables)
+	return rest
+}
+
+const (
+	panesTitle   = "Panes and gaps, from outside"
+	figuresTitle = "Figures at normal incidence"
+)
+
+func sectionTitle(r *glazing.Rating) string {
+	if r.Tint == "" {
+		return "Section, outside at the left"
+	}
+	return "Section in tint " + r.Tint
+}
+
+// switching sets the sheet of several tints.
+func (p *paper) switching(ratings []*glazing.Rating) {
+	lightest, darkest := extremes(ratings)
+	parts := p.buildUp(lightest, width)
+	figures := p.figureTables(ratings, width)
+	tables := tall([]block{parts.block(p, left, panesTitle), figures[0].block(p, left, figuresTitle)})
+	sections := func(glass float64) (list []block) {
+		for i, r := range []*glazing.Rating{lightest, darkest} {
+			x, h := left+float64(i)*(half+gutter), draw.SectionHeight(r, half, glass)
+			list = append(list, block{headTall + h, func(y float64) {
+				y = heading(p.c, x, y, half, sectionTitle(r))
+				draw.Section(p.c, draw.Rect{X: x, Y: y, W: half, H: h}, r)
+			}})
+		}
+		return list
+	}
+	pair := sections(glassTall)
+	more := bottom - p.y - max(pair[0].tall, pair[1].tall) - apart - tables
+	pair = sections(glassTall + min(max(more, less), most))
+	p.beside(pair[:1], pair[1:])
+	p.table(panesTitle, parts)
+	for i, g := range figures {
+		title := figuresTitle
+		if i > 0 {
+			title += ", further tints"
+		}
+		p.table(title, g)
+	}
+	p.plots(ratings, lightest, darkest)
+	p.colourTable(ratings)
+}
+
+// plots sets the transmittances of all tints, and the reflectances of the lightest and the darkest.
+func (p *paper) plots(ratings []*glazing.Rating, lightest, darkest *glazing.Rating) {
+	type plot struct {
+		title  string
+		curves []draw.Curve
+	}
+	var plots []plot
+	curves := draw.TintCurves(ratings)
+	for i := range curves {
+		curves[i].Tag = strconv.Itoa(i + 1)
+	}
+	for part := range slices.Chunk(curves, draw.MaxCurves) {
+		title := "Transmittance in each tint"
+		if len(curves) > len(part) {
+			title = "Transmittance in tints " + part[0].Tag + " to " + part[len(part)-1].Tag
+		}
+		plots = append(plots, plot{title, part})
+	}
+	mirrored := plot{title: "Reflectance in the lightest and the darkest tint"}
+	for _, r := range []*glazing.Rating{lightest, darkest} {
+		for _, c := range draw.MakeupCurves(r)[1:] {
+			c.Name, c.Tag, c.Stroke = c.Name+", "+draw.Escape(r.Tint), c.Tag+"_{"+strconv.Itoa(slices.Index(ratings, r)+1)+"}", draw.Stroke{}
+			mirrored.curves = append(mirrored.curves, c)
+		}
+	}
+	for pair := range slices.Chunk(append(plots, mirrored), 2) {
+		var blocks [2][]block
+		for i, x := range pair {
+			at, h := left+float64(i)*(half+gutter), draw.PlotHeight(x.curves, half, frameTall)
+			blocks[i] = []block{{headTall + h - 2, func(y float64) {
+				y = heading(p.c, at, y, half, x.title)
+				draw.Plot(p.c, draw.Rect{X: at, Y: y - 1, W: half, H: h}, x.curves)
+			}}}
+		}
+		p.beside(blocks[0], blocks[1])
+	}
 }
 
 // buildUp lists panes and gaps with what is known of them.
 func (p *paper) buildUp(r *glazing.Rating, w float64) *grid {
+	const surfaceW, mmW, epsilonW = 10.0, 11.0, 10.5
 	m := r.Makeup
-	g := &grid{height: 4.2, cols: []col{
-		{w: 9, align: draw.Left, t: strongType, head: "surface"},
-		{w: w - 9 - 15 - 12, align: draw.Left, t: textType, head: "pane or gap"},
-		{w: 15, align: draw.Right, t: textType, head: "mm"},
-		{w: 12, align: draw.Right, t: textType, head: "ε, outer inner"},
+	g := &grid{height: 4.2, strong: map[int]bool{}, cols: []col{
+		{w: surfaceW, t: strongType, head: "surface"},
+		{w: w - surfaceW - mmW - 2*epsilonW, t: textType, head: "pane or gap"},
+		{w: mmW, align: draw.Right, t: textType, head: "mm"},
+		{w: epsilonW, align: draw.Right, t: textType, head: "ε outer"},
+		{w: epsilonW, align: draw.Right, t: textType, head: "ε inner"},
 	}}
-	small := len(m.Panes) > 4
-	if small {
-		g.height = 3.3
+	if len(m.Panes) > 4 {
+		g.height = 3.7
 		for k := range g.cols {
-			g.cols[k].t.Size = 6.2
+			g.cols[k].t.Size = 6.6
 		}
 	}
+	typed := false
 	for k, placed := range m.Panes {
-		pane := placed.Pane
-		what := pane.ID
-		var more []string
-		if placed.Turned {
-			more = append(more, "turned")
-		}
-		if pane.Tintable() {
-			tint := pane.Tints[r.Ready.States[r.State].Tints[k]].Name
-			if placed.Tint == "" {
-				more = append(more, fmt.Sprintf("switches, %d tints", len(pane.Tints)))
-			} else {
-				more = append(more, "tint "+tint)
+		row := []string{fmt.Sprintf("%d  %d", 2*k+1, 2*k+2), placed.Pane.ID + "\n" + strings.Join(paneFacts(r, k), ", "), millimetres(placed.Pane.ThicknessMM())}
+		for _, e := range r.Surfaces[2*k : 2*k+2] {
+			s := unknown
+			if e.Corrected.Known {
+				s = glazing.PrintRounded(e.Corrected.Number, 3)
 			}
-		}
-		if len(pane.Plies) > 1 {
-			var plies []string
-			for _, y := range pane.Plies {
-				plies = append(plies, fmt.Sprintf("%.6g", y.ThicknessMM))
+			if isTyped(e) {
+				s, typed = typedMark+" "+s, true
 			}
-			more = append(more, "laminate "+strings.Join(plies, " + "))
+			row = append(row, s)
 		}
-		if pane.HeatTreatment != glazing.UnknownTreatment {
-			s := string(pane.HeatTreatment)
-			if pane.HeatSoaked {
-				s += ", heat soaked"
-			}
-			more = append(more, s)
-		} else {
-			more = append(more, "heat treatment not stated")
-		}
-		more = append(more, string(pane.Origin)+" spectrum")
-		if small {
-			more = slices.DeleteFunc(more, func(s string) bool { return s == "heat treatment not stated" })
-		}
-		e := func(i int) string {
-			v := r.Surfaces[i].Corrected
-			if !v.Known {
-				return "–"
-			}
-			return glazing.PrintRounded(v.Number, 3)
-		}
-		g.rows = append(g.rows, []string{fmt.Sprintf("%d  %d", 2*k+1, 2*k+2), what + ": " + strings.Join(more, ", "),
-			fmt.Sprintf("%.6g", pane.ThicknessMM()), e(2*k) + " " + e(2*k+1)})
+		g.rows = append(g.rows, row)
 		if k < len(m.Gaps) {
 			gap := m.Gaps[k]
-			g.rows = append(g.rows, []string{"", gap.Gas.String(), fmt.Sprintf("%.6g", gap.WidthMM), ""})
+			g.rows = append(g.rows, []string{"", percent(gap.Gas.String()), millimetres(gap.WidthMM), "", ""})
 		}
 	}
-	g.rows = append(g.rows, []string{"", "together, " + glazing.PrintRounded(r.MassKGM2, 1) + " kg/m²", glazing.PrintRounded(r.ThicknessMM, 1), ""})
-	g.strong = map[int]bool{len(g.rows) - 1: true}
+	g.rows = append(g.rows, []string{"", "together, " + glazing.PrintRounded(r.MassKGM2, 1) + " kg/m²", glazing.PrintRounded(r.ThicknessMM, 1), "", ""})
+	g.strong[len(g.rows)-1] = true
+	g.note = "ε is the corrected emissivity"
+	if r.Tint != "" {
+		g.note += " in tint " + r.Tint
+	}
+	if g.note += ", EN 12898."; typed {
+		g.note += " " + typedMark + " typed by the user."
+	}
 	return g
 }
 
-// told sets what the user typed, and a title that was too long for the head.
-func (p *paper) told(m *glazing.Makeup) {
-	var lines []string
-	for _, t := range m.Typed {
-		lines = append(lines, t.Name+": "+t.Text)
-	}
-	if lines != nil {
-		p.block("Typed by the user, not computed", lines, textType)
-	}
-	if len(draw.Wrap(m.Title, width, nameType)) > titleLines {
-		p.block("Title in full", []string{m.Title}, smallType)
-	}
-	if p.r.Project.Notes != "" && p.single {
-		p.block("Notes of the project", []string{p.r.Project.Notes}, smallType)
-	}
+// typedMark stands before figures that the user typed in.
+const typedMark = "†"
+
+func isTyped(e glazing.Emissivity) bool {
+	return e.Source == glazing.EmissivityGiven || e.Source == glazing.EmissivityGivenNormal
 }
 
-// block sets paragraphs under a heading, over pages if need be.
-func (p *paper) block(title string, list []string, t draw.Type) {
-	p.room(12)
-	y := heading(p.c, left, p.y, width, title)
-	for _, s := range list {
-		for _, line := range draw.Wrap(s, width, t) {
-			if y > bottom {
-				p.next()
-				y = p.y
-			}
-			p.c.Text(left, y, line, t)
-			y += t.Leading()
+// paneFacts says what a pane is, beside its name and thickness.
+func paneFacts(r *glazing.Rating, k int) (facts []string) {
+	placed := r.Makeup.Panes[k]
+	pane := placed.Pane
+	if placed.Turned {
+		facts = append(facts, "turned")
+	}
+	if pane.Tintable() {
+		switch tint := pane.Tints[r.Ready.States[r.State].Tints[k]].Name; placed.Tint {
+		case "":
+			facts = append(facts, fmt.Sprintf("switches, %d tints", len(pane.Tints)))
+		case glazing.SameTint:
+			facts = append(facts, "in the tint of the outermost that switches")
+		default:
+			facts = append(facts, "in tint "+tint)
 		}
 	}
-	p.y = y + 1.5
+	if len(pane.Plies) > 1 {
+		var plies []string
+		for _, y := range pane.Plies {
+			plies = append(plies, millimetres(y.ThicknessMM))
+		}
+		if placed.Turned {
+			slices.Reverse(plies)
+		}
+		facts = append(facts, "laminate "+strings.Join(plies, "\u00a0+\u00a0")+"\u00a0mm")
+	}
+	switch {
+	case pane.HeatTreatment == glazing.UnknownTreatment || pane.HeatTreatment == "":
+		facts = append(facts, "heat treatment not stated")
+	case pane.HeatSoaked:
+		facts = append(facts, string(pane.HeatTreatment), "heat soaked")
+	default:
+		facts = append(facts, string(pane.HeatTreatment))
+	}
+	return append(facts, string(pane.Origin)+" spectrum")
 }
 
-// sign leaves space for names below the last page of a sheet.
-func (p *paper) sign() {
-	const y = bottom + 8
-	for i, s := range []string{"prepared by", "checked by", "date"} {
-		x := left + float64(i)*(width/3)
-		p.c.Line(x, y, x+width/3-8, y, draw.Stroke{Colour: draw.Faint, Width: 0.2})
-		p.c.Text(x, y+2.8, s, softType)
+// millimetres prints a width without zeros at its end.
+func millimetres(mm float64) string { return fmt.Sprintf("%.6g", mm) }
+
+// percent writes the shares of a filling as such.
+func percent(gas string) string {
+	if !strings.Contains(gas, " / ") {
+		return gas
 	}
+	return strings.ReplaceAll(gas, " / ", "\u00a0%, ") + "\u00a0%"
 }

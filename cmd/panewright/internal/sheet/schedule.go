@@ -1,65 +1,35 @@
 package sheet
 
-// The schedule of a project, and the cautions that stand on every document.
+// The schedule of a project, with what is said of all its make-ups.
 
 import (
+	"slices"
 	"strings"
 
 	"panewright/cmd/panewright/internal/draw"
+	"panewright/cmd/panewright/internal/table"
 	"panewright/glazing"
 )
 
-// begin begins pages of a kind, with a title at their head.
-func (p *paper) begin(kind, title string) {
-	p.head = nil
-	p.next()
-	c, y := p.c, top
-	c.Text(right, y, kind, softType.To(draw.Right))
-	if about := p.about(); about != "" {
-		c.Text(left, y, draw.Fit(about, width-30, softType), softType)
-	}
-	t := draw.Type{Face: draw.Semibold, Size: 15}
-	lines := draw.Wrap(title, width, t)
-	y += 9
-	for i, line := range lines[:min(len(lines), titleLines)] {
-		if i == titleLines-1 && len(lines) > titleLines {
-			line = draw.Fit(line+" "+lines[i+1], width, t)
-			p.long = title
-		}
-		c.Text(left, y, line, t)
-		y += t.Leading()
-	}
-	c.Line(left, y-2.5, left+24, y-2.5, accentRule)
-	p.y = y + 2
-	p.head = func() float64 {
-		p.c.Text(left, top, draw.Fit(title, width-40, strongType), strongType)
-		p.c.Text(right, top, kind+", continued", softType.To(draw.Right))
-		p.c.Line(left, top+2.2, right, top+2.2, hair)
-		return top + 8
-	}
-}
-
 // schedule sets the pages of the schedule.
 func (p *paper) schedule() {
-	p.begin("Schedule", p.r.Project.Title)
+	p.begin("Schedule", p.r.Project.Title, fact{})
+	p.facts(p.saidBy())
+	p.y += 2
 	for _, group := range p.bases() {
 		m := group[0].Method
-		p.room(25)
-		y := heading(p.c, left, p.y, width, "Basis "+m.Basis.Name)
-		p.y = paragraph(p.c, left, y-0.8, width, m.Editions()+".", softType) - 0.5
-		p.flow(p.scheduleTable(group))
-		p.y += 5
+		p.table("Basis "+m.Basis.Name, p.scheduleTable(group))
 	}
-	p.block("Make-ups, from outside to inside", p.sequences(), smallType)
-	p.block("Symbols", []string{p.r.Legend() + "."}, smallType)
-	p.block("Spectra", []string{p.r.SpectraBy()}, smallType)
-	p.listed("Cautions", p.r.CautionsOnce())
-	if p.long != "" {
-		p.block("Title in full", []string{p.long}, smallType)
+	p.key(p.r.Columns())
+	p.table("Make-ups, from outside to inside", p.sequences())
+	if s := p.r.SpectraBy(); s != "" {
+		p.columns(list{title: "Spectra", items: strings.Split(s, "; ")})
 	}
+	p.columns(list{title: "Cautions", items: p.r.CautionsOnce(), mark: "·"})
 	if p.r.Project.Notes != "" {
-		p.block("Notes of the project", []string{p.r.Project.Notes}, smallType)
+		p.columns(list{title: "Notes of the project", items: []string{p.r.Project.Notes}})
 	}
+	p.inFull()
 }
 
 // bases returns the ratings of each basis.
@@ -80,30 +50,59 @@ func (p *paper) bases() (list [][]*glazing.Rating) {
 	return list
 }
 
-// scheduleTable has a row a rating.
+// scheduleTable has a row a rating. Titles stand beside short ids, and below long ones.
 func (p *paper) scheduleTable(ratings []*glazing.Rating) *grid {
-	columns := p.r.Columns()
-	valueW := min(10.6, 112/float64(len(columns)))
-	g := &grid{height: 4.3}
-	tintW := 0.0
+	const idMost, tintMost = 18.0, 22.0
+	g := &grid{height: 4.4, note: ratings[0].Method.Editions() + "."}
+	idW, tintW := draw.Width("make-up", softType), 0.0
 	for _, r := range ratings {
-		if r.Tint != "" {
-			tintW = 17
+		idW = max(idW, draw.Width(r.Makeup.ID, strongType))
+		tintW = max(tintW, draw.Width(r.Tint, textType))
+	}
+	if tintW > 0 {
+		tintW = min(max(tintW, 7)+gridGap+1, tintMost)
+	}
+	names := width - tintW // of the columns of ids and titles
+	var figures []col
+	for _, c := range p.r.Columns() {
+		x := col{w: max(9.4, draw.Width(c.Unit, remarkType)+gridGap+0.2), align: draw.Right, t: textType, head: draw.Symbol(c.Head()), symbol: true}
+		if c.Unit != "" {
+			x.head += "\n" + c.Unit
 		}
+		figures = append(figures, x)
+		names -= x.w
 	}
-	g.cols = []col{{w: width - tintW - valueW*float64(len(columns)), t: textType, head: "make-up"}, {w: tintW, t: textType, head: "tint"}}
-	for _, c := range columns {
-		g.cols = append(g.cols, col{w: valueW, align: draw.Right, t: textType, head: draw.Symbol(c.Head()), symbol: true})
+	below := idW > idMost
+	if below {
+		idW = names
+	} else {
+		idW += gridGap + 1
 	}
+	g.cols = []col{{w: idW, t: strongType, head: "make-up"}}
+	if !below {
+		g.cols = append(g.cols, col{w: names - idW, t: textType})
+	}
+	if tintW > 0 {
+		g.cols = append(g.cols, col{w: tintW, t: textType, head: "tint"})
+	}
+	g.cols = append(g.cols, figures...)
 	var last *glazing.Makeup
 	for _, r := range ratings {
-		name := ""
-		if r.Makeup != last {
-			name = strings.TrimSpace(r.Makeup.ID + "  " + short(r.Makeup.Title))
+		row := []string{r.Makeup.ID, short(r.Makeup.Title)}
+		g.leads = append(g.leads, r.Makeup.ID)
+		switch {
+		case r.Makeup == last && below:
+			row = []string{""}
+		case r.Makeup == last:
+			row = []string{"", ""}
+		case below:
+			row = []string{row[0] + "\n" + row[1]}
 		}
 		last = r.Makeup
-		row := []string{name, r.Tint}
-		for _, c := range columns {
+		if tintW > 0 {
+			row = append(row, r.Tint)
+		}
+		for _, c := range p.r.Columns() {
 			row = append(row, c.Printed(r))
 		}
 		g.rows = append(g.rows, row)
@@ -113,14 +112,60 @@ func (p *paper) scheduleTable(ratings []*glazing.Rating) *grid {
 
 // short keeps a title in a table within bounds; the sheet of the make-up has it in full.
 func short(s string) string {
-	if r := []rune(s); len(r) > 90 {
-		return string(r[:90]) + "…"
+	const most = 80
+	s = oneLine(s)
+	if r := []rune(s); len(r) > most {
+		return strings.TrimRight(string(r[:most]), " ") + "…"
 	}
 	return s
 }
 
+// oneLine keeps a text of the user's from being taken for one with a remark.
+func oneLine(s string) string { return strings.ReplaceAll(s, "\n", " ") }
+
+// key says what the symbols of figures mean.
+func (p *paper) key(choices []table.Choice) {
+	const columns, symbolW = 3, 9.0
+	choices = append(slices.Clip(choices), table.Choice{Figure: glazing.Figure{Symbol: unknown, Meaning: "not known; a caution says why"}})
+	t := listType
+	t.Markup = true
+	w := (width+gutter)/columns - gutter
+	var cells [][]string
+	for _, c := range choices {
+		s := p.worded(c.About())
+		if c.Unit != "" {
+			s += ", " + c.Unit
+		}
+		cells = append(cells, draw.Wrap(s, w-symbolW, t))
+	}
+	rows := (len(cells) + columns - 1) / columns
+	h := headTall
+	tallOf := func(row int) (h float64) {
+		for i := row; i < len(cells); i += rows {
+			h = max(h, float64(len(cells[i]))*t.Leading()+0.4)
+		}
+		return h
+	}
+	for row := range rows {
+		h += tallOf(row)
+	}
+	p.room(h)
+	y := heading(p.c, left, p.y, width, "Symbols")
+	for row := range rows {
+		base := y + t.CapHeight() + 0.6
+		for i := row; i < len(cells); i += rows {
+			x := left + float64(i/rows)*(w+gutter)
+			p.c.Text(x, base, draw.Symbol(choices[i].Head()), t)
+			p.c.Lines(x+symbolW, base, cells[i], t)
+		}
+		y += tallOf(row)
+	}
+	p.y = y + apart
+}
+
 // sequences are the make-ups as the trade writes them, with what the user typed.
-func (p *paper) sequences() (list []string) {
+func (p *paper) sequences() *grid {
+	g := &grid{height: 4.4, bare: true, cols: []col{{w: 0, t: strongType}, {w: width, t: textType}}}
 	var done []*glazing.Makeup
 	for i := range p.r.Ratings {
 		m := p.r.Ratings[i].Makeup
@@ -128,61 +173,20 @@ func (p *paper) sequences() (list []string) {
 			continue
 		}
 		done = append(done, m)
-		s := m.ID + ": " + strings.ReplaceAll(m.BuildUp(), "\u00a0", " ")
+		s := strings.ReplaceAll(m.BuildUp(), "\u00a0", " ")
+		if !m.Tilt.Vertical() {
+			s += ", tilt " + millimetres(m.Tilt.Degrees()) + "°"
+		}
+		var typed []string
 		for _, t := range m.Typed {
-			s += "; typed by the user: " + t.Name + ": " + t.Text
+			typed = append(typed, oneLine(t.Name+": "+t.Text))
 		}
-		list = append(list, s)
-	}
-	return list
-}
-
-// cautions sets those of a make-up, in all its tints.
-func (p *paper) cautions(ratings []*glazing.Rating) {
-	part := p.r
-	part.Ratings = nil
-	for _, r := range ratings {
-		part.Ratings = append(part.Ratings, *r)
-	}
-	p.listed("Cautions", part.CautionsOnce())
-}
-
-// listed sets short paragraphs in two columns.
-func (p *paper) listed(title string, list []string) {
-	const gap = 6.0
-	w := (width - gap) / 2
-	t := draw.Type{Size: 6.3}
-	var paragraphs [][]string
-	total := 0
-	for _, s := range list {
-		lines := draw.Wrap(s, w-2.5, t)
-		paragraphs = append(paragraphs, lines)
-		total += len(lines)
-	}
-	if total == 0 {
-		return
-	}
-	p.room(16)
-	y := heading(p.c, left, p.y, width, title) - 0.6
-	for len(paragraphs) > 0 {
-		perColumn := int((bottom - y) / t.Leading())
-		each := min((total+1)/2+1, perColumn) // both columns alike, if they fit
-		lowest := y
-		for column := 0; column < 2 && len(paragraphs) > 0; column++ {
-			x, line := left+float64(column)*(w+gap), 0
-			for len(paragraphs) > 0 && (line == 0 || line+len(paragraphs[0]) <= each || column == 1 && line+len(paragraphs[0]) <= perColumn) {
-				p.c.Text(x, y+float64(line)*t.Leading(), "·", t)
-				p.c.Lines(x+2.5, y+float64(line)*t.Leading(), paragraphs[0], t)
-				line += len(paragraphs[0])
-				total -= len(paragraphs[0])
-				paragraphs = paragraphs[1:]
-			}
-			lowest = max(lowest, y+float64(line)*t.Leading())
+		if typed != nil {
+			s += "\ntyped by the user: " + strings.Join(typed, "; ")
 		}
-		p.y = lowest + 1.5
-		if len(paragraphs) > 0 {
-			p.next()
-			y = p.y
-		}
+		g.rows = append(g.rows, []string{m.ID, s})
+		g.cols[0].w = min(40, max(g.cols[0].w, draw.Width(m.ID, strongType)+gridGap+1))
 	}
+	g.cols[1].w = width - g.cols[0].w
+	return g
 }

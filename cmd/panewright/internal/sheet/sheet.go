@@ -6,39 +6,47 @@ package sheet
 import (
 	"fmt"
 	"slices"
-	"strings"
 
 	"panewright/cmd/panewright/internal/draw"
 	"panewright/cmd/panewright/internal/table"
 	"panewright/glazing"
 )
 
-// A4, and the margins of a page, in mm.
+// A4, and the margins of a page, in mm. A page has two columns: equal ones, or a narrow one of
+// drawings and a wide one of tables.
 const (
 	pageW, pageH = 210.0, 297.0
 	left, right  = 17.0, 193.0
 	top          = 15.0
-	bottom       = 267.0 // below stand the names of who signs, and the foot
+	bottom       = 269.0 // below stand the names of who signs, and the foot
 	width        = right - left
+	gutter       = 6.0
+	half         = (width - gutter) / 2
+	drawn        = 76.0
+	written      = width - gutter - drawn
 )
 
 // The type of pages.
 var (
-	titleType   = draw.Type{Face: draw.Semibold, Size: 19}
-	headType    = draw.Type{Face: draw.Semibold, Size: 8.6}
-	nameType    = draw.Type{Face: draw.Regular, Size: 11}
-	textType    = draw.Type{Face: draw.Regular, Size: 7.6}
-	strongType  = draw.Type{Face: draw.Semibold, Size: 7.6}
-	smallType   = draw.Type{Face: draw.Regular, Size: 6.5}
-	softType    = draw.Type{Face: draw.Regular, Size: 6.5, Colour: draw.Soft}
-	numberType  = draw.Type{Face: draw.Semibold, Size: 17}
-	symbolType  = draw.Type{Face: draw.Regular, Size: 7.6, Markup: true}
-	hair        = draw.Stroke{Colour: draw.Hair, Width: 0.2}
-	rule        = draw.Stroke{Colour: draw.Ink, Width: 0.35}
-	accentRule  = draw.Stroke{Colour: draw.Accent, Width: 0.9}
-	notRating   = "Calculated figures, not a certified rating."
-	patchesNote = "Patches are sRGB of the computed colour under daylight D65, 2° observer: indicative only."
+	titleType  = draw.Type{Face: draw.Semibold, Size: 19}
+	kindType   = draw.Type{Face: draw.Semibold, Size: 15}
+	nameType   = draw.Type{Size: 11}
+	headType   = draw.Type{Face: draw.Semibold, Size: 8.6}
+	numberType = draw.Type{Face: draw.Semibold, Size: 17}
+	textType   = draw.Type{Size: 7.6}
+	strongType = draw.Type{Face: draw.Semibold, Size: 7.6}
+	symbolType = draw.Type{Size: 7.6, Markup: true}
+	smallType  = draw.Type{Size: 6.8}
+	listType   = draw.Type{Size: 6.8}
+	softType   = draw.Type{Size: 6.5, Colour: draw.Soft}
+	remarkType = draw.Type{Size: 6.5, Colour: draw.Soft}
+	noteType   = draw.Type{Size: 6.2, Colour: draw.Soft}
+	hair       = draw.Stroke{Colour: draw.Hair, Width: 0.2}
+	faint      = draw.Stroke{Colour: draw.Faint, Width: 0.2}
+	rule       = draw.Stroke{Colour: draw.Ink, Width: 0.35}
 )
+
+const notRating = "Calculated figures, not a certified rating."
 
 // paper gathers the pages of a document.
 type paper struct {
@@ -46,28 +54,12 @@ type paper struct {
 	pages []*draw.Canvas
 	c     *draw.Canvas // the page that is being set
 	y     float64      // where the next block begins
-	// single says that the document has one make-up and no schedule.
-	single bool
-	long   string // a title that was too long for the head
+	fresh float64      // where the first block of the page began
 	// head sets the head of a page that goes on from the one before, and returns where it ends.
 	head func() float64
-}
 
-// next begins a page.
-func (p *paper) next() {
-	p.c = draw.New(pageW, pageH)
-	p.pages = append(p.pages, p.c)
-	p.y = top
-	if p.head != nil {
-		p.y = p.head()
-	}
-}
-
-// room makes sure that a block of a height finds place, on another page if need be.
-func (p *paper) room(h float64) {
-	if p.y+h > bottom && p.y > top+30 {
-		p.next()
-	}
+	cut  []fact          // what was too long for its place and is to stand in full
+	full map[string]bool // texts that stand in full
 }
 
 // foot sets the foot of every page, once all are there.
@@ -84,15 +76,14 @@ func (p *paper) foot(digest string) {
 	}
 }
 
-// about are the lines of what the user says of the project.
-func (p *paper) about() string {
-	var parts []string
-	for _, x := range []struct{ name, text string }{{"client", p.r.Project.Client}, {"author", p.r.Project.Author}, {"date", p.r.Project.Date}} {
-		if x.text != "" {
-			parts = append(parts, x.name+" "+x.text)
-		}
+// sign leaves space for names below the last page of a part.
+func (p *paper) sign() {
+	const y, w = bottom + 7, (width - 2*gutter) / 3
+	for i, s := range []string{"prepared by", "checked by", "date"} {
+		x := left + float64(i)*(w+gutter)
+		p.c.Line(x, y, x+w, y, faint)
+		p.c.Text(x, y+2.8, s, softType)
 	}
-	return strings.Join(parts, " · ")
 }
 
 // A File is one PDF: its make-up, or "" for all of them, and the letters that no font has and that
@@ -106,49 +97,67 @@ type File struct {
 // Project returns one PDF with the schedule, the limits if there are any, and a sheet for every
 // make-up and basis.
 func Project(r table.Report, limits *table.Check) (File, error) {
-	p := &paper{r: r}
+	p := projectPages(r, limits)
+	attached := []draw.Attachment{figuresFile(r)}
+	if limits != nil {
+		attached = append(attached, draw.Attachment{Name: "limits.json", Description: "How the figures stand to the entered limits", Content: table.CheckJSON(*limits)})
+	}
+	return p.write("", r.Project.Title+": data sheets", attached...)
+}
+
+func projectPages(r table.Report, limits *table.Check) *paper {
+	p := &paper{r: r, full: map[string]bool{}}
 	p.schedule()
 	if limits != nil {
 		p.limits(*limits)
 	}
 	for _, group := range groups(r) {
-		p.makeup(group)
+		p.makeup(group, false)
 	}
-	return p.file("", r.Project.Title+": data sheets")
+	p.foot(r.Project.Digest)
+	return p
 }
 
 // Makeups returns a PDF for each make-up.
 func Makeups(r table.Report) ([]File, error) {
 	var files []File
-	var order []*glazing.Makeup
-	of := map[*glazing.Makeup][][]*glazing.Rating{}
-	for _, group := range groups(r) {
-		m := group[0].Makeup
-		if of[m] == nil {
-			order = append(order, m)
-		}
-		of[m] = append(of[m], group)
-	}
-	for _, m := range order {
-		part := r
-		part.Ratings, part.Spectra = nil, nil
-		p := &paper{single: true}
-		for _, group := range of[m] {
-			for _, rating := range group {
-				part.Ratings = append(part.Ratings, *rating)
-			}
-		}
-		p.r = part
-		for _, group := range of[m] {
-			p.makeup(group)
-		}
-		f, err := p.file(m.ID, m.ID+": data sheet")
+	for _, part := range byMakeup(r) {
+		m := part.Ratings[0].Makeup
+		f, err := makeupPages(part).write(m.ID, m.ID+": data sheet", figuresFile(part))
 		if err != nil {
 			return nil, err
 		}
 		files = append(files, f)
 	}
 	return files, nil
+}
+
+// makeupPages sets the pages of a report that has one make-up.
+func makeupPages(r table.Report) *paper {
+	p := &paper{r: r, full: map[string]bool{}}
+	list := groups(r)
+	for i, group := range list {
+		p.makeup(group, i == len(list)-1)
+	}
+	p.foot(r.Project.Digest)
+	return p
+}
+
+// byMakeup returns a report for each make-up.
+func byMakeup(r table.Report) (list []table.Report) {
+	at := map[*glazing.Makeup]int{}
+	for _, rating := range r.Ratings {
+		k, ok := at[rating.Makeup]
+		if !ok {
+			k = len(list)
+			at[rating.Makeup] = k
+			part := r
+			part.Ratings, part.Spectra = nil, nil
+			list = append(list, part)
+		}
+		list[k].Ratings = append(list[k].Ratings, rating)
+	}
+	return list
 }
 
 // groups returns the ratings of each make-up under each basis.
@@ -164,14 +173,15 @@ func groups(r table.Report) (list [][]*glazing.Rating) {
 	return list
 }
 
-// file writes the pages, with the figures in JSON.
-func (p *paper) file(makeup, title string) (File, error) {
-	p.foot(p.r.Project.Digest)
-	return p.write(makeup, title, table.JSON(p.r), "figures.json")
+// attachedName is the file in a document that has its figures with all their digits.
+const attachedName = "figures.json"
+
+func figuresFile(r table.Report) draw.Attachment {
+	return draw.Attachment{Name: attachedName, Description: "The figures of this document with all their digits", Content: table.JSON(r)}
 }
 
-// write writes the pages with an attachment.
-func (p *paper) write(makeup, title string, attached []byte, name string) (File, error) {
+// write writes the pages with attachments.
+func (p *paper) write(makeup, title string, attached ...draw.Attachment) (File, error) {
 	f := File{Makeup: makeup}
 	for _, c := range p.pages {
 		for _, r := range c.Replaced() {
@@ -182,8 +192,7 @@ func (p *paper) write(makeup, title string, attached []byte, name string) (File,
 	var err error
 	f.PDF, err = draw.PDF(draw.Document{
 		Title: title, Author: p.r.Project.Author, Subject: notRating, Keywords: "glazing, calculated figures", Producer: "Panewright " + p.r.Version,
-		Pages:       p.pages,
-		Attachments: []draw.Attachment{{Name: name, Description: "The figures of this document with all their digits", Content: attached}},
+		Pages: p.pages, Attachments: attached,
 	})
 	return f, err
 }

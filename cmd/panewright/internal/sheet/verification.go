@@ -3,59 +3,87 @@ package sheet
 // The published checks on paper.
 
 import (
+	"strings"
+
 	"panewright/cmd/panewright/internal/draw"
 	"panewright/cmd/panewright/internal/table"
 	"panewright/glazing/project"
+	"panewright/glazing/proof"
 )
 
 // Verification returns a PDF of the published checks as they came out on this machine.
 func Verification(v table.Verification) (File, error) {
-	p := &paper{r: table.Report{Version: v.Version, Project: &project.Project{}}}
+	checks := draw.Attachment{Name: "checks.json", Description: "The checks of this document with their inputs and all their digits", Content: table.VerifyJSON(v)}
+	return verificationPages(v).write("", v.Said()[0], checks)
+}
+
+func verificationPages(v table.Verification) *paper {
+	p := &paper{r: table.Report{Version: v.Version, Project: &project.Project{}}, full: map[string]bool{}}
 	said := v.Said()
-	p.begin("Verification", said[0])
-	for _, s := range append(said[1:], v.Machine()) {
+	p.begin("Verification", said[0], fact{"machine", v.Machine()})
+	for _, s := range said[1:] {
 		p.y = paragraph(p.c, left, p.y, width, s, textType) + 1
 	}
-	p.y += 2
+	p.y += 2.5
 	counts := v.Summary()
-	g := &grid{height: 4.3, cols: []col{{w: 60, t: textType, head: counts[0][0]}}}
+	g := &grid{height: 4.4, strong: map[int]bool{len(counts) - 2: true}, cols: []col{{w: width - 4*20, t: textType, head: counts[0][0]}}}
 	for _, head := range counts[0][1:] {
-		g.cols = append(g.cols, col{w: 22, align: draw.Right, t: textType, head: head})
+		g.cols = append(g.cols, col{w: 20, align: draw.Right, t: textType, head: head})
 	}
 	g.rows = counts[1:]
-	p.flow(g)
-	p.y += 5
+	p.table("Summary", g)
 	for _, group := range v.Groups {
-		p.room(30)
-		p.y = heading(p.c, left, p.y, width, group.Title) - 3
-		g := &grid{height: 3.5, strong: map[int]bool{}}
-		widths := []float64{30, 64, 17, 17, 17, 15, 16}
-		for k, head := range table.VerifyHeads() {
-			x := col{w: widths[k], t: smallType, head: head}
-			if k > 1 && k < 6 {
-				x.align = draw.Right
-			}
-			g.cols = append(g.cols, x)
-		}
-		for _, o := range group.Outcomes {
-			if o.Result != "met" {
-				g.strong[len(g.rows)] = true
-			}
-			g.rows = append(g.rows, table.VerifyCells(o))
-		}
-		p.flow(g)
-		p.y += 3.5
-		for _, s := range table.VerifyNotes(group) {
-			for _, line := range draw.Wrap(s, width, softType) {
-				if p.y > bottom {
-					p.next()
-				}
-				p.c.Text(left, p.y, line, softType)
-				p.y += softType.Leading()
-			}
-		}
-		p.y += 4
+		p.table(group.Title, outcomesTable(group))
+		p.columns(list{title: "On these checks", items: table.VerifyNotes(group)})
 	}
 	p.foot("")
-	return p.write("", said[0], table.VerifyJSON(v), "checks.json")
+	return p
+}
+
+// outcomesTable has a row a check; above those of a make-up stands what it is made of.
+func outcomesTable(group proof.Group) *grid {
+	g := &grid{height: 3.7, strong: map[int]bool{}, titles: map[int]bool{}, types: map[[2]int]draw.Type{}}
+	// id, what, computed, published, deviation, tolerance, result
+	widths := []float64{31, 75, 17, 16, 14, 13, 10}
+	for k, head := range table.VerifyHeads() {
+		x := col{w: widths[k], t: smallType, head: head}
+		if k > 1 && k < 6 {
+			x.align = draw.Right
+		}
+		g.cols = append(g.cols, x)
+	}
+	notes := table.VerifyNotes(group)
+	unitSaid := len(notes) > 0 && strings.HasPrefix(notes[0], "Unit: ")
+	markup := smallType
+	markup.Markup = true
+	subject := ""
+	for _, o := range group.Outcomes {
+		lead := ""
+		if subject != o.Subject {
+			subject = o.Subject
+			lead = strings.TrimSpace(subject + "  " + o.Inputs["makeup"])
+			g.strong[len(g.rows)], g.titles[len(g.rows)] = true, true
+			g.rows = append(g.rows, []string{"", lead, "", "", "", "", ""})
+		}
+		if o.Subject != "" { // figures of a make-up are named by their symbols
+			symbol, basis, of := strings.Cut(o.What, ", ")
+			if o.What = draw.Symbol(symbol); of {
+				o.What += ", " + draw.Escape(basis)
+			}
+			g.types[[2]int{len(g.rows), 1}] = markup
+		}
+		o.Subject = ""
+		if unitSaid {
+			o.Unit = "1"
+		}
+		if o.Result != proof.Met {
+			g.strong[len(g.rows)] = true
+		}
+		cells := table.VerifyCells(o)
+		for k := range cells {
+			cells[k] = oneLine(cells[k])
+		}
+		g.rows = append(g.rows, cells)
+	}
+	return g
 }

@@ -123,6 +123,15 @@ func (r Report) everything() []Choice {
 	return list
 }
 
+// inSheets returns the columns of CSV and of a sheet: everything but the numbers of places, which
+// the heads have, unless they were chosen.
+func (r Report) inSheets() []Choice {
+	if r.Choices != nil {
+		return r.Choices
+	}
+	return slices.DeleteFunc(r.everything(), func(c Choice) bool { return c.Numbering })
+}
+
 // Columns returns what the schedule shows: the chosen figures, or those that have a column, in
 // their places.
 func (r Report) Columns() []Choice {
@@ -140,28 +149,36 @@ func (r Report) Columns() []Choice {
 }
 
 // Choose sets the figures that the report shows, in order, from names that somebody typed. A
-// figure of panes, gaps or surfaces without a number stands for all of them.
+// figure of panes, gaps or surfaces without a number stands for all of them. All names that no
+// figure has are named in one error.
 func (r *Report) Choose(names []string) error {
 	list := r.figures()
 	r.Choices = []Choice{}
-	for _, name := range names {
-		if name = strings.TrimSpace(name); name == "" {
+	var unknown, absent []string
+	for i := 0; i < len(names); i++ {
+		name := strings.TrimSpace(names[i])
+		if name == "" {
 			return errors.New("a name is empty; write light,g,u")
 		}
-		at := slices.IndexFunc(list, func(f glazing.Figure) bool { return f.Named(name) })
-		if at < 0 {
-			at = slices.IndexFunc(r.Figures, func(f glazing.Figure) bool { return f.Named(name) }) // in SI
+		at, place := r.named(name)
+		if i+1 < len(names) { // a symbol may have a comma, as τdf,700
+			if a, p := r.named(name + "," + strings.TrimSpace(names[i+1])); a >= 0 {
+				at, place = a, p
+				i++
+			}
 		}
 		if at < 0 {
-			return fmt.Errorf("unknown figure %q; %s", spectra.Clip(name, 60), offerFigure(name, list))
+			unknown = add(unknown, fmt.Sprintf("%q", spectra.Clip(name, longestName))+offerFigure(name, list))
+			continue
 		}
 		f := list[at]
 		first, end := 0, r.most(f)
-		if n := placeIn(name); n > 0 && f.Per != glazing.PerMakeup {
-			first, end = n-1, min(n, end)
+		if place > 0 {
+			first, end = place-1, min(place, end)
 		}
 		if first >= end && len(r.Ratings) > 0 {
-			return fmt.Errorf("%s: no make-up that was selected has %s %d", name, placeNames[f.Per], first+1)
+			absent = add(absent, fmt.Sprintf("%s: no make-up that was selected has %s %d", spectra.Clip(name, longestName), placeNames[f.Per], first+1))
+			continue
 		}
 		for k := first; k < end; k++ {
 			same := func(c Choice) bool { return c.Key == f.Key && c.Index == k }
@@ -170,31 +187,78 @@ func (r *Report) Choose(names []string) error {
 			}
 		}
 	}
+	if unknown != nil {
+		what := "figure "
+		if len(unknown) > 1 {
+			what = "figures "
+		}
+		if more := len(unknown) - unknownNamed; more > 0 {
+			unknown = append(unknown[:unknownNamed], fmt.Sprintf("and %d more", more))
+		}
+		absent = append(absent, "unknown "+what+strings.Join(unknown, ", ")+"; see panewright help figures")
+	}
+	if absent != nil {
+		return errors.New(strings.Join(absent, "; "))
+	}
 	return nil
 }
 
-// placeIn returns the number that stands in a key, or 0.
-func placeIn(name string) int {
-	for part := range strings.SplitSeq(name, ".") {
-		if n, err := strconv.Atoi(part); err == nil {
-			return n
+// What an error shows of names that are not known.
+const (
+	longestName  = 60
+	unknownNamed = 8
+	mostOffers   = 3
+)
+
+// named returns the figure of a name, in the units of the page or in SI, and the number of the
+// place in it, 0 for all; -1 if there is none.
+func (r Report) named(name string) (at, place int) {
+	for _, list := range [][]glazing.Figure{r.figures(), r.Figures} {
+		for i, f := range list {
+			if place, ok := f.Place(name); ok {
+				return i, place
+			}
 		}
 	}
-	return 0
+	return -1, 0
 }
 
-// offerFigure offers the names nearest to one that is not known, else the short ones.
+// tradeWords are words that people use for figures, in lower case, and the short names of these.
+var tradeWords = map[string]string{
+	"lt": "light", "vlt": "light", "tv": "light", "tvis": "light",
+	"lr": "light_outside", "vlr": "light_outside", "rv": "light_outside",
+	"st": "solar", "te": "solar", "tsol": "solar", "sr": "solar_outside", "re": "solar_outside",
+	"shgc": "g", "g-value": "g", "gvalue": "g", "sf": "g",
+	"sc": "shading", "lsg": "light_to_solar", "selectivity": "light_to_solar",
+	"u-value": "u", "uvalue": "u", "uval": "u", "u_value": "u", "u-factor": "u", "ug": "u",
+	"cri": "ra", "tuv": "uv", "weight": "mass", "alpha": "absorptance", "epsilon": "emissivity",
+}
+
+// offerFigure offers what is meant by a name that is not known: the figure of a trade word, else at
+// most three of the nearest names.
 func offerFigure(name string, list []glazing.Figure) string {
-	place := strconv.Itoa(max(1, placeIn(name)))
-	var keys []string
-	for _, f := range list {
-		keys = append(keys, strings.ReplaceAll(f.Key, "#", place))
+	near := []string{tradeWords[strings.ToLower(name)]}
+	switch {
+	case near[0] != "":
+	case len([]rune(name)) == 1: // each figure of one letter is as near
+		near = nil
+	default:
+		place := 1
+		for part := range strings.SplitSeq(name, ".") {
+			if n, err := strconv.Atoi(part); err == nil {
+				place = max(1, n)
+			}
+		}
+		names := FigureNames(list)
+		for _, f := range list {
+			names = add(add(names, f.KeyAt(place)), f.Symbol+f.Mark)
+		}
+		near = project.Nearest(name, names)
 	}
-	short := FigureNames(list)
-	if all := append(keys, short...); len(project.Nearest(name, all)) > 0 {
-		return project.Offer(name, all)
+	if len(near) == 0 {
+		return ""
 	}
-	return project.Offer(name, short)
+	return " (did you mean " + strings.Join(near[:min(mostOffers, len(near))], " or ") + "?)"
 }
 
 // FigureNames returns the short names of figures.

@@ -35,6 +35,11 @@ func TestChoose(t *testing.T) {
 		{"absorptance,solar.absorptance.2", "solar.absorptance.1 solar.absorptance.2 solar.absorptance.3", "αe1 αe2 αe3"},
 		{"surfaces.2.source", "surfaces.2.source", "source2"},
 		{"l_transmitted,l_outside,b_inside10", "colour.transmitted.l colour.reflected_outside.l colour.reflected_inside_10deg.b", "L*τ L*ρ b*ρ′,10"},
+		// symbols, as headings have them, also those that hold a comma
+		{"τv,Ug,ρv′", "light.transmittance u_w_m2k light.reflectance_inside", "τv Ug ρv′"},
+		{"αe2,ε3,Nu1", "solar.absorptance.2 surfaces.3.emissivity gaps.1.nusselt", "αe2 ε3 Nu1"},
+		{"αe", "solar.absorptance.1 solar.absorptance.2 solar.absorptance.3", "αe1 αe2 αe3"},
+		{"τdf,700,τdf,L*τ,10,g", "uv.damage_weighted_700 uv.damage_weighted colour.transmitted_10deg.l solar.g", "τdf,700 τdf L*τ,10 g"},
 	} {
 		if err := r.Choose(strings.Split(tt.names, ",")); err != nil {
 			t.Errorf("%s: %v", tt.names, err)
@@ -52,11 +57,21 @@ func TestChoose(t *testing.T) {
 		}
 	}
 	for _, tt := range []struct{ names, want string }{
-		{"lihgt", "did you mean light?"},
+		{"lihgt", `unknown figure "lihgt" (did you mean light?); see panewright help figures`},
 		{"light,surfaces.3.emisivity", "did you mean surfaces.3.emissivity?"},
+		{"shgc", "did you mean g?"},
+		{"U-value", "did you mean u?"},
+		{"lt", "did you mean light?"},
+		{"ρv'", "did you mean ρv or ρv′?"},
+		{"L*", "did you mean L*τ or L*ρ?"},
+		{"emiss", "did you mean emissivity_normal or emissivity or emissivity_hemispherical?"},
+		{"ε0", "unknown figure"},
+		{"ε9", "no make-up that was selected has surface 9"},
+		{"nothing,light,nowhere", `unknown figures "nothing", "nowhere"; see panewright help figures`},
+		{"aa-,bb-,cc-,dd-,ee-,ff-,gg-,hh-,ii-,jj-", `"hh-", and 2 more; see`},
 		{"", "a name is empty"},
 		{"light,,g", "a name is empty"},
-		{"xyzzy-and-more", "known are"},
+		{"xyzzy-and-more", `unknown figure "xyzzy-and-more"; see panewright help figures`},
 		{"surfaces.9.emissivity", "no make-up that was selected has surface 9"},
 		{"gaps.3.nusselt", "no make-up that was selected has gap 3"},
 		{"surfaces.0.emissivity", "unknown figure"},
@@ -90,6 +105,21 @@ func TestHeadings(t *testing.T) {
 	}
 	if err := r.Choose(FigureNames(r.Figures)); err != nil {
 		t.Error(err)
+	}
+}
+
+// A trade word stands for a figure that there is, and is none itself.
+func TestTradeWords(t *testing.T) {
+	for word, name := range tradeWords {
+		if _, _, ok := glazing.FigureNamed(name); !ok {
+			t.Errorf("%s is said to be %q, which is no figure", word, name)
+		}
+		if f, _, ok := glazing.FigureNamed(word); ok {
+			t.Errorf("%s names %s by itself", word, f.Key)
+		}
+		if word != strings.ToLower(word) {
+			t.Errorf("%s is not in lower case", word)
+		}
 	}
 }
 

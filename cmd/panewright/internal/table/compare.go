@@ -252,7 +252,7 @@ func CompareCSV(r Report, form CSVForm) ([]byte, error) {
 			return cell{}
 		}})
 	}
-	for _, c := range r.everything() {
+	for _, c := range r.inSheets() {
 		if c.Value != nil {
 			value("difference."+c.Path(), c.Unit, -1, func(x glazing.Comparison) glazing.Value { return x.Difference(c.Figure, c.Index) })
 		}
@@ -270,6 +270,7 @@ func CompareJSON(r Report) []byte {
 	top := newNode()
 	r.said(top)
 	top.set(quoted(r.Ratings[0].Method.Basis.Name), "basis")
+	top.set(quoted(r.Ratings[0].Method.Editions()), "editions")
 	r.option(top.at("reference"), 0)
 	options := top.at("options")
 	options.list = true

@@ -90,6 +90,7 @@ func TestCompareJSON(t *testing.T) {
 		Project   string
 		Digest    string `json:"input_sha256"`
 		Basis     string
+		Editions  string
 		Reference struct {
 			Makeup, Tint string
 			Figures      map[string]any
@@ -106,7 +107,7 @@ func TestCompareJSON(t *testing.T) {
 	if err := json.Unmarshal(CompareJSON(r), &doc); err != nil {
 		t.Fatal(err)
 	}
-	if doc.Version != "test" || doc.Project != r.Project.Title || doc.Digest != r.Project.Digest || doc.Basis != "en" || doc.Reference.Makeup != "D1" || len(doc.Options) != 5 {
+	if doc.Version != "test" || doc.Project != r.Project.Title || doc.Digest != r.Project.Digest || doc.Basis != "en" || doc.Editions != r.Ratings[0].Method.Editions() || doc.Reference.Makeup != "D1" || len(doc.Options) != 5 {
 		t.Fatalf("the head is %+v", doc)
 	}
 	var whole struct{ Ratings []any }

@@ -16,6 +16,8 @@ type CSVForm struct {
 	Separator    rune // between cells; 0 means a comma
 	DecimalComma bool
 	UnitsRow     bool // a second row has the units
+	// ByteOrderMark begins the file, for spreadsheets that take UTF-8 for something else without it.
+	ByteOrderMark bool
 }
 
 // A field is one column of CSV and of a sheet.
@@ -41,7 +43,7 @@ func (r Report) fields() []field {
 		of("basis", func(rating *glazing.Rating) string { return rating.Method.Basis.Name }),
 		{"tilt_deg", "°", func(i int) cell { return number(r.Ratings[i].Makeup.Tilt.Degrees(), -1) }},
 	}
-	for _, c := range r.everything() {
+	for _, c := range r.inSheets() {
 		list = append(list, field{c.Path(), c.Unit, func(i int) cell { return c.cell(&r.Ratings[i]) }})
 	}
 	for _, name := range r.typedNames() {
@@ -83,7 +85,7 @@ func (r Report) codes(i int) string {
 	return strings.Join(codes, " ")
 }
 
-// CSV returns the report as CSV in UTF-8: a row of keys, a row of units if asked for, then one row
+// CSV returns the report as CSV in UTF-8, after a byte-order mark if asked for: a row of keys, a row of units if asked for, then one row
 // a rating. Numbers have all their digits, as JSON has them; what is not known is an empty cell.
 // Lines end with a line feed. A text that a spreadsheet would take for a formula has an apostrophe
 // put before it.
@@ -94,6 +96,9 @@ func CSV(r Report, form CSVForm) ([]byte, error) {
 // write writes a row for each of n ratings.
 func (form CSVForm) write(fields []field, n int) ([]byte, error) {
 	var b bytes.Buffer
+	if form.ByteOrderMark {
+		b.WriteRune('\uFEFF')
+	}
 	w := csv.NewWriter(&b)
 	if form.Separator != 0 {
 		w.Comma = form.Separator

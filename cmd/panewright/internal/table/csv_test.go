@@ -42,7 +42,7 @@ func sheetEqualsJSON(t *testing.T, r Report, keys []string, rows []map[string]st
 	if len(rows) != len(doc.Ratings) {
 		t.Fatalf("%d rows, want %d", len(rows), len(doc.Ratings))
 	}
-	choices := r.everything()
+	choices := r.inSheets()
 	for _, c := range choices {
 		if !slices.Contains(keys, c.Path()) {
 			t.Errorf("no column %s", c.Path())
@@ -106,6 +106,13 @@ func TestCSVEqualsJSON(t *testing.T) {
 		if !strings.Contains(row["origins"], rating.Makeup.Panes[0].Pane.ID+": invented") {
 			t.Errorf("row %d: origins %q", i+1, row["origins"])
 		}
+	}
+	if slices.ContainsFunc(keys, func(k string) bool { return strings.HasSuffix(k, ".number") }) {
+		t.Error("the numbers of surfaces have columns")
+	}
+	marked, err := CSV(r, CSVForm{ByteOrderMark: true})
+	if err != nil || string(marked) != "\xEF\xBB\xBF"+string(out) { // U+FEFF in UTF-8 (Unicode 15, 23.8)
+		t.Errorf("with a byte-order mark: %.20q (%v)", marked, err)
 	}
 	if bytes.ContainsRune(out, '\r') || bytes.HasPrefix(out, []byte("\ufeff")) {
 		t.Error("CSV has a carriage return or a byte-order mark")

@@ -118,16 +118,8 @@ func allFigures(b *bytes.Buffer, figures []glazing.Figure, r *glazing.Rating) {
 			continue
 		}
 		for k := range f.Count(r) {
-			meaning := f.Meaning
-			switch f.Per {
-			case glazing.PerPane:
-				meaning += ", pane " + strconv.Itoa(k+1)
-			case glazing.PerGap:
-				meaning += ", gap " + strconv.Itoa(k+1)
-			case glazing.PerSurface:
-				meaning += ", surface " + strconv.Itoa(k+1)
-			}
-			line := "  " + text.Pad(f.Symbol, 8, ' ') + text.Pad(meaning, 54, ' ') + text.AlignRight.Apply(f.Print(r, k), 7) + " " + f.Unit
+			c := Choice{f, k}
+			line := "  " + text.Pad(c.Head(), 8, ' ') + text.Pad(c.About(), 54, ' ') + text.AlignRight.Apply(f.Print(r, k), 7) + " " + f.Unit
 			b.WriteString(strings.TrimRight(line, " ") + "\n")
 		}
 	}

@@ -46,6 +46,7 @@ func (r Report) rating(n *node, i int) {
 	n.set(quoted(rating.Makeup.ID), "makeup")
 	n.set(quoted(rating.Tint), "tint")
 	n.set(quoted(rating.Method.Basis.Name), "basis")
+	n.set(quoted(rating.Method.Editions()), "editions")
 	n.set(figure(rating.Makeup.Tilt.Degrees()), "tilt_deg")
 	if rating.Makeup.Title != "" {
 		n.set(quoted(rating.Makeup.Title), "title")

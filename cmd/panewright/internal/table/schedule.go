@@ -264,7 +264,11 @@ func legend(columns []Choice, ratings []glazing.Rating) []string {
 		first, last := columns[0], columns[n-1]
 		s := first.Head() + " " + first.About()
 		if n > 1 {
-			s = fmt.Sprintf("%s to %s %s, %ss %d to %d", first.Head(), last.Head(), first.Meaning, placeNames[first.Per], first.Index+1, last.Index+1)
+			heads, places := " to ", " to "
+			if n == 2 {
+				heads, places = ", ", " and "
+			}
+			s = fmt.Sprintf("%s%s%s %s, %ss %d%s%d", first.Head(), heads, last.Head(), first.Meaning, placeNames[first.Per], first.Index+1, places, last.Index+1)
 		}
 		if first.Unit != "" {
 			s += ", " + first.Unit

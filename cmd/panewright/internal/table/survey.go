@@ -26,6 +26,7 @@ type SpectrumPage struct {
 	Refused  []string
 	Cautions []glazing.Caution
 	Faces    []Face
+	Pane     *glazing.Pane // of the spectrum; nil where a rating refuses it
 }
 
 // A SpectrumFile is a file, what it was taken for, and all that was understood.
@@ -45,10 +46,11 @@ type Series struct {
 
 // The roles of a series.
 const (
-	RoleTau      = "tau"
-	RoleRhoFront = "rho_front"
-	RoleRhoBack  = "rho_back"
-	RoleInfrared = "infrared" // a reflectance of which rows from 5 µm on alone are used
+	RoleTau         = "tau"
+	RoleRhoFront    = "rho_front"
+	RoleRhoBack     = "rho_back"
+	RoleReflectance = "reflectance" // of a face that is not known
+	RoleInfrared    = "infrared"    // a reflectance of which rows from 5 µm on alone are used
 )
 
 // meanOf has the figures that are a weighted mean of one column of a pane alone: the role of the
@@ -56,6 +58,7 @@ const (
 var meanOf = [...]struct{ role, band, alias string }{
 	{RoleTau, "light", "light"}, {RoleRhoFront, "light", "light_outside"}, {RoleRhoBack, "light", "light_inside"},
 	{RoleTau, "solar", "solar"}, {RoleRhoFront, "solar", "solar_outside"}, {RoleRhoBack, "solar", "solar_inside"},
+	{RoleReflectance, "light", "light_outside"}, {RoleReflectance, "solar", "solar_outside"},
 	{RoleTau, "uv", "uv"}, {RoleTau, "damage", "damage"}, {RoleTau, "damage to 700 nm", "damage_700"}, {RoleTau, "skin", "skin"},
 }
 
@@ -113,7 +116,7 @@ func (p SpectrumPage) Bytes() []byte {
 		}
 	}
 	if len(p.Cautions) > 0 {
-		b.WriteString("\nA rating cautions\n")
+		b.WriteString("\nCautions that a rating would carry\n")
 		for _, c := range p.Cautions {
 			writeWrapped(&b, "- "+c.Text, "  ")
 		}
@@ -122,11 +125,8 @@ func (p SpectrumPage) Bytes() []byte {
 	return b.Bytes()
 }
 
-// brief prints a number as far as it is worth reading.
-func brief(v float64) string { return strconv.FormatFloat(v, 'g', 6, 64) }
-
 // between prints a range of wavelengths.
-func between(a, b float64) string { return brief(a) + " to " + brief(b) }
+func between(a, b float64) string { return spectra.Brief(a) + " to " + spectra.Brief(b) }
 
 // facts prints what the columns are like, beside each other.
 func (p SpectrumPage) facts(b *bytes.Buffer) {
@@ -140,10 +140,10 @@ func (p SpectrumPage) facts(b *bytes.Buffer) {
 				if s.Part.FromNM != from {
 					continue
 				}
-				if brief(s.Least) == brief(s.GreatestNM) {
-					return brief(s.Least)
+				if spectra.Brief(s.Least) == spectra.Brief(s.GreatestNM) {
+					return spectra.Brief(s.Least)
 				}
-				return fmt.Sprintf("%s (%s to %s)", brief(s.Usual), brief(s.Least), brief(s.GreatestNM))
+				return fmt.Sprintf("%s (%s to %s)", spectra.Brief(s.Usual), spectra.Brief(s.Least), spectra.Brief(s.GreatestNM))
 			}
 			return ""
 		}
@@ -151,7 +151,7 @@ func (p SpectrumPage) facts(b *bytes.Buffer) {
 	where := func(from float64) func(spectra.Facts) string {
 		return func(f spectra.Facts) string {
 			for _, s := range f.Steps {
-				if s.Part.FromNM == from && brief(s.Least) != brief(s.GreatestNM) {
+				if s.Part.FromNM == from && spectra.Brief(s.Least) != spectra.Brief(s.GreatestNM) {
 					return between(s.Greatest.FromNM, s.Greatest.ToNM)
 				}
 			}
@@ -161,7 +161,7 @@ func (p SpectrumPage) facts(b *bytes.Buffer) {
 	extreme := func(pick func(spectra.Facts) spectra.Extreme) func(spectra.Facts) string {
 		return func(f spectra.Facts) string {
 			if e := pick(f); e.NM > 0 {
-				return fmt.Sprintf("%.4f at %s", e.Value, brief(e.NM))
+				return fmt.Sprintf("%.4f at %s", e.Value, spectra.Brief(e.NM))
 			}
 			return ""
 		}
@@ -228,7 +228,7 @@ func (p SpectrumPage) facts(b *bytes.Buffer) {
 	b.WriteString("\nColumns\n")
 	fold(b, []column{newColumn("", names)}, columns)
 	b.WriteByte('\n')
-	writeWrapped(b, "Steps are the median (least to greatest), in nm. Noise is a standard deviation, estimated from how far points lie off the line between their neighbours; where steps are wide, the curve's own bends are counted in. – too few points.", "")
+	writeWrapped(b, "Steps are the median (least to greatest), in nm. Noise is a standard deviation, estimated from how far points lie off the line between their neighbours; where steps are wide, the curve's own bends are counted in. – fewer than "+strconv.Itoa(spectra.NoisePoints)+" points that have neighbours on both sides.", "")
 	p.gaps(b, all)
 }
 
@@ -243,7 +243,7 @@ func (p SpectrumPage) gaps(b *bytes.Buffer, all []spectra.Facts) {
 				break
 			}
 			if g.Marked {
-				writeWrapped(b, fmt.Sprintf("%s: values are marked as missing from %s nm", p.Series[i].Name, between(g.FromNM, g.ToNM)), "  ")
+				writeWrapped(b, fmt.Sprintf("%s: values are marked as missing between %s and %s nm", p.Series[i].Name, spectra.Brief(g.FromNM), spectra.Brief(g.ToNM)), "  ")
 			} else {
 				writeWrapped(b, fmt.Sprintf("%s: the step from %s nm is several times as wide as its neighbours: do values lack?", p.Series[i].Name, between(g.FromNM, g.ToNM)), "  ")
 			}
@@ -265,7 +265,7 @@ func (p SpectrumPage) energy(b *bytes.Buffer) {
 				continue
 			}
 			any = true
-			line := fmt.Sprintf("%s + %s is at most %.4f, at %s nm", t.Name, r.Name, e.Greatest.Value, brief(e.Greatest.NM))
+			line := fmt.Sprintf("%s + %s is at most %.4f, at %s nm", t.Name, r.Name, e.Greatest.Value, spectra.Brief(e.Greatest.NM))
 			if e.Beyond > 0 {
 				line += fmt.Sprintf("; at %d of %d wavelengths the pane would absorb less than nothing, by more than the %g that is let pass", e.Beyond, e.Points, spectra.Slack)
 			}
@@ -273,7 +273,7 @@ func (p SpectrumPage) energy(b *bytes.Buffer) {
 		}
 	}
 	if !any {
-		b.WriteString("No transmittance and reflectance to be added.\n")
+		b.WriteString("There is no transmittance with a reflectance to add it to.\n")
 	}
 }
 
@@ -292,6 +292,9 @@ func (p SpectrumPage) figures(b *bytes.Buffer, covers [][][]glazing.Coverage) {
 					continue
 				}
 				meaning := f.Meaning
+				if s.Role == RoleReflectance {
+					meaning = strings.TrimSuffix(meaning, ", outside")
+				}
 				if s.Name != s.Role {
 					meaning += " (" + s.Name + ")"
 				}
@@ -314,7 +317,11 @@ func (p SpectrumPage) figures(b *bytes.Buffer, covers [][][]glazing.Coverage) {
 	for i, basis := range bases {
 		columns = append(columns, newColumn(basis.Name, cells[i]))
 	}
-	b.WriteString("\nFigures of the pane alone, its front outside\n")
+	head := "Figures of the pane alone, its front outside"
+	if slices.ContainsFunc(p.Series, func(s Series) bool { return s.Role == RoleReflectance }) {
+		head = "Figures of each spectrum by itself"
+	}
+	b.WriteString("\n" + head + "\n")
 	fold(b, []column{newColumn("", symbols), newColumn("", meanings)}, columns)
 }
 
@@ -346,6 +353,8 @@ func verdict(c glazing.Coverage) string {
 	share := c.Below + c.Above + c.Within
 	var what []string
 	switch {
+	case c.Why != "" && share == 0:
+		return "null"
 	case c.Why != "":
 		what = []string{"null"}
 	case share == 0:
@@ -414,6 +423,7 @@ func (p SpectrumPage) coverage(b *bytes.Buffer, covers [][][]glazing.Coverage) {
 		writeWrapped(b, "of "+strings.Join(a.names, ", "), "  ")
 		fold(b, []column{newColumn("", bands[:len(bands)/len(bases)])}, columns)
 	}
+	remarks = p.heat(b, remarks)
 	b.WriteByte('\n')
 	writeWrapped(b, "The share of a band's weight that lies beyond an end or in a gap stands beside the word. Below 0.1 % an end is held or a gap interpolated. Beyond, each figure that the band gives is null, also of make-ups that have the pane.", "")
 	for i, r := range remarks {
@@ -427,6 +437,35 @@ func (p SpectrumPage) coverage(b *bytes.Buffer, covers [][][]glazing.Coverage) {
 		}
 		writeWrapped(b, "- "+strings.Join(r.names, ", ")+": "+r.text+of, "  ")
 	}
+}
+
+// heat prints what each basis would say of the emissivities of the pane and of what follows from them,
+// and returns the remarks with the reasons.
+func (p SpectrumPage) heat(b *bytes.Buffer, remarks []*remark) []*remark {
+	if p.Pane == nil {
+		return remarks
+	}
+	var names []string
+	var columns []column
+	for _, basis := range glazing.Bases() {
+		list, err := glazing.NewMethod(basis, glazing.Options{}).CoversHeat(p.Pane)
+		if err != nil {
+			return remarks // a pane that a rating takes is possible
+		}
+		var cells []string
+		names = nil
+		for _, c := range list {
+			names, cells = append(names, c.Band), append(cells, verdict(c))
+			if c.Why != "" {
+				remarks = noted(remarks, c.Why+".", c.Band, basis.Name)
+			}
+		}
+		columns = append(columns, newColumn(basis.Name, cells))
+	}
+	b.WriteByte('\n')
+	writeWrapped(b, "of the faces, and of the pane alone, its front outside or turned; a project may type emissivities instead", "  ")
+	fold(b, []column{newColumn("", names)}, columns)
+	return remarks
 }
 
 // remarksListed is how many remarks are printed.

@@ -23,6 +23,7 @@ func TestVerdict(t *testing.T) {
 		{glazing.Coverage{Below: 0.25, Why: "a reason"}, "null 25 %"},
 		{glazing.Coverage{Below: 1e-6}, "held <0.001 %"},
 		{glazing.Coverage{Above: 1, Why: "a reason"}, "null 100 %"},
+		{glazing.Coverage{Why: "a reason"}, "null"},
 	} {
 		if got := verdict(tt.c); got != tt.want {
 			t.Errorf("%+v: %q, want %q", tt.c, got, tt.want)
@@ -77,7 +78,9 @@ func TestSpectrumPage(t *testing.T) {
 		"of tau en iso na iso15099 light covered covered covered covered solar",
 		"of rho_front, spectrum 3 of a very long name indeed en iso na iso15099",
 		"tau: The spectrum of pane held begins at 302 nm; its first value was held to 300 nm for solar",
-		"A rating refuses this spectrum - a fault A rating cautions - a caution Panewright test",
+		"A rating refuses this spectrum - a fault Cautions that a rating would carry - a caution Panewright test",
+		"tau: values are marked as missing between",
+		"– fewer than 15 points that have neighbours",
 	} {
 		if !strings.Contains(text, want) {
 			t.Errorf("the page lacks %q\n%s", want, page)
@@ -87,6 +90,53 @@ func TestSpectrumPage(t *testing.T) {
 		if strings.Contains(text, not) {
 			t.Errorf("the page has %q", not)
 		}
+	}
+}
+
+// Of a pane that a rating takes, the page says what becomes of emissivity, U and g, with a rating's reasons.
+func TestSpectrumPageHeat(t *testing.T) {
+	tau, rho := spectra.Column{Curve: straight(300, 2500, 5, 0.5, 0.5)}, spectra.Column{Curve: straight(300, 2500, 5, 0.1, 0.1)}
+	p := SpectrumPage{Version: "test",
+		Series: []Series{{RoleTau, 'T', "p", RoleTau, tau}},
+		Pane: &glazing.Pane{ID: "p", Plies: []glazing.Ply{{ThicknessMM: 6, ConductivityWMK: 1, DensityKGM3: 2500}},
+			Tints: []glazing.Tint{{Spectrum: spectra.Measured{Tau: tau.Curve, RhoFront: rho.Curve, RhoBack: rho.Curve},
+				Front: glazing.NoEmissivity(), Back: glazing.GivenEmissivity(0.837)}}},
+	}
+	page := p.Bytes()
+	for line := range strings.SplitSeq(string(page), "\n") {
+		if n := width(line); n > Width {
+			t.Errorf("%d columns: %q", n, line)
+		}
+	}
+	text := words(page)
+	for _, want := range []string{
+		"en iso na iso15099 emissivity front null null null null emissivity back covered covered covered covered",
+		"U covered covered null null U turned null null null null g covered covered null null g turned null null null null",
+		"- emissivity front: no emissivity and no infrared rows were given. - U turned,",
+		"- U turned, g turned: the emissivity of surface 2 (pane p, front) is not known. [en, iso]",
+		"U, U turned, g, g turned: needs the detailed heat balance of ISO 15099, which this version does not have. [na, iso15099]",
+	} {
+		if !strings.Contains(text, want) {
+			t.Errorf("the page lacks %q\n%s", want, page)
+		}
+	}
+	if p.Pane = nil; strings.Contains(string(p.Bytes()), "emissivity") {
+		t.Error("a pane that is refused has emissivities")
+	}
+}
+
+// A reflectance of a face that is not known is not said to be that of the outside.
+func TestSpectrumPageReflectanceOfNoSide(t *testing.T) {
+	rho := spectra.Column{Curve: straight(300, 2500, 5, 0.1, 0.1)}
+	text := words(SpectrumPage{Version: "test", Series: []Series{{"#2 front", '2', "front", RoleReflectance, rho}, {"#3 back", '3', "back", RoleReflectance, rho}}}.Bytes())
+	for _, want := range []string{"Figures of each spectrum by itself", "ρv light reflectance (#2 front)", "ρv light reflectance (#3 back)", "ρe solar direct reflectance (#3 back)",
+		"There is no transmittance with a reflectance to add it to."} {
+		if !strings.Contains(text, want) {
+			t.Errorf("the page lacks %q\n%s", want, text)
+		}
+	}
+	if strings.Contains(text, "outside") {
+		t.Errorf("a side is named that is not known: %s", text)
 	}
 }
 

@@ -23,7 +23,7 @@ type Report struct {
 }
 
 // siRemains is printed where figures are in inch-pound units.
-const siRemains = "Figures are in inch-pound units. Coefficients that stand with editions, cautions and what was put in stay in SI."
+const siRemains = "Figures, and the widths of gaps in make-ups, are in inch-pound units. Coefficients, cautions and what differs in what was put in stay in SI."
 
 // bases returns the names of the bases in the order in which they occur.
 func (r Report) bases() []string {

@@ -114,6 +114,30 @@ func TestAddedFigureAppears(t *testing.T) {
 	}
 }
 
+// What the user says of the project stands in the JSON, and where nothing is said no key does.
+func TestSaidInJSON(t *testing.T) {
+	r := demoReport(t, glazing.EN)
+	p := *r.Project
+	r.Project = &p
+	for _, said := range []bool{true, false} {
+		p.Author, p.Date, p.Client, p.Notes = "", "", "", ""
+		if said {
+			p.Author, p.Date, p.Client, p.Notes = "an author", "2026-01-31", "a client", "notes"
+		}
+		for name, out := range map[string][]byte{"rate": JSON(r), "compare": CompareJSON(r)} {
+			var doc map[string]any
+			if err := json.Unmarshal(out, &doc); err != nil {
+				t.Fatal(err)
+			}
+			for key, want := range map[string]string{"author": p.Author, "date": p.Date, "client": p.Client, "notes": p.Notes} {
+				if got, ok := doc[key]; ok != said || said && got != want {
+					t.Errorf("%s: %s is %v, want %q", name, key, got, want)
+				}
+			}
+		}
+	}
+}
+
 // The keys of the JSON are a contract: these, in every rating, whatever is known.
 func TestKeysOfJSON(t *testing.T) {
 	r := demoReport(t, glazing.Bases()...)
@@ -130,7 +154,7 @@ func TestKeysOfJSON(t *testing.T) {
 		}
 	}
 	lab := func(name string) string { return "colour." + name + ".l colour." + name + ".a colour." + name + ".b " }
-	paths := strings.Fields(`makeup tint basis tilt_deg thickness_mm mass_kg_m2
+	paths := strings.Fields(`makeup tint basis editions tilt_deg thickness_mm mass_kg_m2
 		light.transmittance light.reflectance_outside light.reflectance_inside
 		solar.transmittance solar.reflectance_outside solar.reflectance_inside solar.absorptance solar.conductances_w_m2k
 		solar.secondary_heat_inward solar.g solar.shading_coefficient solar.light_to_solar_gain
@@ -139,6 +163,7 @@ func TestKeysOfJSON(t *testing.T) {
 		lab("transmitted_10deg") + lab("reflected_outside_10deg") + lab("reflected_inside_10deg") + `
 		spectra.wavelength_nm spectra.tau spectra.rho_outside spectra.rho_inside spectra.absorptance
 		surfaces gaps outside.coefficient_w_m2k inside.coefficient_w_m2k u_w_m2k balances cautions`)
+	var reports []any // seen so far
 	for _, x := range doc["ratings"].([]any) {
 		rating := x.(map[string]any)
 		for _, path := range paths {
@@ -152,6 +177,10 @@ func TestKeysOfJSON(t *testing.T) {
 				t.Errorf("%v: %s has %v, want %d", rating["makeup"], key, rating[key], want)
 			}
 		}
+		if i := len(reports); rating["editions"] != r.Ratings[i].Method.Editions() {
+			t.Errorf("the editions are %v", rating["editions"])
+		}
+		reports = append(reports, rating)
 		for i, s := range rating["surfaces"].([]any) {
 			for _, key := range []string{"number", "emissivity_normal", "emissivity", "emissivity_hemispherical", "source"} {
 				if _, ok := s.(map[string]any)[key]; !ok {

@@ -5,6 +5,8 @@ package table
 
 import (
 	"fmt"
+	"math"
+	"regexp"
 	"strconv"
 	"strings"
 	"unicode/utf16"
@@ -16,9 +18,6 @@ const (
 	aboutSheet   = "about"
 	spectraSheet = "spectra"
 )
-
-// written is the date in every spreadsheet: what was rated carries the user's own.
-const written = "2000-01-01T00:00:00Z"
 
 // XLSX returns the report as a spreadsheet: for each basis a sheet with the columns of CSV, keys in
 // the first row and units in the second; a sheet "about" with editions, build-ups, cautions and
@@ -42,8 +41,7 @@ func XLSX(r Report) ([]byte, error) {
 	}
 	b.note(b.DeleteSheet("Sheet1"))
 	b.SetActiveSheet(0)
-	b.note(b.SetDocProps(&excelize.DocProperties{Created: written, Modified: written,
-		Creator: "Panewright " + r.Version, LastModifiedBy: "Panewright " + r.Version, Title: plain(r.Project.Title)}))
+	b.properties(r)
 	if b.err != nil {
 		return nil, b.err
 	}
@@ -53,6 +51,20 @@ func XLSX(r Report) ([]byte, error) {
 	}
 	return out.Bytes(), nil
 }
+
+// properties sets those of the file. It bears no date: what was rated carries the user's own.
+func (b *book) properties(r Report) {
+	by := "Panewright " + r.Version
+	b.note(b.SetAppProps(&excelize.AppProperties{Application: by}))
+	b.note(b.SetDocProps(&excelize.DocProperties{Creator: by, LastModifiedBy: by, Title: plain(r.Project.Title)}))
+	const path = "docProps/core.xml"
+	if content, ok := b.Pkg.Load(path); ok {
+		b.Pkg.Store(path, dates.ReplaceAll(content.([]byte), nil))
+	}
+}
+
+// dates are those that the library puts into every file.
+var dates = regexp.MustCompile(`<dcterms:(created|modified)[^>]*>[^<]*</dcterms:(created|modified)>`)
 
 // book is a spreadsheet being written; it keeps the first error.
 type book struct {
@@ -136,6 +148,7 @@ const (
 func (b *book) basis(r Report, name string) {
 	b.sheet(name)
 	fields := r.fields()
+	var named, total float64 // widths in signs of the columns that every page repeats, and of all
 	for k, f := range fields {
 		if k == 0 {
 			f.unit = unitsOf
@@ -151,26 +164,29 @@ func (b *book) basis(r Report, name string) {
 				long = max(long, width(c.text))
 			}
 		}
-		b.widen(name, k+1, float64(min(max(leastWidth, long+2), mostWidth)))
+		signs := float64(min(max(leastWidth, long+2), mostWidth))
+		b.widen(name, k+1, signs)
+		if total += signs; k < nameColumns {
+			named = total
+		}
 	}
 	b.note(b.SetCellStyle(name, "A1", b.at(len(fields), headRows), b.head))
 	b.note(b.SetPanes(name, &excelize.Panes{Freeze: true, XSplit: nameColumns, YSplit: headRows,
 		TopLeftCell: b.at(nameColumns+1, headRows+1), ActivePane: "bottomRight"}))
 	b.note(b.SetDefinedName(&excelize.DefinedName{Name: "_xlnm.Print_Titles", Scope: name,
 		RefersTo: fmt.Sprintf("'%s'!$A:$C,'%s'!$1:$%d", name, name, headRows)})) // quoted, for ISO15099 is a cell too
-	b.printed(name, 0)
+	b.printed(name, int(math.Ceil((total-named)/(signsAPage-named))))
 }
 
-// printed sets how a sheet is printed: landscape, on so many pages side by side; 0 for as many as
-// it needs.
+// signsAPage are as many signs as a page of A4 is wide, at the smallest size that can be read; the
+// columns that every page repeats leave most of them.
+const signsAPage = 330
+
+// printed sets how a sheet is printed: on A4, landscape, on so many pages side by side.
 func (b *book) printed(sheet string, pages int) {
-	orientation, high, fit := "landscape", 0, pages > 0
-	layout := excelize.PageLayoutOptions{Orientation: &orientation}
-	if fit {
-		layout.FitToWidth, layout.FitToHeight = &pages, &high
-		b.note(b.SetSheetProps(sheet, &excelize.SheetPropsOptions{FitToPage: &fit}))
-	}
-	b.note(b.SetPageLayout(sheet, &layout))
+	paper, orientation, high, fit := 9, "landscape", 0, true // 9 is A4
+	b.note(b.SetSheetProps(sheet, &excelize.SheetPropsOptions{FitToPage: &fit}))
+	b.note(b.SetPageLayout(sheet, &excelize.PageLayoutOptions{Size: &paper, Orientation: &orientation, FitToWidth: &pages, FitToHeight: &high}))
 }
 
 // Widths on the sheet "about" in signs, heights in points.
@@ -218,7 +234,7 @@ func (b *book) about(r Report) {
 	for _, text := range r.CautionsOnce() {
 		line("caution", text)
 	}
-	for _, c := range r.everything() {
+	for _, c := range r.inSheets() {
 		text := strings.TrimSpace(c.Head() + ": " + c.About())
 		if c.Unit != "" {
 			text += ", " + c.Unit

@@ -152,8 +152,40 @@ func TestXLSXEqualsJSON(t *testing.T) {
 			t.Errorf("the sheet about lacks %q", want)
 		}
 	}
-	if p, err := f.GetDocProps(); err != nil || p.Created != written || p.Modified != written || p.Title != r.Project.Title {
+	if p, err := f.GetDocProps(); err != nil || p.Created != "" || p.Modified != "" || p.Title != r.Project.Title || p.Creator != "Panewright test" {
 		t.Errorf("document properties %+v, %v", p, err)
+	}
+	if p, err := f.GetAppProps(); err != nil || p.Application != "Panewright test" {
+		t.Errorf("properties of the application %+v, %v", p, err)
+	}
+}
+
+// Each sheet is printed on A4, landscape, fitted to few pages side by side: few figures to one.
+func TestXLSXPages(t *testing.T) {
+	r := withSpectra(demoReport(t, glazing.EN))
+	pages := func(r Report, sheet string) int {
+		t.Helper()
+		f := openXLSX(t, r)
+		p, err := f.GetPageLayout(sheet)
+		props, also := f.GetSheetProps(sheet)
+		if err != nil || also != nil || *p.Size != 9 || *p.Orientation != "landscape" || *p.FitToHeight != 0 || !*props.FitToPage { // 9 is A4 (ECMA-376, 18.3.1.63)
+			t.Errorf("%s: page %+v, %v, %v", sheet, p, err, also)
+		}
+		return *p.FitToWidth
+	}
+	for _, sheet := range []string{aboutSheet, spectraSheet} {
+		if n := pages(r, sheet); n != 1 {
+			t.Errorf("%s is %d pages wide", sheet, n)
+		}
+	}
+	if n := pages(r, "en"); n < 2 || n > 12 {
+		t.Errorf("all figures are %d pages wide", n)
+	}
+	if err := r.Choose([]string{"light", "g", "u"}); err != nil {
+		t.Fatal(err)
+	}
+	if n := pages(r, "en"); n > 2 {
+		t.Errorf("three figures are %d pages wide", n)
 	}
 }
 
