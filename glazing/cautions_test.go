@@ -21,8 +21,7 @@ func TestCautionCodesAreWhole(t *testing.T) {
 	}
 	constants := map[string]string{} // of text, by name
 	var later []string               // names of constants that are codes
-	var at func(x ast.Expr, where string)
-	at = func(x ast.Expr, where string) {
+	at := func(x ast.Expr, where string) {
 		switch x := x.(type) {
 		case *ast.BasicLit:
 			code, err := strconv.Unquote(x.Value)
