@@ -32,8 +32,9 @@ limits that it enters, and a data sheet for each make-up: the section to scale,
 figures, spectra, colours, cautions, and the figures in JSON attached. The same
 project gives the same file; a date is printed if the project has one.
 
-With --each, a file for each make-up, named by its id, without the schedule; the
-names of the files are printed.`,
+With --each, a file for each make-up, named by its id, or nearly so where some
+system could not store that, without the schedule and the limits; the names of
+the files are printed.`,
 		Example: `  panewright sheet panewright-demo/project.yaml -o sheets.pdf
   panewright sheet panewright-demo/project.yaml --makeup E1 -o e1.pdf
   panewright sheet panewright-demo/project.yaml --each sheets`,

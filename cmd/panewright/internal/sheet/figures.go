@@ -110,6 +110,9 @@ func (p *paper) figureTable(ratings []*glazing.Rating, first int, numbered bool,
 	if unsaid {
 		g.note += unknown + " is not known; a caution says why. "
 	}
+	if name := ratings[0].Method.Basis.Name; name != glazing.EN.Name && name != glazing.ISO.Name {
+		g.note += "Clauses say where a quantity is defined; its weights are those of the basis. "
+	}
 	g.note += "Rounded as the standards round; " + attachedName + " in this file has all digits."
 	return g
 }

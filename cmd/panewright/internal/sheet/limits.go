@@ -12,13 +12,11 @@ import (
 	"panewright/glazing/limits"
 )
 
-const marginNote = "Values are rounded as outputs round; the margin is the distance of the unrounded figure to the limit, above 0 where it is met."
-
 // limits sets the pages of limits.
 func (p *paper) limits(c table.Check) {
 	p.begin("Limits", "Figures against entered limits", fact{"project", p.r.Project.Title})
 	p.facts(p.saidBy())
-	for _, s := range append(slices.Clone(c.Notice()), marginNote) {
+	for _, s := range append(slices.Clone(c.Notice()), table.RoundedText) {
 		p.y = paragraph(p.c, left, p.y, width, s, smallType)
 	}
 	p.y += 2

@@ -107,7 +107,7 @@ func named(list []glazing.Figure, alias string) (glazing.Figure, bool) {
 // there is plenty; so is that of the frame of a plot.
 const (
 	glassTall, frameTall = 33.0, 36.0
-	less, most           = -5.0, 14.0
+	less, most           = -5.0, 11.0
 )
 
 // single sets the sheet of one tint, and returns the lists that found no place on it.
@@ -128,32 +128,40 @@ func (p *paper) single(r *glazing.Rating) (rest []list) {
 			draw.Plot(p.c, draw.Rect{X: left, Y: y - 1, W: drawn, H: plot}, curves)
 		}}, colours}
 	}
-	drawings := with(glassTall, frameTall)
+	drawings := with(glassTall+less, frameTall+less)
 	space := bottom - p.y
 	if max(tall(drawings), tall(tables)) > space {
-		// drawings of the make-up beside its list, those of the figures beside theirs
+		// the section stands beside the list of panes, the other drawings beside the figures
+		drawings = with(glassTall, frameTall)
 		p.beside(drawings[:1], tables[:1])
 		p.beside(drawings[1:], tables[1:])
 		return p.told(ratings)
 	}
-	low := tall(with(glassTall+less, frameTall+less))
-	var below []block // the drawings
+	// Each list stands in the column that ends higher, or in the other; from the first that has no
+	// place in either they follow below, across both.
+	ends := [2]float64{tall(drawings), tall(tables)}
+	var lists [2][]block
 	for _, l := range p.told(ratings) {
-		b, narrow := l.block(p, at, written), l.block(p, left, drawn)
-		switch {
-		case rest == nil && tall(tables) <= low && tall(append(tables, b)) <= space, rest == nil && low+apart+narrow.tall > space && tall(append(tables, b)) <= space:
-			tables = append(tables, b)
-		case rest == nil && low+apart+narrow.tall <= space:
-			below = append(below, narrow)
-			low += apart + narrow.tall
-		default:
+		blocks := [2]block{l.block(p, left, drawn), l.block(p, at, written)}
+		column := 0
+		if ends[1] <= ends[0] || ends[0]+apart+blocks[0].tall > space {
+			column = 1
+		}
+		if rest != nil || ends[column]+apart+blocks[column].tall > space {
 			rest = append(rest, l)
 			space -= apart + l.tall()
+			continue
 		}
+		ends[column] += apart + blocks[column].tall
+		lists[column] = append(lists[column], blocks[column])
 	}
-	more := (min(tall(tables), space) - tall(append(drawings, below...))) / 2
+	if max(ends[0], ends[1]) > space { // what follows goes over the page
+		space = bottom - p.y
+	}
+	// The drawings are as tall as the tables, within bounds.
+	more := (min(ends[1], space)-ends[0])/2 + less
 	more = min(max(more, less), most)
-	p.beside(append(with(glassTall+more, frameTall+more), below...), tables)
+	p.beside(append(with(glassTall+more, frameTall+more), lists[0]...), append(tables, lists[1]...))
 	return rest
 }
 

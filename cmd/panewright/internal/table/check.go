@@ -35,7 +35,7 @@ const (
 	limitsTitle  = "Limits, typed by the user"
 	reasonsTitle = "Too close to call, or not judged"
 	filesTitle   = "Files of limits"
-	roundedText  = "Values are rounded as outputs round; the margin is the distance of the unrounded figure to the limit, above 0 where it is met."
+	RoundedText  = "Values are rounded as outputs round; the margin is the distance of the unrounded figure to the limit, above 0 where it is met."
 )
 
 // used returns the limits that have results, in order.
@@ -302,7 +302,7 @@ func CheckText(c Check) []byte {
 	checkList(&b, "Figures against entered limits", c.counts())
 	writeGroups(&b, c.groups())
 	b.WriteByte('\n')
-	writeWrapped(&b, roundedText, "")
+	writeWrapped(&b, RoundedText, "")
 	b.WriteString("\n" + limitsTitle + "\n")
 	for k, l := range c.used() {
 		number := text.AlignRight.Apply(strconv.Itoa(k+1), 3) + " "
@@ -339,7 +339,7 @@ func CheckMarkdown(c Check) []byte {
 		fmt.Fprintf(&b, "\n## %s\n\n", escaped(called(g.makeup)))
 		markdownTable{head: checkHeads, names: 3, rows: g.rows}.print(&b)
 	}
-	fmt.Fprintf(&b, "\n%s\n\n## %s\n\n", escaped(roundedText), limitsTitle)
+	fmt.Fprintf(&b, "\n%s\n\n## %s\n\n", escaped(RoundedText), limitsTitle)
 	for k, l := range c.used() {
 		fmt.Fprintf(&b, "%d. %s\n", k+1, escaped(l.String()+"; "+l.Terms()+"; "+l.Origin()))
 	}

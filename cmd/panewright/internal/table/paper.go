@@ -29,7 +29,7 @@ func (c Check) Cells(x *limits.Result) []string {
 // Entered returns the limits in words, numbered as results name them.
 func (c Check) Entered() (lines []string) {
 	for k, l := range c.used() {
-		lines = append(lines, fmt.Sprintf("%d  %s; %s. %s.", k+1, l, l.Terms(), l.Origin()))
+		lines = append(lines, fmt.Sprintf("%d  %s; %s; %s.", k+1, l, l.Terms(), l.Origin()))
 	}
 	return lines
 }
