@@ -1,7 +1,6 @@
 package project
 
 import (
-	"errors"
 	"fmt"
 	"strings"
 	"testing"
@@ -149,36 +148,10 @@ func TestRefuses(t *testing.T) {
 	}
 }
 
-// checkOne wants one fault: at the marked place if there is a mark, of a key, with words.
+// checkOne wants one fault of the project file, as checkIn does.
 func checkOne(t *testing.T, faults Errors, at []position, key string, words []string) {
 	t.Helper()
-	if len(faults) != 1 {
-		t.Errorf("%d faults, want 1:\n%v", len(faults), faults)
-	}
-	if len(faults) == 0 {
-		return
-	}
-	p, ok := errors.AsType[*Problem](faults[0])
-	if !ok {
-		t.Fatalf("%T: %v", faults[0], faults[0])
-	}
-	if strings.ContainsFunc(p.Error(), unicode.IsControl) {
-		t.Errorf("%q would send control characters to a terminal", p.Error())
-	}
-	if p.Key != key {
-		t.Errorf("%v: of key %q, want %q", p, p.Key, key)
-	}
-	if len(at) > 0 && (p.Line != at[0].line || p.Column != at[0].column) {
-		t.Errorf("%v: want line %d, column %d", p, at[0].line, at[0].column)
-	}
-	if len(at) > 0 && !strings.HasPrefix(p.Error(), fmt.Sprintf("p.yaml:%d:%d: ", p.Line, p.Column)) {
-		t.Errorf("%q does not begin with its place", p.Error())
-	}
-	for _, w := range words {
-		if !strings.Contains(p.Text, w) {
-			t.Errorf("%v: lacks %q", p, w)
-		}
-	}
+	checkIn(t, faults, "p.yaml", at, key, words)
 }
 
 // A key that is made of control characters is reported without them.
