@@ -151,6 +151,8 @@ func clean(s string) string {
 // drawn returns the letter that stands for one that the font may not have.
 func (f *font) drawn(r rune) rune {
 	switch {
+	case r >= ' ' && r < 0x7f && f.asciiWidth[r] > 0: // without a search
+		return r
 	case f.glyph(r) != 0:
 		return r
 	case unicode.Is(unicode.Zs, r):
