@@ -199,6 +199,7 @@ var otherCodes = [][2]string{
 	{"limits_not_checked", "the project has limits, against which the page does not hold its figures"},
 	{"limit_basis", "check: a limit names no basis, and that of the project was taken"},
 	{"limit_scope", "check: a limit names no scope, and the centre of the glass was taken"},
+	{"limit_of_one", "check: a limit of a share of one has a bound of 1, the whole"},
 	{"limit_makeup_absent", "check: a file of limits names a make-up that the project does not have"},
 	{"no_limit", "check: no limit is for a make-up"},
 	{MixedBasis.Code, "figures under more than one basis stand on one page"},

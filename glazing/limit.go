@@ -157,3 +157,8 @@ func (f Figure) KeyAt(place int) string {
 // Limitable reports whether a limit can be set for the figure: it is a number that people have a
 // symbol for.
 func (f Figure) Limitable() bool { return f.Value != nil && f.Symbol != "" }
+
+// Share reports whether a figure is a share of one: a transmittance, a reflectance, g, an emissivity.
+func (f Figure) Share() bool {
+	return f.Small && f.Alias != "shading" || strings.HasPrefix(f.Key, "surfaces.#.emissivity")
+}

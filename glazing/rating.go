@@ -1,6 +1,8 @@
 package glazing
 
 import (
+	"slices"
+
 	"panewright/glazing/optics"
 	"panewright/spectra/colour"
 	"panewright/thermal"
@@ -207,22 +209,29 @@ func (r *Ready) rateHeat(dst *Rating, state int) error {
 }
 
 // InTint reports whether the rating is of a tint that somebody named: by its whole name, or by
-// that of each pane that switches and follows no other; clear and full are understood as
-// TintNamed does.
+// that of each pane whose tint is left open, or where none is, of each that is fixed. Clear and full
+// are understood as TintNamed does.
 func (r *Rating) InTint(name string) bool {
 	if name == r.Tint {
 		return true
 	}
-	any := false
+	is := func(k int) bool {
+		return r.Makeup.Panes[k].Pane.TintNamed(name) == r.Ready.States[r.State].Tints[k]
+	}
+	var open, fixed []int
 	for k, p := range r.Makeup.Panes {
-		if !p.Pane.Tintable() || p.Tint == SameTint {
-			continue
-		}
-		if any = true; p.Pane.TintNamed(name) != r.Ready.States[r.State].Tints[k] {
-			return false
+		switch {
+		case !p.Pane.Tintable() || p.Tint == SameTint:
+		case p.Tint == "":
+			open = append(open, k)
+		default:
+			fixed = append(fixed, k)
 		}
 	}
-	return any
+	if len(open) == 0 {
+		open = fixed
+	}
+	return len(open) > 0 && !slices.ContainsFunc(open, func(k int) bool { return !is(k) })
 }
 
 // rateOpenGaps writes what is known of gaps some of whose faces are of unknown emissivity, which

@@ -23,8 +23,8 @@ func newDemo(s streams) *cobra.Command {
 		Short:                 "Write the demo project into a folder and rate it",
 		Long: `Writes the invented demo project into DIR (panewright-demo when absent), reads
 it back like any project, rates it, prints the schedule and makes the data
-sheets, DIR/sheets.pdf. Files of the project that stand in DIR and differ are
-not overwritten.`,
+sheets anew, DIR/sheets.pdf. Files of the project that stand in DIR and differ
+are not overwritten.`,
 		Example: "  panewright demo\n  panewright demo mill",
 		RunE: func(_ *cobra.Command, args []string) error {
 			dir := "panewright-demo"
@@ -49,18 +49,20 @@ not overwritten.`,
 			if err != nil {
 				return &outputError{"the demo project", cause(err)}
 			}
-			fmt.Fprintf(s.err, "wrote %s; rate it again with: panewright rate %s\n", path, path)
+			fmt.Fprintf(s.err, "the demo project is %s; rate it again with: panewright rate %s\n", path, path)
 			r, err := rate(path, selection{})
 			if err != nil {
 				return err
 			}
-			schedule := table.Schedule(r)
+			if err := s.write("", table.Schedule(r)); err != nil {
+				return err
+			}
 			sheets := filepath.Join(dir, "sheets.pdf")
 			if err := s.sheets(sheets, r, path, selection{}); err != nil {
 				return err
 			}
 			fmt.Fprintf(s.err, "wrote %s, its data sheets; make them again with: panewright sheet %s -o sheets.pdf\n", sheets, path)
-			return s.write("", schedule)
+			return nil
 		},
 	}
 }

@@ -189,6 +189,10 @@ func assumed(l *glazing.Limit, bases []glazing.Basis) []glazing.Caution {
 		out = append(out, glazing.Caution{Code: "limit_basis",
 			Text: fmt.Sprintf("The limit %s (%s) names no basis; %s was taken, the only one of the project.", l, l.From, bases[0].Name)})
 	}
+	if l.Figure.Share() && (l.AtMost.Known && l.AtMost.Number == 1 || l.AtLeast.Known && l.AtLeast.Number == 1) {
+		out = append(out, glazing.Caution{Code: "limit_of_one",
+			Text: fmt.Sprintf("The limit %s (%s) has a bound of 1, the whole: was 1 %%, 0.01, meant?", l, l.From)})
+	}
 	if l.Scope == "" {
 		out = append(out, glazing.Caution{Code: "limit_scope",
 			Text: fmt.Sprintf("The limit %s (%s) names no scope; the centre of the glass was taken.", l, l.From)})
@@ -196,15 +200,30 @@ func assumed(l *glazing.Limit, bases []glazing.Basis) []glazing.Caution {
 	return out
 }
 
-// inTint returns the ratings of a tint that a limit names. A make-up that does not switch has one
-// state, which is clear and full at once.
+// inTint returns the ratings of a tint that a limit names: clear is the state of the highest light
+// transmittance and full that of the lowest, whatever their names; the one state of a make-up that
+// does not switch is both.
 func inTint(rated []*glazing.Rating, name string) (chosen []*glazing.Rating) {
+	if extreme := name == glazing.ClearTint || name == glazing.FullTint; extreme && lightKnown(rated) {
+		at := rated[0]
+		for _, r := range rated[1:] {
+			if d := r.Light.Transmittance.Number - at.Light.Transmittance.Number; name == glazing.ClearTint && d > 0 || name == glazing.FullTint && d < 0 {
+				at = r
+			}
+		}
+		return []*glazing.Rating{at}
+	}
 	for _, r := range rated {
 		if r.InTint(name) || !r.Makeup.Tintable() && (name == glazing.ClearTint || name == glazing.FullTint) {
 			chosen = append(chosen, r)
 		}
 	}
 	return chosen
+}
+
+// lightKnown reports whether the light transmittance of every rating is known.
+func lightKnown(rated []*glazing.Rating) bool {
+	return !slices.ContainsFunc(rated, func(r *glazing.Rating) bool { return !r.Light.Transmittance.Known })
 }
 
 // noTint says that a make-up has no tint of a name.
@@ -275,7 +294,12 @@ func (top Result) at(i int) Result {
 	return top
 }
 
-// MarginOf returns how far a number is within the bounds of a limit; below 0 where it is past one.
+// binary is what binary arithmetic may add to a figure that decimals would put on a bound, of the
+// figure.
+const binary = 1e-12
+
+// MarginOf returns how far a number is within the bounds of a limit; below 0 where it is past one,
+// and 0 where only binary arithmetic keeps it off a bound.
 func MarginOf(l *glazing.Limit, v float64) float64 {
 	m := math.Inf(1)
 	if l.AtMost.Known {
@@ -283,6 +307,9 @@ func MarginOf(l *glazing.Limit, v float64) float64 {
 	}
 	if l.AtLeast.Known {
 		m = min(m, v-l.AtLeast.Number)
+	}
+	if math.Abs(m) < binary*max(1, math.Abs(v)) {
+		return 0
 	}
 	return m
 }

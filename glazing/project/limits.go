@@ -162,8 +162,8 @@ func (r *reader) limit(s *limitSpec, known *ids) (glazing.Limit, bool) {
 			continue
 		}
 		*x.into = glazing.Value{Number: x.is.value, Known: true}
-		if isFraction(l.Figure) && x.is.value >= 1 {
-			r.fail(x.is.at, x.key, "%s is not below 1; %s is a fraction of one, not percent", short(x.is.value), l.Figure.Symbol)
+		if fault := boundFault(l.Figure, x.is.value); fault != "" {
+			r.fail(x.is.at, x.key, "%s %s", short(x.is.value), fault)
 		}
 	}
 	switch {
@@ -176,10 +176,23 @@ func (r *reader) limit(s *limitSpec, known *ids) (glazing.Limit, bool) {
 	return l, !s.Faulty && len(r.faults) == before
 }
 
-// isFraction reports whether a figure is a share of one, which a bound of 1 and above was not meant
-// for: every figure would meet it, or none.
-func isFraction(f glazing.Figure) bool {
-	return f.Small && f.Alias != "shading" || strings.HasPrefix(f.Key, "surfaces.#.emissivity")
+// ratioMost is far beyond any ratio of two figures.
+const ratioMost = 10
+
+// boundFault says why a bound was not meant for a figure: every figure would meet it, or none.
+func boundFault(f glazing.Figure, bound float64) string {
+	ratio := f.Alias == "shading" || f.Alias == "light_to_solar"
+	switch {
+	case f.Share() && bound > 1:
+		return "is above 1; " + f.Symbol + " is a fraction of one, not percent"
+	case ratio && bound > ratioMost:
+		return "is no ratio; " + f.Symbol + " is about 1, not percent"
+	case f.Alias == "ra" && bound > 0 && bound <= 1:
+		return "is no rendering index; it runs to 100"
+	case bound < 0 && !strings.HasPrefix(f.Key, "colour."):
+		return "is below 0, and " + f.Symbol + " never is"
+	}
+	return ""
 }
 
 // offerFigure offers the names nearest to one that is no figure, keys with the number that it has.

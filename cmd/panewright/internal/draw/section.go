@@ -363,7 +363,7 @@ func (s *section) say() {
 	}
 	parts = append(parts, "Glass in the colour of daylight it transmits (indicative), hatched closer where it transmits less.")
 	for k, look := range s.looks {
-		pane := fmt.Sprintf("The colour of pane %d–%d", 2*k+1, 2*k+2)
+		pane := fmt.Sprintf("The colour of pane %d", k+1)
 		if m.Panes[k].Pane.Tintable() {
 			pane += " in tint " + m.Panes[k].Pane.Tints[s.r.Ready.States[s.r.State].Tints[k]].Name
 		}

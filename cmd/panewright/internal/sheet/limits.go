@@ -16,7 +16,7 @@ import (
 func (p *paper) limits(c table.Check) {
 	p.begin("Limits", "Figures against entered limits", fact{"project", p.r.Project.Title})
 	p.facts(p.saidBy())
-	for _, s := range append(slices.Clone(c.Notice()), table.RoundedText) {
+	for _, s := range append(slices.Clone(c.Notice()), table.RoundedText, "Every tint of the make-ups is held, under the basis of each limit.") {
 		p.y = paragraph(p.c, left, p.y, width, s, smallType)
 	}
 	p.y += 2
@@ -44,7 +44,6 @@ func (p *paper) limits(c table.Check) {
 	p.columns(list{title: "Bases", items: bases})
 	p.key(figures)
 	p.inFull()
-	p.sign()
 }
 
 // limitsTable has a row a result. What does not meet its limit is in semibold, and has the accent.
@@ -76,13 +75,12 @@ func limitsTable(c table.Check) *grid {
 	}
 	verdict := strongType.In(draw.Accent)
 	var last *glazing.Makeup
-	for i := range c.Results {
+	for i, cells := range c.Rows() { // limit, figure, tint, value, entered, margin, result
 		x := &c.Results[i]
-		cells := c.Cells(x) // make-up, limit, figure, tint, value, entered, margin, result
 		for k := range cells {
-			cells[k] = strings.Replace(oneLine(cells[k]), "-", minusIn(k), 1)
+			cells[k] = strings.Replace(oneLine(cells[k]), "-", minusIn(k+1), 1)
 		}
-		row := []string{cells[0], cells[3], cells[1], draw.Symbol(cells[2]), cells[5], cells[4], cells[6], cells[7]}
+		row := []string{x.Makeup.ID, cells[2], cells[0], draw.Symbol(cells[1]), cells[4], cells[3], cells[5], cells[6]}
 		g.leads = append(g.leads, row[0])
 		if x.Makeup == last {
 			row[0] = ""

@@ -190,6 +190,9 @@ func (c Check) files() (lines []string) {
 // checkHeads are the headings of the columns of results.
 var checkHeads = []string{"limit", "figure", "tint", "value", "entered", "margin", "result"}
 
+// enteredCell is the place of the bounds among the cells of a result.
+const enteredCell = 4
+
 // cells returns those of a result, below checkHeads.
 func (c Check) cells(x *limits.Result, number int) []string {
 	return []string{strconv.Itoa(number), symbolOf(x), x.Tint, printedValue(x.Rounded, x.Places), bounds(x.Limit), printedMargin(x), string(x.Verdict)}
@@ -198,13 +201,18 @@ func (c Check) cells(x *limits.Result, number int) []string {
 // groups returns the rows of results by make-up.
 func (c Check) groups() (groups []checkGroup) {
 	used := c.used()
+	several := slices.ContainsFunc(c.Results, func(x limits.Result) bool { return x.Basis != c.Results[0].Basis })
 	for i := range c.Results {
 		x := &c.Results[i]
 		if n := len(groups); n == 0 || groups[n-1].makeup != x.Makeup {
 			groups = append(groups, checkGroup{makeup: x.Makeup})
 		}
 		g := &groups[len(groups)-1]
-		g.rows = append(g.rows, c.cells(x, slices.Index(used, x.Limit)+1))
+		row := c.cells(x, slices.Index(used, x.Limit)+1)
+		if several && x.Basis != "" {
+			row[enteredCell] += " (" + x.Basis + ")"
+		}
+		g.rows = append(g.rows, row)
 	}
 	return groups
 }

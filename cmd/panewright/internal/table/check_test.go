@@ -233,7 +233,8 @@ func TestUnroundedShowsItsSide(t *testing.T) {
 		{0.4996, 2, 0.5, none, "0.4996", "-0.0004"},
 		{0.55, 2, 0.5, none, "0.5500", "+0.050"},
 		{0.5, 2, 0.5, none, "0.5000", "0.000"},
-		{math.Nextafter(2.8, 3), 1, none, 2.8, "2.8000000000000003", "-4.4e-16"},
+		{2.8000000004, 1, none, 2.8, "2.8000000004", "-4e-10"},
+		{math.Nextafter(2.8, 3), 1, none, 2.8, "2.800", "0.00"}, // binary arithmetic alone
 		{-10.04, 1, -10, none, "-10.040", "-0.04"},
 	} {
 		l := limitOf(t, "u", tt.atLeast, tt.atMost)

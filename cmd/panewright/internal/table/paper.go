@@ -5,25 +5,21 @@ package table
 import (
 	"fmt"
 
-	"panewright/glazing/limits"
 	"panewright/glazing/proof"
 )
 
 // Notice returns the sentences that stand on every output of a check.
 func (c Check) Notice() []string { return checkNotice }
 
-// CheckHeads are the headings of the columns of results, and Cells what stands below them.
+// CheckHeads are the headings of the columns of results; the make-up comes before them.
 func CheckHeads() []string { return checkHeads }
 
-// Cells returns a row of results, with the make-up first.
-func (c Check) Cells(x *limits.Result) []string {
-	number := 0
-	for k, l := range c.used() {
-		if l == x.Limit {
-			number = k + 1
-		}
+// Rows returns the rows of results below CheckHeads, in their order.
+func (c Check) Rows() (rows [][]string) {
+	for _, g := range c.groups() {
+		rows = append(rows, g.rows...)
 	}
-	return append([]string{x.Makeup.ID}, c.cells(x, number)...)
+	return rows
 }
 
 // Entered returns the limits in words, numbered as results name them.
