@@ -83,17 +83,7 @@ yours; the local authority and licensed practice decide.`,
 			if err := keepInputs(p.output, r.Project); err != nil {
 				return err
 			}
-			var out []byte
-			switch p.as {
-			case "json":
-				out = table.CheckJSON(r)
-			case "csv":
-				out, err = table.CheckCSV(r, form)
-			case "markdown":
-				out = table.CheckMarkdown(r)
-			default:
-				out = table.CheckText(r)
-			}
+			out, err := forms[table.Check]{table.CheckText, table.CheckJSON, table.CheckMarkdown, table.CheckCSV, nil}.print(p, form, r)
 			if err != nil {
 				return err
 			}
@@ -115,11 +105,16 @@ yours; the local authority and licensed practice decide.`,
 
 // checked reads a project and limits, and holds what is selected against them.
 func checked(path string, o selection, files []string) (table.Check, error) {
-	c := table.Check{Report: table.Report{Version: version, Figures: glazing.Figures()}}
 	p, err := project.Load(path, project.Access{Anywhere: o.filesAnywhere})
 	if err != nil {
-		return c, err
+		return table.Check{}, err
 	}
+	return held(p, path, o, files)
+}
+
+// held holds what is selected of a project against limits.
+func held(p *project.Project, path string, o selection, files []string) (table.Check, error) {
+	c := table.Check{Report: table.Report{Version: version, Figures: glazing.Figures()}}
 	p.Cautions = slices.DeleteFunc(p.Cautions, func(x glazing.Caution) bool { return x.Code == project.LimitsNotChecked })
 	c.Project = p
 	if p.LimitsFile != nil {

@@ -61,17 +61,7 @@ CSV has one row for the reference and one for each option.
 			if err := keepInputs(p.output, r.Project); err != nil {
 				return err
 			}
-			var out []byte
-			switch p.as {
-			case "json":
-				out = table.CompareJSON(r)
-			case "csv":
-				out, err = table.CompareCSV(r, form)
-			case "markdown":
-				out = table.CompareMarkdown(r)
-			default:
-				out = table.Compare(r)
-			}
+			out, err := forms[table.Report]{table.Compare, table.CompareJSON, table.CompareMarkdown, table.CompareCSV, nil}.print(p, form, r)
 			if err != nil {
 				return err
 			}

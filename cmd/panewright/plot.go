@@ -29,14 +29,7 @@ panewright rate --as json --spectra all gives the numbers.`,
   panewright plot panewright-demo/project.yaml --makeup E1 --tint full`,
 		Args: oneProject,
 		RunE: func(c *cobra.Command, args []string) error {
-			if err := checkEnding(c.Name(), output, "", []string{"svg"}); err != nil {
-				return err
-			}
-			r, err := oneMakeup(c.Name(), args[0], o)
-			if err != nil {
-				return err
-			}
-			return s.picture(output, r, func(ratings []*glazing.Rating, h draw.Heading) *draw.Canvas {
+			return s.picture(c.Name(), args[0], output, o, func(ratings []*glazing.Rating, h draw.Heading) *draw.Canvas {
 				if len(ratings) > 1 {
 					h.About = "Transmittance of the make-up in each tint. " + h.About
 					return draw.PlotPicture(draw.TintCurves(ratings), h)

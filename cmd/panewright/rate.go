@@ -190,19 +190,7 @@ func runRate(s streams, path string, o selection, p page, spectra string) error 
 	if err := keepInputs(p.output, r.Project); err != nil {
 		return err
 	}
-	var out []byte
-	switch p.as {
-	case "json":
-		out = table.JSON(r)
-	case "csv":
-		out, err = table.CSV(r, form)
-	case "xlsx":
-		out, err = table.XLSX(r)
-	case "markdown":
-		out = table.Markdown(r)
-	default:
-		out = table.Schedule(r)
-	}
+	out, err := forms[table.Report]{table.Schedule, table.JSON, table.Markdown, table.CSV, table.XLSX}.print(p, form, r)
 	if err != nil {
 		return err
 	}
@@ -421,4 +409,26 @@ func wavelengths(list string) ([]float64, error) {
 		out = append(out, v)
 	}
 	return out, nil
+}
+
+// forms are what a command prints of something, by format; nil what it does not print.
+type forms[T any] struct {
+	text, json, markdown func(T) []byte
+	csv                  func(T, table.CSVForm) ([]byte, error)
+	file                 func(T) ([]byte, error) // a spreadsheet or a PDF
+}
+
+// print returns the form that the page names.
+func (f forms[T]) print(p page, form table.CSVForm, x T) ([]byte, error) {
+	switch p.as {
+	case "table":
+		return f.text(x), nil
+	case "json":
+		return f.json(x), nil
+	case "markdown":
+		return f.markdown(x), nil
+	case "csv":
+		return f.csv(x, form)
+	}
+	return f.file(x)
 }

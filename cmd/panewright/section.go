@@ -34,14 +34,7 @@ installed, else in another.`,
   panewright section panewright-demo/project.yaml --makeup E1 --tint full`,
 		Args: oneProject,
 		RunE: func(c *cobra.Command, args []string) error {
-			if err := checkEnding(c.Name(), output, "", []string{"svg"}); err != nil {
-				return err
-			}
-			r, err := oneMakeup(c.Name(), args[0], o)
-			if err != nil {
-				return err
-			}
-			return s.picture(output, r, func(ratings []*glazing.Rating, h draw.Heading) *draw.Canvas {
+			return s.picture(c.Name(), args[0], output, o, func(ratings []*glazing.Rating, h draw.Heading) *draw.Canvas {
 				return draw.SectionPicture(ratings, h)
 			})
 		},
@@ -87,8 +80,15 @@ func oneMakeup(command, path string, o selection) (table.Report, error) {
 	return r, nil
 }
 
-// picture writes a drawing of ratings of one make-up as SVG.
-func (s streams) picture(output string, r table.Report, draws func([]*glazing.Rating, draw.Heading) *draw.Canvas) error {
+// picture writes a drawing of one make-up of a project as SVG.
+func (s streams) picture(command, path, output string, o selection, draws func([]*glazing.Rating, draw.Heading) *draw.Canvas) error {
+	if err := checkEnding(command, output, "", []string{"svg"}); err != nil {
+		return err
+	}
+	r, err := oneMakeup(command, path, o)
+	if err != nil {
+		return err
+	}
 	if err := keepInputs(output, r.Project); err != nil {
 		return err
 	}

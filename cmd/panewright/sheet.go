@@ -88,7 +88,7 @@ func entered(r *table.Report, path string, o selection) (*table.Check, error) {
 	if all, _ := r.Project.AllLimits(); len(all) == 0 {
 		return nil, nil
 	}
-	c, err := checked(path, o, nil)
+	c, err := held(r.Project, path, o, nil)
 	if err != nil {
 		return nil, err
 	}

@@ -66,21 +66,7 @@ func verify(s streams, p page, only string, groups []checks.Group) error {
 		return err
 	}
 	v := table.Verification{Version: version, Go: runtime.Version(), System: runtime.GOOS, Architecture: runtime.GOARCH, Groups: proof.Run(groups)}
-	var out []byte
-	switch p.as {
-	case "json":
-		out = table.VerifyJSON(v)
-	case "csv":
-		out, err = table.VerifyCSV(v, form)
-	case "markdown":
-		out = table.VerifyMarkdown(v)
-	case "pdf":
-		var f sheet.File
-		f, err = sheet.Verification(v)
-		out = f.PDF
-	default:
-		out = table.Verify(v)
-	}
+	out, err := forms[table.Verification]{table.Verify, table.VerifyJSON, table.VerifyMarkdown, table.VerifyCSV, verification}.print(p, form, v)
 	if err != nil {
 		return err
 	}
@@ -91,6 +77,12 @@ func verify(s streams, p page, only string, groups []checks.Group) error {
 		return &missedError{missed, proof.Count(v.Groups, "", "")}
 	}
 	return nil
+}
+
+// verification returns the outcomes as PDF.
+func verification(v table.Verification) ([]byte, error) {
+	f, err := sheet.Verification(v)
+	return f.PDF, err
 }
 
 // containing returns the groups whose title contains a text, and of others the checks whose id

@@ -20,7 +20,8 @@ import (
 type builder struct {
 	*reader
 	*fileSet
-	builtIn map[string]*glazing.Pane // the panes of the library that make-ups use
+	builtIn  map[string]*glazing.Pane // the panes of the library that make-ups use
+	reserved []string                 // ids of the library
 }
 
 const notYet = "is not in this version"
@@ -99,7 +100,10 @@ func (b *builder) unique(ids map[string]position, id text, key, what string) {
 
 // notBuiltIn reports an id that a glass or a pane of the library has.
 func (b *builder) notBuiltIn(id text) {
-	if _, ok := film.Glass(id.value); ok || slices.Contains(library.IDs(), id.value) {
+	if b.reserved == nil { // once for all panes
+		b.reserved = append(film.Glasses(), library.IDs()...)
+	}
+	if slices.Contains(b.reserved, id.value) {
 		b.fail(id.at, "id", "%q is built in; choose another name", id.value)
 	}
 }

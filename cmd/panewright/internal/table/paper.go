@@ -11,10 +11,7 @@ import (
 // Notice returns the sentences that stand on every output of a check.
 func (c Check) Notice() []string { return checkNotice }
 
-// CheckHeads are the headings of the columns of results; the make-up comes before them.
-func CheckHeads() []string { return checkHeads }
-
-// Rows returns the rows of results below CheckHeads, in their order.
+// Rows returns the rows of results, in their order, below the headings of the page here.
 func (c Check) Rows() (rows [][]string) {
 	for _, g := range c.groups() {
 		rows = append(rows, g.rows...)
