@@ -1,6 +1,6 @@
 // Package reference holds the published tables that Panewright calculates with: the weights
 // of EN 410 and ISO 9050, the CIE observers, daylight and colour samples, the reference sun of
-// ASTM G173, the gas table of EN 673, the emissivity tables of EN 12898, and the optical
+// ASTM G173, the gas tables of EN 673 and ISO 15099, the emissivity tables of EN 12898, and the optical
 // constants of soda-lime glass.
 //
 // Each table is one file under tables/, embedded, that begins with its title, source, edition,
@@ -37,6 +37,7 @@ var (
 	EmissivityWavelengths = lazily("emissivity_wavelengths") // wavelength_um, thirty rows
 	EmissivityRatio       = lazily("emissivity_ratio")       // ratio over normal_emissivity
 	GasesEN673            = lazily("gases_en673")            // density, viscosity, conductivity, heat_capacity by gas
+	GasesISO15099         = lazily("gases_iso15099")         // molar_mass, and a and b of three properties, by gas
 	SodaLimeGlass         = lazily("soda_lime_glass")        // n_clear, k_clear, … over wavelength_um
 )
 
@@ -47,7 +48,7 @@ func Notices() string { return notices }
 func All() []*Table {
 	return []*Table{
 		EN410Weights(), DamageWeights(), Daylight(), Observers(), RenderingSamples(), SolarG173(),
-		EmissivityWavelengths(), EmissivityRatio(), GasesEN673(), SodaLimeGlass(),
+		EmissivityWavelengths(), EmissivityRatio(), GasesEN673(), GasesISO15099(), SodaLimeGlass(),
 	}
 }
 

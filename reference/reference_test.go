@@ -441,6 +441,7 @@ var seals = map[string]string{
 	"emissivity_wavelengths": "932d60dc8fdc440d69b577f4fb4e2941b4cb6290ab8c91e0c97cf7d304c6aedc",
 	"en410_weights":          "a88ba1ba36202dab5482f331beb24406bce83d8e592eca45a67fd38af78815cc",
 	"gases_en673":            "1831becc3a2de21e659c4c6cee8000dfdc6abcd1650f4517dc1ed329859790b6",
+	"gases_iso15099":         "9e6ebd53f35776a829a04bcfe4f1a7c5e3fa1e1eb6f8bc839661ac215400de24",
 	"observers":              "808759acb047b8a5ece551bc3ff656c4a679b08fda7b62b2c59520a40443165f",
 	"rendering_samples":      "6133fcc7ce57855c68958fbb71a902a1df7307fcedd1122be8bbbba6e1573b98",
 	"soda_lime_glass":        "1f0c167df8806b5207530bb220fb8c7b9c20b83a8c2de9d41368765592e1a35f",

@@ -84,7 +84,7 @@ func Mix(fractions map[string]float64) (Mixture, error) {
 		}
 	}
 	if math.Abs(sum-1) > FractionTolerance {
-		return nil, fmt.Errorf("gas fractions add to %.7g; they must add to 1", sum)
+		return nil, fmt.Errorf("gas fractions add to %.9g; they must add to 1 within %.6f", sum, FractionTolerance)
 	}
 	return m, nil
 }

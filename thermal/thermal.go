@@ -1,8 +1,8 @@
-// Package thermal computes the heat transfer through the centre of a glazing by EN 673:2011 and
-// ISO 10292, and the heat that absorbed sun sends inwards by EN 410:2011 and ISO 9050:2003:
-// gases and their mixtures, gap conductances, surface coefficients, U-value, secondary heat.
+// Package thermal computes the heat transfer through the centre of a glazing, in two ways.
 //
-// SI throughout; emissivities are corrected (hemispherical) ones. A double pane in a few lines:
+// By EN 673:2011 and ISO 10292, and EN 410:2011 and ISO 9050:2003: gases at 283 K, gap conductances,
+// surface coefficients, U-value, and the heat that absorbed sun sends inwards (thermal.go, gas.go).
+// A double pane in a few lines:
 //
 //	gas, _ := thermal.Mix(map[string]float64{"argon": 0.9, "air": 0.1})
 //	gaps := []thermal.Gap{{WidthM: 0.016, Gas: gas.Properties(), Emissivity: [2]float64{0.837, 0.03}}}
@@ -11,8 +11,28 @@
 //	hi := thermal.InsideEN673(0.837)
 //	u := thermal.U(25, hi, 0.008, states) // glass 4 + 4 mm of 1.0 W/(m·K)
 //
-// Clause and equation numbers are from memory. Left out: edges and frames, vented gaps, vacuum, sheets that pass infrared, and the detailed
-// balance of ISO 15099.
+// By the detailed balance of ISO 15099:2003, for any temperatures, wind, sun and tilt: gases by
+// kinetic theory (fluid.go), convection (convection.go), temperatures of all faces by Newton's method
+// (balance.go), with evacuated gaps (vacuum.go) and sheets that pass infrared (exchange.go). The same
+// double in a winter night:
+//
+//	fluid, _ := gas.Fluid()
+//	sheets := []thermal.Sheet{
+//		{Plies: []thermal.Layer{{ResistanceM2KW: 0.004, Share: 1}}, Emissivity: [2]float64{0.837, 0.837}},
+//		{Plies: []thermal.Layer{{ResistanceM2KW: 0.004, Share: 1}}, Emissivity: [2]float64{0.03, 0.837}},
+//	}
+//	system, err := thermal.NewSystem(sheets, []thermal.Cavity{{WidthM: 0.016, Gas: fluid}})
+//	at := thermal.Surroundings{OutsideK: 263, OutsideRadiantK: 263, InsideK: 293, InsideRadiantK: 293,
+//		OutsideConvection: thermal.WindConvection(4), TiltDeg: 90, HeightM: 1}
+//	var b thermal.Balance
+//	err = system.Solve(&b, at, []float64{0, 0})
+//	u = -b.InwardWM2() / 30
+//
+// What follows from temperatures: moisture (moisture.go), thermal stress (stress.go), comfort
+// (comfort.go, person.go).
+//
+// SI throughout; emissivities are corrected (hemispherical) ones. Clause and equation numbers are from
+// memory. Left out: edges and frames, vented gaps, blinds, the change of gap widths with pressure.
 package thermal
 
 import (
@@ -39,6 +59,10 @@ type Gap struct {
 	WidthM     float64
 	Gas        Gas
 	Emissivity [2]float64 // corrected, of the outer and inner bounding face
+	// Evacuated gaps are outside EN 673: pillars and residual gas stand in the place of the gas, with
+	// ConductanceWM2K, and radiation as in any gap.
+	Evacuated       bool
+	ConductanceWM2K float64
 }
 
 // GapState is the heat transfer in one gap with all its intermediates, in the order in which a
@@ -152,12 +176,22 @@ func SolveGaps(states []GapState, gaps []Gap, c Convection) error {
 		s := &states[i]
 		s.Drop = TotalDrop / Delta(len(gaps))
 		s.Radiative = RadiativeConductance(g.Emissivity[0], g.Emissivity[1])
+		s.Grashof, s.Prandtl, s.Rayleigh, s.Nusselt = 0, 0, 0, 0
+		if g.Evacuated {
+			s.Convective = g.ConductanceWM2K
+			s.Total = s.Radiative + s.Convective
+			continue
+		}
 		s.Prandtl = g.Gas.ViscosityPaS * g.Gas.HeatCapacityJKGK / g.Gas.ConductivityWMK // EN 673:2011 (8)
 	}
 	for range dropRounds {
 		var resistance float64
 		for i, g := range gaps {
 			s := &states[i]
+			if g.Evacuated {
+				resistance += 1 / s.Total
+				continue
+			}
 			s.Grashof = Gravity * g.WidthM * g.WidthM * g.WidthM * float64(s.Drop) * g.Gas.DensityKGM3 * g.Gas.DensityKGM3 /
 				(MeanTemperature * g.Gas.ViscosityPaS * g.Gas.ViscosityPaS) // EN 673:2011 (7)
 			s.Rayleigh = s.Grashof * s.Prandtl

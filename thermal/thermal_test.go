@@ -199,7 +199,7 @@ func TestMix(t *testing.T) {
 		{map[string]float64{"argon": 0.9, "air": 0.1}, ""},
 		{map[string]float64{"argon": 0.9, "air": 0.1 + 0.9e-6}, ""},
 		{map[string]float64{"argon": 0.9, "air": 0.1 + 0.995e-6}, ""},
-		{map[string]float64{"argon": 0.9, "air": 0.1 + 1.005e-6}, "must add to 1"},
+		{map[string]float64{"argon": 0.9, "air": 0.1 + 1.005e-6}, "must add to 1 within 0.000001"},
 		{map[string]float64{"argon": 0.9, "air": 0.1 + 2e-6}, "must add to 1"},
 		{map[string]float64{"argon": 1.2, "air": -0.2}, "0..1"},
 		{map[string]float64{"argon": math.NaN(), "air": 1}, "0..1"},
