@@ -20,8 +20,9 @@ type Basis struct {
 	u, g     surfaces // of the U-value and of the secondary heat
 	uPlaces  int      // decimals of a printed U-value
 	rounding string   // the standard that rounds U so
-	// balance: U and g come from the detailed heat balance of ISO 15099.
-	balance bool
+	// conditions are those of a basis whose U and g come from detailed balances, winter and summer; nil
+	// of the others.
+	conditions func() []Condition
 }
 
 // surfaces are the coefficients of a basis: he, and hi = convection + radiation·ε/0.837, in
@@ -44,12 +45,12 @@ var (
 		u: surfaces{23, 3.6, 4.4}, g: surfaces{23, 3.6, 4.4}, uPlaces: 1, rounding: "ISO 10292",
 	}
 	NA = Basis{
-		Name: "na", Editions: "CIE D65 at 5 nm, ASTM G173-03 global tilt (column chosen by Panewright), UV, damage and skin by EN 410:2011, EN 12898",
-		light: spectra.LightCIE, solar: spectra.SolarG173, uPlaces: 2, balance: true,
+		Name: "na", Editions: "CIE D65 at 5 nm, ASTM G173-03 global tilt (column chosen by Panewright), UV, damage and skin by EN 410:2011, EN 12898, balance of ISO 15099:2003 under conditions of ANSI/NFRC 100 and 200",
+		light: spectra.LightCIE, solar: spectra.SolarG173, uPlaces: 2, conditions: conditionsNA,
 	}
 	ISO15099 = Basis{
-		Name: "iso15099", Editions: "ISO 9050:2003, EN 12898",
-		light: spectra.LightEN410, solar: spectra.SolarEN410, uPlaces: 2, balance: true,
+		Name: "iso15099", Editions: "ISO 9050:2003, EN 12898, balance of ISO 15099:2003 under its reference conditions",
+		light: spectra.LightEN410, solar: spectra.SolarEN410, uPlaces: 2, conditions: conditionsISO15099,
 	}
 )
 
@@ -80,4 +81,5 @@ func (s surfaces) inside(emissivity float64) float64 {
 	return thermal.Inside(s.insideConvection, s.insideRadiation, emissivity)
 }
 
-const noBalance = "needs the detailed heat balance of ISO 15099, which this version does not have"
+// Balances reports whether U and g of the basis come from detailed heat balances.
+func (b Basis) Balances() bool { return b.conditions != nil }

@@ -76,7 +76,7 @@ var cautionRules = []cautionRule{
 	{"tilt_interpolated", "a tilt between 0, 45 and 90 degrees, heat flow up", tiltInterpolated},
 	{"tilt_vertical_g", "tilted, with a gap", func(all []Rating, i int) string {
 		r := &all[i]
-		if r.Makeup.Tilt.Vertical() || !r.U.Known || len(r.Gaps) == 0 {
+		if r.Method.Basis.Balances() || r.Makeup.Tilt.Vertical() || !r.U.Known || len(r.Gaps) == 0 {
 			return ""
 		}
 		return fmt.Sprintf("U is that of the tilt of %.6g°; upright it is %s W/(m²·K). g is computed with the conductance of vertical gaps at every tilt, as EN 410 and ISO 9050 have it.",
@@ -88,6 +88,43 @@ var cautionRules = []cautionRule{
 			return r.Absorptance[k].Known && r.Absorptance[k].Number > absorbingAlpha && (t == Annealed || t == UnknownTreatment || t == "")
 		}, "More than half of the sun is absorbed, in at least one tint, in %s, annealed or of unknown heat treatment: discuss thermal stress with a licensed engineer (common practice).")
 	}},
+	{"thermal_stress", "the difference within a pane is near or above its guide value in any tint", stressCaution},
+	{"hot_surface", "the room-side surface above 45 °C, or glass above 60 °C at a seal or an interlayer, in a condition rated or screened", hotSurface},
+	{"condensation", "the room-side surface, or its edge, is below the dew point of a condition", condensation},
+	{"outside_condensation", "outside, dew forms below a humidity of 0.95 in a clear calm night", outsideCondensation},
+	{"cold_glass", "a condition's radiant asymmetry leaves more than 5 % dissatisfied, or its downdraught is above 0.2 m/s", coldGlass},
+	{"wind_assumed", "a condition names neither wind nor coefficient", conditionsWhere(func(b *Balance) bool {
+		_, assumed := b.Condition.OutsideConvection()
+		return assumed
+	}, "No wind was given for %s: 4 m/s, 20 W/(m²·K), were assumed (common practice).")},
+	{"radiant_apart", "a radiant temperature of a condition is not that of its air", conditionsWhere(func(b *Balance) bool {
+		at := b.Condition.Surroundings(b.TiltDeg)
+		return at.OutsideRadiantK != at.OutsideK || at.InsideRadiantK != at.InsideK
+	}, "Radiant temperatures differ from those of the air in %s: U there is the flux over the difference of the air temperatures, and must not be compared with that of equal ones.")},
+	{"beyond_gas_data", "a gap is colder than -60 °C or hotter than 150 °C in a condition", conditionsWhere(func(b *Balance) bool {
+		for k := range b.Lit.Sheets - 1 {
+			if e := &b.Lit.Gaps[k]; e.Rayleigh > 0 && math.Abs(celsius(e.MeanK)-45) > 105 {
+				return true
+			}
+		}
+		return false
+	}, "A gap is colder than −60 °C or hotter than 150 °C in %s: the linear gas properties of ISO 15099 were carried beyond what they were made for.")},
+	{"vacuum", "a gap is evacuated", func(all []Rating, i int) string {
+		r := &all[i]
+		text := "Vacuum: heat that runs round through a tight edge seal is not included and can be large; pressure and pillars are the user's, the residual gas counts with 0.8 W/(m²·K) a pascal, an effective accommodation."
+		switch at := slices.IndexFunc(r.Makeup.Gaps, func(g Gap) bool { return g.Vacuum != nil }); {
+		case at < 0:
+			return ""
+		case !r.Method.Basis.Balances():
+			text += " A vacuum is outside EN 673 and ISO 10292: its conductances at 283 K stand in the place of theirs."
+		}
+		if slices.ContainsFunc(r.Makeup.Gaps, func(g Gap) bool { return g.Vacuum != nil && g.Vacuum.PressurePa > 1 }) {
+			text += " Above 1 Pa the residual gas is taken too high."
+		}
+		return text
+	}},
+	{"edge_estimate", "the make-up has an edge by ψ", when(func(r *Rating) bool { return r.Makeup.Edge.PsiWMK.Known },
+		"The temperature at the edge is an estimate from ψ: its heat spread over 50 mm along the edge. A factor by calculation in two dimensions is better.")},
 	{"reflected_sun", "ρe or ρv outside above 0.15", when(func(r *Rating) bool {
 		return above(r.Solar.ReflectanceOutside, reflectedSun) || above(r.Light.ReflectanceOutside, reflectedSun)
 	}, "Reflects more than 0.15 of sun or light outwards: consider neighbours and traffic, above all where the facade is curved or inclined.")},
@@ -130,6 +167,146 @@ var cautionRules = []cautionRule{
 	{"mass", "above 50 kg/m²", when(func(r *Rating) bool { return r.MassKGM2 > heavyKGM2 },
 		"One square metre weighs more than 50 kg: handling and replacement need planning.")},
 	{"bird", "always", always("Clear and mirroring glass kills birds: consider visible markings.")},
+}
+
+// stressCaution names the panes whose difference is near or above the guide value in any tint, each with
+// the worst.
+func stressCaution(all []Rating, _ int) string {
+	var parts []string
+	for k, p := range all[0].Makeup.Panes {
+		var worst *Stress
+		for i := range all {
+			if len(all[i].Stress) > k {
+				if s := &all[i].Stress[k]; s.Why == "" && s.Word != thermal.BelowGuide && (worst == nil || s.DropK > worst.DropK) {
+					worst = s
+				}
+			}
+		}
+		if worst != nil {
+			parts = append(parts, fmt.Sprintf("%s the guide value in pane %d (%s): %s K of %s K, %s MPa, condition %s", worst.Word, k+1, p.Pane.ID,
+				PrintRounded(worst.DropK, 0), PrintRounded(worst.GuideK, 0), PrintRounded(worst.StressMPa, 0), worst.Condition))
+		}
+	}
+	if parts == nil {
+		return ""
+	}
+	return "Thermal stress, a screening: the sunlit middle against the shaded edge, which is taken as the pane without sun, is " + strings.Join(parts, "; ") +
+		". Discuss heat treatment, edge work, shadows and frame with a licensed engineer."
+}
+
+// Temperatures from which surfaces are called hot, °C; common practice, no source.
+const (
+	hotToTouchC = 45
+	hotToSealC  = 60
+)
+
+// hotSurface says which condition makes the room side or what holds the unit together hottest.
+func hotSurface(all []Rating, i int) string {
+	h := &all[i].hot
+	var parts []string
+	if h.touchCondition != "" && h.touchC > hotToTouchC {
+		parts = append(parts, fmt.Sprintf("the room-side surface reaches %s °C in condition %s (above 45 °C, in reach)", PrintRounded(h.touchC, 0), h.touchCondition))
+	}
+	if h.sealCondition != "" && h.sealC > hotToSealC {
+		parts = append(parts, fmt.Sprintf("pane %d reaches %s °C at a seal or an interlayer in condition %s (above 60 °C)", h.sealPane+1, PrintRounded(h.sealC, 0), h.sealCondition))
+	}
+	if parts == nil {
+		return ""
+	}
+	return "Hot glass: " + strings.Join(parts, "; ") + " (common practice)."
+}
+
+// condensation names the conditions in which water condenses on the room side.
+func condensation(all []Rating, i int) string {
+	r := &all[i]
+	var parts []string
+	for k := range r.Balances {
+		b := &r.Balances[k]
+		dew := b.dewPoint()
+		if !dew.Known || b.Why != "" {
+			continue
+		}
+		say := func(where string, atK float64) {
+			parts = append(parts, fmt.Sprintf("%s at %s °C in condition %s, dew point %s °C", where, PrintRounded(celsius(atK), 1), b.Condition.ID, PrintRounded(celsius(dew.Number), 1)))
+		}
+		if at := b.roomSideK(); at < dew.Number {
+			say("the room-side surface", at)
+		}
+		if f := r.edgeFactor(b.U); f.Known {
+			at := &b.Dark.Surroundings
+			if k := thermal.FactorTemperature(f.Number, at.OutsideK, at.InsideK); k < dew.Number {
+				say("the edge", k)
+			}
+		}
+	}
+	if parts == nil {
+		return ""
+	}
+	return "Water condenses, without sun, on " + strings.Join(parts, "; ") + "."
+}
+
+// outsideCondensation says from which humidity dew forms outside in a clear calm night.
+func outsideCondensation(all []Rating, i int) string {
+	r := &all[i]
+	const worthSaying = 0.95
+	if !(r.clearNight.humidity > 0 && r.clearNight.humidity < worthSaying) {
+		return ""
+	}
+	c := clearNight()
+	return fmt.Sprintf("In a clear calm night (outdoors %.6g °C, indoors %.6g °C, %.6g m/s, sky %s °C by Swinbank) surface 1 cools to %s °C: outside, dew forms from a humidity of %s.",
+		c.OutsideC, c.InsideC, c.WindMS.Number, PrintRounded(c.SkyC.Number, 0), PrintRounded(r.clearNight.surfaceC, 1), PrintRounded(r.clearNight.humidity, 2))
+}
+
+// What makes cold glass worth a word; common practice, no source.
+const (
+	dissatisfiedPct = 5
+	draughtMS       = 0.2
+)
+
+// coldGlass names the conditions in which a person in front of the glass is likely to feel it cold.
+func coldGlass(all []Rating, i int) string {
+	r := &all[i]
+	var parts []string
+	for k := range r.Balances {
+		b := &r.Balances[k]
+		get := func(alias string) float64 {
+			for _, f := range consequenceFigures() {
+				if f.Alias == alias {
+					return f.Of(r, b, 0).or(0)
+				}
+			}
+			return 0
+		}
+		asymmetry := get("asymmetry")
+		if asymmetry <= 0 {
+			continue
+		}
+		if pd, v := get("asymmetry_dissatisfied"), get("downdraught"); pd > dissatisfiedPct || v > draughtMS {
+			parts = append(parts, fmt.Sprintf("in condition %s radiant asymmetry %s K (%s %% dissatisfied), air %s m/s near the floor",
+				b.Condition.ID, PrintRounded(asymmetry, 1), PrintRounded(pd, 0), PrintRounded(v, 2)))
+		}
+	}
+	if parts == nil {
+		return ""
+	}
+	p := r.Method.person()
+	return fmt.Sprintf("Cold glass, for a person %.6g m in front of %.6g × %.6g m of it: %s.", p.DistanceM, p.GlassWidthM, p.GlassHeightM, strings.Join(parts, "; "))
+}
+
+// conditionsWhere names the conditions of the user for whose balance something holds.
+func conditionsWhere(holds func(b *Balance) bool, format string) func([]Rating, int) string {
+	return func(all []Rating, i int) string {
+		var names []string
+		for k := range all[i].Balances {
+			if b := &all[i].Balances[k]; b.why() == "" && holds(b) {
+				names = append(names, b.Condition.ID)
+			}
+		}
+		if names == nil {
+			return ""
+		}
+		return fmt.Sprintf(format, strings.Join(names, ", "))
+	}
 }
 
 func above(v Value, limit float64) bool { return v.Known && v.Number > limit }
@@ -194,8 +371,7 @@ var otherCodes = [][2]string{
 	{"coarse_steps", "a spectrum or optical constants in steps too wide for the tables of the standards"},
 	{"emissivity_differs", "an emissivity was typed, and infrared rows give another by more than 0.02"},
 	{"sun_range", "the project's own sun does not reach from 300 to 2500 nm"},
-	{"coefficients_not_used", "coefficients were given for a basis whose U and g are not known in this version"},
-	{"conditions_not_rated", "the project has conditions, which this version does not rate"},
+	{"coefficients_not_used", "coefficients were given for na or iso15099, whose U and g come from balances"},
 	{"limits_not_checked", "the project has limits, against which the page does not hold its figures"},
 	{"limit_basis", "check: a limit names no basis, and that of the project was taken"},
 	{"limit_scope", "check: a limit names no scope, and the centre of the glass was taken"},
@@ -263,7 +439,7 @@ func tiltInterpolated(all []Rating, i int) string {
 	r := &all[i]
 	deg := r.Makeup.Tilt.Degrees()
 	between := thermal.ConvectionBetween(deg, r.Makeup.HeatFlow)
-	if !r.U.Known || len(r.Gaps) == 0 || (between.Weight == 0 && deg <= 90) {
+	if r.Method.Basis.Balances() || !r.U.Known || len(r.Gaps) == 0 || (between.Weight == 0 && deg <= 90) {
 		return ""
 	}
 	var text string

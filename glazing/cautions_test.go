@@ -135,7 +135,8 @@ func TestThresholds(t *testing.T) {
 		p.Tints[0].Spectrum = flat(300, 2500, 0.04, 0.1, 0.1)
 		return &Makeup{ID: "q", Panes: []Placed{{Pane: p}}}
 	}
-	always := []string{"not_certified", "centre_of_glass", "local_codes", "barrier_and_load", "edition", "bird"}
+	// Those of temperatures are left to TestThresholdsOfTemperatures.
+	always := []string{"not_certified", "centre_of_glass", "local_codes", "barrier_and_load", "edition", "bird", "hot_surface", "thermal_stress", "outside_condensation"}
 	optics := func(m *Makeup, tau, rho float64) { m.Panes[0].Pane.Tints[0].Spectrum = flat(300, 2500, tau, rho, 0.1) }
 	double := func(m *Makeup, mm float64) {
 		m.Panes = append(m.Panes, m.Panes[0])

@@ -73,6 +73,13 @@ func inputDifferences(reference, option *Rating) []string {
 		one, two := apart(is, was, digits)
 		differ(what, one+unit, two+unit)
 	}
+	values := func(what string, is, was Value, unit string) { // not known where nothing was given
+		if is.Known && was.Known {
+			numbers(what, is.Number, was.Number, 4, unit)
+		} else {
+			differ(what, given(is, unit), given(was, unit))
+		}
+	}
 	a, b := reference.Makeup, option.Makeup
 	differ("Basis", option.Method.Basis.Name, reference.Method.Basis.Name)
 	if reference.Method.Basis.Name == option.Method.Basis.Name {
@@ -87,6 +94,8 @@ func inputDifferences(reference, option *Rating) []string {
 		}
 		differ(what, turnedInput(b.Panes[k]), turnedInput(a.Panes[k]))
 		differ(what+", tint", option.tintInput(k), reference.tintInput(k))
+		differ(what+", heat treatment", treated(b.Panes[k]), treated(a.Panes[k]))
+		numbers(what+", infrared transmittance", option.infraredInput(k), reference.infraredInput(k), 4, "")
 	}
 	for k := range max(len(a.Gaps), len(b.Gaps)) {
 		what := fmt.Sprintf("Gap %d", k+1)
@@ -96,19 +105,28 @@ func inputDifferences(reference, option *Rating) []string {
 		}
 		numbers(what, b.Gaps[k].WidthMM, a.Gaps[k].WidthMM, 6, " mm")
 		is, was := b.Gaps[k].Gas, a.Gaps[k].Gas
-		differ(what, is.String(), was.String())
-		if is.String() == was.String() { // shares that differ below what is printed
+		content := b.Gaps[k].Content()
+		differ(what, content, a.Gaps[k].Content())
+		if content == a.Gaps[k].Content() { // shares that differ below what is printed
 			for i := range min(len(is), len(was)) {
 				numbers(what+", share of "+is[i].Gas, is[i].Fraction, was[i].Fraction, 4, "")
 			}
 		}
+		if is, was := b.Gaps[k].Vacuum, a.Gaps[k].Vacuum; is != nil && was != nil {
+			numbers(what+", pressure", is.PressurePa, was.PressurePa, 6, " Pa")
+			numbers(what+", radius of pillars", is.PillarRadiusMM, was.PillarRadiusMM, 6, " mm")
+			numbers(what+", pitch of pillars", is.PillarPitchMM, was.PillarPitchMM, 6, " mm")
+			values(what+", conductivity of pillars", is.PillarWMK, was.PillarWMK, " W/(m·K)")
+		}
 	}
+	values("Temperature factor of the edge", b.Edge.TemperatureFactor, a.Edge.TemperatureFactor, "")
+	values("ψ of the edge", b.Edge.PsiWMK, a.Edge.PsiWMK, " W/(m·K)")
 	numbers("Tilt", b.Tilt.Degrees(), a.Tilt.Degrees(), 6, "°")
 	if !a.Tilt.Vertical() || !b.Tilt.Vertical() {
 		differ("Heat flow", flowNames[b.HeatFlow], flowNames[a.HeatFlow])
 	}
 	for k := range min(len(reference.Surfaces), len(option.Surfaces)) {
-		what, is, was := fmt.Sprintf("Emissivity of surface %d", k+1), option.Surfaces[k].Corrected, reference.Surfaces[k].Corrected
+		what, is, was := fmt.Sprintf("Emissivity of surface %d", k+1), option.entering(k), reference.entering(k)
 		if is.Known && was.Known {
 			numbers(what, is.Number, was.Number, 4, "")
 		} else {
@@ -152,6 +170,27 @@ func (m *Makeup) paneInput(k int) string {
 	return fmt.Sprintf("%s (%s)", p.ID, millimetres(p.ThicknessMM()))
 }
 
+// treated returns the heat treatment of a pane.
+func treated(p Placed) string {
+	if t := p.Pane.HeatTreatment; t != "" {
+		return string(t)
+	}
+	return string(UnknownTreatment)
+}
+
+// infraredInput returns what a pane lets through of the thermal infrared.
+func (r *Rating) infraredInput(k int) float64 {
+	return r.Makeup.Panes[k].Pane.infraredTau(r.Ready.States[r.State].Tints[k])
+}
+
+// given returns a value of the user's with its unit, or that there is none.
+func given(v Value, unit string) string {
+	if v.Known {
+		return fmt.Sprintf("%.4g", v.Number) + unit
+	}
+	return none
+}
+
 func turnedInput(p Placed) string {
 	if p.Turned {
 		return "turned"
@@ -168,7 +207,15 @@ func (m *Makeup) gapInput(k int) string {
 	if k >= len(m.Gaps) {
 		return none
 	}
-	return millimetres(m.Gaps[k].WidthMM) + " " + m.Gaps[k].Gas.String()
+	return millimetres(m.Gaps[k].WidthMM) + " " + m.Gaps[k].Content()
+}
+
+// entering returns the emissivity of a surface that enters U.
+func (r *Rating) entering(k int) Value {
+	if r.Method.Basis.Balances() {
+		return r.Surfaces[k].Balanced()
+	}
+	return r.Surfaces[k].Corrected
 }
 
 func emissivityInput(v Value) string {

@@ -64,6 +64,40 @@ func TestInputDifferences(t *testing.T) {
 	}
 }
 
+// Vacuums, edges, heat treatments and what lets infrared through are told apart as well.
+func TestInputsOfBalances(t *testing.T) {
+	make := func(change func(m *Makeup)) *Rating {
+		a, b := pane("a", flat(300, 2500, 0.8, 0.08, 0.08), 0.8, 0.1), pane("b", flat(300, 2500, 0.8, 0.08, 0.08), 0.8, 0.8)
+		m := &Makeup{ID: "V", Panes: []Placed{{Pane: a}, {Pane: b}}, Gaps: []Gap{{WidthMM: 0.2, Vacuum: &Vacuum{PressurePa: 0.1, PillarRadiusMM: 0.25, PillarPitchMM: 20}}}}
+		change(m)
+		return rateOne(t, m, NA, Options{})
+	}
+	vacuum := func(change func(v *Vacuum)) func(m *Makeup) {
+		return func(m *Makeup) { v := *m.Gaps[0].Vacuum; change(&v); m.Gaps[0].Vacuum = &v }
+	}
+	air := gap(t, 0.2, map[string]float64{"air": 1})
+	reference := make(func(*Makeup) {})
+	for _, tt := range []struct {
+		change func(m *Makeup)
+		want   string
+	}{
+		{func(m *Makeup) { m.Gaps[0] = air }, "Gap 1: air instead of vacuum."},
+		{vacuum(func(v *Vacuum) { v.PressurePa = 0.01 }), "Gap 1, pressure: 0.01 Pa instead of 0.1 Pa."},
+		{vacuum(func(v *Vacuum) { v.PillarRadiusMM = 0.3 }), "Gap 1, radius of pillars: 0.3 mm instead of 0.25 mm."},
+		{vacuum(func(v *Vacuum) { v.PillarPitchMM = 25 }), "Gap 1, pitch of pillars: 25 mm instead of 20 mm."},
+		{vacuum(func(v *Vacuum) { v.PillarWMK = known(16) }), "Gap 1, conductivity of pillars: 16 W/(m·K) instead of none."},
+		{func(m *Makeup) { m.Edge.PsiWMK = known(0.05) }, "ψ of the edge: 0.05 W/(m·K) instead of none."},
+		{func(m *Makeup) { m.Edge.TemperatureFactor = known(0.6) }, "Temperature factor of the edge: 0.6 instead of none."},
+		{func(m *Makeup) { m.Panes[1].Pane.HeatTreatment = Toughened }, "Pane 2, heat treatment: toughened instead of unknown."},
+		{func(m *Makeup) { m.Panes[1].Pane.HeatTreatment = UnknownTreatment }, ""},
+		{func(m *Makeup) { m.Panes[1].Pane.TauInfrared = 0.1 }, "Pane 2, infrared transmittance: 0.1 instead of 0."},
+	} {
+		if got := strings.Join(Compare(reference, make(tt.change)).Inputs, " "); got != tt.want {
+			t.Errorf("differences %q, want %q", got, tt.want)
+		}
+	}
+}
+
 // Inputs that look the same as they are printed are printed with the digits in which they differ;
 // what differs by rounding alone does not.
 func TestInputsThatLookTheSame(t *testing.T) {

@@ -95,7 +95,7 @@ func TestCoversShares(t *testing.T) {
 }
 
 // U and g, and their reasons, are those of a rating: known where the face that looks inside has an
-// emissivity and the basis needs no detailed balance, g only where the sun is covered.
+// emissivity, with a basis of balances where both have; g only where the sun is covered.
 func TestCoversHeatAgreesWithRatings(t *testing.T) {
 	flat := func(v float64, last float64) spectra.Curve {
 		return evenly(300, last, 5, func(float64) float64 { return v })
@@ -106,7 +106,7 @@ func TestCoversHeatAgreesWithRatings(t *testing.T) {
 		front, back Emissivity
 		last        float64 // nm of the spectrum
 		infrared    spectra.Curve
-		known       []string // under en and iso
+		known       []string // under en and iso; under the others U and g need both faces
 	}{
 		{"no infrared rows", NoEmissivity(), NoEmissivity(), 2500, spectra.Curve{}, nil},
 		{"of the back", NoEmissivity(), InfraredEmissivity(far, spectra.Curve{}), 2500, spectra.Curve{}, []string{"emissivity back", "U", "g"}},
@@ -145,7 +145,10 @@ func TestCoversHeatAgreesWithRatings(t *testing.T) {
 				if c.Mean != value || c.Why != value.Why || c.Below+c.Above+c.Within != 0 {
 					t.Errorf("%s, %s, %s: %+v, a rating has %+v", tt.name, b.Name, c.Band, c, value)
 				}
-				covered := slices.Contains(tt.known, c.Band) && (!b.balance || strings.HasPrefix(c.Band, "emissivity"))
+				covered := slices.Contains(tt.known, c.Band)
+				if _, isG := strings.CutPrefix(c.Band, "g"); b.Balances() && !strings.HasPrefix(c.Band, "emissivity") {
+					covered = tt.front.Corrected.Known && tt.back.Corrected.Known && (!isG || tt.last == 2500)
+				}
 				if covered != (c.Why == "") {
 					t.Errorf("%s, %s, %s: unknown for %q", tt.name, b.Name, c.Band, c.Why)
 				}

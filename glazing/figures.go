@@ -36,6 +36,9 @@ type Figure struct {
 	// their heads do not.
 	Numbering bool
 	Per       Per
+	// Condition is the id of the condition under whose balance the figure stands; "" of those of the
+	// rating itself.
+	Condition string
 	Clause    string // where the standard defines it; numbers of clauses are from memory
 	Meaning   string
 	Value     func(r *Rating, i int) Value  // i counts panes, gaps or surfaces from 0
@@ -52,7 +55,8 @@ func Figures() []Figure {
 	var list []Figure
 	list = append(list, opticalFigures()...)
 	list = append(list, colourFigures()...)
-	return append(list, thermalFigures()...)
+	list = append(list, thermalFigures()...)
+	return append(list, stressFigures()...)
 }
 
 func opticalFigures() []Figure {
@@ -85,8 +89,11 @@ func opticalFigures() []Figure {
 			Meaning: "solar absorptance", Value: func(r *Rating, i int) Value { return r.Absorptance[i] }},
 		{Key: "solar.conductances_w_m2k.#", Alias: "conductance", Symbol: "Λ", Unit: "W/(m²·K)", Places: 3, Per: PerGap, Clause: "EN 410, 5.4.6",
 			Meaning: "conductance between two panes, as g uses it", Value: func(r *Rating, i int) Value {
-				if i < len(r.Heat.Conductances) {
+				switch {
+				case i < len(r.Heat.Conductances):
 					return known(r.Heat.Conductances[i])
+				case r.Method.Basis.Balances() && r.U.Known:
+					return unknown("the g of a balance uses none")
 				}
 				return unknown(r.U.Why)
 			}},
@@ -175,10 +182,14 @@ func thermalFigures() []Figure {
 	} {
 		list = append(list, Figure{Key: "gaps.#." + g.key, Alias: g.alias, Symbol: g.symbol, Unit: g.unit, Places: g.places, Per: PerGap,
 			Clause: g.clause, Meaning: g.meaning, Value: func(r *Rating, i int) Value {
-				if v := g.get(r, i); v > 0 {
+				switch v := g.get(r, i); {
+				case v > 0:
 					return known(v)
+				case r.Makeup.Gaps[i].Vacuum != nil && r.U.Known:
+					return unknown(noConvection)
+				default:
+					return unknown(r.U.Why)
 				}
-				return unknown(r.U.Why)
 			}})
 	}
 	return append(list,
@@ -199,8 +210,14 @@ func (f Figure) Named(name string) bool {
 
 // Place returns the number of the pane, gap or surface, from 1, that a name of the figure holds; 0
 // where it stands for every one. A name is the alias, the key with any number in the place of "#",
-// or the symbol with its mark, as headings show it, and perhaps a number.
+// or the symbol with its mark, as headings show it, and perhaps a number; where the figure stands
+// under a condition, "@" and that follow.
 func (f Figure) Place(name string) (place int, ok bool) {
+	if f.Condition != "" && !strings.HasPrefix(name, balancesKey) {
+		if name, ok = strings.CutSuffix(name, "@"+f.Condition); !ok {
+			return 0, false
+		}
+	}
 	symbol := f.Symbol + f.Mark
 	if name != "" && (name == f.Alias || name == symbol) {
 		return 0, true

@@ -225,6 +225,7 @@ type Makeup struct {
 	Typed     []Typed  // carried to the schedule, marked as typed by the user
 	Panes     []Placed
 	Gaps      []Gap // one fewer than panes
+	Edge      Edge
 }
 
 // HeatFlow is the direction of heat through a make-up that is not vertical; the zero value is up.
@@ -252,7 +253,16 @@ const SameTint = "same"
 // A Gap is the space between two panes.
 type Gap struct {
 	WidthMM float64
-	Gas     thermal.Mixture
+	Gas     thermal.Mixture // nil where evacuated
+	Vacuum  *Vacuum         // nil where filled
+}
+
+// Content returns what is in the gap, as the trade writes it: "argon 90 / air 10", or "vacuum".
+func (g Gap) Content() string {
+	if g.Vacuum != nil {
+		return "vacuum"
+	}
+	return g.Gas.String()
 }
 
 // Filling makes a gas filling from fractions by volume that add to 1; see thermal.Mix.
@@ -315,10 +325,13 @@ func (p *Pane) MassKGM2() float64 {
 func (p *Pane) Resistance() float64 {
 	var sum float64
 	for _, y := range p.Plies {
-		sum += y.ThicknessMM / (1000 * y.ConductivityWMK)
+		sum += y.resistance()
 	}
 	return sum
 }
+
+// resistance returns d/λ in m²·K/W.
+func (y Ply) resistance() float64 { return y.ThicknessMM / (1000 * y.ConductivityWMK) }
 
 // Tintable reports whether any pane of the make-up has named tints.
 func (m *Makeup) Tintable() bool {
@@ -335,7 +348,7 @@ func (m *Makeup) buildUp(width func(mm float64) string) string {
 	for i, p := range m.Panes {
 		if i > 0 {
 			g := m.Gaps[i-1]
-			parts = append(parts, width(g.WidthMM)+" "+g.Gas.String())
+			parts = append(parts, width(g.WidthMM)+" "+g.Content())
 		}
 		s := p.Pane.ID
 		if p.Turned {
@@ -432,8 +445,11 @@ func (m *Makeup) check() error {
 		if !(g.WidthMM > 0) {
 			return fmt.Errorf("make-up %s: gap %d is %g mm wide; a width is above 0", m.ID, i+1, g.WidthMM)
 		}
-		if len(g.Gas) == 0 {
-			return fmt.Errorf("make-up %s: gap %d has no gas", m.ID, i+1)
+		if len(g.Gas) == 0 && g.Vacuum == nil {
+			return fmt.Errorf("make-up %s: gap %d has neither gas nor vacuum", m.ID, i+1)
+		}
+		if v := g.Vacuum; v != nil && !(v.PressurePa >= 0 && v.PillarRadiusMM > 0 && v.PillarPitchMM > 2*v.PillarRadiusMM) {
+			return fmt.Errorf("make-up %s: gap %d: pillars of %g mm radius stand %g mm apart; the pitch is above twice the radius", m.ID, i+1, v.PillarRadiusMM, v.PillarPitchMM)
 		}
 	}
 	for i, p := range m.Panes {

@@ -35,7 +35,7 @@ func gap(t testing.TB, mm float64, fractions map[string]float64) Gap {
 	if err != nil {
 		t.Fatal(err)
 	}
-	return Gap{mm, m}
+	return Gap{WidthMM: mm, Gas: m}
 }
 
 func rateOne(t testing.TB, m *Makeup, b Basis, o Options) *Rating {

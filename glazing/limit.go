@@ -57,18 +57,35 @@ func (l *Limit) For(makeup string) bool {
 	return l.Makeups == nil || slices.Contains(l.Makeups, makeup)
 }
 
-// Key returns the key of the figure, with the number of the pane, gap or surface if the limit
-// names one, else with "#".
-func (l *Limit) Key() string {
-	if l.Place == 0 {
-		return l.Figure.Key
+// Judged returns the figure that is held against the limit. Where the limit is for a condition, it is
+// that of the balance which has the alias or the key of the limit's figure; ok is false where a balance
+// has none such.
+func (l *Limit) Judged() (f Figure, ok bool) {
+	if l.Condition == "" || l.Figure.Condition != "" {
+		return l.Figure, true
 	}
-	return l.Figure.KeyAt(l.Place)
+	for _, f := range BalanceFigures() {
+		if f.Alias == l.Figure.Alias && f.Alias != "" || f.Key == l.Figure.Key {
+			return f.At(l.Condition), true
+		}
+	}
+	return l.Figure, false
+}
+
+// Key returns the key of the figure that is held against the limit, with the number of the pane, gap
+// or surface if the limit names one, else with "#".
+func (l *Limit) Key() string {
+	f, _ := l.Judged()
+	if l.Place == 0 {
+		return f.Key
+	}
+	return f.KeyAt(l.Place)
 }
 
 // String returns the requirement as a person writes it: "Ug at most 1.2 W/(m²·K)".
 func (l *Limit) String() string {
-	s := l.Figure.Symbol + l.Figure.Mark
+	f, _ := l.Judged()
+	s := f.Symbol + f.Mark
 	if l.Place > 0 {
 		s += strconv.Itoa(l.Place)
 	}
@@ -82,8 +99,8 @@ func (l *Limit) String() string {
 		}
 	}
 	s += " " + strings.Join(bounds, " and ")
-	if l.Figure.Unit != "" {
-		s += " " + l.Figure.Unit
+	if f.Unit != "" {
+		s += " " + f.Unit
 	}
 	return s
 }

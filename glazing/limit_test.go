@@ -64,8 +64,51 @@ func TestFigureNamed(t *testing.T) {
 		}
 	}
 	for _, f := range Figures() {
-		if f.Alias != "" && !f.Limitable() {
-			t.Errorf("no limit can be set for %s", f.Alias)
+		if number := f.Value != nil && f.Alias != ""; number != f.Limitable() {
+			t.Errorf("%s: that a limit can be set is %t", f.Key, !number)
+		}
+	}
+	for _, f := range BalanceFigures() {
+		if x := f.At(Winter); !x.Limitable() {
+			t.Errorf("no limit can be set for %s", x.Key)
+		}
+	}
+}
+
+// Where a rating and a balance have a figure of one short name, it is the same quantity, so that a limit
+// with a condition may be held against the balance's.
+func TestNamesOfBalances(t *testing.T) {
+	same := map[string]string{ // short name, and unit
+		"u": "W/(m²·K)", "g": "", "qi": "", "gap_conductance": "W/(m²·K)", "gap_radiative": "W/(m²·K)", "gap_convective": "W/(m²·K)",
+		"nusselt": "", "rayleigh": "", "drop": "K",
+	}
+	for _, f := range Figures() {
+		for _, b := range BalanceFigures() {
+			if f.Alias == "" || f.Alias != b.Alias {
+				continue
+			}
+			unit, ok := same[f.Alias]
+			if !ok || unit != f.Unit || unit != b.Unit || f.Per != b.Per {
+				t.Errorf("%s is a figure of a rating in %q and of a balance in %q", f.Alias, f.Unit, b.Unit)
+			}
+			delete(same, f.Alias)
+		}
+	}
+	if len(same) > 0 {
+		t.Errorf("not both have %v", same)
+	}
+	for _, tt := range []struct {
+		figure, condition, key string
+		ok                     bool
+	}{
+		{"u", "", "u_w_m2k", true}, {"u", "a", "balances.a.u_w_m2k", true}, {"solar.g", "a", "balances.a.g", true},
+		{"gaps.#.nusselt", "a.b", "balances.a.b.gaps.#.nusselt", true},
+		{"light", "a", "light.transmittance", false}, {"he", "a", "outside.coefficient_w_m2k", false}, {"absorptance", "a", "solar.absorptance.#", false},
+	} {
+		f, _, _ := FigureNamed(tt.figure)
+		l := Limit{Figure: f, Condition: tt.condition}
+		if got, ok := l.Judged(); ok != tt.ok || got.Key != tt.key || l.Key() != tt.key {
+			t.Errorf("%s under %q: %s, %t; want %s, %t", tt.figure, tt.condition, got.Key, ok, tt.key, tt.ok)
 		}
 	}
 }

@@ -20,6 +20,9 @@ type Options struct {
 	Sun         *spectra.Weighting // replaces the solar weighting
 	OutsideWM2K float64            // he of U and g; 0 means the basis's own
 	InsideWM2K  float64            // hi of U and g; 0 means that it follows the room-side emissivity
+	Conditions  []Condition        // of the user, for which balances are made
+	Person      *Person            // who feels the glazing; nil means AnyPerson
+	Stress      *StressScreening   // nil means no margin and a factor of 1
 }
 
 // A Method is a basis made ready to calculate: its wavelengths, weights and coefficients. It is
@@ -31,6 +34,10 @@ type Method struct {
 	grid  spectra.Grid
 	bands [bandCount]band
 	meter *colour.Meter
+	// conditions are those of the basis, own in number, and then those of the user; screened are those
+	// for which thermal stress is screened.
+	conditions, screened []Condition
+	own                  int
 }
 
 // band is one weighting on the method's grid.
@@ -70,6 +77,12 @@ func NewMethod(b Basis, o Options) *Method {
 		m.bands[i] = band{w, w.On(m.grid)}
 	}
 	m.meter = colour.NewMeter(m.grid)
+	if b.Balances() {
+		m.conditions = b.conditions()
+		m.own = len(m.conditions)
+	}
+	m.conditions = append(m.conditions, o.Conditions...)
+	m.screened = screenedBy(m.conditions)
 	return m
 }
 
@@ -113,12 +126,15 @@ type Ready struct {
 
 // prepared is what is ready of one state.
 type prepared struct {
-	gaps     []thermal.Gap
-	room     Emissivity // of the room-side face
-	why      string     // why U and g are unknown, or ""
-	open     bool       // whether that is for unknown emissivities alone
-	coverage coverage
-	cautions []Caution // what the spectra lack
+	gaps []thermal.Gap
+	room Emissivity // of the room-side face
+	why  string     // why U and g of EN 673 and EN 410 are unknown, or ""
+	open bool       // whether that is for unknown emissivities alone
+	// system is the state ready for balances; nil for the reason systemWhy.
+	system    *thermal.System
+	systemWhy string
+	coverage  coverage
+	cautions  []Caution // what the spectra lack
 }
 
 // glassResistance returns that of all panes together, m²·K/W.
@@ -160,6 +176,13 @@ func (m *Method) Ready(mk *Makeup) (*Ready, error) {
 	var gases []thermal.Gas
 	for _, g := range mk.Gaps {
 		r.mm += g.WidthMM
+		if g.Vacuum != nil {
+			gases = append(gases, thermal.Gas{Name: g.Content()})
+			continue
+		}
+		if _, err := g.Gas.Fluid(); err != nil && len(m.conditions) > 0 {
+			return nil, fmt.Errorf("make-up %s: %w", mk.ID, err)
+		}
 		gases = append(gases, g.Gas.Properties())
 	}
 	for _, s := range states {
@@ -220,6 +243,10 @@ func (r *Ready) addState(s State, gases []thermal.Gas) {
 		inner, _ := m.Panes[k+1].faces(s.Tints[k+1])
 		gaps[k] = thermal.Gap{WidthM: m.Gaps[k].WidthMM / 1000, Gas: gases[k],
 			Emissivity: [2]float64{need(outer, k, true), need(inner, k+1, false)}}
+		if m.Gaps[k].Vacuum != nil {
+			v := m.vacuum(k)
+			gaps[k].Evacuated, gaps[k].ConductanceWM2K = true, v.Conductance()
+		}
 	}
 	_, room := m.Panes[n-1].faces(s.Tints[n-1])
 	why := ""
@@ -234,15 +261,13 @@ func (r *Ready) addState(s State, gases []thermal.Gas) {
 	}
 	open := why != ""
 	for k, p := range m.Panes {
-		if p.Pane.TauInfrared > 0 || spectra.InfraredMean(p.Pane.Tints[s.Tints[k]].Spectrum.InfraredTau) > opaque {
-			why, open = "pane "+p.Pane.ID+" lets infrared through; "+noBalance, false
+		if p.Pane.infraredTau(s.Tints[k]) > 0 {
+			why, open = "pane "+p.Pane.ID+" lets infrared through, which only the balances of na, iso15099 and of conditions can take in", false
 			break
 		}
 	}
-	if r.Method.Basis.balance {
-		why, open = noBalance, false
-	}
 	p := prepared{gaps: gaps, room: room, why: why, open: open}
+	p.system, p.systemWhy = r.systemOf(s)
 	p.coverage = r.cover(s, &p.cautions)
 	r.prepared = append(r.prepared, p)
 }
@@ -431,7 +456,7 @@ func (m *Method) Editions() string {
 		s += "; solar weighting: " + m.Options.Sun.Source + "; UV, damage and skin keep the sun of EN 410:2011"
 	}
 	var c []string
-	if !m.Basis.balance {
+	if !m.Basis.Balances() {
 		c = append(c, fmt.Sprintf("he %.6g", m.outside(m.Basis.u)))
 		if m.Options.InsideWM2K > 0 {
 			c = append(c, fmt.Sprintf("hi %.6g", m.Options.InsideWM2K))

@@ -42,13 +42,24 @@ type Rating struct {
 	U                         Value                 // of the centre of the glass, W/(m²·K) (EN 673)
 	Gaps                      []thermal.GapState    // at the make-up's tilt, as U has them; 0 where unknown, see U.Why
 	GapsG                     []thermal.GapState    // of vertical gaps, as g has them
-	Heat                      thermal.SecondaryHeat // what leads to qi
+	Heat                      thermal.SecondaryHeat // what leads to qi; not of balances
+	Balances                  []Balance             // under the conditions of the basis and of the user
+	Stress                    []Stress              // of each pane; filled by Rate and RateAll, not by RateInto
 
 	Cautions []Caution // filled by Rate and RateAll, not by RateInto
 
 	panes    []optics.Pane
 	stack    optics.Stack
 	absorbed []float64
+
+	// Filled with Stress: the hottest room-side surface and the hottest glass at a seal or interlayer,
+	// and what a clear calm night does outside.
+	hot struct {
+		touchC, sealC                 float64
+		touchCondition, sealCondition string
+		sealPane                      int
+	}
+	clearNight struct{ surfaceC, humidity float64 }
 }
 
 // Band is a weighted transmittance and both reflectances.
@@ -78,6 +89,11 @@ func (r *Ready) RateAll() ([]Rating, error) {
 		}
 	}
 	figures := Figures()
+	for i := range ratings {
+		if err := r.screen(&ratings[i]); err != nil {
+			return nil, err
+		}
+	}
 	for i := range ratings {
 		ratings[i].Cautions = cautionsOf(ratings, i, figures)
 	}
@@ -154,12 +170,15 @@ func (r *Ready) rateHeat(dst *Rating, state int) error {
 	p := &r.prepared[state]
 	gaps, why, room := p.gaps, p.why, p.room.Corrected
 	dst.Gaps, dst.GapsG = resized(dst.Gaps, n-1), resized(dst.GapsG, n-1)
+	if err := r.rateBalances(dst); err != nil {
+		return err
+	}
+	if m.Basis.Balances() {
+		r.heatOfBalances(dst)
+		return nil
+	}
 	dst.OutsideWM2K, dst.InsideWM2K = known(m.outside(m.Basis.u)), m.inside(m.Basis.u, room)
 	dst.OutsideGWM2K, dst.InsideGWM2K = known(m.outside(m.Basis.g)), m.inside(m.Basis.g, room)
-	if m.Basis.balance {
-		none := unknown(why)
-		dst.OutsideWM2K, dst.InsideWM2K, dst.OutsideGWM2K, dst.InsideGWM2K = none, none, none, none
-	}
 	if why != "" {
 		clear(dst.Gaps)
 		clear(dst.GapsG)
@@ -188,24 +207,26 @@ func (r *Ready) rateHeat(dst *Rating, state int) error {
 	}
 	dst.U = known(thermal.U(dst.OutsideWM2K.Number, dst.InsideWM2K.Number, r.glassResistance(), dst.Gaps))
 
-	missing := ""
-	for _, v := range dst.Absorptance {
-		if !v.Known {
-			missing = v.Why
-			break
-		}
-	}
-	g := dst.Solar.Transmittance.Number + dst.Heat.Inward
+	missing := dst.sunWhy()
 	dst.SecondaryHeat = known(dst.Heat.Inward).orNot(missing)
-	dst.G = known(g).orNot(missing)
-	dst.ShadingCoefficient = known(g / shadingReference).orNot(missing)
-	dst.LightToSolarGain = known(dst.Light.Transmittance.Number / g).orNot(missing)
-	if !dst.Light.Transmittance.Known {
-		dst.LightToSolarGain = unknown(dst.Light.Transmittance.Why)
-	} else if g <= 0 && missing == "" {
-		dst.LightToSolarGain = unknown("g is 0")
-	}
+	dst.G = known(dst.Solar.Transmittance.Number + dst.Heat.Inward).orNot(missing)
+	dst.shade()
 	return nil
+}
+
+// shade takes from g what follows from it.
+func (r *Rating) shade() {
+	r.ShadingCoefficient = known(r.G.Number / shadingReference).orNot(r.G.Why)
+	switch light := r.Light.Transmittance; {
+	case !light.Known:
+		r.LightToSolarGain = unknown(light.Why)
+	case !r.G.Known:
+		r.LightToSolarGain = unknown(r.G.Why)
+	case r.G.Number <= 0:
+		r.LightToSolarGain = unknown("g is 0")
+	default:
+		r.LightToSolarGain = known(light.Number / r.G.Number)
+	}
 }
 
 // InTint reports whether the rating is of a tint that somebody named: by its whole name, or by

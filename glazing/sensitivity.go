@@ -66,8 +66,8 @@ var variations = [...]variation{
 }
 
 // Sensitivities returns the sensitivities of U and g of a rating to the corrected emissivity of
-// each surface that faces a gap and of that which faces the room, and to the fill and the width
-// of each gap, by central differences of second order, at a bound by one-sided ones. Where hi is
+// each surface that faces a gap and of that which faces the room (where a balance stands behind them
+// also of surface 1), and to the fill and the width of each gap with gas, by central differences of second order, at a bound by one-sided ones. Where hi is
 // given by the user, that of the room-side surface is left out, for it enters nothing. It is an
 // error if U is not known.
 func Sensitivities(r *Rating) ([]Sensitivity, error) {
@@ -81,7 +81,7 @@ func sensitivities(r *Rating, kinds []variation) ([]Sensitivity, error) {
 	var out []Sensitivity
 	for _, v := range kinds {
 		for i := range v.input.count(r) {
-			if i == 0 && v.input == EmissivityInput { // surface 1 faces the outside
+			if v.leavesOut(r, i) {
 				continue
 			}
 			s, err := v.sensitivity(r, i)
@@ -94,12 +94,22 @@ func sensitivities(r *Rating, kinds []variation) ([]Sensitivity, error) {
 	return out, nil
 }
 
+// leavesOut reports whether input i, from 0, of a kind enters neither U nor g, or is not there: the
+// emissivity of surface 1 where outside a coefficient stands for convection and radiation, gas and
+// width of a vacuum.
+func (v variation) leavesOut(r *Rating, i int) bool {
+	if v.input == EmissivityInput {
+		return i == 0 && !r.Method.Basis.Balances()
+	}
+	return r.Makeup.Gaps[i].Vacuum != nil
+}
+
 // count returns how many surfaces or gaps an input may be of.
 func (in Input) count(r *Rating) int {
 	if in != EmissivityInput {
 		return len(r.Makeup.Gaps)
 	}
-	if r.Method.Options.InsideWM2K > 0 {
+	if r.Method.Options.InsideWM2K > 0 && !r.Method.Basis.Balances() {
 		return 2*len(r.Makeup.Panes) - 1
 	}
 	return 2 * len(r.Makeup.Panes)
@@ -109,6 +119,9 @@ func (in Input) count(r *Rating) int {
 func (in Input) of(r *Rating, i int) float64 {
 	switch in {
 	case EmissivityInput:
+		if r.Method.Basis.Balances() {
+			return r.Surfaces[i].Balanced().Number
+		}
 		return r.Surfaces[i].Corrected.Number
 	case FillInput:
 		return fill(r.Makeup.Gaps[i].Gas)
@@ -125,7 +138,7 @@ func (in Input) set(m *Makeup, i int, value float64) {
 		if (i%2 == 1) != p.Turned {
 			face = &p.Pane.Tints[0].Back
 		}
-		face.Corrected = known(value)
+		face.Corrected, face.Hemispherical = known(value), known(value)
 	case FillInput:
 		m.Gaps[i].Gas = filled(m.Gaps[i].Gas, value)
 	case WidthInput:
@@ -188,7 +201,13 @@ func (v variation) sensitivity(r *Rating, i int) (Sensitivity, error) {
 
 // convects says of each gap, as U and as g have it, whether its gas moves.
 func convects(r *Rating) (moves []bool) {
-	for _, s := range slices.Concat(r.Gaps, r.GapsG) {
+	gaps := slices.Concat(r.Gaps, r.GapsG)
+	if b := r.Balance(Summer); b != nil {
+		for k := range r.Makeup.Gaps {
+			gaps = append(gaps, b.Lit.Gaps[k].GapState(), b.Dark.Gaps[k].GapState())
+		}
+	}
+	for _, s := range gaps {
 		moves = append(moves, s.Nusselt > 1)
 	}
 	return moves
@@ -209,7 +228,9 @@ func (r *Rating) inState() *Makeup {
 
 // again rates a changed make-up of one state by the method of r.
 func (x *Rating) again(r *Rating, m *Makeup) error {
-	ready, err := r.Method.Ready(m)
+	method := *r.Method
+	method.conditions = method.conditions[:method.own] // those of the user move neither U nor g
+	ready, err := method.Ready(m)
 	if err != nil {
 		return err
 	}
@@ -254,7 +275,7 @@ type Fill struct {
 
 // Fills returns U for each of FillShares: in every gap that has a gas other than air, such gases,
 // in the proportion that they have, fill that share and air the rest. It is an error if U is not
-// known or all gaps are filled with air.
+// known or no gap holds a gas other than air.
 func Fills(r *Rating) ([]Fill, error) {
 	switch {
 	case !r.U.Known:
@@ -262,7 +283,7 @@ func Fills(r *Rating) ([]Fill, error) {
 	case len(r.Makeup.Gaps) == 0:
 		return nil, errors.New("there is no gap")
 	case !slices.ContainsFunc(r.Makeup.Gaps, func(g Gap) bool { return fill(g.Gas) > 0 }):
-		return nil, errors.New("every gap is filled with air")
+		return nil, errors.New("no gap holds a gas other than air")
 	}
 	var out []Fill
 	for _, share := range FillShares() {

@@ -207,10 +207,12 @@ func TestSensitivitiesUnknown(t *testing.T) {
 		{"laminate", EN, &Makeup{Panes: []Placed{{Pane: laminate}, {Pane: clear}}, Gaps: []Gap{argon}}, Options{}, 5, "", "", true},
 		{"single pane", EN, &Makeup{Panes: []Placed{{Pane: clear}}}, Options{}, 1, "", "there is no gap", true},
 		{"single pane, hi typed", EN, &Makeup{Panes: []Placed{{Pane: clear}}}, Options{InsideWM2K: 8}, 0, "", "there is no gap", true},
-		{"all air", ISO, &Makeup{Panes: []Placed{{Pane: clear}, {Pane: clear}}, Gaps: []Gap{still}}, Options{}, 5, "", "filled with air", true},
+		{"all air", ISO, &Makeup{Panes: []Placed{{Pane: clear}, {Pane: clear}}, Gaps: []Gap{still}}, Options{}, 5, "", "a gas other than air", true},
 		{"no emissivity", EN, &Makeup{Panes: []Placed{{Pane: bare}, {Pane: clear}}, Gaps: []Gap{argon}}, Options{}, 0, "surface 2", "surface 2", false},
 		{"outside face unknown", EN, &Makeup{Panes: []Placed{{Pane: bare, Turned: true}, {Pane: clear}}, Gaps: []Gap{argon}}, Options{}, 5, "", "", true},
-		{"no U under this basis", NA, &Makeup{Panes: []Placed{{Pane: clear}, {Pane: clear}}, Gaps: []Gap{argon}}, Options{}, 0, "ISO 15099", "ISO 15099", false},
+		{"by balances, surface 1 too", NA, &Makeup{Panes: []Placed{{Pane: clear}, {Pane: clear}}, Gaps: []Gap{argon}}, Options{}, 6, "", "", true},
+		{"by balances, a face unknown", NA, &Makeup{Panes: []Placed{{Pane: bare}, {Pane: clear}}, Gaps: []Gap{argon}}, Options{}, 0, "surface 2", "surface 2", false},
+		{"vacuum", EN, &Makeup{Panes: []Placed{{Pane: clear}, {Pane: clear}}, Gaps: []Gap{{WidthMM: 0.2, Vacuum: &Vacuum{PressurePa: 0.1, PillarRadiusMM: 0.25, PillarPitchMM: 20}}}}, Options{}, 3, "", "a gas other than air", true},
 		{"no g", EN, &Makeup{Panes: []Placed{{Pane: short}, {Pane: clear}}, Gaps: []Gap{argon}}, Options{}, 5, "", "", false},
 	} {
 		r := rateOne(t, tt.m, tt.basis, tt.o)

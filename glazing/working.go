@@ -12,7 +12,8 @@ import (
 
 // A Step is one line of a hand calculation: what is computed, by which formula, the formula with
 // the numbers put in, and what comes out. Numbers can be evaluated as it stands: + − · / ^ and
-// brackets, and max(a, b). A − before a number in brackets is its sign.
+// brackets, max(a, b), exp and ln, and sin, cos and atan with angles in degrees. A − before a number
+// in brackets is its sign.
 type Step struct {
 	Symbol, Meaning string
 	Formula         string
@@ -71,6 +72,11 @@ func (c *Chapter) lack(symbol, why string) {
 	c.lacking[at].symbols = append(c.lacking[at].symbols, symbol)
 }
 
+// step adds a step.
+func (c *Chapter) step(symbol, meaning, formula, numbers string, value float64, unit, clause string) {
+	c.Steps = append(c.Steps, Step{symbol, meaning, formula, numbers, value, unit, clause})
+}
+
 // remark adds a sentence to the note.
 func (c *Chapter) remark(text string) { c.Note = strings.TrimSpace(c.Note + " " + text) }
 
@@ -88,6 +94,11 @@ func putDigits(v float64, n int) string {
 	return s
 }
 
+// plain writes a number in a sentence.
+func plain(v float64) string {
+	return strings.Replace(strconv.FormatFloat(v, 'g', 6, 64), "-", "−", 1)
+}
+
 // putFor writes a number that enters a formula whose result is so much smaller that leading digits
 // cancel: with as many as six in the result need.
 func putFor(v, result float64) string {
@@ -103,21 +114,25 @@ func minus(a, b float64) string { return putFor(a, a-b) + " − " + putFor(b, a-
 
 // Working returns the calculation of a rating in the order of a hand calculation, from the
 // intermediates that the rating keeps: thickness and mass, the weighted figures, the combination of panes at one
-// wavelength, colours, emissivities, every gap, U and g; then U of other gas fills and the
-// sensitivities, each of which is rated anew.
+// wavelength, colours, emissivities, every gap, U and g; under each condition its heat balance and what
+// follows from it; thermal stress; then U of other gas fills and the sensitivities, each of which is
+// rated anew.
 func Working(r *Rating) []Chapter {
 	out := []Chapter{workMass(r), workLight(r), workStack(r), workSolar(r), workUV(r)}
 	out = append(out, workColours(r)...)
 	out = append(out, workRendering(r)...)
 	out = append(out, workEmissivities(r))
-	if r.U.Known {
+	switch {
+	case r.Method.Basis.Balances():
+	case r.U.Known:
 		out = append(out, workHeat(r)...)
-	} else {
+	default:
 		c := Chapter{Title: "U-value and g-value"}
 		c.lack("U, g", r.U.Why)
 		out = append(out, c)
 	}
-	out = append(out, workFills(r), workSensitivities(r))
+	out = append(out, workBalances(r)...)
+	out = append(out, workStress(r), workFills(r), workSensitivities(r))
 	for i := range out {
 		for _, l := range out[i].lacking {
 			out[i].remark("Not known: " + strings.Join(l.symbols, ", ") + ": " + l.why + ".")

@@ -53,8 +53,19 @@ func (c *Chapter) workEmissivity(r *Rating, i int) {
 	c.Steps = append(c.Steps, normal, step, corrected)
 	if e.Hemispherical.Known {
 		c.Steps = append(c.Steps, Step{Symbol: fmt.Sprintf("εh%d", number), Meaning: "hemispherical emissivity", Value: e.Hemispherical.Number,
-			Formula: "exact integral over angle, beside the one above, which enters U", Numbers: put(e.Hemispherical.Number), Clause: "integral over angle"})
+			Formula: "exact integral over angle; " + entersWhere(r), Numbers: put(e.Hemispherical.Number), Clause: "integral over angle"})
 	}
+}
+
+// entersWhere says where the exact emissivity enters and where the corrected one does.
+func entersWhere(r *Rating) string {
+	switch {
+	case r.Method.Basis.Balances():
+		return "it enters balances, the one above nothing"
+	case len(r.Balances) > 0:
+		return "it enters the balances of conditions, the one above U"
+	}
+	return "the one above enters U"
 }
 
 // workNormal writes out the normal emissivity of surface i from the infrared rows of its face.

@@ -1,6 +1,6 @@
 package glazing
 
-// The working of gaps, U and g.
+// The working of gaps, U and g by EN 673 and EN 410.
 
 import (
 	"fmt"
@@ -20,7 +20,9 @@ func workHeat(r *Rating) []Chapter {
 	out = append(out, workU(r))
 	if len(r.Gaps) > 0 && r.Ready.tilted != r.Ready.vertical {
 		for k := range r.GapsG {
-			out = append(out, workGap(r, k, r.GapsG, uprightDeg, " as g has it: upright"))
+			if r.Makeup.Gaps[k].Vacuum == nil { // the same at every tilt
+				out = append(out, workGap(r, k, r.GapsG, uprightDeg, " as g has it: upright"))
+			}
 		}
 	}
 	return append(out, workG(r))
@@ -33,6 +35,13 @@ const uprightDeg = 90
 func workGap(r *Rating, k int, states []thermal.GapState, tiltDeg float64, suffix string) Chapter {
 	g, s := r.Ready.prepared[r.State].gaps[k], states[k]
 	c := Chapter{Title: fmt.Sprintf("Gap %d%s: %.6g mm %s, surfaces %d and %d", k+1, suffix, r.Makeup.Gaps[k].WidthMM, g.Gas.Name, 2*k+2, 2*k+3)}
+	if g.Evacuated {
+		c.remark("Evacuated, which is outside " + r.Method.Basis.rounding + ": pillars, residual gas and radiation at 283 K stand in its place.")
+		c.Steps = append(c.Steps, workDrop(states, k))
+		c.vacuum(r.Makeup.vacuum(k))
+		c.radiationAt283K(g, s, k)
+		return c
+	}
 	mixture := r.Makeup.Gaps[k].Gas
 	mixed := func(get func(thermal.Gas) float64) string {
 		var parts []string
@@ -51,16 +60,7 @@ func workGap(r *Rating, k int, states []thermal.GapState, tiltDeg float64, suffi
 		{Symbol: "λ", Meaning: "conductivity", Formula: table, Numbers: mixed(conductivity), Value: g.Gas.ConductivityWMK, Unit: "W/(m·K)", Clause: "EN 673, 6.2"},
 		{Symbol: "c", Meaning: "heat capacity", Formula: table, Numbers: mixed(capacity), Value: g.Gas.HeatCapacityJKGK, Unit: "J/(kg·K)", Clause: "EN 673, 6.2"},
 	}
-	drop := Step{Symbol: "ΔT", Meaning: "temperature drop", Formula: "of the standard", Numbers: put(thermal.TotalDrop), Value: float64(s.Drop), Unit: "K", Clause: "EN 673, 5.3"}
-	if len(states) > 1 {
-		var all []string
-		for i := range states {
-			all = append(all, "1/"+put(states[i].Total))
-		}
-		drop.Formula = "15·(1/hs)/Σ(1/hs), iterated from equal shares"
-		drop.Numbers = put(thermal.TotalDrop) + "·(1/" + put(s.Total) + ")/(" + strings.Join(all, " + ") + ")"
-	}
-	steps = append(steps, drop,
+	steps = append(steps, workDrop(states, k),
 		Step{Symbol: "Gr", Meaning: "Grashof number", Formula: "9.81·s^3·ΔT·ρ^2/(Tm·µ^2)",
 			Numbers: fmt.Sprintf("%s·%s^3·%s·%s^2/(%s·%s^2)", put(thermal.Gravity), put(g.WidthM), put(float64(s.Drop)), put(g.Gas.DensityKGM3), put(thermal.MeanTemperature), put(g.Gas.ViscosityPaS)),
 			Value:   s.Grashof, Clause: "EN 673 (7)"},
@@ -71,12 +71,32 @@ func workGap(r *Rating, k int, states []thermal.GapState, tiltDeg float64, suffi
 	hg := fmt.Sprintf("%s·%s/%s", put(s.Nusselt), put(g.Gas.ConductivityWMK), put(g.WidthM))
 	c.Steps = append(append(steps, workNusselt(s, tiltDeg, r.Makeup.HeatFlow)...),
 		Step{Symbol: "hg", Meaning: "gas conductance", Formula: "Nu·λ/s", Numbers: hg, Value: s.Convective, Unit: "W/(m²·K)", Clause: "EN 673 (5)"},
-		Step{Symbol: "hr", Meaning: "radiative conductance", Formula: fmt.Sprintf("4·σ·Tm^3/(1/ε%d + 1/ε%d − 1)", 2*k+2, 2*k+3),
-			Numbers: fmt.Sprintf("4·%s·%s^3/(1/%s + 1/%s − 1)", put(thermal.StefanBoltzmann), put(thermal.MeanTemperature), put(g.Emissivity[0]), put(g.Emissivity[1])),
-			Value:   s.Radiative, Unit: "W/(m²·K)", Clause: "EN 673 (4)"},
-		Step{Symbol: "hs", Meaning: "conductance of the gap", Formula: "hr + hg", Numbers: put(s.Radiative) + " + " + put(s.Convective), Value: s.Total, Unit: "W/(m²·K)", Clause: "EN 673 (3)"},
 	)
+	c.radiationAt283K(g, s, k)
 	return c
+}
+
+// workDrop writes out the temperature drop over gap k.
+func workDrop(states []thermal.GapState, k int) Step {
+	s := states[k]
+	drop := Step{Symbol: "ΔT", Meaning: "temperature drop", Formula: "of the standard", Numbers: put(thermal.TotalDrop), Value: float64(s.Drop), Unit: "K", Clause: "EN 673, 5.3"}
+	if len(states) > 1 {
+		var all []string
+		for i := range states {
+			all = append(all, "1/"+put(states[i].Total))
+		}
+		drop.Formula = "15·(1/hs)/Σ(1/hs), iterated from equal shares"
+		drop.Numbers = put(thermal.TotalDrop) + "·(1/" + put(s.Total) + ")/(" + strings.Join(all, " + ") + ")"
+	}
+	return drop
+}
+
+// radiationAt283K writes out hr and hs of gap k.
+func (c *Chapter) radiationAt283K(g thermal.Gap, s thermal.GapState, k int) {
+	c.step("hr", "radiative conductance", fmt.Sprintf("4·σ·Tm^3/(1/ε%d + 1/ε%d − 1)", 2*k+2, 2*k+3),
+		fmt.Sprintf("4·%s·%s^3/(1/%s + 1/%s − 1)", put(thermal.StefanBoltzmann), put(thermal.MeanTemperature), put(g.Emissivity[0]), put(g.Emissivity[1])),
+		s.Radiative, "W/(m²·K)", "EN 673 (4)")
+	c.step("hs", "conductance of the gap", "hr + hg", put(s.Radiative)+" + "+put(s.Convective), s.Total, "W/(m²·K)", "EN 673 (3)")
 }
 
 // tabulatedDeg is how far the tilts lie apart for which EN 673 gives A and n: 0, 45 and 90°.
@@ -132,9 +152,11 @@ func outer(r *Rating, value float64, clause string) Step {
 	return step
 }
 
+const clauseGlass = "EN 673 (2)"
+
 // workGlass writes out the resistance of each pane and of all.
-func workGlass(r *Rating) []Step {
-	const unit, clause = "m²·K/W", "EN 673 (2)"
+func workGlass(r *Rating, clause string) []Step {
+	const unit = "m²·K/W"
 	var steps []Step
 	var symbols, values []string
 	for k, p := range r.Makeup.Panes {
@@ -165,7 +187,7 @@ func resistance(he, hi, glass float64, gaps []thermal.GapState, value float64, c
 func workU(r *Rating) Chapter {
 	he, hi := r.OutsideWM2K.Number, r.InsideWM2K.Number
 	total := resistance(he, hi, r.Ready.glassResistance(), r.Gaps, 1/r.U.Number, "EN 673 (1), (2)")
-	steps := append([]Step{outer(r, he, "EN 673, 7"), inner(r, r.Method.Basis.u, hi, "EN 673, 7")}, workGlass(r)...)
+	steps := append([]Step{outer(r, he, "EN 673, 7"), inner(r, r.Method.Basis.u, hi, "EN 673, 7")}, workGlass(r, clauseGlass)...)
 	return Chapter{Title: "U-value of the centre of the glass",
 		Note: "rounded as " + r.Method.Basis.rounding + " rounds: " + PrintRounded(r.U.Number, r.Method.Basis.uPlaces) + " W/(m²·K)",
 		Steps: append(steps, total,
@@ -184,7 +206,7 @@ func workG(r *Rating) Chapter {
 	glass := 0.0 // the standards leave the glass of a single pane out
 	if n > 1 {
 		glass = r.Ready.glassResistance()
-		c.Steps = append(c.Steps, workGlass(r)...)
+		c.Steps = append(c.Steps, workGlass(r, clauseGlass)...)
 	}
 	// Panes are nodes: the outermost at its outer face, the innermost at its inner face, the
 	// others at mid-glass. outside is the glass between surface 1 and the node of a pane.
@@ -225,10 +247,18 @@ func workG(r *Rating) Chapter {
 	c.Steps = append(c.Steps, total,
 		Step{Symbol: "qi", Meaning: "secondary heat towards the inside", Formula: "(a0 + Σ b/hs)/Rt", Numbers: "(" + numerator + ")/" + put(total.Value), Value: r.SecondaryHeat.Number, Clause: clause},
 		Step{Symbol: "g", Meaning: "total solar energy transmittance", Formula: "τe + qi", Numbers: put(r.Solar.Transmittance.Number) + " + " + put(r.SecondaryHeat.Number), Value: g, Clause: "EN 410, 5.4.1"},
-		Step{Symbol: "SC", Meaning: "shading coefficient", Formula: "g/0.87", Numbers: put(g) + "/" + put(shadingReference), Value: r.ShadingCoefficient.Number, Clause: "EN 410, 5.7"})
-	if r.LightToSolarGain.Known {
-		c.Steps = append(c.Steps, Step{Symbol: "τv/g", Meaning: "light to solar gain", Formula: "τv/g",
-			Numbers: put(r.Light.Transmittance.Number) + "/" + put(g), Value: r.LightToSolarGain.Number, Clause: "common practice, no source"})
-	}
+	)
+	c.Steps = append(c.Steps, workShading(r)...)
 	return c
+}
+
+// workShading writes out what follows from g.
+func workShading(r *Rating) []Step {
+	g := put(r.G.Number)
+	steps := []Step{{Symbol: "SC", Meaning: "shading coefficient", Formula: "g/0.87", Numbers: g + "/" + put(shadingReference), Value: r.ShadingCoefficient.Number, Clause: "EN 410, 5.7"}}
+	if r.LightToSolarGain.Known {
+		steps = append(steps, Step{Symbol: "τv/g", Meaning: "light to solar gain", Formula: "τv/g",
+			Numbers: put(r.Light.Transmittance.Number) + "/" + g, Value: r.LightToSolarGain.Number, Clause: "common practice, no source"})
+	}
+	return steps
 }

@@ -77,6 +77,9 @@ func workSensitivities(r *Rating) Chapter {
 		switch s.Input {
 		case EmissivityInput:
 			label = fmt.Sprintf("ε%d", s.Number)
+			if r.Method.Basis.Balances() {
+				label = r.emissivitySymbol(s.Number - 1)
+			}
 		case FillInput:
 			label = fmt.Sprintf("gas in gap %d", s.Number)
 		case WidthInput:

@@ -237,7 +237,7 @@ func TestWorkingOfFills(t *testing.T) {
 			if got, want := strings.Contains(c.Note, "a fuller gap would have"), tt.rated == "60"; got != want {
 				t.Errorf("%v: note %q", tt.gas, c.Note)
 			}
-		} else if !strings.Contains(c.Note, "filled with air") {
+		} else if !strings.Contains(c.Note, "no gap holds a gas other than air") {
 			t.Errorf("%v: note %q", tt.gas, c.Note)
 		}
 		if rows != tt.rows || len(chapters[at+1].Rows.Cells) != 5 {

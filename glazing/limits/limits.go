@@ -6,8 +6,9 @@
 // A limit is the user's. Nothing here knows what an authority asks for, and no result says more
 // than how a calculated figure stands to a number that was typed in.
 //
-// Not in this version: conditions (they need the detailed heat balance), whole windows, the
-// uncertainty of what was put in.
+// A limit for a condition is held against the figures of the balance under it.
+//
+// Not in this version: whole windows, the uncertainty of what was put in.
 package limits
 
 import (
@@ -41,10 +42,11 @@ type Result struct {
 	Rating *glazing.Rating
 	Tint   string // of the rating; without one the tint that the limit names, or ""
 	Basis  string // under which the figure is meant; "" where that is not settled
-	// Figure is the key, with the number of the pane, gap or surface. Where the limit is for every
-	// one, it is the worst; "#" stands where there is none.
+	// Figure is the key of what was judged, with the number of the pane, gap or surface. Where the
+	// limit is for every one, it is the worst; "#" stands where there is none.
 	Figure string
-	Index  int // of that pane, gap or surface, from 0
+	Judged glazing.Figure // of that key: the limit's, or that of the balance under its condition
+	Index  int            // of that pane, gap or surface, from 0
 
 	Value   glazing.Value // unrounded
 	Rounded glazing.Value // as outputs round it
@@ -101,6 +103,7 @@ func Count(results []Result, v Verdict) int {
 
 func judge(l *glazing.Limit, m *glazing.Makeup, bases []glazing.Basis, ratings []glazing.Rating) []Result {
 	top := Result{Limit: l, Makeup: m, Basis: BasisOf(l, bases), Figure: l.Key(), Assumed: assumed(l, bases)}
+	top.Judged, _ = l.Judged()
 	rule := l.Rule()
 	if rule != glazing.EachTint && rule != glazing.WorstTint {
 		top.Tint = rule
@@ -148,8 +151,8 @@ func beyond(l *glazing.Limit, bases []glazing.Basis) string {
 	if l.Scope == glazing.WindowScope {
 		why = append(why, "the limit is for the whole window, the figures are of the centre of the glass")
 	}
-	if l.Condition != "" {
-		why = append(why, "the limit is for the condition "+l.Condition+", which needs the detailed heat balance; this version does not have it")
+	if f, ok := l.Judged(); !ok {
+		why = append(why, f.Symbol+f.Mark+" is none of the figures of a condition; a limit for it names no condition")
 	}
 	if BasisOf(l, bases) == "" {
 		names := make([]string, len(bases))
@@ -249,16 +252,18 @@ var placeNames = map[glazing.Per]string{glazing.PerPane: "pane", glazing.PerGap:
 func (top Result) of(r *glazing.Rating) Result {
 	l := top.Limit
 	top.Rating, top.Tint = r, r.Tint
-	first, end := 0, l.Figure.Count(r)
+	first, end := 0, top.Judged.Count(r)
 	if l.Place > 0 {
 		first, end = l.Place-1, min(l.Place, end)
 	}
 	switch {
+	case top.Judged.Condition != "" && r.Balance(top.Judged.Condition) == nil:
+		return top.cannot(noCondition(r, top.Judged.Condition))
 	case first < end:
 	case l.Place > 0:
-		return top.cannot(fmt.Sprintf("it has no %s %d", placeNames[l.Figure.Per], l.Place))
+		return top.cannot(fmt.Sprintf("it has no %s %d", placeNames[top.Judged.Per], l.Place))
 	default:
-		return top.cannot("it has no " + placeNames[l.Figure.Per])
+		return top.cannot("it has no " + placeNames[top.Judged.Per])
 	}
 	var results []Result
 	for i := first; i < end; i++ {
@@ -267,18 +272,40 @@ func (top Result) of(r *glazing.Rating) Result {
 	return worst(results)
 }
 
+// noCondition says that a rating has no balance under a condition, and under which it has one.
+func noCondition(r *glazing.Rating, id string) string {
+	basis := r.Method.Basis.Name
+	if id == glazing.Winter || id == glazing.Summer {
+		var names []string
+		for _, b := range glazing.Bases() {
+			if b.Balances() {
+				names = append(names, b.Name)
+			}
+		}
+		return fmt.Sprintf("%s is a condition of the bases %s, and basis %s has none", id, strings.Join(names, " and "), basis)
+	}
+	if id == glazing.ColdSun {
+		return id + " is screened for thermal stress alone; a condition of the project that is called so has every figure"
+	}
+	ids := glazing.ConditionIDs([]glazing.Rating{*r})
+	if len(ids) == 0 {
+		return fmt.Sprintf("there is no condition %s; the project has none", id)
+	}
+	return fmt.Sprintf("there is no condition %s under basis %s; there are %s", id, basis, strings.Join(ids, ", "))
+}
+
 // at judges the figure at one pane, gap or surface, from 0.
 func (top Result) at(i int) Result {
 	l, r := top.Limit, top.Rating
-	top.Index, top.Figure = i, l.Figure.KeyAt(i+1)
-	v := l.Figure.Value(r, i)
+	top.Index, top.Figure = i, top.Judged.KeyAt(i+1)
+	v := top.Judged.Value(r, i)
 	switch {
 	case !v.Known:
 		return top.cannot(v.Why)
 	case math.IsNaN(v.Number) || math.IsInf(v.Number, 0):
 		return top.cannot("the figure is no number")
 	}
-	top.Value, top.Places = v, l.Figure.Decimals(r, v.Number)
+	top.Value, top.Places = v, top.Judged.Decimals(r, v.Number)
 	top.Rounded = glazing.Value{Number: glazing.Round(v.Number, top.Places), Known: true}
 	top.Margin = glazing.Value{Number: MarginOf(l, v.Number), Known: true}
 	switch plain, rounded := MarginOf(l, v.Number) >= 0, MarginOf(l, top.Rounded.Number) >= 0; {

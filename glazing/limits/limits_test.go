@@ -82,6 +82,8 @@ func limit(t testing.TB, figure string, atLeast, atMost float64) glazing.Limit {
 	return glazing.Limit{Figure: f, Place: place, AtLeast: bound(atLeast), AtMost: bound(atMost), Scope: glazing.CentreScope, Basis: "en", From: "p.yaml:7"}
 }
 
+func figureOf(t testing.TB, name string) glazing.Figure { return limit(t, name, none, 1).Figure }
+
 func bound(v float64) glazing.Value { return glazing.Value{Number: v, Known: !math.IsNaN(v)} }
 
 var none = math.NaN()
@@ -374,7 +376,6 @@ func TestBases(t *testing.T) {
 		{"scope absent", "en", "", en, en, Meets, 5.6497, "en", "", []string{"limit_scope"}},
 		{"both absent", "", "", en, en, Meets, 5.6497, "en", "", []string{"limit_basis", "limit_scope"}},
 		{"whole window", "en", glazing.WindowScope, en, en, CannotBeJudged, 0, "en", "for the whole window, the figures are of the centre of the glass", nil},
-		{"detailed balance", "na", glazing.CentreScope, en, []glazing.Basis{glazing.NA}, CannotBeJudged, 0, "na", "detailed heat balance", nil},
 	} {
 		l := limit(t, "u", none, 5.8)
 		l.Basis, l.Scope = tt.basis, tt.scope
@@ -400,7 +401,7 @@ func TestBases(t *testing.T) {
 		if r.Value.Known != (tt.value > 0) || math.Abs(r.Value.Number-tt.value) > 0.00006 {
 			t.Errorf("%s: value %v, want %.4f", tt.name, r.Value, tt.value)
 		}
-		if (r.Rating == nil) != (tt.verdict == CannotBeJudged && tt.under != "na") {
+		if (r.Rating == nil) != (tt.verdict == CannotBeJudged) {
 			t.Errorf("%s: rating %v", tt.name, r.Rating != nil)
 		}
 	}
@@ -429,9 +430,12 @@ func TestImpossible(t *testing.T) {
 		{"bounds crossed", func(l *glazing.Limit) { l.AtLeast = bound(9) }, "no figure can meet both"},
 		{"no bound", func(l *glazing.Limit) { l.AtMost = bound(none) }, "has no bound"},
 		{"a text", func(l *glazing.Limit) { l.Figure.Value = nil }, "the figure is no number"},
-		{"a condition", func(l *glazing.Limit) { l.Condition = "january" }, "the condition january"},
-		{"a condition of the basis", func(l *glazing.Limit) { l.Condition = "winter" }, "detailed heat balance"},
-		{"a condition for a window", func(l *glazing.Limit) { l.Condition, l.Scope = "january", glazing.WindowScope }, "centre of the glass; the limit is for the condition january"},
+		{"a condition", func(l *glazing.Limit) { l.Condition = "january" }, "there is no condition january; the project has none"},
+		{"a condition of other bases", func(l *glazing.Limit) { l.Condition = "winter" }, "winter is a condition of the bases na and iso15099, and basis en has none"},
+		{"a condition that is screened", func(l *glazing.Limit) { l.Condition = "cold-sun" }, "cold-sun is screened for thermal stress alone"},
+		{"a condition for a window", func(l *glazing.Limit) { l.Condition, l.Scope = "january", glazing.WindowScope }, "the figures are of the centre of the glass"},
+		{"no figure of a condition", func(l *glazing.Limit) { l.Figure, l.Condition = figureOf(t, "he"), "january" }, "he is none of the figures of a condition; a limit for it names no condition"},
+		{"of each pane, and not of a condition", func(l *glazing.Limit) { l.Figure, l.Condition = figureOf(t, "absorptance"), "january" }, "αe is none of the figures"},
 	} {
 		l := limit(t, "u", none, 5.8)
 		tt.change(&l)

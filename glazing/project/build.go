@@ -22,6 +22,7 @@ type builder struct {
 	*fileSet
 	builtIn  map[string]*glazing.Pane // the panes of the library that make-ups use
 	reserved []string                 // ids of the library
+	balances string                   // what of the project asks for detailed heat balances, as balancesOf has it
 }
 
 const notYet = "is not in this version"
@@ -59,6 +60,7 @@ func (b *builder) project(s *fileSpec) *Project {
 			p.Panes = append(p.Panes, pane)
 		}
 	}
+	b.balances = balancesOf(p.Bases, s)
 	ids = map[string]position{}
 	for i := range s.Makeups {
 		b.unique(ids, s.Makeups[i].ID, "id", "make-up")
@@ -66,21 +68,17 @@ func (b *builder) project(s *fileSpec) *Project {
 			p.Makeups = append(p.Makeups, m)
 		}
 	}
-	b.conditions(s.Conditions)
+	p.Conditions, p.person, p.stress = b.conditions(s.Conditions), s.Comfort.person(), s.Stress.screening()
 	b.limits(p, s)
-	for _, name := range []string{glazing.NA.Name, glazing.ISO15099.Name} {
-		if _, ok := s.Coefficients[name]; ok {
+	for _, basis := range glazing.Bases() {
+		if _, ok := s.Coefficients[basis.Name]; ok && basis.Balances() {
 			p.Cautions = append(p.Cautions, glazing.Caution{Code: "coefficients_not_used",
-				Text: "The coefficients given for " + name + " move nothing: U and g under it need the detailed heat balance, which this version does not have."})
+				Text: "The coefficients given for " + basis.Name + " move nothing: U and g under it come from heat balances, with the convection of their conditions."})
 		}
 	}
 	if len(p.Limits) > 0 || p.LimitsFile != nil {
 		p.Cautions = append(p.Cautions, glazing.Caution{Code: LimitsNotChecked,
 			Text: "The project has limits, against which these figures are not held here: panewright check does that."})
-	}
-	if len(s.Conditions) > 0 {
-		p.Cautions = append(p.Cautions, glazing.Caution{Code: "conditions_not_rated",
-			Text: "The project's conditions were read and not rated: they need the detailed heat balance of ISO 15099, which this version does not have."})
 	}
 	return p
 }
@@ -159,6 +157,9 @@ func (b *builder) pane(s *paneSpec, glasses map[string]glass) *glazing.Pane {
 		p.Attributes[name] = v.value
 	}
 	if s.modelled() {
+		if !b.infraredShares(s, p) {
+			return nil
+		}
 		return p
 	}
 	switch {
@@ -205,7 +206,39 @@ func (b *builder) pane(s *paneSpec, glasses map[string]glass) *glazing.Pane {
 		b.incomplete["panes"] = true
 		return nil
 	}
+	if !b.infraredShares(s, p) {
+		return nil
+	}
 	return p
+}
+
+// infraredTolerance is how far the shares of the thermal infrared may add to more than 1.
+const infraredTolerance = 1e-9
+
+// infraredShares reports whether tau_ir leaves room for the emissivities of a pane's faces, in every
+// tint, as a sheet absorbs, transmits and reflects 1 together.
+func (b *builder) infraredShares(s *paneSpec, p *glazing.Pane) bool {
+	if !s.TauInfrared.given {
+		return true
+	}
+	for _, t := range p.Tints {
+		for _, f := range []struct {
+			name string
+			of   glazing.Emissivity
+		}{{"front", t.Front}, {"back", t.Back}} {
+			e, name := f.of.Normal, "normal emissivity of the "+f.name
+			if f.of.Source == glazing.EmissivityGiven {
+				e, name = f.of.Corrected, "emissivity of the "+f.name
+			}
+			if sum := e.Number + p.TauInfrared; e.Known && sum > 1+infraredTolerance {
+				b.fail(s.TauInfrared.at, "tau_ir", "%s and the %s, %.4g, add to %.4g; together they are at most 1",
+					short(p.TauInfrared), name, e.Number, sum)
+				b.incomplete["panes"] = true
+				return false
+			}
+		}
+	}
+	return true
 }
 
 // Defaults of an interlayer; common practice for polyvinyl butyral, no source.
@@ -238,13 +271,7 @@ func inherit(tints []tintSpec, pane tintSpec) {
 
 // tint makes one state of a pane.
 func (b *builder) tint(s *tintSpec, faulty bool) (glazing.Tint, bool) {
-	t := glazing.Tint{Name: s.Tint.value}
-	if s.Charge.given {
-		t.ChargeMCCM2 = glazing.Value{Number: s.Charge.value, Known: true}
-	}
-	if s.Temperature.given {
-		t.TemperatureC = glazing.Value{Number: s.Temperature.value, Known: true}
-	}
+	t := glazing.Tint{Name: s.Tint.value, ChargeMCCM2: s.Charge.orUnknown(), TemperatureC: s.Temperature.orUnknown()}
 	m, ok := b.measured(s, faulty || s.Faulty)
 	if !ok {
 		return t, false
@@ -374,18 +401,4 @@ func (b *builder) measured(s *tintSpec, faulty bool) (spectra.Measured, bool) {
 		return spectra.Measured{}, false
 	}
 	return m, true
-}
-
-// conditions checks what the tags cannot.
-func (b *builder) conditions(list []conditionSpec) {
-	ids := map[string]position{}
-	for _, c := range list {
-		b.unique(ids, c.ID, "id", "condition")
-		if c.ID.value == "winter" || c.ID.value == "summer" {
-			b.fail(c.ID.at, "id", "%s is a condition of the basis; choose another name", c.ID.value)
-		}
-		if c.Wind.given && c.OutsideConvection.given {
-			b.fail(c.OutsideConvection.at, "outside_convection_w_m2k", "stands beside wind_m_s; give one")
-		}
-	}
 }

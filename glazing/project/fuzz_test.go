@@ -33,6 +33,14 @@ func FuzzProject(f *testing.F) {
 		strings.Replace(hall, "gap_mm: 16", "gap_mm: 1e-300", 1),
 		strings.Replace(hall, "emissivity_back: 0.04", "emissivity_normal_back: 1e-300", 1),
 		strings.Replace(hall, "basis: en", "coefficients: {en: {he_w_m2k: 1e-300, hi_w_m2k: 1000}}", 1),
+		balanced,
+		strings.Replace(balanced, "sun_w_m2: 300", "sun_w_m2: 3e-300", 1),
+		strings.Replace(balanced, "outside_c: 5, inside_c: 19", "outside_c: 19, inside_c: 19", 1),
+		strings.Replace(balanced, "pillar_pitch_mm: 20", "pillar_pitch_mm: 0.5000000000000001", 1),
+		strings.Replace(balanced, "argon: 0.9, air: 0.1", "argon: 0.9, sf6: 0.1", 1),
+		strings.Replace(balanced, "outside_c: -12", "outside_c: -273.15", 1),
+		strings.Replace(balanced, "tau_ir: 0.02", "tau_ir: 0.24", 1),
+		strings.Replace(balanced, "psi_w_mk: 0.05", "psi_w_mk: 0, temperature_factor: 0", 1),
 	} {
 		f.Add([]byte(text))
 	}

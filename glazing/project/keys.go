@@ -9,6 +9,7 @@ package project
 //	one     the text is one of these    id      "yes": an id; "tint": the name of a tint
 //	file    "yes": a file name          doc     what it means
 //	pattern the text must match (for JSON Schema and reader)
+//	high    what to add where a number is above upto
 //
 // A blank field's tag "called" says what the object is, for messages; object keeps its place.
 
@@ -21,12 +22,14 @@ type fileSpec struct {
 	Notes        text                    `key:"notes" doc:"printed as given"`
 	Basis        names                   `key:"basis" one:"en iso na iso15099" doc:"one basis, or a list; en when absent"`
 	Sun          text                    `key:"sun" file:"yes" doc:"CSV of the site's solar spectrum; replaces the solar weighting of the basis"`
-	Coefficients map[string]surfacesSpec `key:"coefficients" one:"en iso na iso15099" doc:"surface coefficients by basis"`
+	Coefficients map[string]surfacesSpec `key:"coefficients" one:"en iso na iso15099" doc:"surface coefficients by basis; those of na and iso15099 move nothing"`
 	Materials    []materialSpec          `key:"materials" doc:"film materials"`
 	Glasses      []glassSpec             `key:"glasses" doc:"glasses by their optical constants"`
 	Panes        []paneSpec              `key:"panes" doc:"panes"`
 	Makeups      []makeupSpec            `key:"makeups" doc:"make-ups to rate"`
-	Conditions   []conditionSpec         `key:"conditions" doc:"sets of temperatures, wind and sun"`
+	Conditions   []conditionSpec         `key:"conditions" doc:"sets of temperatures, wind and sun, for which heat balances are made"`
+	Comfort      *comfortSpec            `key:"comfort" doc:"the person who feels what the glazing does"`
+	Stress       *stressSpec             `key:"thermal_stress" doc:"how thermal stress is screened"`
 	Limits       []limitSpec             `key:"limits" doc:"requirements, with their sources"`
 	LimitsFile   text                    `key:"limits_file" file:"yes" doc:"YAML with limits that projects share"`
 }
@@ -81,11 +84,11 @@ type paneSpec struct {
 	Origin          text              `key:"origin" one:"measured modelled invented" doc:"where the spectrum comes from; measured when absent"`
 	Spectrum        text              `key:"spectrum" file:"yes" doc:"CSV of wavelength, tau, rho_front, rho_back"`
 	Spectra         *spectraSpec      `key:"spectra" doc:"the same from several files, or from several spectra of one JCAMP-DX file: FILE#2 is its second, FILE#TITLE the one of that title"`
-	EmissivityFront number            `key:"emissivity_front" above:"0" from:"0.0001" upto:"1" doc:"corrected (hemispherical) emissivity of the front"`
-	EmissivityBack  number            `key:"emissivity_back" above:"0" from:"0.0001" upto:"1" doc:"corrected (hemispherical) emissivity of the back"`
+	EmissivityFront number            `key:"emissivity_front" above:"0" from:"0.0001" upto:"1" doc:"corrected (hemispherical) emissivity of the front; with tau_ir at most 1"`
+	EmissivityBack  number            `key:"emissivity_back" above:"0" from:"0.0001" upto:"1" doc:"corrected (hemispherical) emissivity of the back; with tau_ir at most 1"`
 	NormalFront     number            `key:"emissivity_normal_front" above:"0" from:"0.0001" upto:"1" doc:"normal emissivity of the front"`
 	NormalBack      number            `key:"emissivity_normal_back" above:"0" from:"0.0001" upto:"1" doc:"normal emissivity of the back"`
-	TauInfrared     number            `key:"tau_ir" from:"0" below:"1" doc:"transmittance in the thermal infrared, 0 when absent"`
+	TauInfrared     number            `key:"tau_ir" from:"0" below:"1" doc:"transmittance in the thermal infrared; absent, that of infrared rows, else 0"`
 	Glass           text              `key:"glass" id:"yes" doc:"a glass, or a pane of the library, that is coated"`
 	Coatings        []coatingSpec     `key:"coatings" doc:"films on the faces"`
 	Tints           []tintSpec        `key:"tints" doc:"states of a switchable pane"`
@@ -151,6 +154,7 @@ type makeupSpec struct {
 	Tilt            number          `key:"tilt_deg" from:"0" upto:"180" doc:"90 vertical (when absent), 0 horizontal with the outside above"`
 	HeatFlow        text            `key:"heat_flow" one:"up down" doc:"direction of heat off vertical, for EN 673; up when absent"`
 	Typed           map[string]text `key:"typed" doc:"values carried to the schedule, marked as typed by the user"`
+	Edge            *edgeSpec       `key:"edge" doc:"what is known of the edge of the glass"`
 	OutsideToInside []elementSpec   `key:"outside_to_inside" need:"yes" doc:"panes and gaps in turn, beginning and ending with a pane"`
 }
 
@@ -168,27 +172,57 @@ type elementSpec struct {
 type vacuumSpec struct {
 	_ struct{} `called:"a vacuum"`
 	object
-	Pressure number `key:"pressure_pa" need:"yes" from:"0" doc:"residual pressure"`
-	Radius   number `key:"pillar_radius_mm" need:"yes" above:"0" doc:"radius of a pillar"`
-	Pitch    number `key:"pillar_pitch_mm" need:"yes" above:"0" doc:"distance of pillars"`
+	Pressure number `key:"pressure_pa" need:"yes" from:"0" upto:"10" high:"that is no vacuum, and its gas conducts otherwise; name the filling with gas" doc:"residual pressure"`
+	Radius   number `key:"pillar_radius_mm" need:"yes" above:"0" from:"0.001" upto:"10" doc:"radius of a pillar"`
+	Pitch    number `key:"pillar_pitch_mm" need:"yes" above:"0" from:"0.01" upto:"1000" doc:"distance of pillars, centre to centre, in a square array"`
+	Pillar   number `key:"pillar_conductivity_w_mk" above:"0" from:"0.001" upto:"10000" doc:"conductivity of the pillars, W/(m·K); absent, their own resistance is left out, which makes U greater"`
+}
+
+type edgeSpec struct {
+	_ struct{} `called:"an edge"`
+	object
+	TemperatureFactor number `key:"temperature_factor" from:"0" upto:"1" doc:"of the room-side surface at the edge: (surface − outdoors)/(indoors − outdoors)"`
+	Psi               number `key:"psi_w_mk" from:"0" upto:"2" doc:"instead of it the linear thermal transmittance of the edge, W/(m·K)"`
 }
 
 type conditionSpec struct {
 	_ struct{} `called:"a condition"`
 	object
-	ID                text   `key:"id" need:"yes" id:"yes" doc:"name of the condition; winter and summer are the basis's own"`
-	Outside           number `key:"outside_c" need:"yes" above:"-273.15" upto:"1000" doc:"outdoor air temperature"`
-	OutsideRadiant    number `key:"outside_radiant_c" above:"-273.15" upto:"1000" doc:"outdoor radiant temperature; the air's when absent"`
-	Sky               number `key:"sky_c" above:"-273.15" upto:"1000" doc:"sky temperature; the air's when absent"`
-	Inside            number `key:"inside_c" need:"yes" above:"-273.15" upto:"1000" doc:"indoor air temperature"`
-	InsideRadiant     number `key:"inside_radiant_c" above:"-273.15" upto:"1000" doc:"indoor radiant temperature; the air's when absent"`
+	ID                text   `key:"id" need:"yes" id:"yes" doc:"name of the condition; winter and summer are those of a basis; one called cold-sun replaces the built-in cold sunny one"`
+	Outside           number `key:"outside_c" need:"yes" above:"-273.15" from:"-100" upto:"100" high:"°C is meant, not K" doc:"outdoor air temperature"`
+	OutsideRadiant    number `key:"outside_radiant_c" above:"-273.15" from:"-200" upto:"200" high:"°C is meant, not K" doc:"outdoor radiant temperature; the air's when absent"`
+	Sky               number `key:"sky_c" above:"-273.15" from:"-200" upto:"200" high:"°C is meant, not K" doc:"radiant temperature of the sky; the outdoor radiant temperature when absent"`
+	Inside            number `key:"inside_c" need:"yes" above:"-273.15" from:"-100" upto:"100" high:"°C is meant, not K" doc:"indoor air temperature"`
+	InsideRadiant     number `key:"inside_radiant_c" above:"-273.15" from:"-200" upto:"200" high:"°C is meant, not K" doc:"indoor radiant temperature; the air's when absent"`
 	InsideHumidity    number `key:"inside_rh" from:"0" upto:"1" doc:"indoor relative humidity"`
-	Wind              number `key:"wind_m_s" from:"0" doc:"wind speed"`
-	OutsideConvection number `key:"outside_convection_w_m2k" above:"0" doc:"instead of wind, W/(m²·K)"`
-	InsideConvection  number `key:"inside_convection_w_m2k" above:"0" doc:"instead of natural convection, W/(m²·K)"`
-	Sun               number `key:"sun_w_m2" from:"0" doc:"solar irradiance on the glazing"`
+	Wind              number `key:"wind_m_s" from:"0" upto:"100" high:"m/s is meant, not km/h" doc:"wind speed; where neither it nor outside_convection_w_m2k is given, one is assumed and said"`
+	OutsideConvection number `key:"outside_convection_w_m2k" above:"0" from:"0.1" upto:"1000" doc:"instead of wind, W/(m²·K)"`
+	InsideConvection  number `key:"inside_convection_w_m2k" above:"0" from:"0.1" upto:"1000" doc:"instead of natural convection, W/(m²·K)"`
+	Sun               number `key:"sun_w_m2" from:"0" upto:"3000" doc:"solar irradiance on the glazing, 0 when absent"`
 	Tilt              number `key:"tilt_deg" from:"0" upto:"180" doc:"tilt; the make-up's when absent"`
-	Height            number `key:"height_m" above:"0" doc:"height of the glazing, 1.0 when absent"`
+	Height            number `key:"height_m" above:"0" from:"0.01" upto:"100" doc:"height of the glazing, 1.0 when absent"`
+}
+
+type comfortSpec struct {
+	_ struct{} `called:"comfort"`
+	object
+	Distance         number `key:"distance_m" above:"0" from:"0.01" upto:"100" doc:"from the glass, in front of its middle, 1 when absent"`
+	GlassWidth       number `key:"glass_width_m" above:"0" from:"0.01" upto:"100" doc:"width of the glass, 3 when absent"`
+	GlassHeight      number `key:"glass_height_m" above:"0" from:"0.01" upto:"100" doc:"height of the glass, 2.5 when absent"`
+	Posture          text   `key:"posture" one:"seated standing" doc:"seated when absent"`
+	SunAltitude      number `key:"sun_altitude_deg" from:"0" upto:"90" doc:"above the horizon, 45 when absent"`
+	SunFromFront     number `key:"sun_from_front_deg" from:"0" upto:"180" doc:"horizontal angle between the sun and where the person faces, 0 when absent"`
+	SkyShare         number `key:"sky_share" from:"0" upto:"1" doc:"share of the sky that the person sees, 0.2 when absent"`
+	BodyShare        number `key:"body_share" from:"0" upto:"1" doc:"share of the body that the sun strikes, 0.5 when absent"`
+	Absorptivity     number `key:"absorptivity" from:"0" upto:"1" doc:"of skin and clothes for sun, 0.7 when absent"`
+	FloorReflectance number `key:"floor_reflectance" from:"0" upto:"1" doc:"of the floor for sun, 0.6 when absent"`
+}
+
+type stressSpec struct {
+	_ struct{} `called:"thermal stress"`
+	object
+	FrameMargin number `key:"frame_margin_k" from:"0" upto:"100" doc:"how much colder than its pane without sun the edge is, 0 when absent"`
+	Factor      number `key:"factor" above:"0" from:"0.1" upto:"10" doc:"k of the stress k E α ΔT, 1 when absent"`
 }
 
 type limitSpec struct {
@@ -200,7 +234,7 @@ type limitSpec struct {
 	Scope     text   `key:"scope" one:"centre window" doc:"centre of the glass (when absent), or whole window"`
 	Basis     text   `key:"basis" one:"en iso na iso15099" doc:"basis of the figure; the project's when absent, if it has just one"`
 	Tint      text   `key:"tint" doc:"clear, full, each (when absent), worst, or the name of a tint"`
-	Condition text   `key:"condition" doc:"id of a condition"`
+	Condition text   `key:"condition" doc:"id of a condition of the project, or winter, summer, cold-sun"`
 	Makeups   names  `key:"makeups" doc:"ids of make-ups; all when absent"`
 	Source    text   `key:"source" doc:"who set the limit, and where"`
 	Date      text   `key:"date" doc:"of the source"`

@@ -92,12 +92,14 @@ type ids struct{ makeups, conditions []string }
 
 // limits reads the limits of a project and of the limits file that it names.
 func (b *builder) limits(p *Project, s *fileSpec) {
-	known := &ids{conditions: []string{"winter", "summer"}} // those of a basis itself
+	known := &ids{conditions: []string{glazing.Winter, glazing.Summer, glazing.ColdSun}}
 	for _, m := range s.Makeups {
 		known.makeups = append(known.makeups, m.ID.value)
 	}
 	for _, c := range s.Conditions {
-		known.conditions = append(known.conditions, c.ID.value)
+		if c.ID.value != glazing.ColdSun { // which a project may replace
+			known.conditions = append(known.conditions, c.ID.value)
+		}
 	}
 	p.Limits = b.reader.limits(s.Limits, p.Author, known)
 	if !s.LimitsFile.given {
@@ -134,8 +136,8 @@ func (r *reader) limit(s *limitSpec, known *ids) (glazing.Limit, bool) {
 	}
 	if s.Figure.given {
 		var ok bool
-		if l.Figure, l.Place, ok = glazing.FigureNamed(s.Figure.value); !ok {
-			r.fail(s.Figure.at, "figure", "unknown figure %q; %s", clip(s.Figure.value), offerFigure(s.Figure.value))
+		if l.Figure, l.Place, ok = figureNamed(s.Figure.value, s.Condition.value); !ok {
+			r.fail(s.Figure.at, "figure", "unknown figure %q; %s", clip(s.Figure.value), offerFigure(s.Figure.value, s.Condition.given))
 		} else if !l.Figure.Limitable() {
 			r.fail(s.Figure.at, "figure", "%s is no figure that a limit can be set for", clip(s.Figure.value))
 		}
@@ -161,7 +163,7 @@ func (r *reader) limit(s *limitSpec, known *ids) (glazing.Limit, bool) {
 		if !x.is.given {
 			continue
 		}
-		*x.into = glazing.Value{Number: x.is.value, Known: true}
+		*x.into = x.is.orUnknown()
 		if fault := boundFault(l.Figure, x.is.value); fault != "" {
 			r.fail(x.is.at, x.key, "%s %s", short(x.is.value), fault)
 		}
@@ -182,21 +184,46 @@ const ratioMost = 10
 // boundFault says why a bound was not meant for a figure: every figure would meet it, or none.
 func boundFault(f glazing.Figure, bound float64) string {
 	ratio := f.Alias == "shading" || f.Alias == "light_to_solar"
+	signed := strings.HasPrefix(f.Key, "colour.") || f.Unit == "°C" || f.Unit == "K" || f.Unit == "W/m²" // heat goes either way
+	share := f.Share() || strings.HasSuffix(f.Key, "_rh") || strings.HasSuffix(f.Key, "temperature_factor")
 	switch {
-	case f.Share() && bound > 1:
+	case share && bound > 1:
 		return "is above 1; " + f.Symbol + " is a fraction of one, not percent"
 	case ratio && bound > ratioMost:
 		return "is no ratio; " + f.Symbol + " is about 1, not percent"
 	case f.Alias == "ra" && bound > 0 && bound <= 1:
 		return "is no rendering index; it runs to 100"
-	case bound < 0 && !strings.HasPrefix(f.Key, "colour."):
+	case f.Unit == "°C" && bound <= absoluteZeroC:
+		return "is not above " + short(absoluteZeroC) + " °C, absolute zero"
+	case bound < 0 && !signed:
 		return "is below 0, and " + f.Symbol + " never is"
 	}
 	return ""
 }
 
-// offerFigure offers the names nearest to one that is no figure, keys with the number that it has.
-func offerFigure(name string) string {
+// figureNamed returns the figure that a name means, and the number in the name; where a limit is for a
+// condition, a figure that only balances have too.
+func figureNamed(name, condition string) (f glazing.Figure, place int, ok bool) {
+	if f, place, ok = glazing.FigureNamed(name); ok || condition == "" {
+		return f, place, ok
+	}
+	for _, x := range glazing.BalanceFigures() {
+		if place, ok := x.Place(name); ok {
+			return x.At(condition), place, true
+		}
+	}
+	return glazing.Figure{}, 0, false
+}
+
+// offerFigure says what to do about a name that is no figure: it may be one under a condition; else it
+// offers the nearest names, keys with the number that the name has.
+func offerFigure(name string, balances bool) string {
+	figure, id, at := strings.Cut(name, "@")
+	if _, _, ok := figureNamed(figure, glazing.Winter); ok && at {
+		return "write figure: " + figure + " and condition: " + clip(id)
+	} else if ok && !balances {
+		return "it is one under a condition; name that with condition"
+	}
 	place := 1
 	for part := range strings.SplitSeq(name, ".") {
 		if n, err := strconv.Atoi(part); err == nil {
@@ -207,6 +234,11 @@ func offerFigure(name string) string {
 	for _, f := range glazing.Figures() {
 		if f.Limitable() {
 			aliases, keys = append(aliases, f.Alias), append(keys, f.KeyAt(place))
+		}
+	}
+	if balances {
+		for _, f := range glazing.BalanceFigures() {
+			aliases = append(aliases, f.Alias)
 		}
 	}
 	if all := append(keys, aliases...); len(Nearest(name, all)) > 0 {

@@ -23,6 +23,7 @@ func (b *builder) makeup(s *makeupSpec, specs []paneSpec, panes []*glazing.Pane)
 		m.Typed = append(m.Typed, glazing.Typed{Name: name, Text: s.Typed[name].value})
 	}
 	before := len(b.faults)
+	m.Edge = b.edge(s.Edge)
 	wantPane, sure := true, true // what may stand next, and whether that is known
 	for i := range s.OutsideToInside {
 		e := &s.OutsideToInside[i]
@@ -65,6 +66,9 @@ func (b *builder) makeup(s *makeupSpec, specs []paneSpec, panes []*glazing.Pane)
 		b.fail(s.At, "outside_to_inside", "%d panes; at most %d", len(m.Panes), glazing.MaxPanes)
 	}
 	if s.Faulty || len(b.faults) > before || slices.ContainsFunc(m.Panes, func(p glazing.Placed) bool { return p.Pane == nil }) {
+		return nil
+	}
+	if !b.balanced(s, m) {
 		return nil
 	}
 	if _, err := m.States(); err != nil {
@@ -132,9 +136,11 @@ func (b *builder) gap(m *glazing.Makeup, e *elementSpec) {
 	case e.Vacuum != nil && e.Gas != nil:
 		b.fail(e.Vacuum.At, "vacuum", "stands beside gas; give one")
 	case e.Vacuum != nil:
-		b.fail(e.Vacuum.At, "vacuum", "a vacuum gap %s", notYet)
+		if v := b.vacuum(e.Vacuum); v != nil {
+			m.Gaps = append(m.Gaps, glazing.Gap{WidthMM: e.Gap.value, Vacuum: v})
+		}
 	case e.Gas == nil:
-		b.fail(e.Gap.at, "gas", "is missing: a gap has a gas, such as {air: 1} or {argon: 0.9, air: 0.1}")
+		b.fail(e.Gap.at, "gas", "is missing: a gap has a gas, such as {air: 1} or {argon: 0.9, air: 0.1}, or a vacuum")
 	default:
 		fractions := map[string]float64{}
 		known := glazing.Gases()
@@ -154,4 +160,13 @@ func (b *builder) gap(m *glazing.Makeup, e *elementSpec) {
 		}
 		m.Gaps = append(m.Gaps, glazing.Gap{WidthMM: e.Gap.value, Gas: mixture})
 	}
+}
+
+// vacuum makes an evacuated gap, or returns nil after reporting why not.
+func (b *builder) vacuum(s *vacuumSpec) *glazing.Vacuum {
+	if pillar := 2 * s.Radius.value; pillar >= s.Pitch.value {
+		b.fail(s.Pitch.at, "pillar_pitch_mm", "%s is not above %s, the width of a pillar; pillars stand apart", short(s.Pitch.value), short(pillar))
+		return nil
+	}
+	return &glazing.Vacuum{PressurePa: s.Pressure.value, PillarRadiusMM: s.Radius.value, PillarPitchMM: s.Pitch.value, PillarWMK: s.Pillar.orUnknown()}
 }

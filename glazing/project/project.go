@@ -27,14 +27,17 @@ type Project struct {
 	Bases                       []glazing.Basis
 	Panes                       []*glazing.Pane
 	Makeups                     []*glazing.Makeup
-	Limits                      []glazing.Limit   // of the project file itself; see AllLimits
-	LimitsFile                  *LimitsFile       // that the project names, or nil
-	Cautions                    []glazing.Caution // of the project as a whole
-	Digest                      string            // SHA-256 of the project file and each file it names
-	Files                       []string          // paths of the project file and of each file that it names
+	Conditions                  []glazing.Condition // of the project itself, in the order of the file
+	Limits                      []glazing.Limit     // of the project file itself; see AllLimits
+	LimitsFile                  *LimitsFile         // that the project names, or nil
+	Cautions                    []glazing.Caution   // of the project as a whole
+	Digest                      string              // SHA-256 of the project file and each file it names
+	Files                       []string            // paths of the project file and of each file that it names
 
 	sun          *spectra.Weighting
 	coefficients map[string]surfacesSpec
+	person       *glazing.Person          // nil where the project does not say
+	stress       *glazing.StressScreening // likewise
 }
 
 // Access says which files a project may name.
@@ -82,14 +85,16 @@ func read(file string, content []byte, from source) (*Project, error) {
 	return p, nil
 }
 
-// Method makes a basis ready with the project's own sun and coefficients.
+// Method makes a basis ready with the project's own sun, coefficients and conditions, and with who
+// feels the glazing and how thermal stress is screened.
 func (p *Project) Method(b glazing.Basis) *glazing.Method {
 	c := p.coefficients[b.Name]
-	return glazing.NewMethod(b, glazing.Options{Sun: p.sun, OutsideWM2K: c.Outside.or(0), InsideWM2K: c.Inside.or(0)})
+	return glazing.NewMethod(b, glazing.Options{Sun: p.sun, OutsideWM2K: c.Outside.or(0), InsideWM2K: c.Inside.or(0),
+		Conditions: p.Conditions, Person: p.person, Stress: p.stress})
 }
 
-// Rate rates every state of a make-up under a basis, with the project's own sun, coefficients
-// and cautions. Who rates many make-ups makes one Method and uses that.
+// Rate rates every state of a make-up under a basis, as Method has it, with the project's own
+// cautions. Who rates many make-ups makes one Method and uses that.
 func (p *Project) Rate(m *glazing.Makeup, b glazing.Basis) ([]glazing.Rating, error) {
 	return p.RateBy(p.Method(b), m)
 }

@@ -132,9 +132,6 @@ func TestAccepts(t *testing.T) {
 		{"tilt", "    outside_to_inside", "    tilt_deg: 30\n    heat_flow: down\n    title: Roof\n    outside_to_inside", func(p *Project) bool {
 			return math.Abs(p.Makeups[0].Tilt.Degrees()-30) < 1e-12 && p.Makeups[0].Title == "Roof" && !p.Makeups[0].Tilt.Vertical()
 		}},
-		{"conditions", "makeups:\n", "conditions:\n  - {id: january-night, outside_c: -12, inside_c: 20, inside_rh: 0.45, wind_m_s: 4, sun_w_m2: 0, tilt_deg: 90, height_m: 1}\n  - {id: still, outside_c: 0, outside_radiant_c: -5, sky_c: -20, inside_c: 20, inside_radiant_c: 18, outside_convection_w_m2k: 20, inside_convection_w_m2k: 3}\nmakeups:\n", func(p *Project) bool {
-			return slices.ContainsFunc(p.Cautions, func(c glazing.Caution) bool { return c.Code == "conditions_not_rated" })
-		}},
 		{"limits", "makeups:\n", "limits:\n  - {figure: u, at_most: 1.2, scope: centre, basis: en, tint: each, makeups: [A1], source: Brief, date: 2026-01-31}\n  - {figure: light, at_least: 0.6, makeups: A1}\nmakeups:\n", func(p *Project) bool {
 			return len(p.Makeups) == 1
 		}},

@@ -4,6 +4,7 @@ package project
 
 import (
 	"fmt"
+	"panewright/glazing"
 	"panewright/spectra"
 	"reflect"
 	"slices"
@@ -55,6 +56,12 @@ func (n number) or(v float64) float64 {
 	}
 	return v
 }
+
+// orUnknown returns the number as a value, which is not known where the key is absent.
+func (n number) orUnknown() glazing.Value { return glazing.Value{Number: n.value, Known: n.given} }
+
+// absoluteZeroC is the bound of keys in °C, for messages.
+const absoluteZeroC = -273.15
 
 // reader fills the spec types from YAML nodes and gathers every fault.
 type reader struct {
@@ -376,6 +383,9 @@ func (r *reader) number(n *yaml.Node, into *number, tag reflect.StructTag, key s
 		return refuse("%q is too large for a number", clip(s))
 	}
 	if b := bound(tag, "above"); b != nil && v <= *b {
+		if *b == absoluteZeroC {
+			return refuse("%s is not above %s °C, absolute zero", clip(s), short(*b))
+		}
 		return refuse("%s is not above %s", clip(s), short(*b))
 	}
 	if b := bound(tag, "from"); b != nil && v < *b {
@@ -385,10 +395,14 @@ func (r *reader) number(n *yaml.Node, into *number, tag reflect.StructTag, key s
 		return refuse("%s is not below %s", clip(s), short(*b))
 	}
 	if b := bound(tag, "upto"); b != nil && v > *b {
-		if *b == 1 && v <= 100 {
-			return refuse("%s is above 1; fractions of one, not percent", clip(s))
+		hint := tag.Get("high")
+		if hint == "" && *b == 1 && v <= 100 {
+			hint = "fractions of one, not percent"
 		}
-		return refuse("%s is above %s", clip(s), short(*b))
+		if hint != "" {
+			hint = "; " + hint
+		}
+		return refuse("%s is above %s%s", clip(s), short(*b), hint)
 	}
 	*into = number{value: v, given: true, at: place(n)}
 	return true

@@ -1,0 +1,332 @@
+package glazing
+
+import (
+	"fmt"
+	"math"
+	"slices"
+	"strings"
+	"testing"
+
+	"panewright/thermal"
+)
+
+// clearGlass is an uncoated pane of a thickness whose spectrum is flat.
+func clearGlass(mm, tau, rho float64) *Pane {
+	p := pane("clear", flat(300, 2500, tau, rho, rho), 0.837, 0.837)
+	p.Plies[0].ThicknessMM = mm
+	p.HeatTreatment = HeatStrengthened
+	return p
+}
+
+func ratedAll(t testing.TB, m *Makeup, b Basis, o Options) []Rating {
+	t.Helper()
+	ready, err := NewMethod(b, o).Ready(m)
+	if err != nil {
+		t.Fatal(err)
+	}
+	ratings, err := ready.RateAll()
+	if err != nil {
+		t.Fatal(err)
+	}
+	return ratings
+}
+
+// Under a basis of balances U is that of winter and g that of summer, and what goes with them too;
+// under the others only the conditions of the user have balances, in their order.
+func TestFiguresOfBalances(t *testing.T) {
+	own := []Condition{
+		{ID: "january-night", OutsideC: -12, InsideC: 20, WindMS: known(4)},
+		{ID: "july", OutsideC: 33, InsideC: 25, OutsideConvectionWM2K: known(12), InsideConvectionWM2K: known(3), SunWM2: 600},
+	}
+	low := clearGlass(4, 0.5, 0.2)
+	low.Tints[0].Front = GivenEmissivity(0.03)
+	m := &Makeup{ID: "D", Panes: []Placed{{Pane: clearGlass(6, 0.8, 0.08)}, {Pane: low}}, Gaps: []Gap{gap(t, 16, map[string]float64{"argon": 0.9, "air": 0.1})}}
+	for _, tt := range []struct {
+		basis Basis
+		ids   []string
+	}{
+		{EN, []string{"january-night", "july"}},
+		{ISO, []string{"january-night", "july"}},
+		{NA, []string{"winter", "summer", "january-night", "july"}},
+		{ISO15099, []string{"winter", "summer", "january-night", "july"}},
+	} {
+		r := &ratedAll(t, m, tt.basis, Options{Conditions: own})[0]
+		var ids []string
+		for _, b := range r.Balances {
+			ids = append(ids, b.Condition.ID)
+		}
+		if !slices.Equal(ids, tt.ids) {
+			t.Errorf("%s: conditions %v, want %v", tt.basis.Name, ids, tt.ids)
+		}
+		plain := &ratedAll(t, m, tt.basis, Options{})[0]
+		if r.U != plain.U || r.G != plain.G {
+			t.Errorf("%s: the user's conditions move U or g", tt.basis.Name)
+		}
+		for i := range r.Balances {
+			closes(t, fmt.Sprintf("%s, %s", tt.basis.Name, r.Balances[i].Condition.ID), r, &r.Balances[i])
+		}
+		if !tt.basis.Balances() {
+			continue
+		}
+		winter, summer := r.Balance(Winter), r.Balance(Summer)
+		gap := &winter.Dark.Gaps[0]
+		if r.U != winter.U || r.G != summer.G || r.Gaps[0].Nusselt != gap.Nusselt || r.Gaps[0].Total != gap.Total() ||
+			math.Abs(r.SecondaryHeat.Number-(r.G.Number-r.Solar.Transmittance.Number)) > 0 ||
+			r.OutsideWM2K.Number != winter.Dark.Outside.Total() || r.InsideWM2K.Number != winter.Dark.Room.Total() {
+			t.Errorf("%s: the rating does not have the figures of its winter and summer", tt.basis.Name)
+		}
+	}
+}
+
+// closes holds a balance against what must be true of it: U by flux is U by resistances, g is what
+// passes and what the room gains, energy closes over the whole.
+func closes(t *testing.T, name string, r *Rating, b *Balance) {
+	t.Helper()
+	near := func(what string, got, want, tolerance float64) {
+		if math.Abs(got-want) > tolerance {
+			t.Errorf("%s: %s %.12g, want %.12g", name, what, got, want)
+		}
+	}
+	sum := 1/b.Dark.Outside.Total() + 1/b.Dark.Room.Total() + r.Ready.glassResistance()
+	for k := range r.Makeup.Gaps {
+		sum += 1 / b.Dark.Gaps[k].Total()
+	}
+	near("U", b.U.Number, 1/sum, 1e-9)
+	absorbed := 0.0
+	for k, a := range b.AbsorbedWM2 {
+		near("absorbed", a, r.Absorptance[k].Number*b.Condition.SunWM2, 1e-9)
+		absorbed += a
+	}
+	near("energy", b.Lit.Outside.FluxWM2()+absorbed, b.Lit.InwardWM2(), 1e-6)
+	if sun := b.Condition.SunWM2; sun > 0 {
+		near("g", b.G.Number, r.Solar.Transmittance.Number+(b.Lit.InwardWM2()-b.Dark.InwardWM2())/sun, 1e-12)
+	} else if b.G.Known || b.G.Why == "" || b.Lit != b.Dark {
+		t.Errorf("%s: g without sun: %+v", name, b.G)
+	}
+}
+
+// The sky is seen by (1 + cos tilt)/2 of the half space, and counts by the fourth power of its
+// temperature (ISO 15099, 8.4, from memory); worked by hand for −20 °C over 0 °C.
+func TestSurroundings(t *testing.T) {
+	fourth := func(t float64) float64 { return t * t * t * t }
+	for _, tt := range []struct {
+		what string
+		c    Condition
+		tilt float64
+		want float64 // outdoor radiant temperature, K
+	}{
+		{"nothing given", Condition{OutsideC: 5}, 30, 278.15},
+		{"surroundings", Condition{OutsideC: 5, OutsideRadiantC: known(-3)}, 30, 270.15},
+		{"sky, level", Condition{SkyC: known(-20)}, 0, 253.15},
+		{"sky, upright", Condition{SkyC: known(-20)}, 90, math.Pow((fourth(253.15)+fourth(273.15))/2, 0.25)},
+		{"sky, 60°", Condition{SkyC: known(-20)}, 60, math.Pow(0.75*fourth(253.15)+0.25*fourth(273.15), 0.25)},
+		{"sky, facing down", Condition{SkyC: known(-20)}, 180, 273.15},
+		{"sky and surroundings", Condition{SkyC: known(-20), OutsideRadiantC: known(-8)}, 90, math.Pow((fourth(253.15)+fourth(265.15))/2, 0.25)},
+	} {
+		if got := tt.c.Surroundings(tt.tilt).OutsideRadiantK; math.Abs(got-tt.want) > 1e-9 {
+			t.Errorf("%s: %.6f K, want %.6f", tt.what, got, tt.want)
+		}
+	}
+	wind := Condition{WindMS: known(5.5)}
+	if h, assumed := wind.OutsideConvection(); h != 26 || assumed { // the winter of na, 5.5 m/s
+		t.Errorf("5.5 m/s: %g W/(m²·K), assumed %t", h, assumed)
+	}
+	none := Condition{}
+	if h, assumed := none.OutsideConvection(); h != 20 || !assumed {
+		t.Errorf("no wind: %g W/(m²·K), assumed %t", h, assumed)
+	}
+	if at := none.Surroundings(90); at.HeightM != 1 || at.InsideConvection != 0 || at.InsideRadiantK != 273.15 {
+		t.Errorf("defaults: %+v", at)
+	}
+}
+
+// The absorbed sun of a laminate acts where its plies lie: by hand, for plies of resistances 4, 7 and 4
+// (in 1e-3 m²·K/W) with a half, a quarter and a quarter of the thickness, turned and not.
+func TestLaminateIsTurned(t *testing.T) {
+	p := clearGlass(4, 0.2, 0.1)
+	p.Plies = []Ply{{ThicknessMM: 8, ConductivityWMK: 2}, {ThicknessMM: 4, ConductivityWMK: 4. / 7, Interlayer: true}, {ThicknessMM: 4, ConductivityWMK: 1}}
+	inner := 0.5*2/15 + 0.25*7.5/15 + 0.25*13/15
+	for _, turned := range []bool{false, true} {
+		m := &Makeup{ID: "L", Panes: []Placed{{Pane: p, Turned: turned}}}
+		b := ratedAll(t, m, NA, Options{})[0].Balance(Summer)
+		want := inner
+		if turned {
+			want = 1 - inner
+		}
+		if got := b.Lit.SunWM2[1] / (b.Lit.SunWM2[0] + b.Lit.SunWM2[1]); math.Abs(got-want) > 1e-12 {
+			t.Errorf("turned %t: %.6f of the sun acts inside, want %.6f", turned, got, want)
+		}
+	}
+}
+
+// A sheet that passes infrared has U under balances alone; its emissivities bound what it may pass.
+func TestInfraredSheet(t *testing.T) {
+	foil := clearGlass(0.05, 0.9, 0.08)
+	foil.TauInfrared = 0.3
+	foil.Tints[0].Front, foil.Tints[0].Back = GivenEmissivity(0.1), GivenEmissivity(0.6)
+	air := gap(t, 12, map[string]float64{"air": 1})
+	m := &Makeup{ID: "F", Panes: []Placed{{Pane: clearGlass(4, 0.8, 0.08)}, {Pane: foil}, {Pane: clearGlass(4, 0.8, 0.08)}}, Gaps: []Gap{air, air}}
+	if r := ratedAll(t, m, EN, Options{})[0]; r.U.Known || !strings.Contains(r.U.Why, "lets infrared through") {
+		t.Errorf("U under en: %+v", r.U)
+	}
+	passes := ratedAll(t, m, NA, Options{})[0].U.Number
+	foil.TauInfrared = 0
+	if blocks := ratedAll(t, m, NA, Options{})[0].U.Number; !(blocks < passes) {
+		t.Errorf("U %.3f where infrared passes, %.3f where it does not", passes, blocks)
+	}
+}
+
+// A vacuum under en is the sum of its three conductances at 283 K: by hand, pillars of 0.125 mm 20 mm
+// apart 2·1·0.000125/0.0004, gas 0.8·0.1, radiation of two faces of 0.03 (VAC-12 of the checks).
+func TestVacuum(t *testing.T) {
+	low := clearGlass(4, 0.7, 0.1)
+	low.Tints[0].Back = GivenEmissivity(0.03)
+	m := &Makeup{ID: "V", Panes: []Placed{{Pane: low}, {Pane: low, Turned: true}},
+		Gaps: []Gap{{WidthMM: 0.2, Vacuum: &Vacuum{PressurePa: 0.1, PillarRadiusMM: 0.125, PillarPitchMM: 20}}}}
+	r := &ratedAll(t, m, EN, Options{})[0]
+	gap := 0.625 + 0.08 + 4*5.67e-8*283*283*283/(2/0.03-1)
+	if want := 1 / (1.0/25 + 1/7.7 + 0.008 + 1/gap); math.Abs(r.U.Number-want) > 1e-9 || math.Abs(want-0.6875) > 0.001 {
+		t.Errorf("U %.6f, want %.6f and 0.6875", r.U.Number, want)
+	}
+	if !strings.Contains(m.BuildUp(), "vacuum") {
+		t.Errorf("build-up %s", m.BuildUp())
+	}
+	for _, basis := range []Basis{NA, ISO15099} {
+		x := &ratedAll(t, m, basis, Options{})[0]
+		closes(t, basis.Name, x, x.Balance(Summer))
+	}
+	// Pillars that resist too make U smaller.
+	m.Gaps[0].Vacuum.PillarWMK = known(20)
+	if x := &ratedAll(t, m, EN, Options{})[0]; !(x.U.Number < r.U.Number) {
+		t.Errorf("U %.4f with pillars of 20 W/(m·K), %.4f with ideal ones", x.U.Number, r.U.Number)
+	}
+	m.Gaps[0].Vacuum.PillarPitchMM = 0.25
+	if _, err := NewMethod(EN, Options{}).Ready(m); err == nil || !strings.Contains(err.Error(), "pitch") {
+		t.Errorf("pillars that touch: %v", err)
+	}
+}
+
+// SF6 has no properties in ISO 15099: a balance is refused, U of EN 673 is not.
+func TestSF6(t *testing.T) {
+	m := &Makeup{ID: "S", Panes: []Placed{{Pane: clearGlass(4, 0.8, 0.08)}, {Pane: clearGlass(4, 0.8, 0.08)}}, Gaps: []Gap{gap(t, 12, map[string]float64{"sf6": 0.1, "air": 0.9})}}
+	if r := ratedAll(t, m, EN, Options{})[0]; !r.U.Known {
+		t.Errorf("en: %+v", r.U)
+	}
+	for _, o := range []Options{{}, {Conditions: []Condition{{ID: "c", InsideC: 20, WindMS: known(2)}}}} {
+		basis := NA
+		if o.Conditions != nil {
+			basis = EN
+		}
+		if _, err := NewMethod(basis, o).Ready(m); err == nil || !strings.Contains(err.Error(), "sf6") {
+			t.Errorf("%s: %v", basis.Name, err)
+		}
+	}
+}
+
+// Each caution of temperatures appears on one side of its threshold. Where all is equally warm, so is
+// the glass; a typed factor of the edge fixes its temperature; a dew point of 9.27 °C belongs to 20 °C
+// and 0.5 (EN ISO 13788, from memory).
+func TestThresholdsOfTemperatures(t *testing.T) {
+	isothermal := func(c float64) Condition {
+		return Condition{ID: "x", OutsideC: c, InsideC: c, WindMS: known(2), SunWM2: 1e-9}
+	}
+	damp := Condition{ID: "x", OutsideC: -10, InsideC: 20, OutsideConvectionWM2K: known(0.1), OutsideRadiantC: known(20), InsideConvectionWM2K: known(1000),
+		InsideHumidity: known(0.5), TiltDeg: known(90)}
+	cold := func(outside float64) Condition { // the surface has all but the temperature of the outdoor air
+		return Condition{ID: "x", OutsideC: outside, InsideC: 20, OutsideConvectionWM2K: known(1e6), InsideConvectionWM2K: known(0.001)}
+	}
+	// The asymmetry of 5 % is (6.61 − ln 19)/0.345 = 10.62 K (ISO 7730:2005). In front of an endless
+	// wall it is the difference to the glass, in fourth powers all but linear over so little.
+	endless := AnyPerson()
+	endless.GlassWidthM, endless.GlassHeightM, endless.DistanceM = 1e5, 1e5, 1000
+	endless.GlassHeightM = 1e5
+	for _, tt := range []struct {
+		what  string
+		c     Condition
+		edge  Edge
+		o     Options
+		code  string
+		there bool
+	}{
+		{"45.1 °C", isothermal(45.1), Edge{}, Options{}, "hot_surface", true},
+		{"59.9 °C within", isothermal(59.9), Edge{}, Options{}, "at a seal", false},
+		{"60.1 °C within", isothermal(60.1), Edge{}, Options{}, "at a seal", true},
+		{"factor 0.642, 9.26 °C", damp, Edge{TemperatureFactor: known(0.642)}, Options{}, "condensation", true},
+		{"factor 0.643, 9.29 °C", damp, Edge{TemperatureFactor: known(0.643)}, Options{}, "condensation", false},
+		{"margin of 100 K", isothermal(20), Edge{}, Options{Stress: &StressScreening{FrameMarginK: 100, Factor: 1}}, "above the guide", true},
+		{"no margin", isothermal(20), Edge{}, Options{}, "thermal_stress", false},
+		{"asymmetry beyond 10.62 K", cold(9), Edge{}, Options{Person: &endless}, "cold_glass", true},
+		{"no wind", Condition{ID: "x", InsideC: 20}, Edge{}, Options{}, "wind_assumed", true},
+		{"wind", Condition{ID: "x", InsideC: 20, WindMS: known(3)}, Edge{}, Options{}, "wind_assumed", false},
+		{"radiant apart", Condition{ID: "x", InsideC: 20, WindMS: known(3), InsideRadiantC: known(19)}, Edge{}, Options{}, "radiant_apart", true},
+		{"radiant as the air", Condition{ID: "x", InsideC: 20, WindMS: known(3), InsideRadiantC: known(20)}, Edge{}, Options{}, "radiant_apart", false},
+		{"151 °C", isothermal(151), Edge{}, Options{}, "beyond_gas_data", false}, // no gap
+		{"edge by ψ", isothermal(20), Edge{PsiWMK: known(0.05)}, Options{}, "edge_estimate", true},
+	} {
+		p := clearGlass(4, 0.95, 0.04)
+		m := &Makeup{ID: "q", Panes: []Placed{{Pane: p}}, Edge: tt.edge}
+		if strings.Contains(tt.what, "within") {
+			m.Panes, m.Gaps = append(m.Panes, m.Panes[0]), []Gap{gap(t, 12, map[string]float64{"air": 1})}
+		}
+		tt.o.Conditions = []Condition{tt.c}
+		r := ratedAll(t, m, EN, tt.o)[0]
+		there := slices.ContainsFunc(r.Cautions, func(c Caution) bool {
+			return c.Code == tt.code || strings.Contains(c.Text, tt.code)
+		})
+		if there != tt.there {
+			t.Errorf("%s: caution %s there %t, want %t", tt.what, tt.code, there, tt.there)
+		}
+	}
+}
+
+// Stress is the worst of the summer and the cold sunny condition and of the user's with sun; a project
+// may put its own in the place of the cold sunny one.
+func TestStressOfTheWorstCondition(t *testing.T) {
+	dark := clearGlass(6, 0.2, 0.05)
+	m := &Makeup{ID: "S", Panes: []Placed{{Pane: dark}, {Pane: clearGlass(6, 0.8, 0.08)}}, Gaps: []Gap{gap(t, 16, map[string]float64{"argon": 1})}}
+	by := func(o Options) *Stress { return &ratedAll(t, m, EN, o)[0].Stress[0] }
+	plain := by(Options{})
+	// All its sun, 0.762·783 W/m², would warm the outer pane by 30 K against 15 + about 5 W/(m²·K)
+	// outside alone, and by 20 K against another 10 W/(m²·K) towards the room.
+	if plain.Condition != Summer || plain.DropK < 20 || plain.DropK > 30 || math.Abs(plain.CentreC-plain.EdgeC-plain.DropK) > 1e-9 {
+		t.Errorf("summer: %+v", plain)
+	}
+	if want := 70e3 * 9e-6 * plain.DropK; math.Abs(plain.StressMPa-want) > 1e-9 {
+		t.Errorf("stress %.3f MPa, want %.3f", plain.StressMPa, want)
+	}
+	own := Condition{ID: ColdSun, OutsideC: -20, InsideC: 20, OutsideConvectionWM2K: known(4), SunWM2: 1000}
+	if got := by(Options{Conditions: []Condition{own}}); got.Condition != ColdSun || got.DropK <= plain.DropK {
+		t.Errorf("a cold sunny day of the user: %+v", got)
+	}
+	margin := by(Options{Stress: &StressScreening{FrameMarginK: 5, Factor: 0.5}})
+	if math.Abs(margin.DropK-plain.DropK-5) > 1e-9 || math.Abs(margin.StressMPa-0.5*70e3*9e-6*margin.DropK) > 1e-9 {
+		t.Errorf("with a margin of 5 K and a factor of 0.5: %+v", margin)
+	}
+	if margin.GuideK != 100 || margin.Word != thermal.BelowGuide {
+		t.Errorf("heat-strengthened: %+v", margin)
+	}
+}
+
+// Balances serve each tint: the darker pane is the hotter.
+func TestBalancesOfTints(t *testing.T) {
+	p := clearGlass(6, 0.6, 0.1)
+	p.Tints = []Tint{p.Tints[0], p.Tints[0]}
+	p.Tints[0].Name, p.Tints[1].Name = "clear", "full"
+	p.Tints[1].Spectrum = flat(300, 2500, 0.05, 0.1, 0.1)
+	m := &Makeup{ID: "E", Panes: []Placed{{Pane: p}, {Pane: clearGlass(6, 0.8, 0.08)}}, Gaps: []Gap{gap(t, 16, map[string]float64{"argon": 1})}}
+	r := ratedAll(t, m, NA, Options{})
+	a, b := r[0].Balance(Summer), r[1].Balance(Summer)
+	if !(b.SurfaceC(0).Number > a.SurfaceC(0).Number+5) || !(b.G.Number < a.G.Number) || a.U != b.U {
+		t.Errorf("clear %+v, full %+v", a.Lit.SurfaceK[:4], b.Lit.SurfaceK[:4])
+	}
+}
+
+// The emissivity of a balance is the integral over the half space where that follows from what the
+// face is made of, else the corrected one; uncoated glass keeps its convention.
+func TestBalancedEmissivity(t *testing.T) {
+	computed := Emissivity{Corrected: known(0.05), Hemispherical: known(0.06), Source: EmissivityComputed}
+	if computed.Balanced() != known(0.06) || GivenEmissivity(0.2).Balanced() != known(0.2) ||
+		ConventionalEmissivity(0.893, 0.834).Balanced() != known(0.837) {
+		t.Error("balances take another emissivity")
+	}
+}

@@ -1,0 +1,109 @@
+package project
+
+// What heat balances and what follows from their temperatures are made for: conditions, who feels
+// the glazing, how thermal stress is screened, edges.
+
+import "panewright/glazing"
+
+// balancesOf says what of a project asks for detailed heat balances, "basis na asks", or returns "".
+func balancesOf(bases []glazing.Basis, s *fileSpec) string {
+	for _, b := range bases {
+		if b.Balances() {
+			return "basis " + b.Name + " asks"
+		}
+	}
+	if len(s.Conditions) > 0 {
+		return "the conditions ask"
+	}
+	return ""
+}
+
+// conditions checks what the tags cannot, and returns the conditions.
+func (b *builder) conditions(list []conditionSpec) []glazing.Condition {
+	var out []glazing.Condition
+	ids := map[string]position{}
+	for _, c := range list {
+		b.unique(ids, c.ID, "id", "condition")
+		if c.ID.value == glazing.Winter || c.ID.value == glazing.Summer {
+			b.fail(c.ID.at, "id", "%s is a condition of the basis; choose another name", c.ID.value)
+		}
+		if c.Wind.given && c.OutsideConvection.given {
+			b.fail(c.OutsideConvection.at, "outside_convection_w_m2k", "stands beside wind_m_s; give one")
+		}
+		out = append(out, glazing.Condition{
+			ID:       c.ID.value,
+			OutsideC: c.Outside.value, OutsideRadiantC: c.OutsideRadiant.orUnknown(), SkyC: c.Sky.orUnknown(),
+			InsideC: c.Inside.value, InsideRadiantC: c.InsideRadiant.orUnknown(), InsideHumidity: c.InsideHumidity.orUnknown(),
+			WindMS: c.Wind.orUnknown(), OutsideConvectionWM2K: c.OutsideConvection.orUnknown(), InsideConvectionWM2K: c.InsideConvection.orUnknown(),
+			SunWM2: c.Sun.value, TiltDeg: c.Tilt.orUnknown(), HeightM: c.Height.orUnknown(),
+		})
+	}
+	return out
+}
+
+// person returns who feels the glazing; nil where the project does not say.
+func (s *comfortSpec) person() *glazing.Person {
+	if s == nil {
+		return nil
+	}
+	p := glazing.AnyPerson()
+	if s.Posture.given {
+		p.Standing = s.Posture.value == "standing"
+	}
+	for _, x := range []struct {
+		is   number
+		into *float64
+	}{
+		{s.Distance, &p.DistanceM}, {s.GlassWidth, &p.GlassWidthM}, {s.GlassHeight, &p.GlassHeightM},
+		{s.SunAltitude, &p.SunAltitudeDeg}, {s.SunFromFront, &p.SunFromFrontDeg}, {s.SkyShare, &p.SkyShare},
+		{s.BodyShare, &p.BodyShare}, {s.Absorptivity, &p.Absorptivity}, {s.FloorReflectance, &p.FloorReflectance},
+	} {
+		*x.into = x.is.or(*x.into)
+	}
+	return &p
+}
+
+// screening returns how thermal stress is screened; nil where the project does not say.
+func (s *stressSpec) screening() *glazing.StressScreening {
+	if s == nil {
+		return nil
+	}
+	return &glazing.StressScreening{FrameMarginK: s.FrameMargin.or(0), Factor: s.Factor.or(1)}
+}
+
+// edge returns what is known of the edge of a make-up.
+func (b *builder) edge(s *edgeSpec) glazing.Edge {
+	switch {
+	case s == nil || s.Faulty:
+		return glazing.Edge{}
+	case s.TemperatureFactor.given && s.Psi.given:
+		b.fail(s.Psi.at, "psi_w_mk", "stands beside temperature_factor; give one")
+	case !s.TemperatureFactor.given && !s.Psi.given:
+		b.fail(s.At, "edge", "says nothing; give temperature_factor or psi_w_mk, or leave the key out")
+	}
+	return glazing.Edge{TemperatureFactor: s.TemperatureFactor.orUnknown(), PsiWMK: s.Psi.orUnknown()}
+}
+
+// balanced refuses a gas that a detailed heat balance cannot treat, where the project asks for one;
+// once for a make-up. The gaps of the make-up are those of its keys.
+func (b *builder) balanced(s *makeupSpec, m *glazing.Makeup) bool {
+	if b.balances == "" {
+		return true
+	}
+	gap := 0
+	for i := range s.OutsideToInside {
+		e := &s.OutsideToInside[i]
+		if !e.Gap.given {
+			continue
+		}
+		gas := m.Gaps[gap].Gas
+		gap++
+		for k := range gas {
+			if _, err := gas[k : k+1].Fluid(); err != nil {
+				b.fail(e.Gas[gas[k].Gas].name, "gas", "%v; %s for one. Name another gas, or take that out", err, b.balances)
+				return false
+			}
+		}
+	}
+	return true
+}
