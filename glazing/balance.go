@@ -232,7 +232,10 @@ func (r *Rating) sunWhy() string {
 
 // SurfaceC returns the temperature of surface i, from 0, with the sun, in °C.
 func (b *Balance) SurfaceC(i int) Value {
-	return known(b.Lit.SurfaceK[i] - thermal.ZeroCelsius).orNot(b.why())
+	if why := b.why(); why != "" {
+		return unknown(why)
+	}
+	return known(celsius(b.Lit.SurfaceK[i]))
 }
 
 // why says why there is no state with the sun.

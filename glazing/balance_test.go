@@ -330,3 +330,37 @@ func TestBalancedEmissivity(t *testing.T) {
 		t.Error("balances take another emissivity")
 	}
 }
+
+// Where a face or the sun is unknown, every figure of a condition that needs it says why, and none
+// fails.
+func TestUnknownBalances(t *testing.T) {
+	bare := clearGlass(4, 0.8, 0.08)
+	bare.Tints[0].Back = NoEmissivity()
+	short := clearGlass(4, 0.8, 0.08)
+	short.Tints[0].Spectrum = flat(400, 900, 0.8, 0.08, 0.08)
+	sunny := Condition{ID: "c", OutsideC: 30, InsideC: 25, WindMS: known(2), SunWM2: 500, InsideHumidity: known(0.5)}
+	for _, tt := range []struct {
+		pane *Pane
+		why  string
+		dark bool // whether what needs no sun is known
+	}{{bare, "emissivity", false}, {short, "spectrum", true}} {
+		for _, b := range Bases() {
+			r := &ratedAll(t, &Makeup{ID: "U", Panes: []Placed{{Pane: tt.pane}}}, b, Options{Conditions: []Condition{sunny}})[0]
+			balance := r.Balance("c")
+			for _, f := range BalanceFigures() {
+				if f.Per == PerGap || strings.HasPrefix(f.Key, "moisture.edge") {
+					continue
+				}
+				v := f.Of(r, balance, 0)
+				needsSun := f.Alias != "u" && f.Alias != "tilt" && !strings.HasPrefix(f.Key, "moisture.")
+				switch {
+				case f.Alias == "tilt" || f.Alias == "dew_point" || f.Alias == "absorptance": // no balance is needed
+				case v.Known != (tt.dark && !needsSun):
+					t.Errorf("%s, %s: %+v", b.Name, f.Key, v)
+				case !v.Known && !strings.Contains(v.Why, tt.why):
+					t.Errorf("%s, %s: unknown for %q", b.Name, f.Key, v.Why)
+				}
+			}
+		}
+	}
+}

@@ -90,7 +90,12 @@ func BalanceFigures() []BalanceFigure {
 
 // lit makes the accessor of a number of the state with the sun.
 func lit(get func(b *Balance, i int) float64) func(*Rating, *Balance, int) Value {
-	return func(_ *Rating, b *Balance, i int) Value { return known(get(b, i)).orNot(b.why()).finite() }
+	return func(_ *Rating, b *Balance, i int) Value {
+		if why := b.why(); why != "" {
+			return unknown(why)
+		}
+		return known(get(b, i)).finite()
+	}
 }
 
 // hottest makes the accessor of a fact of the hottest pane, from 0, and its temperature.

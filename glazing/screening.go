@@ -46,10 +46,7 @@ func screenedBy(conditions []Condition) []Condition {
 func (r *Ready) screen(x *Rating) error {
 	x.Stress = make([]Stress, len(r.Makeup.Panes))
 	x.hot.touchCondition, x.hot.sealCondition, x.clearNight.humidity = "", "", 0
-	options := StressScreening{Factor: 1}
-	if r.Method.Options.Stress != nil {
-		options = *r.Method.Options.Stress
-	}
+	options := r.Method.stress()
 	var b Balance
 	for i := range r.Method.screened {
 		if err := r.balance(&b, x, &r.Method.screened[i]); err != nil {
