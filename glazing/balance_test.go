@@ -261,6 +261,7 @@ func TestThresholdsOfTemperatures(t *testing.T) {
 		{"radiant apart", Condition{ID: "x", InsideC: 20, WindMS: known(3), InsideRadiantC: known(19)}, Edge{}, Options{}, "radiant_apart", true},
 		{"radiant as the air", Condition{ID: "x", InsideC: 20, WindMS: known(3), InsideRadiantC: known(20)}, Edge{}, Options{}, "radiant_apart", false},
 		{"151 °C", isothermal(151), Edge{}, Options{}, "beyond_gas_data", false}, // no gap
+		{"asymmetry beyond 15 K", cold(-5), Edge{}, Options{Person: &endless}, "beyond what ISO 7730 judges", true},
 		{"edge by ψ", isothermal(20), Edge{PsiWMK: known(0.05)}, Options{}, "edge_estimate", true},
 	} {
 		p := clearGlass(4, 0.95, 0.04)
@@ -361,6 +362,24 @@ func TestUnknownBalances(t *testing.T) {
 					t.Errorf("%s, %s: unknown for %q", b.Name, f.Key, v.Why)
 				}
 			}
+		}
+	}
+}
+
+// The direct sun on a person: by hand, 600 W/m² on an upright glazing at an altitude of 30° is
+// 600/(0.866 + 0.1); none where the glazing looks away from the sun or the sun would be too strong.
+func TestBeam(t *testing.T) {
+	for _, tt := range []struct{ tilt, altitude, sun, want float64 }{
+		{90, 30, 600, 600 / (math.Sqrt(3)/2 + 0.1)},
+		{0, 30, 600, 600 / (0.5 + 0.2)},
+		{30, 60, 600, 600 / (1 + 0.1*(1+math.Sqrt(3)/2))},
+		{135, 45, 600, 0}, {180, 10, 600, 0},
+		{90, 60, 0.6 * 1360, 1360}, {90, 60, 0.6 * 1362, 0},
+	} {
+		b := Balance{TiltDeg: tt.tilt, Condition: &Condition{SunWM2: tt.sun}}
+		got := b.beam(tt.altitude)
+		if got.Known != (tt.want > 0) || (got.Known && math.Abs(got.Number-tt.want) > 1e-9) || (!got.Known && got.Why == "") {
+			t.Errorf("%+v: %+v", tt, got)
 		}
 	}
 }

@@ -101,6 +101,16 @@ var cautionRules = []cautionRule{
 		at := b.Condition.Surroundings(b.TiltDeg)
 		return at.OutsideRadiantK != at.OutsideK || at.InsideRadiantK != at.InsideK
 	}, "Radiant temperatures differ from those of the air in %s: U there is the flux over the difference of the air temperatures, and must not be compared with that of equal ones.")},
+	{"correlation_step", "the Rayleigh number of an upright gap is within 1 % of 1e4 in a condition", conditionsWhere(func(b *Balance) bool {
+		for k := range b.Lit.Sheets - 1 {
+			for _, e := range [...]*thermal.Exchange{&b.Lit.Gaps[k], &b.Dark.Gaps[k]} {
+				if e.AngleDeg > 60 && math.Abs(e.Rayleigh/1e4-1) < 0.01 {
+					return true
+				}
+			}
+		}
+		return false
+	}, "The Rayleigh number of a gap stands at 10 000 in %s, where the correlation of upright gaps has a step of 0.5 %%: two states are possible, of which one is shown, and g of little sun may be of both.")},
 	{"beyond_gas_data", "a gap is colder than -60 °C or hotter than 150 °C in a condition", conditionsWhere(func(b *Balance) bool {
 		for k := range b.Lit.Sheets - 1 {
 			if e := &b.Lit.Gaps[k]; e.Rayleigh > 0 && math.Abs(celsius(e.MeanK)-45) > 105 {
@@ -281,9 +291,14 @@ func coldGlass(all []Rating, i int) string {
 		if asymmetry <= 0 {
 			continue
 		}
-		if pd, v := get("asymmetry_dissatisfied"), get("downdraught"); pd > dissatisfiedPct || v > draughtMS {
-			parts = append(parts, fmt.Sprintf("in condition %s radiant asymmetry %s K (%s %% dissatisfied), air %s m/s near the floor",
-				b.Condition.ID, PrintRounded(asymmetry, 1), PrintRounded(pd, 0), PrintRounded(v, 2)))
+		pd, v := r.dissatisfied(b), get("downdraught")
+		who := "beyond what ISO 7730 judges"
+		if pd.Known {
+			who = PrintRounded(pd.Number, 0) + " % dissatisfied"
+		}
+		if !pd.Known || pd.Number > dissatisfiedPct || v > draughtMS {
+			parts = append(parts, fmt.Sprintf("in condition %s radiant asymmetry %s K (%s), air %s m/s near the floor",
+				b.Condition.ID, PrintRounded(asymmetry, 1), who, PrintRounded(v, 2)))
 		}
 	}
 	if parts == nil {

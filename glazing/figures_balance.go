@@ -140,7 +140,12 @@ func stateFigures() []BalanceFigure {
 		{Figure: Figure{Key: "g", Alias: "g", Symbol: "g", Places: 2, Small: true, Clause: balance, Meaning: "solar heat gain: of the sun, what passes and what the room gains more than without"},
 			Schedule: 2, Of: func(_ *Rating, b *Balance, _ int) Value { return b.G }},
 		{Figure: Figure{Key: "absorptance", Alias: "total_absorptance", Symbol: "αe", Places: 2, Small: true, Clause: "EN 410, 5.4.5", Meaning: "solar absorptance of all panes together"},
-			Schedule: 3, Of: func(r *Rating, _ *Balance, _ int) Value { return r.absorptance() }},
+			Schedule: 3, Of: func(r *Rating, b *Balance, _ int) Value {
+				if b.Why != "" {
+					return unknown(b.Why)
+				}
+				return r.absorptance()
+			}},
 		{Figure: Figure{Key: "secondary_heat_inward", Alias: "qi", Symbol: "qi", Places: 2, Small: true, Clause: balance, Meaning: "secondary heat towards the inside, g − τe"},
 			Schedule: 4, Of: func(r *Rating, b *Balance, _ int) Value {
 				return known(b.G.Number - r.Solar.Transmittance.Number).orNot(b.G.Why)

@@ -194,15 +194,44 @@ func (r *Rating) asymmetry(b *Balance) Value {
 	return known(thermal.RadiantAsymmetry(view, b.Lit.SurfaceK[2*b.Lit.Sheets-1], b.Lit.Surroundings.InsideRadiantK))
 }
 
+// dissatisfied returns the percentage whom that asymmetry disturbs, as by a wall.
+func (r *Rating) dissatisfied(b *Balance) Value {
+	v := r.asymmetry(b)
+	if !v.Known {
+		return v
+	}
+	source, size := thermal.CoolWall, v.Number
+	if size < 0 {
+		source, size = thermal.WarmWall, -size
+	}
+	percent, within := thermal.AsymmetryDissatisfied(source, size)
+	if !within {
+		return unknown("the radiant asymmetry is beyond the range of the formula of ISO 7730")
+	}
+	return known(percent)
+}
+
 // beam returns the direct sun in W/m², on a plane that faces it, that with its share of the sky makes
 // up the condition's sun on the glazing: the sun stands square before the glazing at an altitude, and
-// the sky gives the fifth of it that ASHRAE 55 reckons with. An assumption of our own.
-func (b *Balance) beam(altitudeDeg float64) float64 {
+// the sky gives the fifth of it that ASHRAE 55 reckons with. An assumption of our own. It is unknown
+// where the sun cannot stand so, and where it would have to be stronger than beyond the air.
+func (b *Balance) beam(altitudeDeg float64) Value {
 	altitude, tilt := altitudeDeg*math.Pi/180, b.TiltDeg*math.Pi/180
-	direct := max(0, float64(math.Sin(altitude)*math.Cos(tilt))+float64(math.Cos(altitude)*math.Sin(tilt)))
-	sky := thermal.DiffuseShare * (1 + math.Cos(tilt)) / 2
-	return b.Condition.SunWM2 / (direct + sky)
+	direct := float64(math.Sin(altitude)*math.Cos(tilt)) + float64(math.Cos(altitude)*math.Sin(tilt))
+	if direct <= grazing {
+		return unknown("sun of that altitude does not strike a glazing of this tilt")
+	}
+	beam := b.Condition.SunWM2 / (direct + float64(thermal.DiffuseShare*(1+math.Cos(tilt))/2))
+	if beam > solarConstant {
+		return unknown("the condition's sun on the glazing needs direct sun of more than 1361 W/m²")
+	}
+	return known(beam)
 }
+
+const (
+	grazing       = 1e-6   // cosine of incidence up to which the sun does not strike
+	solarConstant = 1361.0 // W/m², of the sun beyond the air (ISO 9845-1 and later; from memory)
+)
 
 // sunOn returns what the transmitted sun of a condition does to the person.
 func (r *Rating) sunOn(b *Balance, get func(thermal.SolarLoad) float64) Value {
@@ -213,7 +242,11 @@ func (r *Rating) sunOn(b *Balance, get func(thermal.SolarLoad) float64) Value {
 		return unknown("the condition has no sun")
 	}
 	p := r.Method.person()
-	load, err := thermal.SunOnPerson{AltitudeDeg: p.SunAltitudeDeg, FromFrontDeg: p.SunFromFrontDeg, BeamWM2: b.beam(p.SunAltitudeDeg),
+	beam := b.beam(p.SunAltitudeDeg)
+	if !beam.Known {
+		return beam
+	}
+	load, err := thermal.SunOnPerson{AltitudeDeg: p.SunAltitudeDeg, FromFrontDeg: p.SunFromFrontDeg, BeamWM2: beam.Number,
 		Transmittance: r.Solar.Transmittance.Number, SkyShare: p.SkyShare, BodyShare: p.BodyShare, Absorptivity: p.Absorptivity,
 		FloorReflectance: p.FloorReflectance, Standing: p.Standing}.Load()
 	if err != nil {
@@ -256,15 +289,7 @@ func consequenceFigures() []BalanceFigure {
 			Of: func(r *Rating, b *Balance, _ int) Value { return r.asymmetry(b) }},
 		{Figure: Figure{Key: "comfort.asymmetry_dissatisfied_pct", Alias: "asymmetry_dissatisfied", Symbol: "PDpr", Unit: "%", Places: 1, Clause: comfort, Meaning: "people dissatisfied by that asymmetry"},
 			Of: func(r *Rating, b *Balance, _ int) Value {
-				v := r.asymmetry(b)
-				if v.Known {
-					source, size := thermal.CoolWall, v.Number
-					if size < 0 {
-						source, size = thermal.WarmWall, -size
-					}
-					v.Number, _ = thermal.AsymmetryDissatisfied(source, size)
-				}
-				return v
+				return r.dissatisfied(b)
 			}},
 		{Figure: Figure{Key: "comfort.downdraught_m_s", Alias: "downdraught", Symbol: "vf", Unit: "m/s", Places: 2, Clause: "Manz and Frank 2003", Meaning: "air speed near the floor by the cold glass"},
 			Of: func(r *Rating, b *Balance, _ int) Value {

@@ -134,7 +134,7 @@ func TestWorkingOfBalances(t *testing.T) {
 			t.Errorf("no step is by %q", formula)
 		}
 	}
-	for _, want := range []string{"for sheets pass infrared", "for air and what radiates differ", "not colder than the air", "which is extended"} {
+	for _, want := range []string{"for sheets pass infrared", "for air and what radiates differ", "not colder than the air", "beyond the range of the formula"} {
 		if !strings.Contains(notes.String(), want) {
 			t.Errorf("no note says %q", want)
 		}
@@ -277,8 +277,8 @@ func holdsFigures(t *testing.T, name string, r *Rating, b *Balance, chapters []C
 			}
 		}
 	}
-	for symbol, known := range map[string]bool{"U": b.U.Known, "g": b.G.Known, "qi": b.G.Known, "qin": true, "hce": true, "hci": true, "φsi": true, "φse": true, "Δtpr": true, "PDpr": true,
-		"θmax": true, "fRsi": b.U.Known, "θd": b.Condition.InsideHumidity.Known, "ERF": b.Condition.SunWM2 > 0 && b.TiltDeg < 180, "hg": len(r.Gaps) > 0, "E·τe": b.Condition.SunWM2 > 0} {
+	for symbol, known := range map[string]bool{"U": b.U.Known, "g": b.G.Known, "qi": b.G.Known, "qin": true, "hce": true, "hci": true, "φsi": true, "φse": true, "Δtpr": true, "PDpr": r.balanceFigure(b, "comfort.asymmetry_dissatisfied_pct").Known,
+		"θmax": true, "fRsi": b.U.Known, "θd": b.Condition.InsideHumidity.Known, "ERF": r.balanceFigure(b, "comfort.sun_field_w_m2").Known, "hg": len(r.Gaps) > 0, "E·τe": b.Condition.SunWM2 > 0} {
 		if found[symbol] != known {
 			t.Errorf("%s, %s: %s is written out %t, known %t", name, b.Condition.ID, symbol, found[symbol], known)
 		}

@@ -151,16 +151,18 @@ func (c *Chapter) asymmetry(r *Rating, b *Balance, p Person) {
 		fmt.Sprintf("(%s·%s^4 + (1 − %s)·%s^4)^(1/4)", put(view), put(face), put(view), put(room)), plane, "K", viewed)
 	c.step("Δtpr", "radiant asymmetry, below 0 where the glass is warm", "Tri − Tpr", minus(room, plane), uneven, "K", clauseComfort)
 
-	source, size := thermal.CoolWall, uneven
+	dissatisfied := r.dissatisfied(b)
+	if !dissatisfied.Known {
+		c.lack("PDpr", dissatisfied.Why)
+		return
+	}
+	size := uneven
 	formula, numbers := "max(0, 100/(1 + exp(6.61 − 0.345·Δtpr)))", "max(0, 100/(1 + exp(6.61 − 0.345·%s)))"
 	if size < 0 {
-		source, size = thermal.WarmWall, -size
+		size = -size
 		formula, numbers = "max(0, 100/(1 + exp(3.72 + 0.052·Δtpr)) − 3.5)", "max(0, 100/(1 + exp(3.72 − 0.052·%s)) − 3.5)"
 	}
-	if _, within := thermal.AsymmetryDissatisfied(source, size); !within {
-		c.remark("The asymmetry is outside the range of the formula for people dissatisfied, which is extended.")
-	}
-	c.step("PDpr", "people dissatisfied by it, as by a wall", formula, fmt.Sprintf(numbers, put(size)), r.balanceFigure(b, "comfort.asymmetry_dissatisfied_pct").Number, "%", clauseComfort)
+	c.step("PDpr", "people dissatisfied by it, as by a wall", formula, fmt.Sprintf(numbers, put(size)), dissatisfied.Number, "%", clauseComfort)
 }
 
 // downdraught writes out the air that falls along cold glass.
@@ -204,13 +206,13 @@ func (c *Chapter) sunOn(r *Rating, b *Balance, p Person) {
 	}
 	c.remark(fmt.Sprintf("The sun of the condition is direct sun Eb, square before the glazing and %s° high, with the fifth of it that the whole sky gives; the person faces %s° away from it. fsky %s is the share of the sky seen through the glass, fbody %s that of the body struck, absorbed %s, floor %s reflected there. τe is that of normal incidence.",
 		plain(p.SunAltitudeDeg), plain(p.SunFromFrontDeg), plain(p.SkyShare), plain(p.BodyShare), plain(p.Absorptivity), plain(p.FloorReflectance)))
-	direct := b.beam(p.SunAltitudeDeg)
+	direct := b.beam(p.SunAltitudeDeg).Number
 	beam, tau, altitude, tilt := put(direct), put(r.Solar.Transmittance.Number), put(p.SunAltitudeDeg), put(b.TiltDeg)
 	projected := load(func(l thermal.SolarLoad) float64 { return l.ProjectedArea }).Number
 	onBody := [...]float64{load(func(l thermal.SolarLoad) float64 { return l.Diffuse }).Number, load(func(l thermal.SolarLoad) float64 { return l.Direct }).Number,
 		load(func(l thermal.SolarLoad) float64 { return l.Reflected }).Number}
-	c.step("Eb", "direct sun, on a plane that faces it", "E/(max(0, sin(alt)·cos(tilt) + cos(alt)·sin(tilt)) + 0.2·(1 + cos(tilt))/2)",
-		fmt.Sprintf("%s/(max(0, sin(%s)·cos(%s) + cos(%s)·sin(%s)) + 0.2·(1 + cos(%s))/2)", put(b.Condition.SunWM2), altitude, tilt, altitude, tilt, tilt), direct, unit, "our own assumption")
+	c.step("Eb", "direct sun, on a plane that faces it", "E/(sin(alt)·cos(tilt) + cos(alt)·sin(tilt) + 0.2·(1 + cos(tilt))/2)",
+		fmt.Sprintf("%s/(sin(%s)·cos(%s) + cos(%s)·sin(%s) + 0.2·(1 + cos(%s))/2)", put(b.Condition.SunWM2), altitude, tilt, altitude, tilt, tilt), direct, unit, "our own assumption")
 	c.step("fp", "projected area, of the appendix's table", "by altitude and direction", put(projected), projected, "", clause)
 	c.step("Edif", "diffuse sun on the body", area+"·fsky/2·τe·0.2·Eb", area+"·"+put(p.SkyShare)+"/2·"+tau+"·0.2·"+beam, onBody[0], unit, clause)
 	c.step("Edir", "direct sun on the body", area+"·fp·fbody·τe·Eb", area+"·"+put(projected)+"·"+put(p.BodyShare)+"·"+tau+"·"+beam, onBody[1], unit, clause)

@@ -5,6 +5,7 @@ package proof
 import (
 	"errors"
 	"fmt"
+	"slices"
 	"strconv"
 	"strings"
 
@@ -102,10 +103,10 @@ func number(v glazing.Value) (float64, error) {
 	return v.Number, nil
 }
 
-// figure returns a figure of a rating by its key in the list of figures, with panes, gaps and
-// surfaces counted from 1.
+// figure returns a figure of a rating by its key in the list of figures, or in that of its balances,
+// with panes, gaps and surfaces counted from 1.
 func figure(r *glazing.Rating, key string) (float64, error) {
-	for _, f := range glazing.Figures() {
+	for _, f := range slices.Concat(glazing.Figures(), glazing.ConditionFigures([]glazing.Rating{*r})) {
 		if f.Value == nil || !f.Named(key) {
 			continue
 		}

@@ -202,10 +202,9 @@ func TestMatrixScope(t *testing.T) {
 	sizes, gases := map[int]int{}, map[string]bool{}
 	coated, absorbing := map[[2]int]bool{}, map[[2]int]bool{}
 	figures := map[string]map[string]int{} // rows of each column
-	for _, c := range checks.All() {
-		if c.Kind != "makeup" || c.Subject == "" {
-			continue
-		}
+	groups := checks.Groups()
+	matrix := groups[slices.IndexFunc(groups, func(g checks.Group) bool { return strings.HasPrefix(g.Title, "Test matrix") })]
+	for _, c := range matrix.Checks {
 		row, column := c.ID[:strings.LastIndex(c.ID, "-")], c.ID[strings.LastIndex(c.ID, "-")+1:]
 		if figures[column] == nil {
 			figures[column] = map[string]int{}
