@@ -169,7 +169,7 @@ func (w *work) begin(s *System, b *Balance, at Surroundings, absorbedWM2 []float
 	case !(at.HeightM > 0) || math.IsInf(at.HeightM, 0):
 		return fmt.Errorf("thermal: a height of %g m; it is above 0", at.HeightM)
 	}
-	b.Sheets, b.Surroundings = s.n, at
+	b.Sheets, b.Surroundings, b.Iterations = s.n, at, 0
 	for k, a := range absorbedWM2 {
 		if math.IsNaN(a) || math.IsInf(a, 0) {
 			return fmt.Errorf("thermal: sheet %d absorbs %g W/m²", k+1, a)

@@ -43,12 +43,15 @@ A limit has a figure, at_most or at_least in the unit of the figure, and
   basis     absent, the project's, if it has just one. Another than the project
             has is rated for the limit
   scope     centre (when absent) or window
+  condition an id of the project's conditions, or winter or summer under na and
+            iso15099: the figure is that of the balance under it
   makeups   ids; all when absent
   source, date
 
 A figure of panes, gaps or surfaces without a number stands for all of them, and
 the worst counts. Both the figure as outputs round it and the unrounded one are
-held against the limit. The results are:
+held against the limit. A figure that only balances have, as inside_surface,
+needs a condition. The results are:
 
   meets the entered limit   both meet it
   does not meet             neither meets it

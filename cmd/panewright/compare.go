@@ -24,8 +24,8 @@ func newCompare(s streams) *cobra.Command {
 		DisableFlagsInUseLine: true,
 		Short:                 "Set make-ups or tints beside each other",
 		Long: `Prints the figures of make-ups or tints beside those of the first, which is the
-reference, with their changes, the differences of their colours and what differs
-in what was put in.
+reference, with their changes, those under each condition, the differences of
+their colours and what differs in what was put in.
 
 An ID is a make-up in each of its tints; ID:TINT is one tint. clear and full
 are understood as by rate --tint.

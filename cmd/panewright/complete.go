@@ -9,7 +9,6 @@ import (
 	"errors"
 	"fmt"
 	"slices"
-	"strconv"
 	"strings"
 
 	"github.com/spf13/cobra"
@@ -85,14 +84,16 @@ func completionScript(root *cobra.Command, shell string) ([]byte, error) {
 }
 
 // bashCommas keeps the script for bash from escaping commas, which no list that it offers would then
-// match.
+// match, and from taking @, which stands before conditions, for the end of a word.
 var bashCommas = strings.NewReplacer(
 	`[[ $comp == "$cur"* ]]`, `comp=${comp//\\,/,}; [[ $comp == "$cur"* ]]`,
 	`    __panewright_handle_special_char "$cur" :`, `    COMPREPLY=("${COMPREPLY[@]//\\,/,}")
-    __panewright_handle_special_char "$cur" :`)
+    __panewright_handle_special_char "$cur" @
+    __panewright_handle_special_char "$cur" :`,
+	"init_completion -n =: ||", "init_completion -n =:@ ||")
 
 // bashAlone follows the command library's script for bash, which calls functions of the package
-// bash-completion. Where that package is not loaded, these stand in: bash splits a line at = and :,
+// bash-completion. Where that package is not loaded, these stand in: bash splits a line at = : and @,
 // and the first puts together again what has no blank between; the second lists files.
 const bashAlone = `
 if ! declare -F _get_comp_words_by_ref >/dev/null; then
@@ -102,7 +103,7 @@ if ! declare -F _get_comp_words_by_ref >/dev/null; then
         COMPREPLY=() words=() cword=0
         for i in "${!COMP_WORDS[@]}"; do
             word=${COMP_WORDS[i]}
-            if [[ $line != [[:blank:]]* && ($word == [=:]* || $before == *[=:]) ]]; then
+            if [[ $line != [[:blank:]]* && ($word == [=:@]* || $before == *[=:@]) ]]; then
                 words[${#words[@]}-1]+=$word
             else
                 words+=("$word")
@@ -150,13 +151,14 @@ var optionOffers = map[string]offer{
 	"unit":                 always(spectra.LayoutUnits),
 	"columns":              always(layoutColumns),
 	"only":                 always(familiesAbout),
+	"conditions":           conditionsToShow,
 }
 
 // optionEnds are the ends of the files that options name; none for files of any kind.
 var optionEnds = map[string][]string{"project": projectEnds, "limits": projectEnds, "output": {}, "each": {}}
 
 // lists are the options whose values are mostly lists with commas: no blank follows an element.
-var lists = []string{"figures", "columns"}
+var lists = []string{"figures", "columns", "conditions"}
 
 var projectEnds = []string{"yaml", "yml", "json"}
 
@@ -429,12 +431,24 @@ func basisNames() (out []string) {
 	return out
 }
 
-// figureNamesAbout lists the short names of figures; where none begins with the word, the keys, with
-// the numbers that the panes, gaps and surfaces of the project's make-ups have.
+// figureNamesAbout lists the short names of figures, and after @ the conditions that the project or its
+// bases have; where none begins with the word, the keys, with the numbers that the panes, gaps and
+// surfaces of the project's make-ups have.
 func figureNamesAbout(c *cobra.Command, args []string, word string) (out []string) {
 	for _, f := range glazing.Figures() {
 		if f.Alias != "" && strings.HasPrefix(f.Alias, word) {
 			out = append(out, about(f.Alias, f.Meaning))
+		}
+	}
+	if alone, _, at := strings.Cut(word, "@"); at || len(out) == 0 {
+		ids := conditionIDs(c, args)
+		for _, f := range glazing.BalanceFigures() {
+			if !strings.HasPrefix(f.Alias, alone) || at && f.Alias != alone {
+				continue
+			}
+			for _, id := range ids {
+				out = append(out, about(f.Alias+"@"+id, f.Meaning))
+			}
 		}
 	}
 	if len(out) > 0 {
@@ -445,12 +459,43 @@ func figureNamesAbout(c *cobra.Command, args []string, word string) (out []strin
 		panes = max(panes, len(m.Panes))
 	}
 	count := map[glazing.Per]int{glazing.PerMakeup: 1, glazing.PerPane: panes, glazing.PerGap: max(1, panes-1), glazing.PerSurface: 2 * panes}
-	for _, f := range glazing.Figures() {
+	list := glazing.Figures()
+	for _, id := range conditionIDs(c, args) {
+		for _, f := range glazing.BalanceFigures() {
+			list = append(list, f.At(id))
+		}
+	}
+	for _, f := range list {
 		for i := range count[f.Per] {
-			out = append(out, about(strings.ReplaceAll(f.Key, "#", strconv.Itoa(i+1)), f.Meaning))
+			out = append(out, about(f.KeyAt(i+1), f.Meaning))
 		}
 	}
 	return out
+}
+
+// conditionIDs lists the conditions that a rating of the project has: those of the bases, if they have
+// any, and the project's own.
+func conditionIDs(c *cobra.Command, args []string) (ids []string) {
+	p := projectNamed(c, args)
+	if p == nil {
+		return nil
+	}
+	bases := p.Bases
+	if f := c.Flags().Lookup("basis"); f != nil && f.Changed {
+		bases = nil
+		for name := range strings.SplitSeq(strings.Trim(f.Value.String(), "[]"), ",") {
+			if b, err := glazing.BasisNamed(name); err == nil {
+				bases = append(bases, b)
+			}
+		}
+	}
+	if slices.ContainsFunc(bases, glazing.Basis.Balances) {
+		ids = append(ids, glazing.Winter, glazing.Summer)
+	}
+	for _, x := range p.Conditions {
+		ids = append(ids, x.ID)
+	}
+	return ids
 }
 
 // formats lists those that the help of --as names.

@@ -21,7 +21,7 @@ import (
 const bashLine = `
 source "$1"; shift
 compopt() { :; }
-COMP_WORDBREAKS=$' \t\n"\'><=;|&(:'
+COMP_WORDBREAKS=$' \t\n"\'@><=;|&(:'
 COMP_LINE=$1 COMP_POINT=${#1} COMP_TYPE=9; shift
 COMP_WORDS=("$@") COMP_CWORD=$(($# - 1))
 __start_panewright
@@ -55,6 +55,9 @@ func TestBashCompletes(t *testing.T) {
 		{[]string{"compare", project, "E1", ":"}, ":", []string{"clear", "full", "half"}},
 		{[]string{"compare", project, "E1", ":", "full", "T"}, ":", []string{"T1"}},
 		{[]string{"rate", "nothing.yaml", "--makeup", ""}, "", []string{""}},
+		{[]string{"rate", project, "--basis", "na", "--figures", "u", "@", "w"}, "@", []string{"winter"}},
+		{[]string{"rate", project, "--basis", "na", "--figures", "u,temperature", "@", "su"}, "@", []string{"summer"}},
+		{[]string{"rate", project, "--basis", "na", "--figures", "hottest_p"}, "", []string{"hottest_pane@winter", "hottest_pane@summer"}},
 	} {
 		line := "panewright"
 		for i, w := range x.words {

@@ -276,3 +276,47 @@ func TestFiguresTopicIsWhole(t *testing.T) {
 		}
 	}
 }
+
+// The figures of a balance stand there too.
+func TestFiguresTopicHasBalances(t *testing.T) {
+	_, text, found := strings.Cut(figuresText(), "u@winter")
+	for _, f := range glazing.BalanceFigures() {
+		if !found || !strings.Contains(text, " "+f.Key+"\n") || !strings.Contains(text, "\n  "+f.Alias+" ") {
+			t.Errorf("the topic figures lacks %s (%s) of a balance", f.Key, f.Alias)
+		}
+	}
+}
+
+// The conditions and limits that the topic conditions shows are read and rated, and its table has every
+// key that the schema has.
+func TestConditionsProject(t *testing.T) {
+	_, text, _ := strings.Cut(conditionsAbout, "thermal stress.\n\n")
+	text, _, _ = strings.Cut(text, "\n\n")
+	_, limits, _ := strings.Cut(conditionsUse, "by its key:\n\n")
+	_, limits, _ = strings.Cut(limits, "  limits:")
+	limits, _, _ = strings.Cut(limits, "\n\n")
+	content := "project: x\nbasis: na\nmakeups:\n  - {id: A1, outside_to_inside: [{pane: soda-lime-6}]}\n" +
+		strings.ReplaceAll("\n"+text+"\n  limits:"+limits+"\n", "\n  ", "\n")
+	path := filepath.Join(t.TempDir(), "x.yaml")
+	if err := os.WriteFile(path, []byte(content), 0o644); err != nil {
+		t.Fatal(err)
+	}
+	out := printed(t, "rate", path)
+	for _, want := range []string{"\njanuary-night ", "\njuly-noon ", "\nwinter ", "\nsummer "} {
+		if !strings.Contains(out, want) {
+			t.Errorf("rating it prints no row of %s:\n%s", want, out)
+		}
+	}
+	schema := printed(t, "schema")
+	_, keys, _ := strings.Cut(schema, `"conditions"`)
+	keys, _, _ = strings.Cut(keys, `"required"`)
+	named := regexp.MustCompile(`"([a-z][a-z0-9_]*(?:_c|_rh|_m_s|_w_m2k|_w_m2|_deg|_m))": \{`).FindAllStringSubmatch(keys, -1)
+	if len(named) < 12 {
+		t.Errorf("the schema names %d keys of conditions", len(named))
+	}
+	for _, m := range named {
+		if !strings.Contains(conditionsAbout, m[1]+" ") && !strings.Contains(conditionsAbout, m[1]+",") {
+			t.Errorf("the topic lacks the key %s", m[1])
+		}
+	}
+}

@@ -26,6 +26,7 @@ func topics() []topic {
 		{"formats", "the project file, spectra, outputs, exit codes", func() string { return formatsText }},
 		{"figures", "every figure: short name, symbol, unit, key", figuresText},
 		{"bases", "the standards that a basis stands for", basesText},
+		{"conditions", "heat balances: temperatures, wind and sun of a project or a basis", conditionsText},
 		{"cautions", "the cautions, and when each applies", cautionsText},
 		{"notices", "the data and code that Panewright carries", noticesText},
 	}
@@ -129,28 +130,50 @@ func fold(b *strings.Builder, lead, words string) {
 // groups are the headings over figures, by the first part of their keys. Keys of one part stand
 // under the first; a part without a row is its own heading.
 var groups = map[string]string{
-	"":        "The make-up as a whole",
 	"light":   "Light",
 	"solar":   "Sun and heat gain",
 	"uv":      "Ultraviolet",
 	"colour":  "Colour",
 	"gaps":    "Gaps, # from outside",
 	"outside": "Surface coefficients", "inside": "Surface coefficients",
-	"surfaces": "Surfaces, # from outside",
+	"surfaces":       "Surfaces, # from outside",
+	"thermal_stress": "Thermal stress, a screening, # the pane from outside",
+	"moisture":       "Moisture",
+	"comfort":        "Comfort",
 }
 
 func figuresText() string {
 	var b strings.Builder
 	fold(&b, "", "The figures of a rating, as --figures takes them. A figure has a short name, a symbol, and a key, which is its path in JSON and its column in CSV and XLSX. In the place of # stands the number of the pane, gap or surface, counted from 1 from outside; the short name stands for all of them.")
+	listFigures(&b, glazing.Figures(), "The make-up as a whole")
+	b.WriteString("\n")
+	fold(&b, "", "Under a condition, named after @, as in u@winter or θ4@winter, or in the key, as in balances.winter.u_w_m2k, there are these; see panewright help conditions. In JSON they stand in the list balances, by condition.")
+	var balances []glazing.Figure
+	for _, f := range glazing.BalanceFigures() {
+		balances = append(balances, f.Figure)
+	}
+	listFigures(&b, balances, "The balance as a whole")
+	b.WriteString("\n")
+	for _, f := range glazing.InchPound(glazing.Figures()) {
+		if f.Alias == "u" {
+			fold(&b, "", "With --units ip a key ends in its other unit: that of U is then "+f.Key+", in "+f.Unit+". JSON is always in SI.")
+		}
+	}
+	return b.String()
+}
+
+// listFigures writes figures under the headings of the first parts of their keys; whole stands over
+// those whose key is one part, or one part by number.
+func listFigures(b *strings.Builder, list []glazing.Figure, whole string) {
 	var order []string
 	under := map[string][]glazing.Figure{}
-	for _, f := range glazing.Figures() {
-		part, _, dotted := strings.Cut(f.Key, ".")
-		if !dotted {
-			part = ""
-		}
+	for _, f := range list {
+		part, _, dotted := strings.Cut(strings.TrimSuffix(f.Key, ".#"), ".")
 		heading, ok := groups[part]
-		if !ok {
+		switch {
+		case !dotted:
+			heading = whole
+		case !ok:
 			heading = part
 		}
 		if under[heading] == nil {
@@ -170,16 +193,9 @@ func figuresText() string {
 			if f.Unit != "" {
 				meaning += ", " + f.Unit
 			}
-			fold(&b, "      ", meaning)
+			fold(b, "      ", meaning)
 		}
 	}
-	b.WriteString("\n")
-	for _, f := range glazing.InchPound(glazing.Figures()) {
-		if f.Alias == "u" {
-			fold(&b, "", "With --units ip a key ends in its other unit: that of U is then "+f.Key+", in "+f.Unit+". JSON is always in SI.")
-		}
-	}
-	return b.String()
 }
 
 func basesText() string {
@@ -190,7 +206,13 @@ func basesText() string {
 		fold(&b, text.Pad(basis.Name, 10, ' '), glazing.NewMethod(basis, glazing.Options{}).Editions())
 	}
 	b.WriteString("\n")
-	fold(&b, "", "coefficients: in the project puts other surface coefficients in their place, sun: another solar spectrum. What a basis does not give in this version is not known, and the reason stands with the figures.")
+	fold(&b, "", "coefficients: in the project puts other surface coefficients in the place of those of en and iso, sun: another solar spectrum. Under na and iso15099 U is that of their condition winter and g that of summer; see panewright help conditions.")
+	b.WriteString("\n")
+	var methods []*glazing.Method
+	for _, basis := range glazing.Bases() {
+		methods = append(methods, glazing.NewMethod(basis, glazing.Options{}))
+	}
+	fold(&b, "", strings.ReplaceAll(glazing.BasesDiffer(methods), "\u00a0", " "))
 	return b.String()
 }
 

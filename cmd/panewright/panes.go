@@ -277,6 +277,15 @@ func paneCSV(p *glazing.Pane, tint int, e *library.Entry) ([]byte, error) {
 	if p.Origin != glazing.MeasuredOrigin {
 		comments = append(comments, "add to the pane: origin: "+string(p.Origin))
 	}
+	if p.HeatTreatment != "" && p.HeatTreatment != glazing.UnknownTreatment {
+		comments = append(comments, "add to the pane: heat_treatment: "+string(p.HeatTreatment))
+	}
+	if p.HeatSoaked {
+		comments = append(comments, "add to the pane: heat_soaked: true")
+	}
+	if p.TauInfrared > 0 {
+		comments = append(comments, fmt.Sprintf("add to the pane: tau_ir: %v", p.TauInfrared))
+	}
 	if len(p.Plies) == 1 {
 		comments = append(comments, fmt.Sprintf("add to the pane: thickness_mm: %v", p.ThicknessMM()))
 	}

@@ -112,6 +112,10 @@ func newRate(s streams) *cobra.Command {
 		Long: `Rates every make-up of a project in every tint and prints the schedule, as text
 of 80 columns or as Markdown.
 
+Under conditions, those of the project and of the bases na and iso15099, a
+second table says what each make-up absorbs and gives inwards, and how warm it
+gets; see panewright help conditions.
+
 JSON, CSV and XLSX have every figure with all its digits. What is not known is
 null in JSON and an empty cell elsewhere; the cautions say why.
 
@@ -123,7 +127,7 @@ XLSX also has the units, editions, cautions, and a chart of the spectra.
 --figures takes keys, such as solar.g or surfaces.3.emissivity, symbols as the
 tables print them, such as τv or ε3, and the short names below. A figure of
 panes, gaps or surfaces without a number stands for all of them; in JSON its
-list is always whole.
+list is always whole. After @ stands a condition: u@winter, θ4@winter.
 
 ` + figureNames(),
 		Example: `  panewright rate panewright-demo/project.yaml
@@ -131,6 +135,8 @@ list is always whole.
   panewright rate panewright-demo/project.yaml --basis en,iso --as json
   panewright rate panewright-demo/project.yaml --as json --spectra 400,550,700
   panewright rate panewright-demo/project.yaml --figures light,g,u,absorptance
+  panewright rate panewright-demo/project.yaml --basis na \
+    --figures u,u@summer,temperature@summer
   panewright rate panewright-demo/project.yaml --units ip
   panewright rate panewright-demo/project.yaml -o mill.xlsx
   panewright rate panewright-demo/project.yaml -o mill.csv --separator ";" \

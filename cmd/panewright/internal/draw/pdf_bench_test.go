@@ -21,7 +21,7 @@ func sheetLike(b testing.TB) (pages []*Canvas) {
 		c := New(210, 297)
 		c.Text(20, 20, m.ID, Type{Face: Semibold, Size: 14})
 		if page < 2 {
-			Section(c, Rect{20, 30, 84, 60}, list[page])
+			Section(c, Rect{20, 30, 84, 60}, list[page], Temperatures{})
 			Plot(c, Rect{20, 95, 170, 60}, [][]Curve{MakeupCurves(list[0]), TintCurves(list)}[page])
 		}
 		for row := range 40 {
@@ -62,7 +62,7 @@ func BenchmarkDrawing(b *testing.B) {
 func BenchmarkSection(b *testing.B) {
 	r := ratingsOf(b, gallery(b)["switch"])[0]
 	for b.Loop() {
-		Section(New(210, 297), Rect{20, 30, 84, 60}, &r)
+		Section(New(210, 297), Rect{20, 30, 84, 60}, &r, Temperatures{})
 	}
 }
 
@@ -97,5 +97,13 @@ func BenchmarkSVG(b *testing.B) {
 		if _, err := SVG(c, "", ""); err != nil {
 			b.Fatal(err)
 		}
+	}
+}
+
+func BenchmarkSectionTemperatures(b *testing.B) {
+	r := ratingsUnder(b, gallery(b)["switch"], coldNight, hotNoon)[0]
+	t := TemperaturesOf([]*glazing.Rating{r}, ColdAndHot(r))
+	for b.Loop() {
+		Section(New(210, 297), Rect{20, 30, 84, 70}, r, t)
 	}
 }

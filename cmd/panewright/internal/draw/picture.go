@@ -4,7 +4,6 @@ package draw
 
 import (
 	"fmt"
-	"slices"
 	"strings"
 
 	"panewright/glazing"
@@ -53,26 +52,30 @@ func (h Heading) foot(c *Canvas, y float64) {
 	c.H = y - noteType.Leading() + pictureMargin*0.8
 }
 
-// SectionPicture draws the sections of ratings of one make-up, one for each tint, with a list of
-// the panes and gaps.
-func SectionPicture(ratings []*glazing.Rating, h Heading) *Canvas {
+// SectionPicture draws the sections of ratings of one make-up, one for each tint, with the
+// temperatures of conditions, and a list of the panes and gaps.
+func SectionPicture(ratings []*glazing.Rating, conditions []string, h Heading) *Canvas {
 	c := New(pictureWide, pictureWide)
 	first := ratings[0]
+	t := TemperaturesOf(ratings, conditions)
 	y := h.head(c)
 	right := pictureMargin + sectionWide + sectionApart
 	if len(ratings) == 1 {
-		tall := SectionHeight(first, sectionWide, 42)
+		tall := SectionHeight(first, t, sectionWide, 42)
 		if first.Tint != "" {
 			c.Text(pictureMargin, y+3, "tint "+first.Tint, pictureCaption)
 			y += 5
 		}
-		Section(c, Rect{pictureMargin, y, sectionWide, tall}, first)
+		Section(c, Rect{pictureMargin, y, sectionWide, tall}, first, t)
 		end := sectionKey(c, Rect{X: right, Y: y, W: c.W - pictureMargin - right}, first, true)
 		h.foot(c, max(y+tall, end)+3)
 		return c
 	}
-	var sentences []string
-	film := false
+	var said below
+	pairTall := 56.0
+	if len(t.Conditions) > 0 {
+		pairTall += 10
+	}
 	for i := 0; i < len(ratings); i += 2 {
 		row := ratings[i:min(i+2, len(ratings))]
 		tall, captions := 0.0, 0
@@ -82,24 +85,15 @@ func SectionPicture(ratings []*glazing.Rating, h Heading) *Canvas {
 		for k, r := range row {
 			x := pictureMargin + float64(k)*(c.W-2*pictureMargin-sectionPair)
 			c.Lines(x, y+3, Wrap("tint "+r.Tint, sectionPair, pictureCaption), pictureCaption)
-			s := plan(r, Rect{x, y + 2.4 + float64(captions)*pictureCaption.Leading(), sectionPair, 56}, false)
+			s := plan(r, Rect{x, y + 2.4 + float64(captions)*pictureCaption.Leading(), sectionPair, pairTall}, t, 0, false)
 			tall = s.at.Y + s.at.H - y
-			film = film || slices.Contains(s.films, true)
-			for _, sentence := range s.sentences {
-				if !slices.Contains(sentences, sentence) {
-					sentences = append(sentences, sentence)
-				}
-			}
-			c.Group("Section in tint "+r.Tint+", outside at the left", SectionText(r), func() { s.draw(c) })
+			said.add(s)
+			c.Group("Section in tint "+r.Tint+", outside at the left", SectionText(r, t), func() { s.draw(c) })
 		}
 		y += tall + 3
 	}
-	if film {
-		filmKey(c, pictureMargin, y)
-		y += noteType.Leading()
-	}
 	w := c.W - 2*pictureMargin
-	y = c.Lines(pictureMargin, y, Wrap(strings.Join(sentences, " "), w, noteType), noteType)
+	y = said.draw(c, pictureMargin, y, w)
 	h.foot(c, sectionKey(c, Rect{X: pictureMargin, Y: y + 1, W: w}, first, false)+3)
 	return c
 }

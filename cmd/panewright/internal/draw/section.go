@@ -36,6 +36,7 @@ const (
 	paneLeast    = 0.5 // the thinnest pane, gap and ply that is drawn
 	gapLeast     = 0.8
 	plyLeast     = 0.25
+	vacuumLeast  = 1.8  // of an evacuated gap, whose pillars are indicated
 	gapShortened = 30.0 // mm of a gap that is drawn shortened
 	filmWide     = 0.5
 	filmTick     = 1.0
@@ -77,8 +78,13 @@ type section struct {
 	looks []glassLook // of the panes
 	films []bool      // of the surfaces
 
+	sideLeft, sideRight float64 // room beside the glass
+	numbersTall         float64 // of what stands above it
+
 	gasLines   [][]string // by gap: what stands in it
+	gasAt      []Point    // its middle
 	gasTurned  bool
+	noted      []bool   // gaps whose gas finds no place in them
 	gasNotes   []string // what does not fit into its gap
 	numbers    []float64
 	widths     []float64 // centres of the dimensions; nil where they stand in a note
@@ -87,40 +93,46 @@ type section struct {
 	sentences  []string
 	notes      []string // the sentences in lines; none of a section without
 	key        bool     // whether the mark of films is explained
+	heat       heat
 	body       Rect
 }
 
 // Section draws the section through the make-up of a rating, in its tint, into a rectangle that is at
-// least 60 mm wide and SectionHeight(r, at.W, 0) high. It numbers the surfaces, marks faces of low emissivity, names the
-// gases, gives the widths in mm, and says below what is drawn otherwise than it is. Glass has the
-// colour of daylight that it transmits. The edge of the glazing is not shown.
-func Section(c *Canvas, at Rect, r *glazing.Rating) {
-	s := plan(r, at, true)
-	c.Group("Section, outside at the left", SectionText(r), func() { s.draw(c) })
+// least 60 mm wide and SectionHeight(r, t, at.W, 0) high. It numbers the surfaces, marks faces of low
+// emissivity, names the gases, gives the widths in mm, and says below what is drawn otherwise than it
+// is. Glass has the colour of daylight that it transmits. Temperatures run through it as lines, with
+// their figures above. The edge of the glazing is not shown.
+func Section(c *Canvas, at Rect, r *glazing.Rating, t Temperatures) {
+	s := plan(r, at, t, 0, true)
+	c.Group("Section, outside at the left", SectionText(r, t), func() { s.draw(c) })
 }
 
 // SectionHeight returns the height in mm that a section of a width needs, with glass of a height;
 // 0 stands for the least.
-func SectionHeight(r *glazing.Rating, width, glass float64) float64 {
-	s := plan(r, Rect{W: width}, true)
-	return s.around() + min(max(glass, bodyLeast), bodyMost)
+func SectionHeight(r *glazing.Rating, t Temperatures, width, glass float64) float64 {
+	s := plan(r, Rect{W: width}, t, max(glass, bodyLeast), true)
+	return s.around() + s.body.H
 }
 
 // around returns the height of all but the glass.
 func (s *section) around() float64 {
-	h := numbersTall + widthsTall + float64(len(s.notes))*noteType.Leading() + 1
+	h := s.numbersTall + widthsTall + float64(len(s.notes))*noteType.Leading() + 1
 	if s.beside {
 		h += leadersTall
 	}
 	if s.key {
 		h += noteType.Leading()
 	}
+	for _, l := range s.heat.lines {
+		h += float64(len(l.key)) * noteType.Leading()
+	}
 	return h
 }
 
-// plan lays a section out, with notes or without.
-func plan(r *glazing.Rating, at Rect, notes bool) *section {
-	s := &section{r: r, at: at}
+// plan lays a section out, with notes or without, and with glass of a height, or where that is 0, of
+// what the rectangle leaves.
+func plan(r *glazing.Rating, at Rect, t Temperatures, glass float64, notes bool) *section {
+	s := &section{r: r, at: at, sideLeft: sideLeft, sideRight: sideRight, numbersTall: numbersTall}
 	m, tints := r.Makeup, r.Ready.States[r.State].Tints
 	for k, p := range m.Panes {
 		s.looks = append(s.looks, lookOf(p.Pane, tints[k]))
@@ -128,23 +140,34 @@ func plan(r *glazing.Rating, at Rect, notes bool) *section {
 	for _, e := range r.Surfaces {
 		s.films = append(s.films, e.Corrected.Known && e.Corrected.Number < lowEmissivity)
 	}
+	s.planHeat(t)
 	s.place()
-	s.nameGases()
 	s.placeNumbers()
 	s.placeWidths()
-	s.say()
-	if notes {
-		s.key = slices.Contains(s.films, true)
-		s.notes = Wrap(strings.Join(s.sentences, " "), at.W, noteType)
+	s.noted = make([]bool, len(m.Gaps))
+	for settled := false; !settled; {
+		s.nameGases()
+		s.say()
+		if notes {
+			s.key = slices.Contains(s.films, true)
+			s.notes = Wrap(strings.Join(s.sentences, " "), at.W, noteType)
+			s.wrapKey(at.W)
+		}
+		h := glass
+		if h == 0 {
+			h = at.H - s.around()
+		}
+		s.body = Rect{at.X, at.Y + s.numbersTall, at.W, min(max(h, bodyLeast), bodyMost)}
+		s.placeLines()
+		settled = s.placeGases()
 	}
-	s.body = Rect{at.X, at.Y + numbersTall, at.W, min(max(at.H-s.around(), bodyLeast), bodyMost)}
 	return s
 }
 
 // place chooses the scale and puts panes and gaps side by side.
 func (s *section) place() {
 	m := s.r.Makeup
-	room := s.at.W - sideLeft - sideRight
+	room := s.at.W - s.sideLeft - s.sideRight
 	try := func(factor float64, shorten bool) (parts []slice, w float64, least bool) {
 		atLeast := func(w, bound float64) float64 {
 			if w < bound {
@@ -171,7 +194,11 @@ func (s *section) place() {
 			w += x.w
 			if k < len(m.Gaps) {
 				g := slice{mm: m.Gaps[k].WidthMM, pane: k, gap: true}
-				g.w = atLeast(g.mm*factor, gapLeast)
+				if g.w = g.mm * factor; m.Gaps[k].Vacuum != nil {
+					g.w = max(g.w, vacuumLeast)
+				} else {
+					g.w = atLeast(g.w, gapLeast)
+				}
 				if shorten && g.mm > gapShortened {
 					g.w, g.shortened = gapShortened*factor, true
 				}
@@ -197,7 +224,7 @@ func (s *section) place() {
 	for _, p := range s.parts {
 		total += p.w
 	}
-	x := s.at.X + sideLeft + (room-total)/2
+	x := s.at.X + s.sideLeft + (room-total)/2
 	for i := range s.parts {
 		s.parts[i].x = x
 		x += s.parts[i].w
@@ -207,9 +234,9 @@ func (s *section) place() {
 // millimetres prints a width without zeros at its end.
 func millimetres(mm float64) string { return strconv.FormatFloat(mm, 'g', 6, 64) }
 
-// gasOf returns the gases of a gap, each with its share.
+// gasOf returns the gases of a gap, each with its share, or that it is a vacuum.
 func gasOf(g glazing.Gap) (names []string) {
-	text := g.Gas.String()
+	text := g.Content()
 	if text == "" {
 		return nil
 	}
@@ -227,8 +254,9 @@ func gasOf(g glazing.Gap) (names []string) {
 func (s *section) nameGases() {
 	m := s.r.Makeup
 	across := true
+	s.gasLines, s.gasNotes = nil, nil
 	for _, p := range s.parts {
-		if !p.gap {
+		if !p.gap || m.Gaps[p.pane].Vacuum != nil || s.noted[p.pane] {
 			continue
 		}
 		for _, line := range gasOf(m.Gaps[p.pane]) {
@@ -245,21 +273,28 @@ func (s *section) nameGases() {
 			continue
 		}
 		lines := gasOf(m.Gaps[p.pane])
-		if !across && len(lines) > 0 {
-			from, to := s.free(p)
-			room := to - from - 0.6
-			joined := strings.Join(lines, ", ")
-			switch fits := func(s string) bool { return Width(s, gasType) <= bodyLeast-2 }; {
-			case fits(joined) && gasType.MM() <= room:
-				lines = []string{joined}
-			case len(lines) > 1 && !slices.ContainsFunc(lines, func(s string) bool { return !fits(s) }) && float64(len(lines))*gasType.Leading() <= room:
-			default:
-				if where[joined] == nil {
-					order = append(order, joined)
+		from, to := s.free(p)
+		room := to - from - 0.6
+		joined := strings.Join(lines, ", ")
+		stands := across && Width(joined, gasType) <= room // of a vacuum
+		switch fits := func(s string) bool { return Width(s, gasType) <= bodyLeast-2 }; {
+		case len(lines) == 0:
+		case !s.noted[p.pane] && across && (m.Gaps[p.pane].Vacuum == nil || stands):
+		case !s.noted[p.pane] && !across && fits(joined) && gasType.MM() <= room:
+			lines = []string{joined}
+		case !s.noted[p.pane] && !across && len(lines) > 1 && !slices.ContainsFunc(lines, func(s string) bool { return !fits(s) }) && float64(len(lines))*gasType.Leading() <= room:
+		default:
+			if m.Gaps[p.pane].Vacuum != nil {
+				if p.w > p.mm*s.scale.factor() {
+					joined += ", drawn wider"
 				}
-				where[joined] = append(where[joined], between(p))
-				lines = nil
+				joined += ", its pillars indicated"
 			}
+			if where[joined] == nil {
+				order = append(order, joined)
+			}
+			where[joined] = append(where[joined], between(p))
+			lines = nil
 		}
 		s.gasLines = append(s.gasLines, lines)
 	}
@@ -295,8 +330,47 @@ func (s *section) free(gap slice) (from, to float64) {
 // tick returns the length of the ticks of a film in a gap.
 func (s *section) tick(gap slice) float64 { return min(filmTick, 0.22*gap.w) }
 
+// placeGases puts what stands in gaps into their middle, off the lines of temperatures, and reports
+// whether there was place for all. What has none is noted for another plan.
+func (s *section) placeGases() (settled bool) {
+	settled = true
+	s.gasAt = make([]Point, len(s.gasLines))
+	for _, p := range s.parts {
+		if !p.gap || s.gasLines[p.pane] == nil {
+			continue
+		}
+		from, to := s.free(p)
+		at := Point{(from + to) / 2, s.body.Y + s.body.H/2}
+		if s.heat.on() {
+			w, h := s.gasSize(p.pane)
+			var ok bool
+			if at, ok = s.openIn(from+0.4, to-0.4, w, h); !ok {
+				s.noted[p.pane], settled = true, false
+			}
+		}
+		s.gasAt[p.pane] = at
+	}
+	return settled
+}
+
+// gasSize returns width and height of what stands in a gap.
+func (s *section) gasSize(gap int) (w, h float64) {
+	h = float64(len(s.gasLines[gap])-1)*gasType.Leading() + gasType.CapHeight()
+	for _, line := range s.gasLines[gap] {
+		w = max(w, Width(line, gasType))
+	}
+	if s.gasTurned {
+		return h, w
+	}
+	return w, h
+}
+
 // placeNumbers spreads the numbers of the surfaces, which stand off their panes.
 func (s *section) placeNumbers() {
+	if s.heat.on() {
+		s.placeFigures()
+		return
+	}
 	var wanted, widths []float64
 	for _, p := range s.parts {
 		if p.gap {
@@ -324,7 +398,11 @@ func (s *section) placeWidths() {
 			wanted, widths = append(wanted, p.x+p.w/2), append(widths, w)
 			s.beside = s.beside || w > p.w-0.4
 		}
-		centres, fit := spread(wanted, widths, 1.4, s.at.X, s.at.Right())
+		from := s.at.X
+		if s.heat.on() && !s.r.Makeup.Tilt.Vertical() {
+			from += tiltWide
+		}
+		centres, fit := spread(wanted, widths, 1.4, from, s.at.Right())
 		if fit {
 			s.widths = centres
 			return
@@ -351,6 +429,10 @@ func (s *section) say() {
 		parts = append(parts, gapWord(shortened)+strings.Join(shortened, ", ")+" drawn shortened.")
 	}
 	parts = append(parts, s.gasNotes...)
+	parts = append(parts, s.heat.unknown...)
+	if s.heat.on() {
+		parts = append(parts, "Temperatures in °C; across gaps and to the air the lines are drawn straight.")
+	}
 	if s.widths == nil {
 		var list []string
 		for _, p := range s.parts {

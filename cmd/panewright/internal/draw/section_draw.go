@@ -13,7 +13,11 @@ import (
 
 // draw puts the section on a canvas.
 func (s *section) draw(c *Canvas) {
-	s.sides(c)
+	if s.heat.on() {
+		s.drawScale(c)
+	} else {
+		s.sides(c)
+	}
 	for _, p := range s.parts {
 		if p.gap {
 			s.gap(c, p)
@@ -26,6 +30,10 @@ func (s *section) draw(c *Canvas) {
 			s.film(c, i)
 		}
 	}
+	if s.heat.on() {
+		s.drawLines(c)
+		s.drawFigures(c)
+	}
 	s.drawNumbers(c)
 	y := s.drawWidths(c)
 	y += noteType.Leading() + 0.6
@@ -33,6 +41,7 @@ func (s *section) draw(c *Canvas) {
 		filmKey(c, s.at.X, y)
 		y += noteType.Leading()
 	}
+	y = s.drawKey(c, s.at.X, y)
 	c.Lines(s.at.X, y, s.notes, noteType)
 }
 
@@ -100,9 +109,11 @@ func comb(c *Canvas, x1, y1, x2, y2, tick float64) {
 
 // filmKey says what the mark of films is.
 func filmKey(c *Canvas, x, y float64) {
-	comb(c, x+filmWide/2, y-0.2, x+7.5, y-0.2, -filmTick)
-	c.Text(x+9, y, "face of low emissivity, below "+millimetres(lowEmissivity), noteType)
+	comb(c, x+filmWide/2, y-0.2, x+keyMark, y-0.2, -filmTick)
+	c.Text(x+keyIndent, y, filmText, noteType)
 }
+
+var filmText = "face of low emissivity, below " + millimetres(lowEmissivity)
 
 // film marks a face, from 0, on the side of it that is not glass.
 func (s *section) film(c *Canvas, face int) {
@@ -136,21 +147,36 @@ func (s *section) gap(c *Canvas, p slice) {
 			c.Polyline(points, Stroke{Colour: Faint, Width: 0.14})
 		}
 	}
-	from, to := s.free(p)
-	middle := (from + to) / 2
+	if s.r.Makeup.Gaps[p.pane].Vacuum != nil {
+		s.pillars(c, p)
+	}
 	lines := s.gasLines[p.pane]
 	t := gasType
-	n := float64(len(lines))
+	n, at := float64(len(lines)), s.gasAt[p.pane]
+	if w, h := s.gasSize(p.pane); s.heat.on() && n > 0 { // on the lines of the scale
+		c.Rectangle(Rect{at.X - w/2 - 0.4, at.Y - h/2 - 0.4, w + 0.8, h + 0.8}, Stroke{}, Paper)
+	}
 	if s.gasTurned {
 		t.Turn = 90
-		x := middle - (n-1)*t.Leading()/2 + t.CapHeight()/2
+		x := at.X - (n-1)*t.Leading()/2 + t.CapHeight()/2
 		for _, line := range lines {
-			c.Text(x, s.body.Y+s.body.H/2, line, t)
+			c.Text(x, at.Y, line, t)
 			x += t.Leading()
 		}
 		return
 	}
-	c.Lines(middle, s.body.Y+s.body.H/2-(n-1)*t.Leading()/2+t.CapHeight()/2, lines, t)
+	c.Lines(at.X, at.Y-(n-1)*t.Leading()/2+t.CapHeight()/2, lines, t)
+}
+
+// pillars indicates those of an evacuated gap; neither their height nor their distance is to scale.
+func (s *section) pillars(c *Canvas, gap slice) {
+	const tall, apart = 0.55, 3.4
+	n := int((s.body.H - 2) / apart)
+	y := s.body.Y + (s.body.H-float64(n-1)*apart)/2
+	for range n {
+		c.Rectangle(Rect{gap.x, y - tall/2, gap.w, tall}, Stroke{}, Soft)
+		y += apart
+	}
 }
 
 // sides draws what stands beside the glass: the outside with the sun, the inside, the tilt.
@@ -177,34 +203,45 @@ func sun(c *Canvas, x, y float64) {
 	}
 }
 
-// tilt draws how the glazing stands: a line over the horizontal, the outside above or at the left.
+// tilt draws how the glazing stands, with the angle below.
 func tilt(c *Canvas, x, y, deg float64) {
 	const long = 7.0
-	sin, cos := math.Sincos(deg * math.Pi / 180)
-	left := x - long/2
-	if cos < 0 {
-		left = x + long/2
-	}
-	c.Line(x-long/2-0.8, y-3.4, x+long/2+0.8, y-3.4, Stroke{Colour: Faint, Width: 0.14})
-	c.Line(left, y-3.4, left+long*cos, y-3.4-long*sin, Stroke{Colour: Ink, Width: 0.5})
+	tiltMark(c, x-long/2-tiltOver, y-3.4, long, deg)
 	c.Text(x, y, millimetres(deg)+"°", labelType)
+}
+
+// tiltOver is by how much the horizontal is longer at either end than the glazing over it.
+const tiltOver = 0.8
+
+// tiltMark draws a line, so long, over the horizontal from x, the outside above or at the left.
+func tiltMark(c *Canvas, x, y, long, deg float64) {
+	sin, cos := math.Sincos(deg * math.Pi / 180)
+	foot := x + tiltOver
+	if cos < 0 {
+		foot += long
+	}
+	c.Line(x, y, x+long+2*tiltOver, y, Stroke{Colour: Faint, Width: 0.14})
+	c.Line(foot, y, foot+long*cos, y-long*sin, Stroke{Colour: Ink, Width: 0.5})
 }
 
 func (s *section) drawNumbers(c *Canvas) {
 	y := s.at.Y + numberType.CapHeight() + 0.4
-	line := Stroke{Colour: Faint, Width: 0.12}
+	line, number, from := Stroke{Colour: Faint, Width: 0.12}, numberType, y+0.7
+	if h := &s.heat; h.on() {
+		number, from = h.number, y+1+float64(len(h.lines))*h.rowTall+0.6
+	}
 	i := 0
 	for _, p := range s.parts {
 		if p.gap {
 			continue
 		}
 		for _, face := range []float64{p.x, p.x + p.w} {
-			t := numberType
+			t := number
 			if s.films[i] {
 				t.Colour = Accent
 			}
 			c.Text(s.numbers[i], y, strconv.Itoa(i+1), t)
-			c.Polyline([]Point{{s.numbers[i], y + 0.7}, {face, s.body.Y - 0.9}, s.edge(face, s.body.Y)}, line)
+			c.Polyline([]Point{{s.numbers[i], from}, {face, s.body.Y - 0.9}, s.edge(face, s.body.Y)}, line)
 			i++
 		}
 	}
@@ -216,6 +253,12 @@ func (s *section) drawWidths(c *Canvas) float64 {
 	left, right := first.x, last.x+last.w
 	line := Stroke{Colour: Faint, Width: 0.14}
 	y := s.body.Bottom() + 2
+	if s.heat.on() && !s.r.Makeup.Tilt.Vertical() {
+		const long = 5.0
+		deg := s.r.Makeup.Tilt.Degrees()
+		tiltMark(c, s.at.X, y+3.2, long, deg)
+		c.Text(s.at.X+long+2*tiltOver+1, y+3.3, millimetres(deg)+"°", labelType.To(Left))
+	}
 	c.Line(left, y, right, y, line)
 	total := 0.0
 	for _, p := range s.parts {
@@ -263,7 +306,7 @@ func (s *section) drawWidths(c *Canvas) float64 {
 }
 
 // SectionText tells the section of a rating in words, from outside to inside.
-func SectionText(r *glazing.Rating) string {
+func SectionText(r *glazing.Rating, t Temperatures) string {
 	var parts []string
 	for k, p := range r.Makeup.Panes {
 		parts = append(parts, fmt.Sprintf("surfaces %d and %d: pane %s, %s mm", 2*k+1, 2*k+2, p.Pane.ID, millimetres(p.Pane.ThicknessMM())))
@@ -277,5 +320,5 @@ func SectionText(r *glazing.Rating) string {
 			parts = append(parts, strings.TrimSpace("gap of "+millimetres(g.WidthMM)+" mm "+strings.Join(gasOf(g), ", ")))
 		}
 	}
-	return "From outside to inside: " + strings.Join(parts, "; ") + "."
+	return strings.Join(append([]string{"From outside to inside: " + strings.Join(parts, "; ") + "."}, temperatureText(r, t)...), " ")
 }

@@ -78,7 +78,7 @@ func TestSectionToScale(t *testing.T) {
 	check := func(name string, m *glazing.Makeup, width float64) {
 		r := ratingsOf(t, m)[0]
 		c := New(300, 200)
-		Section(c, Rect{20, 20, width, SectionHeight(&r, width, 0)}, &r)
+		Section(c, Rect{20, 20, width, SectionHeight(&r, Temperatures{}, width, 0)}, &r, Temperatures{})
 		svg, err := SVG(c, "", "")
 		if err != nil {
 			t.Fatalf("%s: %v", name, err)
@@ -139,7 +139,7 @@ func TestSectionOfLaminate(t *testing.T) {
 		p := glazing.Placed{Pane: laminate("soda-lime-8", "lam", 4, 1.52, 10), Turned: tt.turned}
 		r := ratingsOf(t, &glazing.Makeup{ID: "lam", Panes: []glazing.Placed{p}})[0]
 		c := New(200, 100)
-		Section(c, Rect{10, 10, 90, 60}, &r) // 15.52 mm at 4 : 1 fit into 66
+		Section(c, Rect{10, 10, 90, 60}, &r, Temperatures{}) // 15.52 mm at 4 : 1 fit into 66
 		svg, err := SVG(c, "", "")
 		if err != nil {
 			t.Fatal(err)
@@ -158,8 +158,8 @@ func TestSectionLabels(t *testing.T) {
 	check := func(name string, m *glazing.Makeup, width, glass float64) {
 		for _, r := range ratingsOf(t, m) {
 			c := New(300, 300)
-			at := Rect{20, 20, width, SectionHeight(&r, width, glass)}
-			Section(c, at, &r)
+			at := Rect{20, 20, width, SectionHeight(&r, Temperatures{}, width, glass)}
+			Section(c, at, &r, Temperatures{})
 			if c.Err() != nil {
 				t.Fatalf("%s: %v", name, c.Err())
 			}
@@ -235,8 +235,8 @@ func TestSectionGasesInTheirGaps(t *testing.T) {
 	check := func(name string, m *glazing.Makeup, width float64) {
 		r := ratingsOf(t, m)[0]
 		c := New(300, 300)
-		Section(c, Rect{20, 20, width, SectionHeight(&r, width, 30)}, &r)
-		s := plan(&r, Rect{20, 20, width, SectionHeight(&r, width, 30)}, true)
+		Section(c, Rect{20, 20, width, SectionHeight(&r, Temperatures{}, width, 30)}, &r, Temperatures{})
+		s := plan(&r, Rect{20, 20, width, SectionHeight(&r, Temperatures{}, width, 30)}, Temperatures{}, 0, true)
 		for i := range c.ops {
 			o := &c.ops[i]
 			if o.kind != textOp || o.text.Size != gasType.Size {
@@ -277,7 +277,7 @@ func TestSectionMarksFilms(t *testing.T) {
 	for name, want := range map[string][]int{"single": nil, "double": {3}, "triple": {2, 5}, "laminate": {2}, "eight": {16}, "switch": {2, 3}} {
 		r := ratingsOf(t, gallery(t)[name])[0]
 		c := New(200, 100)
-		Section(c, Rect{10, 10, 84, 60}, &r)
+		Section(c, Rect{10, 10, 84, 60}, &r, Temperatures{})
 		svg, err := SVG(c, "", "")
 		if err != nil {
 			t.Fatal(err)
@@ -356,7 +356,7 @@ func TestGlassOfUnknownColour(t *testing.T) {
 	p.Tints = []glazing.Tint{tint}
 	r := ratingsOf(t, &glazing.Makeup{ID: "short", Panes: []glazing.Placed{{Pane: p}}})[0]
 	c := New(200, 100)
-	Section(c, Rect{10, 10, 84, 60}, &r)
+	Section(c, Rect{10, 10, 84, 60}, &r, Temperatures{})
 	if said := strings.Join(texts(c), " "); !strings.Contains(said, "colour of pane 1 is not known") {
 		t.Errorf("it says %s", said)
 	}
@@ -407,7 +407,7 @@ func TestSectionPicture(t *testing.T) {
 			ratings = append(ratings, &all[i])
 		}
 		for _, some := range [][]*glazing.Rating{ratings, ratings[:1]} {
-			c := SectionPicture(some, Heading{Title: strings.Repeat(m.ID+" ", 5), About: long64 + long64, Foot: strings.Repeat("foot ", 60)})
+			c := SectionPicture(some, nil, Heading{Title: strings.Repeat(m.ID+" ", 5), About: long64 + long64, Foot: strings.Repeat("foot ", 60)})
 			if c.Err() != nil {
 				t.Fatalf("%s: %v", name, c.Err())
 			}
@@ -431,7 +431,7 @@ func TestSectionPicture(t *testing.T) {
 func TestSectionText(t *testing.T) {
 	r := ratingsOf(t, gallery(t)["double"])[0]
 	want := "From outside to inside: surfaces 1 and 2: pane soda-lime-6, 6 mm; gap of 16 mm argon 90 %, air 10 %; surfaces 3 and 4: pane invented-low-e-6, 6 mm; low emissivity on surface 3."
-	if got := strings.ReplaceAll(SectionText(&r), "\u00a0", " "); got != want {
+	if got := strings.ReplaceAll(SectionText(&r, Temperatures{}), "\u00a0", " "); got != want {
 		t.Errorf("it says\n%s\nwant\n%s", got, want)
 	}
 }

@@ -310,15 +310,33 @@ func Fit(s string, width float64, t Type) string {
 	return t.text(append(letters, letter{r: '…'}))
 }
 
+// latinSymbol splits symbols that begin with letters which begin words too; others have no index.
+func latinSymbol(s string) (base, index string) {
+	switch s {
+	case "fRsi":
+		return "f", "Rsi"
+	case "PDpr":
+		return "PD", "pr"
+	case "vf":
+		return "v", "f"
+	}
+	return s, ""
+}
+
 // Symbol writes the symbol of a figure as markup, its index below the line: "ρv′" becomes
-// "ρ_{v}′". Symbols without index stay.
+// "ρ_{v}′", "ΔTs" becomes "ΔT_{s}". Symbols without index stay.
 func Symbol(s string) string {
+	if base, index := latinSymbol(s); index != "" {
+		return base + "_{" + index + "}"
+	}
 	var b strings.Builder
 	letters := []rune(s)
 	for i := 0; i < len(letters); i++ {
 		r := letters[i]
 		b.WriteString(Escape(string(r)))
-		if !strings.ContainsRune("ταρεUhqR", r) || (i > 0 && unicode.IsLetter(letters[i-1])) {
+		switch difference := i > 0 && letters[i-1] == 'Δ'; {
+		case difference && (r == 'T' || r == 't'):
+		case !strings.ContainsRune("ταρεθφUhqR", r) || (i > 0 && unicode.IsLetter(letters[i-1])):
 			continue
 		}
 		from := i + 1

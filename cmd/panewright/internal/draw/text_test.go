@@ -123,7 +123,8 @@ func TestDigitsHaveOneWidth(t *testing.T) {
 func TestSymbol(t *testing.T) {
 	for in, want := range map[string]string{
 		"τv": "τ_{v}", "ρv′": "ρ_{v}′", "αe": "α_{e}", "qi": "q_{i}", "g": "g", "Ug": "U_{g}", "hi": "h_{i}", "Ra": "R_{a}", "SC": "SC",
-		"τv/g": "τ_{v}/g", "τdf,700": "τ_{df,700}", "Nu": "Nu", "Gr·Pr": "Gr·Pr", "ΔT": "ΔT", "L*": "L*", "εn": "ε_{n}", "Λ": "Λ", "d": "d", "": "", "τ": "τ",
+		"τv/g": "τ_{v}/g", "τdf,700": "τ_{df,700}", "Nu": "Nu", "Gr·Pr": "Gr·Pr", "ΔT": "ΔT", "L*": "L*", "εn": "ε_{n}", "θsi": "θ_{si}", "θmax": "θ_{max}", "φedge": "φ_{edge}", "ΔTs": "ΔT_{s}", "Δtpr": "Δt_{pr}",
+		"PDpr": "PD_{pr}", "fRsi": "f_{Rsi}", "vf": "v_{f}", "ERF": "ERF", "qin": "q_{in}", "E·τe": "E·τ_{e}", "Δq": "Δq", "pane": "pane", "tilt": "tilt", "steps": "steps", "Λ": "Λ", "d": "d", "": "", "τ": "τ",
 	} {
 		if got := Symbol(in); got != want {
 			t.Errorf("Symbol(%q) = %q, want %q", in, got, want)

@@ -15,15 +15,15 @@ import (
 // tableTints is how many tints stand in one table.
 const tableTints = 12
 
-// onPaper reports whether a figure stands in the table of a sheet: colours, surfaces and gaps have
-// their own places, and an emissivity has one here where it differs between tints.
+// onPaper reports whether a figure stands in the table of a sheet: colours, surfaces, gaps, thermal
+// stress and what is under a condition have their own places, and an emissivity has one here where it differs between tints.
 func onPaper(f glazing.Figure, k int, varying []bool) bool {
 	switch {
 	case f.Alias == "emissivity":
 		return varying[k]
-	case f.Symbol == "" || f.Value == nil || f.Per == glazing.PerGap || f.Per == glazing.PerSurface:
+	case f.Symbol == "" || f.Value == nil || f.Condition != "" || f.Per == glazing.PerGap || f.Per == glazing.PerSurface:
 		return false
-	case strings.HasPrefix(f.Key, "colour.") && f.Alias != "ra", f.Alias == "thickness", f.Alias == "mass":
+	case strings.HasPrefix(f.Key, "colour.") && f.Alias != "ra", strings.HasPrefix(f.Key, "thermal_stress."), f.Alias == "thickness", f.Alias == "mass":
 		return false
 	}
 	return true

@@ -87,6 +87,53 @@ func (p *paper) beside(drawings, tables []block) {
 	p.y += h + apart
 }
 
+// block sets a block across both columns.
+func (p *paper) block(b block) {
+	p.room(b.tall)
+	b.set(p.y)
+	p.y += b.tall + apart
+}
+
+// paired sets pieces across both columns, two beside each other where both find place so.
+func (p *paper) paired(pieces []piece) {
+	for len(pieces) > 0 {
+		if len(pieces) > 1 {
+			a, fitsLeft := pieces[0].in(left, half)
+			b, fitsRight := pieces[1].in(left+half+gutter, half)
+			if h := max(a.tall, b.tall); fitsLeft && fitsRight && h < (bottom-top)/2 && h < pieces[0].tall()+pieces[1].tall() {
+				p.beside([]block{a}, []block{b})
+				pieces = pieces[2:]
+				continue
+			}
+		}
+		pieces[0].across()
+		pieces = pieces[1:]
+	}
+}
+
+// A piece is a part of a page that finds its own place.
+type piece struct {
+	in     func(x, w float64) (b block, fits bool) // in a column, unless that is too narrow
+	across func()                                  // across both columns, on as many pages as it needs
+	tall   func() float64                          // across both columns
+}
+
+// listed returns a list as a piece.
+func (p *paper) listed(l list) piece {
+	return piece{func(x, w float64) (block, bool) { return l.block(p, x, w), true }, func() { p.columns(l) }, l.tall}
+}
+
+// tabled returns a table as a piece. It is made for a width; where that is too narrow, it is nil.
+func (p *paper) tabled(title string, made func(w float64) *grid) piece {
+	return piece{func(x, w float64) (block, bool) {
+		g := made(w)
+		if g == nil {
+			return block{}, false
+		}
+		return g.block(p, x, title), true
+	}, func() { p.table(title, made(width)) }, func() float64 { return made(width).block(p, left, title).tall }}
+}
+
 // A list is short paragraphs under a title.
 type list struct {
 	title string

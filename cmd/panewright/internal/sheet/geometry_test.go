@@ -190,7 +190,11 @@ func TestRandomPages(t *testing.T) {
 			for k := range rapid.IntRange(1, 8).Draw(rt, "panes") {
 				if k > 0 {
 					gas := rapid.SampledFrom([]keys{{"argon": 1}, {"air": 0.1, "argon": 0.9}, {"krypton": 0.295, "air": 0.1, "argon": 0.605}}).Draw(rt, "gas")
-					sequence = append(sequence, keys{"gap_mm": rapid.SampledFrom([]float64{0.2, 6, 12.5, 16, 150}).Draw(rt, "gap"), "gas": gas})
+					g := keys{"gap_mm": rapid.SampledFrom([]float64{0.2, 6, 12.5, 16, 150}).Draw(rt, "gap"), "gas": gas}
+					if rapid.IntRange(0, 5).Draw(rt, "evacuated") == 0 {
+						g = vacuum()
+					}
+					sequence = append(sequence, g)
 				}
 				x := pane(rapid.SampledFrom(panes).Draw(rt, "pane"))
 				if x["pane"] == "invented-dimming-7" || x["pane"] == "invented-warming-6" {
@@ -219,6 +223,18 @@ func TestRandomPages(t *testing.T) {
 			if s := text(key); s != "" {
 				file[key] = s
 			}
+		}
+		var conditions []keys
+		for _, id := range rapid.SliceOfNDistinct(rapid.SampledFrom(ids), 0, 5, rapid.ID[string]).Draw(rt, "conditions") {
+			c := keys{"id": id, "outside_c": rapid.IntRange(-40, 45).Draw(rt, "outside"), "inside_c": rapid.IntRange(10, 30).Draw(rt, "inside"),
+				"sun_w_m2": rapid.SampledFrom([]float64{0, 0, 300, 783}).Draw(rt, "sun")}
+			if rapid.Bool().Draw(rt, "humid") {
+				c["inside_rh"] = 0.5
+			}
+			conditions = append(conditions, c)
+		}
+		if conditions != nil {
+			file["conditions"] = conditions
 		}
 		if rapid.Bool().Draw(rt, "limited") {
 			file["limits"] = []keys{{"figure": "u", "at_most": 1.2, "source": "S" + text("source")}, {"figure": "absorptance", "at_most": 0.4}}

@@ -3,6 +3,7 @@ package sheet
 // Tables on paper.
 
 import (
+	"cmp"
 	"slices"
 	"strings"
 
@@ -28,7 +29,7 @@ type grid struct {
 	strong map[int]bool         // rows that are set in semibold
 	types  map[[2]int]draw.Type // of cells that differ from their column
 	titles map[int]bool         // rows that are above others as their title
-	leads  []string             // what stands in the first cell of a row that begins a page, if that is blank
+	leads  [][]string           // what stands in the first cells of a row that begins a page, where they are blank
 	bare   bool                 // without heads
 	note   string               // what is said below
 
@@ -233,8 +234,13 @@ func (p *paper) table(title string, g *grid) {
 		if p.y+need > bottom && p.y > p.fresh+headTall+g.headTall() {
 			p.next()
 			begin()
-			if i < len(g.leads) && g.rows[i][0] == "" {
-				r = g.wrap(i, append([]string{g.leads[i]}, g.rows[i][1:]...))
+			if i < len(g.leads) {
+				cells := make([]string, len(g.cols))
+				copy(cells, g.rows[i])
+				for k, s := range g.leads[i] {
+					cells[k] = cmp.Or(cells[k], s)
+				}
+				r = g.wrap(i, cells)
 			}
 		}
 		for _, part := range g.parts(r) {

@@ -166,7 +166,7 @@ func fitted(s string, w float64, t draw.Type, least float64) draw.Type {
 func (p *paper) worded(s string) string {
 	words := strings.Split(s, " ")
 	for i, w := range words {
-		if slices.ContainsFunc(p.r.Figures, func(f glazing.Figure) bool { return f.Symbol == w }) {
+		if slices.ContainsFunc(p.r.Figures, func(f glazing.Figure) bool { return f.Symbol == w && f.Condition == "" }) {
 			words[i] = draw.Symbol(w)
 		} else {
 			words[i] = draw.Escape(w)

@@ -81,7 +81,7 @@ func limitsTable(c table.Check) *grid {
 			cells[k] = strings.Replace(oneLine(cells[k]), "-", minusIn(k+1), 1)
 		}
 		row := []string{x.Makeup.ID, cells[2], cells[0], draw.Symbol(cells[1]), cells[4], cells[3], cells[5], cells[6]}
-		g.leads = append(g.leads, row[0])
+		g.leads = append(g.leads, []string{row[0]})
 		if x.Makeup == last {
 			row[0] = ""
 		}

@@ -19,15 +19,15 @@ func (p *paper) makeup(ratings []*glazing.Rating, last bool) {
 	m := ratings[0].Makeup
 	p.heads(m, ratings[0])
 	p.headline(ratings)
-	var rest []list
+	var rest []piece
 	if len(ratings) == 1 {
 		rest = p.single(ratings[0])
 	} else {
 		p.switching(ratings)
 		rest = p.told(ratings)
 	}
-	for _, l := range rest {
-		p.columns(l)
+	for _, x := range rest {
+		x.across()
 	}
 	if last && p.r.Project.Notes != "" {
 		p.columns(list{title: "Notes of the project", items: []string{p.r.Project.Notes}})
@@ -95,8 +95,9 @@ func extremes(ratings []*glazing.Rating) (lightest, darkest *glazing.Rating) {
 	return lightest, darkest
 }
 
+// named returns the figure of a rating that has a short name.
 func named(list []glazing.Figure, alias string) (glazing.Figure, bool) {
-	i := slices.IndexFunc(list, func(f glazing.Figure) bool { return f.Alias == alias })
+	i := slices.IndexFunc(list, func(f glazing.Figure) bool { return f.Alias == alias && f.Condition == "" })
 	if i < 0 {
 		return glazing.Figure{}, false
 	}
@@ -110,19 +111,20 @@ const (
 	less, most           = -5.0, 11.0
 )
 
-// single sets the sheet of one tint, and returns the lists that found no place on it.
-func (p *paper) single(r *glazing.Rating) (rest []list) {
+// single sets the sheet of one tint, and returns the pieces that found no place on it.
+func (p *paper) single(r *glazing.Rating) (rest []piece) {
 	const at = left + drawn + gutter
 	ratings := []*glazing.Rating{r}
 	tables := []block{p.buildUp(r, written).block(p, at, panesTitle), p.figureTables(ratings, written)[0].block(p, at, figuresTitle)}
 
+	t := draw.TemperaturesOf(ratings, draw.ColdAndHot(r))
 	curves := draw.MakeupCurves(r)
 	colours := p.colour(r, left, drawn)
 	with := func(glass, frame float64) []block {
-		section, plot := draw.SectionHeight(r, drawn, glass), draw.PlotHeight(curves, drawn, frame)
+		section, plot := draw.SectionHeight(r, t, drawn, glass), draw.PlotHeight(curves, drawn, frame)
 		return []block{{headTall + section, func(y float64) {
 			y = heading(p.c, left, y, drawn, sectionTitle(r))
-			draw.Section(p.c, draw.Rect{X: left, Y: y, W: drawn, H: section}, r)
+			draw.Section(p.c, draw.Rect{X: left, Y: y, W: drawn, H: section}, r, t)
 		}}, {headTall + plot - 2, func(y float64) {
 			y = heading(p.c, left, y, drawn, "Spectra")
 			draw.Plot(p.c, draw.Rect{X: left, Y: y - 1, W: drawn, H: plot}, curves)
@@ -130,26 +132,29 @@ func (p *paper) single(r *glazing.Rating) (rest []list) {
 	}
 	drawings := with(glassTall+less, frameTall+less)
 	space := bottom - p.y
+	pieces := append(p.underConditions(ratings), p.told(ratings)...)
 	if max(tall(drawings), tall(tables)) > space {
 		// the section stands beside the list of panes, the other drawings beside the figures
 		drawings = with(glassTall, frameTall)
 		p.beside(drawings[:1], tables[:1])
 		p.beside(drawings[1:], tables[1:])
-		return p.told(ratings)
+		return pieces
 	}
-	// Each list stands in the column that ends higher, or in the other; from the first that has no
+	// Each piece stands in the column that ends higher, or in the other; from the first that has no
 	// place in either they follow below, across both.
 	ends := [2]float64{tall(drawings), tall(tables)}
 	var lists [2][]block
-	for _, l := range p.told(ratings) {
-		blocks := [2]block{l.block(p, left, drawn), l.block(p, at, written)}
+	for _, x := range pieces {
+		narrow, fits := x.in(left, drawn)
+		wide, fitsWide := x.in(at, written)
+		blocks := [2]block{narrow, wide}
 		column := 0
-		if ends[1] <= ends[0] || ends[0]+apart+blocks[0].tall > space {
+		if !fits || ends[1] <= ends[0] || ends[0]+apart+blocks[0].tall > space {
 			column = 1
 		}
-		if rest != nil || ends[column]+apart+blocks[column].tall > space {
-			rest = append(rest, l)
-			space -= apart + l.tall()
+		if rest != nil || column == 1 && !fitsWide || ends[column]+apart+blocks[column].tall > space {
+			rest = append(rest, x)
+			space -= apart + x.tall()
 			continue
 		}
 		ends[column] += apart + blocks[column].tall
@@ -183,20 +188,18 @@ func (p *paper) switching(ratings []*glazing.Rating) {
 	parts := p.buildUp(lightest, width)
 	figures := p.figureTables(ratings, width)
 	tables := tall([]block{parts.block(p, left, panesTitle), figures[0].block(p, left, figuresTitle)})
-	sections := func(glass float64) (list []block) {
-		for i, r := range []*glazing.Rating{lightest, darkest} {
-			x, h := left+float64(i)*(half+gutter), draw.SectionHeight(r, half, glass)
-			list = append(list, block{headTall + h, func(y float64) {
-				y = heading(p.c, x, y, half, sectionTitle(r))
-				draw.Section(p.c, draw.Rect{X: x, Y: y, W: half, H: h}, r)
-			}})
-		}
-		return list
+	pair := []*glazing.Rating{lightest, darkest}
+	t := draw.TemperaturesOf(pair, draw.ColdAndHot(lightest))
+	sections := func(glass float64) block {
+		return block{headTall + draw.SectionsHeight(width, gutter, glass, pair, t), func(y float64) {
+			for i, r := range pair {
+				heading(p.c, left+float64(i)*(half+gutter), y, half, sectionTitle(r))
+			}
+			draw.Sections(p.c, draw.Rect{X: left, Y: y + headTall, W: width}, gutter, glass, pair, t)
+		}}
 	}
-	pair := sections(glassTall)
-	more := bottom - p.y - max(pair[0].tall, pair[1].tall) - apart - tables
-	pair = sections(glassTall + min(max(more, less), most))
-	p.beside(pair[:1], pair[1:])
+	more := bottom - p.y - sections(glassTall).tall - apart - tables
+	p.block(sections(glassTall + min(max(more, less), most)))
 	p.table(panesTitle, parts)
 	for i, g := range figures {
 		title := figuresTitle
@@ -205,6 +208,7 @@ func (p *paper) switching(ratings []*glazing.Rating) {
 		}
 		p.table(title, g)
 	}
+	p.paired(p.underConditions(ratings))
 	p.plots(ratings, lightest, darkest)
 	p.colourTable(ratings)
 }
@@ -280,7 +284,7 @@ func (p *paper) buildUp(r *glazing.Rating, w float64) *grid {
 		g.rows = append(g.rows, row)
 		if k < len(m.Gaps) {
 			gap := m.Gaps[k]
-			g.rows = append(g.rows, []string{"", percent(gap.Gas.String()), millimetres(gap.WidthMM), "", ""})
+			g.rows = append(g.rows, []string{"", gapFacts(gap), millimetres(gap.WidthMM), "", ""})
 		}
 	}
 	g.rows = append(g.rows, []string{"", "together, " + glazing.PrintRounded(r.MassKGM2, 1) + " kg/m²", glazing.PrintRounded(r.ThicknessMM, 1), "", ""})
@@ -342,6 +346,14 @@ func paneFacts(r *glazing.Rating, k int) (facts []string) {
 
 // millimetres prints a width without zeros at its end.
 func millimetres(mm float64) string { return fmt.Sprintf("%.6g", mm) }
+
+// gapFacts says what is in a gap; of a vacuum, its pressure and pillars are a remark.
+func gapFacts(g glazing.Gap) string {
+	if v := g.Vacuum; v != nil {
+		return fmt.Sprintf("%s\n%.6g Pa, pillars of radius %s mm every %s mm", g.Content(), v.PressurePa, millimetres(v.PillarRadiusMM), millimetres(v.PillarPitchMM))
+	}
+	return percent(g.Content())
+}
 
 // percent writes the shares of a filling as such.
 func percent(gas string) string {

@@ -118,6 +118,10 @@ func tints(names ...string) (list []keys, spectra map[string]string) {
 
 func gap(mm float64) keys { return keys{"gap_mm": mm, "gas": keys{"argon": 0.9, "air": 0.1}} }
 
+func vacuum() keys {
+	return keys{"gap_mm": 0.2, "vacuum": keys{"pressure_pa": 0.1, "pillar_radius_mm": 0.25, "pillar_pitch_mm": 20}}
+}
+
 func pane(id string) keys { return keys{"pane": id} }
 
 func turned(id string) keys { return keys{"pane": id, "turned": true} }
@@ -153,6 +157,13 @@ func hostile(t testing.TB) (table.Report, *table.Check) {
 		"project": "Hostile " + strings.Repeat("w", 300) + " " + long(10000), "author": "A\tB \u202e reversed ﷺ 🏠 " + long(10000),
 		"client": "Ζωή & Сыновья <b>\"quoted\"</b> (a) \\ {b} _{c}", "date": "2026-12-01, " + long(400), "notes": long(6000) + "\n\nlast line",
 		"basis": []string{"en", "iso", "na"},
+		"conditions": []keys{
+			{"id": "january-night", "outside_c": -12, "inside_c": 20, "inside_rh": 0.45, "wind_m_s": 4},
+			{"id": strings.Repeat("W", 64), "outside_c": 34.25, "inside_c": 25, "inside_rh": 0.5, "sun_w_m2": 750, "tilt_deg": 45, "sky_c": -20, "height_m": 3},
+			{"id": "отель-полдень-в-сентябре", "outside_c": 20, "inside_c": 20, "outside_convection_w_m2k": 8, "inside_convection_w_m2k": 3, "sun_w_m2": 1000},
+			{"id": "x", "outside_c": -40, "inside_c": 30, "inside_rh": 0.99},
+			{"id": "fifth", "outside_c": 5, "inside_c": 21, "outside_radiant_c": -5, "inside_radiant_c": 22, "sun_w_m2": 1},
+		},
 		"panes": []keys{
 			{"id": "foil", "thickness_mm": 0.3, "spectrum": "foil.csv", "emissivity_front": 0.2, "emissivity_back": 0.76},
 			{"id": "blank", "thickness_mm": 6, "spectrum": "foil.csv"},
@@ -172,6 +183,7 @@ func hostile(t testing.TB) (table.Report, *table.Check) {
 			{"id": "fixed", "outside_to_inside": []keys{{"pane": "thirty", "tint": "night-at-the-museum"}, gap(16), pane("foil")}},
 			{"id": "unknown", "outside_to_inside": []keys{pane("blank"), gap(16), pane("visible")}},
 			{"id": "1", "outside_to_inside": []keys{pane("soda-lime-4")}},
+			{"id": "vacuum", "edge": keys{"temperature_factor": 0.6}, "outside_to_inside": []keys{pane("invented-low-e-6"), vacuum(), pane("soda-lime-6"), gap(16), pane("soda-lime-4")}},
 		},
 		"limits": []keys{
 			{"figure": "u", "at_most": 1.2, "source": "invented, " + long(300), "date": "2026"},

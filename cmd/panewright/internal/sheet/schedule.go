@@ -16,12 +16,25 @@ func (p *paper) schedule() {
 	p.begin("Schedule", p.r.Project.Title, fact{})
 	p.facts(p.saidBy())
 	p.y += 2
+	under := false // whether there are conditions
 	for _, group := range p.bases() {
 		m := group[0].Method
 		p.table("Basis "+m.Basis.Name, p.scheduleTable(group))
+		if g := p.balanceSchedule(group); g != nil {
+			p.table("Basis "+m.Basis.Name+", under conditions", g)
+			under = true
+		}
 	}
-	p.key(p.r.Columns())
+	p.columns(list{title: differTitle, items: p.differ()})
+	columns := slices.Clone(p.r.Columns())
+	if under {
+		for _, f := range p.unsaid() {
+			columns = append(columns, table.Choice{Figure: f.Figure})
+		}
+	}
+	p.key(columns)
 	p.table("Make-ups, from outside to inside", p.sequences())
+	p.columns(list{title: conditionsTitle, items: withMinus(p.r.ConditionsListed())})
 	if s := p.r.SpectraBy(); s != "" {
 		p.columns(list{title: "Spectra", items: strings.Split(s, "; ")})
 	}
@@ -89,7 +102,7 @@ func (p *paper) scheduleTable(ratings []*glazing.Rating) *grid {
 	var last *glazing.Makeup
 	for _, r := range ratings {
 		row := []string{r.Makeup.ID, short(r.Makeup.Title)}
-		g.leads = append(g.leads, r.Makeup.ID)
+		g.leads = append(g.leads, []string{r.Makeup.ID})
 		switch {
 		case r.Makeup == last && below:
 			row = []string{""}

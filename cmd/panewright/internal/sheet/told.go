@@ -8,19 +8,20 @@ import (
 	"strconv"
 	"strings"
 
-	"panewright/cmd/panewright/internal/table"
 	"panewright/glazing"
 )
 
 // told returns the lists of a make-up in all its tints.
-func (p *paper) told(ratings []*glazing.Rating) (all []list) {
+func (p *paper) told(ratings []*glazing.Rating) (all []piece) {
+	r := p.of(ratings)
 	for _, l := range []list{
 		{title: "Sources", items: sources(ratings)},
 		{title: "Typed by the user, not computed", items: typed(ratings)},
-		{title: "Cautions", items: cautionsOf(p.r, ratings), mark: "·"},
+		{title: differTitle, items: p.differ()},
+		{title: "Cautions", items: slices.Clip(r.CautionsOnce()), mark: "·"},
 	} {
 		if l.items != nil {
-			all = append(all, l)
+			all = append(all, p.listed(l))
 		}
 	}
 	return all
@@ -128,11 +129,13 @@ func typed(ratings []*glazing.Rating) (items []string) {
 	return items
 }
 
-// cautionsOf returns the cautions of some ratings of one make-up, each once.
-func cautionsOf(r table.Report, ratings []*glazing.Rating) []string {
-	r.Ratings = nil
-	for _, rating := range ratings {
-		r.Ratings = append(r.Ratings, *rating)
+const differTitle = "Why the bases differ"
+
+// differ says why figures under the bases of the document differ, where there are several.
+func (p *paper) differ() []string {
+	s := p.r.BasesDiffer()
+	if s == "" {
+		return nil
 	}
-	return slices.Clip(r.CautionsOnce())
+	return []string{strings.TrimPrefix(s, differTitle+". ")}
 }

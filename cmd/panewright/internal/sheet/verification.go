@@ -56,12 +56,11 @@ func outcomesTable(group proof.Group) *grid {
 	unitSaid := len(notes) > 0 && strings.HasPrefix(notes[0], "Unit: ")
 	markup := smallType
 	markup.Markup = true
-	subject := ""
+	last := ""
 	for _, o := range group.Outcomes {
-		lead := ""
-		if subject != o.Subject {
-			subject = o.Subject
-			lead = strings.TrimSpace(subject + "  " + o.Inputs["makeup"])
+		lead := strings.TrimSpace(o.Subject + "  " + o.Inputs["makeup"])
+		if o.Subject != "" && lead != last {
+			last = lead
 			g.strong[len(g.rows)], g.titles[len(g.rows)] = true, true
 			g.rows = append(g.rows, []string{"", lead, "", "", "", "", ""})
 		}

@@ -59,15 +59,16 @@ func (c Check) counts() (lines []string) {
 }
 
 // choiceOf returns the figure of a result at its place.
-func choiceOf(x *limits.Result) Choice { return Choice{x.Limit.Figure, x.Index} }
+func choiceOf(x *limits.Result) Choice { return Choice{x.Judged, x.Index} }
 
-// symbolOf returns the symbol of a result's figure, with the place if that is settled.
+// symbolOf returns the symbol of a result's figure, with the place if that is settled, and the
+// condition.
 func symbolOf(x *limits.Result) string {
 	switch {
 	case strings.Contains(x.Figure, "#"):
-		return x.Limit.Figure.Symbol + x.Limit.Figure.Mark
+		return Choice{Figure: x.Judged}.symbol()
 	case x.Limit.Place > 0:
-		return Choice{x.Limit.Figure, x.Limit.Place - 1}.Head() // also where there is no such place
+		return Choice{x.Judged, x.Limit.Place - 1}.Head() // also where there is no such place
 	}
 	return choiceOf(x).Head()
 }
@@ -82,6 +83,16 @@ func (c Check) judged() (list []Choice) {
 		}
 	}
 	return list
+}
+
+// conditionsUsed returns in words the conditions that limits are for.
+func (c Check) conditionsUsed() (lines []string) {
+	for _, x := range c.conditions() {
+		if !x.screened && slices.ContainsFunc(c.Results, func(r limits.Result) bool { return r.Judged.Condition == x.ID }) {
+			lines = append(lines, c.conditionLine(x))
+		}
+	}
+	return lines
 }
 
 // bounds returns those of a limit, one a line.
@@ -226,9 +237,9 @@ type checkGroup struct {
 var checkRight = []bool{true, false, false, true, false, true, false}
 
 // writeGroups prints the groups as tables whose columns stand below each other. Where a line would
-// be wider than the page, tints and bounds are folded.
+// be wider than the page, figures under conditions, tints and bounds are folded.
 func writeGroups(b *bytes.Buffer, groups []checkGroup) {
-	const indent, tint, entered = 2, 2, 4 // the indent, and columns
+	const indent, figure, tint, entered = 2, 1, 2, 4 // the indent, and columns
 	widths := make([]int, len(checkHeads))
 	measure := func() int {
 		total := indent - gutter
@@ -246,7 +257,7 @@ func writeGroups(b *bytes.Buffer, groups []checkGroup) {
 		}
 		return total
 	}
-	for _, x := range []struct{ column, least int }{{tint, 8}, {entered, 8}, {tint, 4}} {
+	for _, x := range []struct{ column, least int }{{figure, 10}, {tint, 8}, {entered, 8}, {tint, 4}} {
 		over := measure() - Width
 		if over <= 0 {
 			break
@@ -254,6 +265,9 @@ func writeGroups(b *bytes.Buffer, groups []checkGroup) {
 		room := max(x.least, widths[x.column]-over)
 		for _, g := range groups {
 			for _, row := range g.rows {
+				if x.column == figure { // the condition first goes below
+					row[figure] = strings.Replace(row[figure], "@", "\n@", 1)
+				}
 				row[x.column] = text.WrapHard(row[x.column], room)
 			}
 		}
@@ -323,6 +337,13 @@ func CheckText(c Check) []byte {
 		b.WriteByte('\n')
 		writeWrapped(&b, "Basis "+x.basis+": "+x.editions, "  ")
 	}
+	c.basesDiffer(&b)
+	for i, s := range c.conditionsUsed() {
+		if i == 0 {
+			b.WriteString("\n" + conditionsTitle + "\n")
+		}
+		writeWrapped(&b, s, "  ")
+	}
 	if list := c.judged(); len(list) > 0 {
 		b.WriteString("\nSymbols\n")
 		writeWrapped(&b, strings.Join(legend(list, nil), "; ")+".", "")
@@ -356,6 +377,8 @@ func CheckMarkdown(c Check) []byte {
 	for _, x := range c.editions() {
 		fmt.Fprintf(&b, "\n## Basis %s\n\n%s\n", escaped(x.basis), escaped(x.editions))
 	}
+	c.markdownDiffer(&b)
+	markdownList(&b, conditionsTitle, c.conditionsUsed())
 	if list := c.judged(); len(list) > 0 {
 		markdownList(&b, "Symbols", legend(list, nil))
 	}

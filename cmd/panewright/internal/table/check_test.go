@@ -20,8 +20,13 @@ import (
 // demoCheck holds the demo project, rated under some bases, against its own limits and others.
 func demoCheck(t *testing.T, bases []glazing.Basis, others ...glazing.Limit) Check {
 	t.Helper()
-	c := Check{Report: demoReport(t, bases...)}
-	c.Limits = append(slices.Clone(c.Project.Limits), others...)
+	r := demoReport(t, bases...)
+	return checkOf(r, append(slices.Clone(r.Project.Limits), others...)...)
+}
+
+// checkOf holds what is rated of a project against limits.
+func checkOf(r Report, list ...glazing.Limit) Check {
+	c := Check{Report: r, Limits: list}
 	c.Results = limits.Judge(c.Limits, c.Project.Makeups, c.Project.Bases, c.Ratings)
 	return c
 }
@@ -189,7 +194,7 @@ func TestCheckCSV(t *testing.T) {
 				t.Errorf("row %d: %s %q, want %q", i, key, got, want)
 			}
 		}
-		if cell(i, "result") != string(x.Verdict) || cell(i, "figure") != x.Figure || cell(i, "unit") != x.Limit.Figure.Unit {
+		if cell(i, "result") != string(x.Verdict) || cell(i, "figure") != x.Figure || cell(i, "unit") != x.Judged.Unit {
 			t.Errorf("row %d is %q", i, rows[i+1])
 		}
 	}

@@ -37,26 +37,43 @@ func (c Choice) Head() string {
 	if c.Per != glazing.PerMakeup {
 		head += strconv.Itoa(c.Index + 1)
 	}
+	if c.Condition != "" {
+		head += "@" + c.Condition
+	}
 	return head
 }
 
-// About returns the meaning, with the pane, gap or surface.
+// About returns the meaning, with the pane, gap or surface, and the condition.
 func (c Choice) About() string {
+	s := c.Meaning
 	if name, ok := placeNames[c.Per]; ok {
-		return c.Meaning + ", " + name + " " + strconv.Itoa(c.Index+1)
+		s += ", " + name + " " + strconv.Itoa(c.Index+1)
 	}
-	return c.Meaning
+	return s + c.underCondition()
 }
 
-// in reports whether a rating has the pane, gap or surface.
-func (c Choice) in(r *glazing.Rating) bool { return c.Index < c.Count(r) }
+// underCondition names the condition, after a comma.
+func (c Choice) underCondition() string {
+	if c.Condition == "" {
+		return ""
+	}
+	return ", condition " + c.Condition
+}
+
+// in reports whether a rating has the pane, gap or surface, and the condition.
+func (c Choice) in(r *glazing.Rating) bool {
+	return c.Index < c.Count(r) && (c.Condition == "" || r.Balance(c.Condition) != nil)
+}
 
 // Printed returns the figure as text shows it: blank where the rating has no such place.
 func (c Choice) Printed(r *glazing.Rating) string {
 	if !c.in(r) {
 		return ""
 	}
-	return c.Print(r, c.Index)
+	if s := c.Print(r, c.Index); s != "" {
+		return s
+	}
+	return "–" // a fact that is not known
 }
 
 // cell returns the figure with all its digits.
@@ -92,12 +109,17 @@ func number(v float64, places int) cell {
 	return cell{number: v, numeric: true, places: places}
 }
 
+// all returns the list of figures: those of a rating, and those of the balances of the ratings.
+func (r Report) all() []glazing.Figure {
+	return slices.Concat(r.Figures, glazing.ConditionFigures(r.Ratings))
+}
+
 // figures returns the list of figures in the units of the page.
 func (r Report) figures() []glazing.Figure {
 	if r.InchPound {
-		return glazing.InchPound(r.Figures)
+		return glazing.InchPound(r.all())
 	}
-	return r.Figures
+	return r.all()
 }
 
 // most returns how many panes, gaps or surfaces of a figure any rating has.
@@ -168,7 +190,7 @@ func (r *Report) Choose(names []string) error {
 			}
 		}
 		if at < 0 {
-			unknown = add(unknown, fmt.Sprintf("%q", spectra.Clip(name, longestName))+offerFigure(name, list))
+			unknown = add(unknown, fmt.Sprintf("%q", spectra.Clip(name, longestName))+r.offerFigure(name, list))
 			continue
 		}
 		f := list[at]
@@ -213,7 +235,7 @@ const (
 // named returns the figure of a name, in the units of the page or in SI, and the number of the
 // place in it, 0 for all; -1 if there is none.
 func (r Report) named(name string) (at, place int) {
-	for _, list := range [][]glazing.Figure{r.figures(), r.Figures} {
+	for _, list := range [][]glazing.Figure{r.figures(), r.all()} {
 		for i, f := range list {
 			if place, ok := f.Place(name); ok {
 				return i, place
@@ -234,9 +256,20 @@ var tradeWords = map[string]string{
 	"cri": "ra", "tuv": "uv", "weight": "mass", "alpha": "absorptance", "epsilon": "emissivity",
 }
 
-// offerFigure offers what is meant by a name that is not known: the figure of a trade word, else at
-// most three of the nearest names.
-func offerFigure(name string, list []glazing.Figure) string {
+// offerFigure offers what is meant by a name that is not known: the figure of a trade word, the
+// conditions where one is missing or not known, else at most three of the nearest names.
+func (r Report) offerFigure(name string, list []glazing.Figure) string {
+	ids := glazing.ConditionIDs(r.Ratings)
+	alone, id, at := strings.Cut(name, "@")
+	if !slices.Contains(ids, id) && slices.ContainsFunc(glazing.BalanceFigures(), func(f glazing.BalanceFigure) bool { return f.Named(alone) }) {
+		switch {
+		case len(ids) == 0:
+			return " (the ratings have no condition)"
+		case at:
+			return fmt.Sprintf(" (no condition is called %s; there are %s)", spectra.Clip(id, longestName), spectra.Clip(strings.Join(ids, ", "), 4*longestName))
+		}
+		return " (it is one under a condition: write " + alone + "@" + ids[0] + ")"
+	}
 	near := []string{tradeWords[strings.ToLower(name)]}
 	switch {
 	case near[0] != "":
@@ -251,7 +284,7 @@ func offerFigure(name string, list []glazing.Figure) string {
 		}
 		names := FigureNames(list)
 		for _, f := range list {
-			names = add(add(names, f.KeyAt(place)), f.Symbol+f.Mark)
+			names = add(add(names, f.KeyAt(place)), Choice{Figure: f}.symbol())
 		}
 		near = project.Nearest(name, names)
 	}
@@ -261,11 +294,24 @@ func offerFigure(name string, list []glazing.Figure) string {
 	return " (did you mean " + strings.Join(near[:min(mostOffers, len(near))], " or ") + "?)"
 }
 
-// FigureNames returns the short names of figures.
+// symbol returns the symbol with its mark and the condition, without a number.
+func (c Choice) symbol() string {
+	c.Per = glazing.PerMakeup
+	if c.Symbol == "" {
+		return ""
+	}
+	return c.Head()
+}
+
+// FigureNames returns the short names of figures, with the conditions that they are under.
 func FigureNames(list []glazing.Figure) []string {
 	var names []string
 	for _, f := range list {
-		if f.Alias != "" {
+		switch {
+		case f.Alias == "":
+		case f.Condition != "":
+			names = append(names, f.Alias+"@"+f.Condition)
+		default:
 			names = append(names, f.Alias)
 		}
 	}

@@ -206,8 +206,18 @@ func canonical(t *testing.T, v any) string {
 	return string(out)
 }
 
-// jsonAt returns what stands in a JSON document at the key of a figure, which counts from 1.
+// jsonAt returns what stands in a JSON document at the key of a figure, which counts from 1, and names
+// balances by their conditions.
 func jsonAt(doc any, path string) (any, bool) {
+	if rest, ok := strings.CutPrefix(path, "balances."); ok {
+		id, within, _ := strings.Cut(rest, ".")
+		for _, b := range doc.(map[string]any)["balances"].([]any) {
+			if b.(map[string]any)["condition"] == id {
+				return jsonAt(b, within)
+			}
+		}
+		return nil, false
+	}
 	for key := range strings.SplitSeq(path, ".") {
 		switch x := doc.(type) {
 		case map[string]any:

@@ -15,8 +15,19 @@ import (
 	"panewright/glazing"
 )
 
-// differencesText stands under tables of differences.
-const differencesText = "A change is the option less the reference, of unrounded figures."
+// differencesText stands under tables of differences of figures.
+func (r Report) differencesText(rows []Choice) string {
+	s := "A change is the option less the reference, of unrounded figures"
+	for _, id := range r.comparedConditions() {
+		rows = append(rows[:len(rows):len(rows)], r.comparedUnder(id)...)
+	}
+	for _, c := range rows {
+		if unit := glazing.DifferenceUnit(c.Unit); unit != c.Unit {
+			return s + "; of temperatures it is in " + unit + "."
+		}
+	}
+	return s + "."
+}
 
 // colourRows are the colours whose differences are shown.
 var colourRows = []struct {
@@ -127,35 +138,24 @@ func Compare(r Report) []byte {
 		b.WriteByte('\n')
 		writeWrapped(&b, "Basis "+x.basis+": "+x.editions, "  ")
 	}
-	comparisons, rows, tops := r.comparisons(), r.compared(), heads(r.Ratings)
-	symbols, units, reference := []string{""}, []string{""}, []string{"figure"}
-	for _, c := range rows {
-		symbols = append(symbols, c.Head())
-		units = append(units, c.Unit)
-		reference = append(reference, c.Printed(&r.Ratings[0]))
+	r.basesDiffer(&b)
+	comparisons, rows := r.comparisons(), r.compared()
+	r.comparedTable(&b, comparisons, rows)
+	for _, id := range r.comparedConditions() {
+		b.WriteByte('\n')
+		writeWrapped(&b, "Condition "+id, "  ")
+		r.comparedTable(&b, comparisons, r.comparedUnder(id))
 	}
-	names := []column{newColumn("", symbols), newColumn("", units), newColumn(tops[0], reference)}
-	names[2].right = true
-	var options []column
-	for i := 1; i < len(r.Ratings); i++ {
-		values, changes := []string{"figure"}, []string{"change"}
-		for _, c := range rows {
-			values = append(values, c.Printed(&r.Ratings[i]))
-			changes = append(changes, change(comparisons[i], c))
-		}
-		options = append(options, newColumn(tops[i], beside(values, changes)))
-	}
-	fold(&b, names, options)
 	b.WriteByte('\n')
-	writeWrapped(&b, "The reference is "+label(&r.Ratings[0])+". "+differencesText, "")
+	writeWrapped(&b, "The reference is "+label(&r.Ratings[0])+". "+r.differencesText(rows), "")
 
 	b.WriteString("\n" + colourTitle + "\n")
 	var colours []string
 	for _, row := range colourRows {
 		colours = append(colours, row.name)
 	}
-	tops = heads(r.Ratings[1:])
-	options = nil
+	tops := heads(r.Ratings[1:])
+	var options []column
 	for i := 1; i < len(r.Ratings); i++ {
 		var cells []string
 		for _, row := range colourRows {
@@ -174,10 +174,58 @@ func Compare(r Report) []byte {
 	}
 	r.buildUps(&b)
 	r.origins(&b)
+	r.conditionList(&b)
 	r.symbols(&b, rows)
+	r.underSymbols(&b)
 	r.cautionList(&b)
 	r.trace(&b)
 	return b.Bytes()
+}
+
+// comparedTable prints figures of the ratings beside each other, with their changes.
+func (r Report) comparedTable(b *bytes.Buffer, comparisons []glazing.Comparison, rows []Choice) {
+	tops := heads(r.Ratings)
+	symbols, units, reference := []string{""}, []string{""}, []string{"figure"}
+	for _, c := range rows {
+		symbols = append(symbols, c.Head())
+		units = append(units, c.Unit)
+		reference = append(reference, c.Printed(&r.Ratings[0]))
+	}
+	names := []column{newColumn("", symbols), newColumn("", units), newColumn(tops[0], reference)}
+	names[2].right = true
+	var options []column
+	for i := 1; i < len(r.Ratings); i++ {
+		values, changes := []string{"figure"}, []string{"change"}
+		for _, c := range rows {
+			values = append(values, c.Printed(&r.Ratings[i]))
+			changes = append(changes, change(comparisons[i], c))
+		}
+		options = append(options, newColumn(tops[i], beside(values, changes)))
+	}
+	fold(b, names, options)
+}
+
+// comparedConditions returns the conditions that all ratings have; none where figures were chosen.
+func (r Report) comparedConditions() []string {
+	if r.Choices != nil {
+		return nil
+	}
+	return slices.DeleteFunc(glazing.ConditionIDs(r.Ratings), func(id string) bool {
+		return slices.ContainsFunc(r.Ratings, func(x glazing.Rating) bool { return x.Balance(id) == nil })
+	})
+}
+
+// comparedUnder returns the figures under a condition that a comparison shows: those of the schedule of
+// conditions that say something there, but for the number of the hottest pane, of which a change means
+// nothing.
+func (r Report) comparedUnder(id string) (list []Choice) {
+	for _, f := range balanceColumns() {
+		noSun := r.Ratings[0].Balance(id).Condition.SunWM2 == 0
+		if f.Alias != "hottest_pane" && !(noSun && slices.Contains(sunColumns, f.Alias)) {
+			list = append(list, r.under(f, id))
+		}
+	}
+	return list
 }
 
 // sentences returns what differs in what was put in, in words in any case.
@@ -202,19 +250,25 @@ func CompareMarkdown(r Report) []byte {
 	for _, x := range r.editions() {
 		fmt.Fprintf(&b, "\n## Basis %s\n\n%s\n\n", escaped(x.basis), escaped(x.editions))
 	}
+	r.markdownDiffer(&b)
 	comparisons, rows := r.comparisons(), r.compared()
-	figures := markdownTable{head: []string{"figure", "unit", label(&r.Ratings[0])}, names: 2}
+	figures := func(rows []Choice) {
+		t := markdownTable{head: []string{"figure", "unit", label(&r.Ratings[0])}, names: 2}
+		for i := 1; i < len(r.Ratings); i++ {
+			t.head = append(t.head, label(&r.Ratings[i]), "change")
+		}
+		for _, c := range rows {
+			row := []string{c.Head(), c.Unit, c.Printed(&r.Ratings[0])}
+			for i := 1; i < len(r.Ratings); i++ {
+				row = append(row, c.Printed(&r.Ratings[i]), change(comparisons[i], c))
+			}
+			t.rows = append(t.rows, row)
+		}
+		t.print(&b)
+	}
 	colours := markdownTable{head: []string{"colour"}, names: 1}
 	for i := 1; i < len(r.Ratings); i++ {
-		figures.head = append(figures.head, label(&r.Ratings[i]), "change")
 		colours.head = append(colours.head, label(&r.Ratings[i]))
-	}
-	for _, c := range rows {
-		row := []string{c.Head(), c.Unit, c.Printed(&r.Ratings[0])}
-		for i := 1; i < len(r.Ratings); i++ {
-			row = append(row, c.Printed(&r.Ratings[i]), change(comparisons[i], c))
-		}
-		figures.rows = append(figures.rows, row)
 	}
 	for _, x := range colourRows {
 		row := []string{x.name}
@@ -223,8 +277,12 @@ func CompareMarkdown(r Report) []byte {
 		}
 		colours.rows = append(colours.rows, row)
 	}
-	figures.print(&b)
-	fmt.Fprintf(&b, "\nThe reference is %s. %s\n\n## %s\n\n", escaped(label(&r.Ratings[0])), differencesText, colourTitle)
+	figures(rows)
+	for _, id := range r.comparedConditions() {
+		fmt.Fprintf(&b, "\n### Condition %s\n\n", escaped(id))
+		figures(r.comparedUnder(id))
+	}
+	fmt.Fprintf(&b, "\nThe reference is %s. %s\n\n## %s\n\n", escaped(label(&r.Ratings[0])), r.differencesText(rows), colourTitle)
 	colours.print(&b)
 	fmt.Fprintf(&b, "\n## %s\n\n", inputsTitle)
 	for i, c := range comparisons[1:] {
@@ -234,7 +292,9 @@ func CompareMarkdown(r Report) []byte {
 		}
 	}
 	r.markdownBuildUps(&b)
+	r.markdownConditions(&b)
 	markdownList(&b, "Symbols", legend(rows, r.Ratings))
+	markdownList(&b, underSymbolsTitle, r.balanceLegend())
 	markdownList(&b, "Cautions", r.CautionsOnce())
 	r.markdownTrace(&b)
 	return b.Bytes()
@@ -254,7 +314,7 @@ func CompareCSV(r Report, form CSVForm) ([]byte, error) {
 	}
 	for _, c := range r.inSheets() {
 		if c.Value != nil {
-			value("difference."+c.Path(), c.Unit, -1, func(x glazing.Comparison) glazing.Value { return x.Difference(c.Figure, c.Index) })
+			value("difference."+c.Path(), glazing.DifferenceUnit(c.Unit), -1, func(x glazing.Comparison) glazing.Value { return x.Difference(c.Figure, c.Index) })
 		}
 	}
 	for _, row := range colourRows {

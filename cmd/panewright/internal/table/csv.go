@@ -51,6 +51,7 @@ func (r Report) fields() []field {
 	}
 	return append(list,
 		of("origins", func(rating *glazing.Rating) string { return originsOf(rating.Makeup) }),
+		of("conditions", func(rating *glazing.Rating) string { return r.conditionsOf(rating) }),
 		field{key: "cautions", cell: func(i int) cell { return word(r.codes(i)) }},
 		of("editions", func(rating *glazing.Rating) string { return rating.Method.Editions() }),
 		of1("project", r.Project.Title), of1("author", r.Project.Author), of1("date", r.Project.Date),
@@ -74,6 +75,16 @@ func originsOf(m *glazing.Makeup) string {
 		parts = add(parts, p.Pane.ID+": "+string(p.Pane.Origin))
 	}
 	return strings.Join(parts, "; ")
+}
+
+// conditionsOf returns the conditions of a rating in words.
+func (r Report) conditionsOf(rating *glazing.Rating) string {
+	var parts []string
+	for i := range rating.Balances {
+		c := rating.Balances[i].Condition
+		parts = append(parts, c.ID+": "+r.ConditionText(c))
+	}
+	return strings.ReplaceAll(strings.Join(parts, " | "), "\u00a0", " ")
 }
 
 // codes returns the codes of the cautions of a rating.

@@ -36,6 +36,7 @@ func Explain(r Report) []byte {
 			chapter(&b, c)
 		}
 		allFigures(&b, r.Figures, rating)
+		r.balanceFigures(&b, rating)
 		b.WriteString("\nCautions\n")
 		for _, c := range r.cautions(i) {
 			writeWrapped(&b, "- "+c.Text, "  ")
@@ -114,13 +115,45 @@ func weightedSum(b *bytes.Buffer, s *glazing.WeightedSum) {
 func allFigures(b *bytes.Buffer, figures []glazing.Figure, r *glazing.Rating) {
 	b.WriteString("\nAll figures\n")
 	for _, f := range figures {
-		if f.Symbol == "" {
+		if f.Symbol == "" && (f.Text == nil || f.Alias == "") {
 			continue
 		}
 		for k := range f.Count(r) {
-			c := Choice{f, k}
-			line := "  " + text.Pad(c.Head(), 8, ' ') + text.Pad(c.About(), 54, ' ') + text.AlignRight.Apply(f.Print(r, k), 7) + " " + f.Unit
-			b.WriteString(strings.TrimRight(line, " ") + "\n")
+			figureLine(b, Choice{f, k}, r)
 		}
+	}
+}
+
+// balanceFigures prints the figures of the balances of a rating, under their conditions.
+func (r Report) balanceFigures(b *bytes.Buffer, rating *glazing.Rating) {
+	for i := range rating.Balances {
+		c := rating.Balances[i].Condition
+		b.WriteByte('\n')
+		writeWrapped(b, "Condition "+c.ID+": "+r.ConditionText(c), "  ")
+		for _, f := range glazing.BalanceFigures() {
+			x := r.under(f, c.ID)
+			for x.Index = range f.Count(rating) {
+				figureLine(b, x, rating)
+			}
+		}
+	}
+}
+
+// figureLine prints one figure: symbol, meaning, value, unit. A long meaning is folded.
+func figureLine(b *bytes.Buffer, c Choice, r *glazing.Rating) {
+	const symbolWidth, meaningWidth, valueWidth = 8, 54, 7
+	symbol := ""
+	if c.Symbol != "" {
+		symbol = c.Head()
+	}
+	value, unit := c.Printed(r), c.Unit
+	room := meaningWidth - max(0, width(value)-valueWidth)
+	for i, part := range strings.Split(text.WrapSoft(c.About(), room-1), "\n") {
+		line := "  " + text.Pad(symbol, symbolWidth, ' ') + part
+		if i == 0 {
+			line = "  " + text.Pad(symbol, symbolWidth, ' ') + text.Pad(part, room, ' ') + text.AlignRight.Apply(value, valueWidth) + " " + unit
+		}
+		b.WriteString(strings.TrimRight(line, " ") + "\n")
+		symbol = ""
 	}
 }

@@ -12,6 +12,7 @@ import (
 	"strings"
 
 	"panewright/glazing"
+	"panewright/thermal"
 )
 
 // JSON returns the report in the documented format: full precision, figures at the paths of
@@ -60,33 +61,91 @@ func (r Report) rating(n *node, i int) {
 		pane.set(strconv.FormatBool(p.Turned), "turned")
 		pane.set(quoted(string(p.Pane.Origin)), "origin")
 	}
-	for _, f := range r.kinds() {
-		path := strings.Split(f.Key, ".")
-		if f.Per != glazing.PerMakeup {
-			list := n
-			for _, key := range path {
-				if key == "#" {
-					break
-				}
-				list = list.at(key)
-			}
-			list.list = true
-		}
-		for k := range f.Count(rating) {
-			own := make([]string, len(path))
-			for j, key := range path {
-				own[j] = strings.ReplaceAll(key, "#", strconv.Itoa(k))
-			}
-			n.set(leaf(f, rating, k), own...)
+	kinds := r.kinds()
+	for _, f := range kinds {
+		if f.Condition == "" {
+			n.figure(f.Key, f, rating)
 		}
 	}
 	if i < len(r.Spectra) {
 		spectraLists(n.at("spectra"), r.Spectra[i])
 	}
-	if r.Choices == nil {
-		n.at("balances").list = true
+	if r.Choices == nil || slices.ContainsFunc(kinds, func(f glazing.Figure) bool { return f.Condition != "" }) {
+		r.balanceList(n.at("balances"), rating, kinds)
 	}
 	r.remarks(n, i)
+}
+
+// figure writes a figure at the path of a key, as a list where it occurs more than once.
+func (n *node) figure(key string, f glazing.Figure, rating *glazing.Rating) {
+	path := strings.Split(key, ".")
+	if f.Per != glazing.PerMakeup {
+		list := n
+		for _, key := range path {
+			if key == "#" {
+				break
+			}
+			list = list.at(key)
+		}
+		list.list = true
+	}
+	for k := range f.Count(rating) {
+		own := make([]string, len(path))
+		for j, key := range path {
+			own[j] = strings.ReplaceAll(key, "#", strconv.Itoa(k))
+		}
+		n.set(leaf(f, rating, k), own...)
+	}
+}
+
+// balanceList writes the balances of a rating; where figures were chosen, those of which some are under
+// their condition, with these alone.
+func (r Report) balanceList(n *node, rating *glazing.Rating, kinds []glazing.Figure) {
+	n.list = true
+	for i := range rating.Balances {
+		b := &rating.Balances[i]
+		of := slices.DeleteFunc(slices.Clone(kinds), func(f glazing.Figure) bool { return f.Condition != b.Condition.ID })
+		if len(of) == 0 {
+			continue
+		}
+		item := n.at(strconv.Itoa(i))
+		item.set(quoted(b.Condition.ID), "condition")
+		for _, f := range of {
+			item.figure(f.WithinBalance(), f, rating)
+		}
+		if r.Choices == nil {
+			given(item, b)
+		}
+	}
+}
+
+// given writes what a condition puts the make-up between: null where nothing was given and nothing is
+// taken for it.
+func given(n *node, b *glazing.Balance) {
+	c := b.Condition
+	at := c.Surroundings(b.TiltDeg)
+	outside, assumed := c.OutsideConvection()
+	number := func(key string, v float64) { n.set(figure(v), key) }
+	value := func(key string, v glazing.Value) { n.set(jsonValue(v), key) }
+	or := func(v glazing.Value, air float64) float64 {
+		if v.Known {
+			return v.Number
+		}
+		return air
+	}
+	number("outside_c", c.OutsideC)
+	number("outside_radiant_c", or(c.OutsideRadiantC, c.OutsideC))
+	value("sky_c", c.SkyC)
+	number("outside_mean_radiant_c", at.OutsideRadiantK-thermal.ZeroCelsius)
+	number("inside_c", c.InsideC)
+	number("inside_radiant_c", or(c.InsideRadiantC, c.InsideC))
+	value("inside_rh", c.InsideHumidity)
+	value("wind_m_s", c.WindMS)
+	n.set(strconv.FormatBool(assumed), "wind_assumed")
+	number("outside_convection_w_m2k", outside)
+	value("inside_convection_w_m2k", c.InsideConvectionWM2K)
+	number("sun_w_m2", c.SunWM2)
+	number("height_m", c.Height())
 }
 
 // remarks writes the cautions of a rating, and what the user typed of its make-up.
@@ -111,7 +170,7 @@ func (r Report) remarks(n *node, i int) {
 // places were chosen, so that the position of a value tells which it is.
 func (r Report) kinds() []glazing.Figure {
 	if r.Choices == nil {
-		return r.Figures
+		return r.all()
 	}
 	var list []glazing.Figure
 	for _, c := range r.Choices {
@@ -124,7 +183,10 @@ func (r Report) kinds() []glazing.Figure {
 
 func leaf(f glazing.Figure, r *glazing.Rating, k int) string {
 	if f.Text != nil {
-		return quoted(f.Text(r, k))
+		if s := f.Text(r, k); s != "" {
+			return quoted(s)
+		}
+		return "null"
 	}
 	return jsonValue(f.Value(r, k))
 }

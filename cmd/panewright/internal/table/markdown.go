@@ -35,11 +35,17 @@ func Markdown(r Report) []byte {
 			table.rows = append(table.rows, row)
 		}
 		table.print(&b)
+		r.balances(x.basis).markdown(&b, "###")
 	}
+	r.markdownDiffer(&b)
 	r.markdownBuildUps(&b)
+	r.stressTable().markdown(&b, "##")
+	r.moistureTable().markdown(&b, "##")
+	r.markdownConditions(&b)
 	if len(r.Ratings) > 0 {
 		markdownList(&b, "Symbols", legend(columns, r.Ratings))
 	}
+	markdownList(&b, underSymbolsTitle, r.balanceLegend())
 	markdownList(&b, "Cautions", r.CautionsOnce())
 	r.markdownTrace(&b)
 	return b.Bytes()
@@ -77,6 +83,22 @@ func (r Report) markdownBuildUps(b *bytes.Buffer) {
 	}
 	if s := r.SpectraBy(); s != "" {
 		fmt.Fprintf(b, "\n## Spectra\n\n%s\n", escaped(s))
+	}
+}
+
+// markdownConditions lists the conditions.
+func (r Report) markdownConditions(b *bytes.Buffer) {
+	lines := r.ConditionsListed()
+	if r.balanceLegend() != nil {
+		lines = append(lines, r.conditionsMore())
+	}
+	markdownList(b, conditionsTitle, lines)
+}
+
+// markdownDiffer writes why bases differ.
+func (r Report) markdownDiffer(b *bytes.Buffer) {
+	if s := r.BasesDiffer(); s != "" {
+		fmt.Fprintf(b, "\n%s\n", escaped(s))
 	}
 }
 

@@ -36,10 +36,16 @@ func Schedule(r Report) []byte {
 		b.WriteByte('\n')
 		writeWrapped(&b, "Basis "+x.basis+": "+x.editions, "  ")
 		r.block(&b, x.basis)
+		r.balances(x.basis).print(&b)
 	}
+	r.basesDiffer(&b)
 	r.buildUps(&b)
 	r.origins(&b)
+	r.stressTable().print(&b)
+	r.moistureTable().print(&b)
+	r.conditionList(&b)
 	r.symbols(&b, r.Columns())
+	r.underSymbols(&b)
 	r.cautionList(&b)
 	r.trace(&b)
 	return b.Bytes()
@@ -255,7 +261,7 @@ func (r Report) origins(b *bytes.Buffer) {
 // legend returns what the symbols of columns mean; places that follow each other stand together.
 func legend(columns []Choice, ratings []glazing.Rating) []string {
 	var parts []string
-	blank := false
+	blank, conditions := false, false
 	for len(columns) > 0 {
 		n := 1
 		for n < len(columns) && columns[n].Key == columns[0].Key && columns[n].Index == columns[0].Index+n {
@@ -268,8 +274,9 @@ func legend(columns []Choice, ratings []glazing.Rating) []string {
 			if n == 2 {
 				heads, places = ", ", " and "
 			}
-			s = fmt.Sprintf("%s%s%s %s, %ss %d%s%d", first.Head(), heads, last.Head(), first.Meaning, placeNames[first.Per], first.Index+1, places, last.Index+1)
+			s = fmt.Sprintf("%s%s%s %s, %ss %d%s%d%s", first.Head(), heads, last.Head(), first.Meaning, placeNames[first.Per], first.Index+1, places, last.Index+1, first.underCondition())
 		}
+		conditions = conditions || first.Condition != ""
 		if first.Unit != "" {
 			s += ", " + first.Unit
 		}
@@ -281,7 +288,11 @@ func legend(columns []Choice, ratings []glazing.Rating) []string {
 	}
 	parts = append(parts, "– not known")
 	if blank {
-		parts = append(parts, "blank: there is no such pane, gap or surface")
+		s := "blank: there is no such pane, gap or surface"
+		if conditions {
+			s += ", or no such condition"
+		}
+		parts = append(parts, s)
 	}
 	return parts
 }

@@ -14,7 +14,7 @@ import (
 type Report struct {
 	Version string
 	Project *project.Project
-	Figures []glazing.Figure
+	Figures []glazing.Figure // of a rating; those of the balances under its conditions follow from the ratings
 	Ratings []glazing.Rating
 	Spectra []glazing.Spectra // one a rating, or none
 	// Choices are the figures that are shown, in order; nil for what each output shows by itself.
@@ -23,7 +23,7 @@ type Report struct {
 }
 
 // siRemains is printed where figures are in inch-pound units.
-const siRemains = "Figures, and the widths of gaps in make-ups, are in inch-pound units. Coefficients, cautions and what differs in what was put in stay in SI."
+const siRemains = "Figures, and the widths of gaps in make-ups, are in inch-pound units. Coefficients, cautions, why bases differ and what differs in what was put in stay in SI."
 
 // bases returns the names of the bases in the order in which they occur.
 func (r Report) bases() []string {

@@ -182,8 +182,14 @@ func TestVerifyFormatsAgree(t *testing.T) {
 			t.Errorf("the summary has %s %v, the page %q", key, got, v.countsOf(""))
 		}
 	}
-	if doc.Summary["missed"] != 2.0 || doc.Summary["known"] != 1.0 {
-		t.Errorf("the summary is %v, want 2 missed and 1 known", doc.Summary)
+	known := 0.0
+	for _, o := range all {
+		if o.Result == proof.Known {
+			known++
+		}
+	}
+	if doc.Summary["missed"] != 2.0 || doc.Summary["known"] != known || known < 1 {
+		t.Errorf("the summary is %v, want 2 missed and %g known", doc.Summary, known)
 	}
 }
 

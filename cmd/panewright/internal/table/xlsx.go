@@ -224,6 +224,11 @@ func (b *book) about(r Report) {
 	for _, x := range r.editions() {
 		line("basis "+x.basis, x.editions)
 	}
+	line("why bases differ", r.BasesDiffer())
+	for _, s := range r.ConditionsListed() {
+		id, text, _ := strings.Cut(strings.ReplaceAll(s, "\u00a0", " "), ": ")
+		line("condition "+id, text)
+	}
 	for _, m := range r.makeups() {
 		line("make-up "+m.ID, called(m)+": "+strings.ReplaceAll(r.buildUp(m), "\u00a0", " "))
 		for _, t := range m.Typed {
