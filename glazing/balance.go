@@ -149,6 +149,20 @@ func (c *Condition) Surroundings(tiltDeg float64) thermal.Surroundings {
 	return at
 }
 
+// inWords returns temperatures, convection and sun of a condition as a sentence has them.
+func (c *Condition) inWords() string {
+	outside, _ := c.OutsideConvection()
+	inside := "natural convection"
+	if c.InsideConvectionWM2K.Known {
+		inside = fmt.Sprintf("convection %.6g\u00a0W/(m²·K)", c.InsideConvectionWM2K.Number)
+	}
+	s := fmt.Sprintf("%.6g\u00a0°C with convection %.6g\u00a0W/(m²·K) outdoors, %.6g\u00a0°C with %s indoors", c.OutsideC, outside, c.InsideC, inside)
+	if c.SunWM2 > 0 {
+		s += fmt.Sprintf(", sun %.6g\u00a0W/m²", c.SunWM2)
+	}
+	return s
+}
+
 // or returns the number, or another where it is not known.
 func (v Value) or(other float64) float64 {
 	if v.Known {

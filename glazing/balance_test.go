@@ -18,19 +18,6 @@ func clearGlass(mm, tau, rho float64) *Pane {
 	return p
 }
 
-func ratedAll(t testing.TB, m *Makeup, b Basis, o Options) []Rating {
-	t.Helper()
-	ready, err := NewMethod(b, o).Ready(m)
-	if err != nil {
-		t.Fatal(err)
-	}
-	ratings, err := ready.RateAll()
-	if err != nil {
-		t.Fatal(err)
-	}
-	return ratings
-}
-
 // Under a basis of balances U is that of winter and g that of summer, and what goes with them too;
 // under the others only the conditions of the user have balances, in their order.
 func TestFiguresOfBalances(t *testing.T) {
@@ -50,7 +37,7 @@ func TestFiguresOfBalances(t *testing.T) {
 		{NA, []string{"winter", "summer", "january-night", "july"}},
 		{ISO15099, []string{"winter", "summer", "january-night", "july"}},
 	} {
-		r := &ratedAll(t, m, tt.basis, Options{Conditions: own})[0]
+		r := rateOne(t, m, tt.basis, Options{Conditions: own})
 		var ids []string
 		for _, b := range r.Balances {
 			ids = append(ids, b.Condition.ID)
@@ -58,7 +45,7 @@ func TestFiguresOfBalances(t *testing.T) {
 		if !slices.Equal(ids, tt.ids) {
 			t.Errorf("%s: conditions %v, want %v", tt.basis.Name, ids, tt.ids)
 		}
-		plain := &ratedAll(t, m, tt.basis, Options{})[0]
+		plain := rateOne(t, m, tt.basis, Options{})
 		if r.U != plain.U || r.G != plain.G {
 			t.Errorf("%s: the user's conditions move U or g", tt.basis.Name)
 		}
@@ -148,7 +135,7 @@ func TestLaminateIsTurned(t *testing.T) {
 	inner := 0.5*2/15 + 0.25*7.5/15 + 0.25*13/15
 	for _, turned := range []bool{false, true} {
 		m := &Makeup{ID: "L", Panes: []Placed{{Pane: p, Turned: turned}}}
-		b := ratedAll(t, m, NA, Options{})[0].Balance(Summer)
+		b := rateOne(t, m, NA, Options{}).Balance(Summer)
 		want := inner
 		if turned {
 			want = 1 - inner
@@ -166,12 +153,12 @@ func TestInfraredSheet(t *testing.T) {
 	foil.Tints[0].Front, foil.Tints[0].Back = GivenEmissivity(0.1), GivenEmissivity(0.6)
 	air := gap(t, 12, map[string]float64{"air": 1})
 	m := &Makeup{ID: "F", Panes: []Placed{{Pane: clearGlass(4, 0.8, 0.08)}, {Pane: foil}, {Pane: clearGlass(4, 0.8, 0.08)}}, Gaps: []Gap{air, air}}
-	if r := ratedAll(t, m, EN, Options{})[0]; r.U.Known || !strings.Contains(r.U.Why, "lets infrared through") {
+	if r := rateOne(t, m, EN, Options{}); r.U.Known || !strings.Contains(r.U.Why, "lets infrared through") {
 		t.Errorf("U under en: %+v", r.U)
 	}
-	passes := ratedAll(t, m, NA, Options{})[0].U.Number
+	passes := rateOne(t, m, NA, Options{}).U.Number
 	foil.TauInfrared = 0
-	if blocks := ratedAll(t, m, NA, Options{})[0].U.Number; !(blocks < passes) {
+	if blocks := rateOne(t, m, NA, Options{}).U.Number; !(blocks < passes) {
 		t.Errorf("U %.3f where infrared passes, %.3f where it does not", passes, blocks)
 	}
 }
@@ -183,7 +170,7 @@ func TestVacuum(t *testing.T) {
 	low.Tints[0].Back = GivenEmissivity(0.03)
 	m := &Makeup{ID: "V", Panes: []Placed{{Pane: low}, {Pane: low, Turned: true}},
 		Gaps: []Gap{{WidthMM: 0.2, Vacuum: &Vacuum{PressurePa: 0.1, PillarRadiusMM: 0.125, PillarPitchMM: 20}}}}
-	r := &ratedAll(t, m, EN, Options{})[0]
+	r := rateOne(t, m, EN, Options{})
 	gap := 0.625 + 0.08 + 4*5.67e-8*283*283*283/(2/0.03-1)
 	if want := 1 / (1.0/25 + 1/7.7 + 0.008 + 1/gap); math.Abs(r.U.Number-want) > 1e-9 || math.Abs(want-0.6875) > 0.001 {
 		t.Errorf("U %.6f, want %.6f and 0.6875", r.U.Number, want)
@@ -192,12 +179,12 @@ func TestVacuum(t *testing.T) {
 		t.Errorf("build-up %s", m.BuildUp())
 	}
 	for _, basis := range []Basis{NA, ISO15099} {
-		x := &ratedAll(t, m, basis, Options{})[0]
+		x := rateOne(t, m, basis, Options{})
 		closes(t, basis.Name, x, x.Balance(Summer))
 	}
 	// Pillars that resist too make U smaller.
 	m.Gaps[0].Vacuum.PillarWMK = known(20)
-	if x := &ratedAll(t, m, EN, Options{})[0]; !(x.U.Number < r.U.Number) {
+	if x := rateOne(t, m, EN, Options{}); !(x.U.Number < r.U.Number) {
 		t.Errorf("U %.4f with pillars of 20 W/(m·K), %.4f with ideal ones", x.U.Number, r.U.Number)
 	}
 	m.Gaps[0].Vacuum.PillarPitchMM = 0.25
@@ -209,7 +196,7 @@ func TestVacuum(t *testing.T) {
 // SF6 has no properties in ISO 15099: a balance is refused, U of EN 673 is not.
 func TestSF6(t *testing.T) {
 	m := &Makeup{ID: "S", Panes: []Placed{{Pane: clearGlass(4, 0.8, 0.08)}, {Pane: clearGlass(4, 0.8, 0.08)}}, Gaps: []Gap{gap(t, 12, map[string]float64{"sf6": 0.1, "air": 0.9})}}
-	if r := ratedAll(t, m, EN, Options{})[0]; !r.U.Known {
+	if r := rateOne(t, m, EN, Options{}); !r.U.Known {
 		t.Errorf("en: %+v", r.U)
 	}
 	for _, o := range []Options{{}, {Conditions: []Condition{{ID: "c", InsideC: 20, WindMS: known(2)}}}} {
@@ -270,7 +257,7 @@ func TestThresholdsOfTemperatures(t *testing.T) {
 			m.Panes, m.Gaps = append(m.Panes, m.Panes[0]), []Gap{gap(t, 12, map[string]float64{"air": 1})}
 		}
 		tt.o.Conditions = []Condition{tt.c}
-		r := ratedAll(t, m, EN, tt.o)[0]
+		r := rateOne(t, m, EN, tt.o)
 		there := slices.ContainsFunc(r.Cautions, func(c Caution) bool {
 			return c.Code == tt.code || strings.Contains(c.Text, tt.code)
 		})
@@ -285,7 +272,7 @@ func TestThresholdsOfTemperatures(t *testing.T) {
 func TestStressOfTheWorstCondition(t *testing.T) {
 	dark := clearGlass(6, 0.2, 0.05)
 	m := &Makeup{ID: "S", Panes: []Placed{{Pane: dark}, {Pane: clearGlass(6, 0.8, 0.08)}}, Gaps: []Gap{gap(t, 16, map[string]float64{"argon": 1})}}
-	by := func(o Options) *Stress { return &ratedAll(t, m, EN, o)[0].Stress[0] }
+	by := func(o Options) *Stress { return &rateOne(t, m, EN, o).Stress[0] }
 	plain := by(Options{})
 	// All its sun, 0.762·783 W/m², would warm the outer pane by 30 K against 15 + about 5 W/(m²·K)
 	// outside alone, and by 20 K against another 10 W/(m²·K) towards the room.
@@ -346,7 +333,7 @@ func TestUnknownBalances(t *testing.T) {
 		dark bool // whether what needs no sun is known
 	}{{bare, "emissivity", false}, {short, "spectrum", true}} {
 		for _, b := range Bases() {
-			r := &ratedAll(t, &Makeup{ID: "U", Panes: []Placed{{Pane: tt.pane}}}, b, Options{Conditions: []Condition{sunny}})[0]
+			r := rateOne(t, &Makeup{ID: "U", Panes: []Placed{{Pane: tt.pane}}}, b, Options{Conditions: []Condition{sunny}})
 			balance := r.Balance("c")
 			for _, f := range BalanceFigures() {
 				if f.Per == PerGap || strings.HasPrefix(f.Key, "moisture.edge") {

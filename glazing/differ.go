@@ -86,17 +86,7 @@ func (m *Method) coefficients(s surfaces) string {
 	return fmt.Sprintf("he\u00a0%.6g and %s\u00a0W/(m²·K)", m.outside(s), inside)
 }
 
-// condition returns a condition of the basis in short words.
+// condition says the condition of an id in words.
 func (m *Method) condition(id string) string {
-	c := &m.conditions[slices.IndexFunc(m.conditions, func(c Condition) bool { return c.ID == id })]
-	outside, _ := c.OutsideConvection()
-	inside := "natural convection"
-	if c.InsideConvectionWM2K.Known {
-		inside = fmt.Sprintf("convection %.6g\u00a0W/(m²·K)", c.InsideConvectionWM2K.Number)
-	}
-	s := fmt.Sprintf("%.6g\u00a0°C with convection %.6g\u00a0W/(m²·K) outdoors, %.6g\u00a0°C with %s indoors", c.OutsideC, outside, c.InsideC, inside)
-	if c.SunWM2 > 0 {
-		s += fmt.Sprintf(", sun %.6g\u00a0W/m²", c.SunWM2)
-	}
-	return s
+	return m.conditions[slices.IndexFunc(m.conditions, func(c Condition) bool { return c.ID == id })].inWords()
 }

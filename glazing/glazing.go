@@ -18,6 +18,13 @@
 //		Gaps:  []glazing.Gap{{WidthMM: 16, Gas: argon}}}, glazing.EN)
 //	fmt.Println(ratings[0].U.Number, ratings[0].G.Number)
 //
+// With conditions a rating has a detailed heat balance under each: in the place of Rate,
+//
+//	night := glazing.Condition{ID: "night", OutsideC: -12, InsideC: 20, WindMS: glazing.Value{Number: 4, Known: true}}
+//	ready, err := glazing.NewMethod(glazing.EN, glazing.Options{Conditions: []glazing.Condition{night}}).Ready(makeup)
+//	ratings, err := ready.RateAll()
+//	fmt.Println(ratings[0].Balance("night").SurfaceC(3).Number) // of surface 4, °C
+//
 // Package glazing/project reads whole projects from their files.
 //
 // Everything here is pure: values in, values out. Methods, made-ready make-ups and panes may be

@@ -38,7 +38,7 @@ func gap(t testing.TB, mm float64, fractions map[string]float64) Gap {
 	return Gap{WidthMM: mm, Gas: m}
 }
 
-func rateOne(t testing.TB, m *Makeup, b Basis, o Options) *Rating {
+func ratedAll(t testing.TB, m *Makeup, b Basis, o Options) []Rating {
 	t.Helper()
 	ready, err := NewMethod(b, o).Ready(m)
 	if err != nil {
@@ -48,7 +48,12 @@ func rateOne(t testing.TB, m *Makeup, b Basis, o Options) *Rating {
 	if err != nil {
 		t.Fatal(err)
 	}
-	return &ratings[0]
+	return ratings
+}
+
+func rateOne(t testing.TB, m *Makeup, b Basis, o Options) *Rating {
+	t.Helper()
+	return &ratedAll(t, m, b, o)[0]
 }
 
 func near(t *testing.T, what string, got Value, want, tolerance float64) {

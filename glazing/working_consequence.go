@@ -248,7 +248,7 @@ func workStress(r *Rating) Chapter {
 			c.lack("pane "+number, err.Error())
 			continue
 		}
-		if text := b.Condition.inShort(); !slices.Contains(told, text) {
+		if text := b.Condition.ID + ", " + b.Condition.inWords(); !slices.Contains(told, text) {
 			told = append(told, text)
 		}
 		mean := func(state *thermal.Balance) (formula, numbers string) {
@@ -297,10 +297,4 @@ func (r *Rating) stressBalance(condition string) (*Balance, error) {
 		}
 	}
 	return nil, fmt.Errorf("there is no condition %s", condition)
-}
-
-// inShort says a condition in a few words.
-func (c *Condition) inShort() string {
-	h, _ := c.OutsideConvection()
-	return fmt.Sprintf("%s, %s °C outside, %s °C inside, %s W/m² of sun, %s W/(m²·K) outside by convection", c.ID, plain(c.OutsideC), plain(c.InsideC), plain(c.SunWM2), plain(h))
 }

@@ -25,14 +25,14 @@ func CavityNusselt(rayleigh, aspect, angleDeg float64) float64 {
 
 // cavity is the correlation of a gap at one angle, made ready.
 type cavity struct {
-	angleDeg              float64
-	weight                float64 // of the vertical correlation; the rest is that of 60°
-	tilted, vertical      bool    // which correlations have a part
-	fromBelow             bool    // Hollands' correlation
-	cosine, onset         float64 // of Hollands: cos γ, 1708·(sin 1.8γ)^1.6
-	sine                  float64 // of gaps heated from above
-	fromAbove             bool
-	aspectLog, tiltedMost float64 // ln A; 0.104 + 0.175/A
+	angleDeg         float64
+	weight           float64 // of the vertical correlation; the rest is that of 60°
+	tilted, vertical bool    // which correlations have a part
+	fromBelow        bool    // Hollands' correlation
+	cosine, onset    float64 // of Hollands: cos γ, 1708·(sin 1.8γ)^1.6
+	sine             float64 // of gaps heated from above
+	fromAbove        bool
+	aspect           float64 // A, height over width
 }
 
 const (
@@ -41,7 +41,7 @@ const (
 )
 
 func cavityAt(angleDeg, aspect float64) cavity {
-	c := cavity{angleDeg: angleDeg, aspectLog: math.Log(aspect), tiltedMost: 0.104 + 0.175/aspect}
+	c := cavity{angleDeg: angleDeg, aspect: aspect}
 	radians := angleDeg * math.Pi / 180
 	switch {
 	case angleDeg < tiltedDeg:
@@ -74,7 +74,7 @@ func (c *cavity) nusselt(ra float64, pinned bool) (nu, slope float64) {
 	}
 	logRa := math.Log(ra)
 	if c.vertical {
-		nu, slope = wright(ra, logRa, c.aspectLog, pinned)
+		nu, slope = wright(ra, logRa, c.aspect, pinned)
 	}
 	switch {
 	case c.fromAbove: // ISO 15099:2003 (52)
@@ -87,7 +87,7 @@ func (c *cavity) nusselt(ra float64, pinned bool) (nu, slope float64) {
 }
 
 // wright is the correlation of vertical gaps (Wright 1996; ISO 15099:2003 (48) to (51)).
-func wright(ra, logRa, logAspect float64, pinned bool) (nu, slope float64) {
+func wright(ra, logRa, aspect float64, pinned bool) (nu, slope float64) {
 	switch {
 	case pinned:
 		nu, slope = onStep(ra)
@@ -101,16 +101,16 @@ func wright(ra, logRa, logAspect float64, pinned bool) (nu, slope float64) {
 		rise := 1.7596678e-10 * math.Exp(2.2984755*logRa)
 		nu, slope = 1+rise, 2.2984755*rise
 	}
-	if logTall := logOf0242 + float64(0.272*(logRa-logAspect)); logTall > 0 { // else it is below 1
-		if tall := math.Exp(logTall); tall > nu {
+	if slender := ra / aspect; slender > tallFrom { // else what follows is below 1
+		if tall := 0.242 * math.Exp(0.272*math.Log(slender)); tall > nu {
 			return tall, 0.272 * tall
 		}
 	}
 	return nu, slope
 }
 
-// logOf0242 is ln 0.242, of 0.242·(Ra/A)^0.272.
-const logOf0242 = -1.4188175528254507
+// tallFrom is a Ra/A at which 0.242·(Ra/A)^0.272 is still below 1.
+const tallFrom = 180
 
 // stepWidth is the part of its Rayleigh number over which the second step is taken to rise.
 const stepWidth = 1e-7
@@ -157,7 +157,7 @@ func (c *cavity) elSherbiny(ra, logRa float64) (nu, slope float64) {
 	seventh := math.Exp(7 * math.Log(base))
 	nu = math.Exp(math.Log1p(seventh) / 7)
 	slope = nu * seventh / (1 + seventh) * (0.314 + bend/(1+g))
-	if most := c.tiltedMost * math.Exp(0.283*logRa); most > nu {
+	if most := (0.104 + 0.175/c.aspect) * math.Exp(0.283*logRa); most > nu {
 		return most, 0.283 * most
 	}
 	return nu, slope
@@ -180,12 +180,18 @@ type wall struct {
 }
 
 func wallAt(angleDeg float64) wall {
+	if angleDeg == verticalDeg {
+		return wall{angleDeg: angleDeg, sine: 1, critical: 2.5e5 * verticalFactor}
+	}
 	w := wall{angleDeg: angleDeg, sine: math.Sin(angleDeg * math.Pi / 180)}
-	if angleDeg >= levelDeg && angleDeg <= verticalDeg {
+	if angleDeg >= levelDeg && angleDeg < verticalDeg {
 		w.critical = 2.5e5 * math.Exp(0.2*(0.72*angleDeg-math.Log(w.sine))) // (e^(0.72γ)/sin γ)^⅕, ISO 15099:2003 (110)
 	}
 	return w
 }
+
+// verticalFactor is (e^(0.72γ)/sin γ)^⅕ at 90°: e^12.96.
+const verticalFactor = 425066.114781728
 
 const (
 	levelDeg   = 15.0  // below it the surface counts as level
