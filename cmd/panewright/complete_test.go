@@ -57,7 +57,8 @@ func TestBashCompletes(t *testing.T) {
 		{[]string{"rate", "nothing.yaml", "--makeup", ""}, "", []string{""}},
 		{[]string{"rate", project, "--basis", "na", "--figures", "u", "@", "w"}, "@", []string{"winter"}},
 		{[]string{"rate", project, "--basis", "na", "--figures", "u,temperature", "@", "su"}, "@", []string{"summer"}},
-		{[]string{"rate", project, "--basis", "na", "--figures", "hottest_p"}, "", []string{"hottest_pane@winter", "hottest_pane@summer"}},
+		{[]string{"rate", project, "--basis", "na", "--figures", "hottest_p"}, "", []string{"hottest_pane@winter", "hottest_pane@summer", "hottest_pane@january-night", "hottest_pane@july-afternoon"}},
+		{[]string{"rate", project, "--figures", "u", "@", "ja"}, "@", []string{"january-night"}},
 	} {
 		line := "panewright"
 		for i, w := range x.words {

@@ -22,6 +22,8 @@ formula, the formula with the numbers put in, value, unit and clause. One
 weighted sum is written out row by row; of the others the two sums are given.
 Then come U of other gas fills, and how U and g change with emissivities, fills
 and widths of gaps; at the end all figures, those of each condition together.
+Each condition of the project or the basis has its heat balance, with moisture
+and comfort, and each pane its screening for thermal stress.
 Without --tint, a make-up that switches is shown in its first tint.`,
 		Example: `  panewright explain panewright-demo/project.yaml --makeup D1
   panewright explain panewright-demo/project.yaml --makeup D1 --basis en,iso

@@ -29,8 +29,10 @@ func newSheet(s streams) *cobra.Command {
 		Short:                 "Make the data sheets of a project as PDF",
 		Long: `Makes a PDF with the schedule of the project, how its figures stand to the
 limits that it enters, and a data sheet for each make-up: the section to scale,
-figures, spectra, colours, cautions, and the figures in JSON attached. The same
-project gives the same file; a date is printed if the project has one.
+figures, spectra, colours, cautions, and the figures in JSON attached. Under the
+conditions of the project or the basis a sheet has heat balances, temperatures,
+moisture and comfort; for each pane it has the screening for thermal stress. The
+same project gives the same file; a date is printed if the project has one.
 
 With --each, a file for each make-up, named by its id, or nearly so where some
 system could not store that, without the schedule and the limits; the names of

@@ -114,7 +114,7 @@ func TestSheetDocument(t *testing.T) {
 	info := said(t, "pdfinfo", pdf)
 	for _, want := range []string{
 		`Title: +Heron Mill, weaving hall and lantern rooms \(invented\): data sheets`, `Author: +Panewright demo`, `Subject: +Calculated figures, not a certified rating\.`,
-		`Producer: +Panewright ` + regexp.QuoteMeta(version), `Page size: +595\.\d+ x 841\.\d+ pts \(A4\)`, `Pages: +10`,
+		`Producer: +Panewright ` + regexp.QuoteMeta(version), `Page size: +595\.\d+ x 841\.\d+ pts \(A4\)`, `Pages: +14`,
 	} {
 		if !regexp.MustCompile(`(?m)^` + want + `$`).MatchString(info) {
 			t.Errorf("pdfinfo does not say %s:\n%s", want, info)

@@ -99,16 +99,9 @@ func trueMinus(s string) string {
 	return s
 }
 
-// balanceColumns are the columns of the schedule of conditions.
-func balanceColumns() []glazing.BalanceFigure {
-	list := slices.DeleteFunc(glazing.BalanceFigures(), func(f glazing.BalanceFigure) bool { return f.Schedule == 0 })
-	slices.SortStableFunc(list, func(a, b glazing.BalanceFigure) int { return a.Schedule - b.Schedule })
-	return list
-}
-
-// balanceCell prints a figure of the schedule of conditions; the absorptance says nothing without sun.
+// balanceCell prints a figure of the schedule of conditions.
 func balanceCell(f glazing.BalanceFigure, r *glazing.Rating, condition string) string {
-	if f.Alias == "total_absorptance" && r.Balance(condition).Condition.SunWM2 == 0 {
+	if table.OfSun(f) && r.Balance(condition).Condition.SunWM2 == 0 {
 		return unknown
 	}
 	return trueMinus(f.At(condition).Print(r, 0))
@@ -122,9 +115,6 @@ type conditionRow struct {
 	figures   []string
 }
 
-// eachTint stands in the place of a tint where all have the same figures.
-const eachTint = "each"
-
 // rowsUnder returns the rows of a make-up under a condition, one where its tints do not differ.
 func rowsUnder(ratings []*glazing.Rating, id string, figures func(*glazing.Rating) []string) (rows []conditionRow) {
 	same := true
@@ -137,7 +127,7 @@ func rowsUnder(ratings []*glazing.Rating, id string, figures func(*glazing.Ratin
 	}
 	if same && len(rows) > 1 {
 		rows = rows[:1]
-		rows[0].tint = eachTint
+		rows[0].tint = table.EachTint
 	}
 	return rows
 }
@@ -187,7 +177,7 @@ func nameColumns(ratings []*glazing.Rating, room float64, ids []string) []col {
 // balanceRows returns the rows of a make-up under a condition in the schedule of conditions.
 func balanceRows(ratings []*glazing.Rating, id string) []conditionRow {
 	return rowsUnder(ratings, id, func(r *glazing.Rating) (list []string) {
-		for _, f := range balanceColumns() {
+		for _, f := range table.BalanceColumns() {
 			list = append(list, balanceCell(f, r, id))
 		}
 		return list
@@ -198,7 +188,7 @@ func balanceRows(ratings []*glazing.Rating, id string) []conditionRow {
 // they leave of a width for names; where that is much, they stand farther apart.
 func figureColumns(rows []conditionRow, w, names float64) (columns []col, room float64) {
 	room = w
-	for k, f := range balanceColumns() {
+	for k, f := range table.BalanceColumns() {
 		x := col{w: max(5, draw.Width(f.Unit, remarkType), draw.Width(f.Symbol, softType)), align: draw.Right, t: textType, head: draw.Symbol(f.Symbol), symbol: true}
 		if f.Unit != "" {
 			x.head += "\n" + f.Unit
@@ -248,7 +238,7 @@ func (p *paper) balanceTable(ratings []*glazing.Rating, ids []string, w float64)
 
 // unsaid returns the columns of the schedule of conditions whose symbols no figure of a rating has.
 func (p *paper) unsaid() []glazing.BalanceFigure {
-	return slices.DeleteFunc(balanceColumns(), func(f glazing.BalanceFigure) bool {
+	return slices.DeleteFunc(table.BalanceColumns(), func(f glazing.BalanceFigure) bool {
 		return slices.ContainsFunc(p.r.Figures, func(o glazing.Figure) bool { return o.Symbol == f.Symbol && o.Condition == "" })
 	})
 }
@@ -263,7 +253,7 @@ func (p *paper) balanceSchedule(ratings []*glazing.Rating) *grid {
 		makeups = add(makeups, r.Makeup)
 		of[r.Makeup] = append(of[r.Makeup], r)
 		if r.Tint != "" {
-			tinted = max(tinted, draw.Width(r.Tint, textType), draw.Width(eachTint, textType))
+			tinted = max(tinted, draw.Width(r.Tint, textType), draw.Width(table.EachTint, textType))
 		}
 	}
 	const names, idMost, tintMost = 96.0, 0.4, 0.25

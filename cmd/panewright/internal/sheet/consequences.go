@@ -8,6 +8,7 @@ import (
 	"strings"
 
 	"panewright/cmd/panewright/internal/draw"
+	"panewright/cmd/panewright/internal/table"
 	"panewright/glazing"
 	"panewright/thermal"
 )
@@ -54,7 +55,7 @@ func (p *paper) stressTable(ratings []*glazing.Rating, w float64) *grid {
 		}
 		if same && names > 1 {
 			rows = rows[:1]
-			rows[0][1] = eachTint
+			rows[0][1] = table.EachTint
 		}
 		rows[0][0] = name
 		for _, row := range rows {

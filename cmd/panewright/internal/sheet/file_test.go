@@ -42,8 +42,8 @@ func TestAttachedFigures(t *testing.T) {
 		t.Error("the project's figures are not its JSON")
 	}
 	parts := byMakeup(r)
-	if len(parts) != 4 {
-		t.Fatalf("%d make-ups, want 4", len(parts))
+	if len(parts) != 5 {
+		t.Fatalf("%d make-ups, want 5", len(parts))
 	}
 	n := 0
 	for _, part := range parts {

@@ -48,13 +48,17 @@ func (p *paper) limits(c table.Check) {
 
 // limitsTable has a row a result. What does not meet its limit is in semibold, and has the accent.
 func limitsTable(c table.Check) *grid {
-	const number, figure, value, entered, margin, result = 11.0, 13.0, 15.0, 19.0, 18.0, 40.0
+	const number, value, entered, margin, result = 11.0, 15.0, 19.0, 18.0, 40.0
+	const figureMost = 34.0
 	g := &grid{height: 4.4, strong: map[int]bool{}, types: map[[2]int]draw.Type{}}
-	idW, tintW := 14.0, 0.0
+	figure, idW, tintW := 13.0, 14.0, 0.0
 	for i := range c.Results {
 		x := &c.Results[i]
 		idW = max(idW, draw.Width(x.Makeup.ID, strongType)+gridGap+2)
 		tintW = max(tintW, draw.Width(x.Tint, textType)+gridGap+2)
+	}
+	for _, cells := range c.Rows() {
+		figure = min(figureMost, max(figure, draw.Width(draw.Symbol(cells[1]), symbolType)+gridGap))
 	}
 	rest := width - number - figure - value - entered - margin - result
 	tintW = min(tintW, rest/2)

@@ -143,13 +143,18 @@ func (p *paper) key(choices []table.Choice) {
 	t := listType
 	t.Markup = true
 	w := (width+gutter)/columns - gutter
-	var cells [][]string
+	var cells, symbols [][]string // a symbol that is wide, of a figure under a condition, stands above
 	for _, c := range choices {
 		s := p.worded(c.About())
 		if c.Unit != "" {
 			s += ", " + c.Unit
 		}
-		cells = append(cells, draw.Wrap(s, w-symbolW, t))
+		symbol, said := []string{draw.Symbol(c.Head())}, draw.Wrap(s, w-symbolW, t)
+		if draw.Width(symbol[0], t) > symbolW-1 {
+			symbol = draw.Wrap(symbol[0], w, t)
+			said = append(make([]string, len(symbol)), said...)
+		}
+		cells, symbols = append(cells, said), append(symbols, symbol)
 	}
 	rows := (len(cells) + columns - 1) / columns
 	h := headTall
@@ -168,7 +173,7 @@ func (p *paper) key(choices []table.Choice) {
 		base := y + t.CapHeight() + 0.6
 		for i := row; i < len(cells); i += rows {
 			x := left + float64(i/rows)*(w+gutter)
-			p.c.Text(x, base, draw.Symbol(choices[i].Head()), t)
+			p.c.Lines(x, base, symbols[i], t)
 			p.c.Lines(x+symbolW, base, cells[i], t)
 		}
 		y += tallOf(row)

@@ -268,7 +268,11 @@ func writeGroups(b *bytes.Buffer, groups []checkGroup) {
 				if x.column == figure { // the condition first goes below
 					row[figure] = strings.Replace(row[figure], "@", "\n@", 1)
 				}
-				row[x.column] = text.WrapHard(row[x.column], room)
+				lines := strings.Split(row[x.column], "\n") // which WrapHard would join
+				for i := range lines {
+					lines[i] = text.WrapHard(lines[i], room)
+				}
+				row[x.column] = strings.Join(lines, "\n")
 			}
 		}
 	}

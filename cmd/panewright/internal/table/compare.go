@@ -219,9 +219,9 @@ func (r Report) comparedConditions() []string {
 // conditions that say something there, but for the number of the hottest pane, of which a change means
 // nothing.
 func (r Report) comparedUnder(id string) (list []Choice) {
-	for _, f := range balanceColumns() {
+	for _, f := range BalanceColumns() {
 		noSun := r.Ratings[0].Balance(id).Condition.SunWM2 == 0
-		if f.Alias != "hottest_pane" && !(noSun && slices.Contains(sunColumns, f.Alias)) {
+		if f.Alias != "hottest_pane" && !(noSun && OfSun(f)) {
 			list = append(list, r.under(f, id))
 		}
 	}

@@ -107,7 +107,7 @@ func TestCompareJSON(t *testing.T) {
 	if err := json.Unmarshal(CompareJSON(r), &doc); err != nil {
 		t.Fatal(err)
 	}
-	if doc.Version != "test" || doc.Project != r.Project.Title || doc.Digest != r.Project.Digest || doc.Basis != "en" || doc.Editions != r.Ratings[0].Method.Editions() || doc.Reference.Makeup != "D1" || len(doc.Options) != 5 {
+	if doc.Version != "test" || doc.Project != r.Project.Title || doc.Digest != r.Project.Digest || doc.Basis != "en" || doc.Editions != r.Ratings[0].Method.Editions() || doc.Reference.Makeup != "D1" || len(doc.Options) != 6 {
 		t.Fatalf("the head is %+v", doc)
 	}
 	var whole struct{ Ratings []any }
@@ -180,13 +180,15 @@ func TestCompareMarkdown(t *testing.T) {
 	r.InchPound = true
 	out := string(CompareMarkdown(r))
 	rows := cellsOf(out)
-	if want := 2 + len(r.compared()) + 2 + len(colourRows); len(rows) != want {
+	// In january-night, without sun, there are U, qin, θsi and θmax; in july-afternoon also g, αe and qi.
+	figures := 2 + len(r.compared()) + (2 + 4) + (2 + 7)
+	if want := figures + 2 + len(colourRows); len(rows) != want {
 		t.Errorf("%d rows, want %d", len(rows), want)
 	}
 	for i, row := range rows {
-		want := 3 + 2*5
-		if i >= 2+len(r.compared()) {
-			want = 1 + 5
+		want := 3 + 2*6
+		if i >= figures {
+			want = 1 + 6
 		}
 		if len(row) != want {
 			t.Errorf("row %d has %d cells, want %d: %q", i, len(row), want, row)

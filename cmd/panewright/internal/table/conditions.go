@@ -71,8 +71,8 @@ func (t small) markdown(b *bytes.Buffer, depth string) {
 	markdownTable{head: t.head, names: t.names, rows: t.rows}.print(b)
 }
 
-// balanceColumns returns the columns of the schedule of conditions.
-func balanceColumns() []glazing.BalanceFigure {
+// BalanceColumns returns the columns of the schedule of conditions.
+func BalanceColumns() []glazing.BalanceFigure {
 	list := slices.DeleteFunc(glazing.BalanceFigures(), func(f glazing.BalanceFigure) bool { return f.Schedule == 0 })
 	slices.SortStableFunc(list, func(a, b glazing.BalanceFigure) int { return a.Schedule - b.Schedule })
 	return list
@@ -96,7 +96,7 @@ func (r Report) balances(basis string) small {
 	if r.Choices != nil {
 		return t
 	}
-	columns := balanceColumns()
+	columns := BalanceColumns()
 	for _, f := range columns {
 		t.head = append(t.head, f.Symbol)
 	}
@@ -112,7 +112,7 @@ func (r Report) balances(basis string) small {
 				row := []string{id, m.ID, of[i].Tint}
 				for _, f := range columns {
 					cell := r.under(f, id).Printed(&of[i])
-					if ofSun := slices.Contains(sunColumns, f.Alias); ofSun && b.Condition.SunWM2 == 0 {
+					if OfSun(f) && b.Condition.SunWM2 == 0 {
 						cell = "–"
 					}
 					row = append(row, cell)
@@ -125,11 +125,13 @@ func (r Report) balances(basis string) small {
 	return t
 }
 
-// sunColumns are the short names of figures that say nothing without sun.
-var sunColumns = []string{"g", "total_absorptance", "qi"}
+// OfSun reports whether a figure of a balance says nothing without sun.
+func OfSun(f glazing.BalanceFigure) bool {
+	return slices.Contains([]string{"g", "total_absorptance", "qi"}, f.Alias)
+}
 
-// eachTint stands in the place of the tint in a row that holds of all.
-const eachTint = "each"
+// EachTint stands in the place of the tint in a row that holds of all.
+const EachTint = "each"
 
 // asOne returns the rows of the tints of a make-up as one where they do not differ.
 func (t small) asOne(rows [][]string) [][]string {
@@ -139,7 +141,7 @@ func (t small) asOne(rows [][]string) [][]string {
 		}
 	}
 	if len(rows) > 0 {
-		rows[0][t.names-1] = eachTint
+		rows[0][t.names-1] = EachTint
 		return rows[:1]
 	}
 	return nil
@@ -161,7 +163,7 @@ func (r Report) balanceLegend() []string {
 		return nil
 	}
 	var columns []Choice
-	for _, f := range balanceColumns() {
+	for _, f := range BalanceColumns() {
 		columns = append(columns, r.under(f, ""))
 	}
 	list := legend(columns, nil)

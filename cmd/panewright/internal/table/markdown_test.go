@@ -32,13 +32,13 @@ func TestMarkdownEqualsSchedule(t *testing.T) {
 	for line := range strings.SplitSeq(string(Schedule(r)), "\n") {
 		schedule[strings.Join(strings.Fields(line), " ")] = true
 	}
-	// Six ratings of four make-ups, of which one has three tints. Under a condition without sun that one
+	// Seven ratings of five make-ups, of which one has three tints. Under a condition without sun that one
 	// has one row. There are one with and one without sun, of known humidity, and those of na beside.
-	want := 2*(2+6) + (2 + 4 + 6) + (2 + 2*4 + 2*6) + (2 + 4) + (2 + 4)
+	want := 2*(2+7) + (2 + 5 + 7) + (2 + 2*5 + 2*7) + (2 + 5) + (2 + 5)
 	if len(rows) != want { // each table has a heading and a line below it
 		t.Fatalf("%d rows, want %d", len(rows), want)
 	}
-	for _, row := range rows[:2+6] {
+	for _, row := range rows[:2+7] {
 		if len(row) != 2+len(columns) {
 			t.Errorf("%d cells, want %d: %q", len(row), 2+len(columns), row)
 		}
@@ -62,7 +62,7 @@ func TestMarkdownEqualsSchedule(t *testing.T) {
 // Under several bases a caution names a rating once.
 func TestCautionNamesOnce(t *testing.T) {
 	r := demoReport(t, glazing.EN, glazing.ISO)
-	if want := "inclined. [D1, T1, E1 clear, L1]"; !strings.Contains(strings.Join(strings.Fields(string(Schedule(r))), " "), want) {
+	if want := "inclined. [D1, T1, E1 clear, L1, V1]"; !strings.Contains(strings.Join(strings.Fields(string(Schedule(r))), " "), want) {
 		t.Errorf("the schedule lacks %q", want)
 	}
 }

@@ -162,7 +162,7 @@ func TestXLSXEqualsJSON(t *testing.T) {
 
 // Each sheet is printed on A4, landscape, fitted to few pages side by side: few figures to one.
 func TestXLSXPages(t *testing.T) {
-	r := withSpectra(demoReport(t, glazing.EN))
+	r := withSpectra(plainReport(t, glazing.EN))
 	pages := func(r Report, sheet string) int {
 		t.Helper()
 		f := openXLSX(t, r)
@@ -181,6 +181,10 @@ func TestXLSXPages(t *testing.T) {
 	if n := pages(r, "en"); n < 2 || n > 12 {
 		t.Errorf("all figures are %d pages wide", n)
 	}
+	conditions := demoReport(t, glazing.EN) // each has as many figures again at most
+	if n := pages(conditions, "en"); n > 12*(1+len(conditions.Project.Conditions)) {
+		t.Errorf("all figures are %d pages wide under conditions", n)
+	}
 	if err := r.Choose([]string{"light", "g", "u"}); err != nil {
 		t.Fatal(err)
 	}
@@ -195,7 +199,7 @@ func TestXLSXSpectra(t *testing.T) {
 	f := openXLSX(t, r)
 	rows := rowsOf(t, f, spectraSheet)
 	names := rows[spectraHeadRow-1]
-	if want := strings.Fields("wavelength D1 D1 D1 T1 T1 T1"); !slices.Equal(names[:7], want) || names[7] != "E1 clear" || len(names) != 1+3*6 {
+	if want := strings.Fields("wavelength D1 D1 D1 T1 T1 T1"); !slices.Equal(names[:7], want) || names[7] != "E1 clear" || len(names) != 1+3*7 {
 		t.Errorf("the columns are %q", names)
 	}
 	table := rows[spectraHeadRow+1:]
@@ -204,7 +208,7 @@ func TestXLSXSpectra(t *testing.T) {
 	}
 	for k, row := range table {
 		want := []float64{r.Spectra[0].WavelengthNM[k]}
-		for i := range 6 {
+		for i := range 7 {
 			s := r.Spectra[i]
 			want = append(want, s.T[k], s.RhoOutside[k], s.RhoInside[k])
 		}
@@ -230,8 +234,8 @@ func TestXLSXSpectra(t *testing.T) {
 			t.Errorf("the chart lacks %s", want)
 		}
 	}
-	if n := strings.Count(chart, "<ser>"); n != 6 {
-		t.Errorf("%d curves, want 6", n)
+	if n := strings.Count(chart, "<ser>"); n != 7 {
+		t.Errorf("%d curves, want 7", n)
 	}
 	for _, bad := range []string{"<a:noFill>", "<xVal><strRef>", "<lblAlgn"} { // an invisible line; what mend corrects
 		if strings.Contains(chart, bad) {
@@ -249,9 +253,9 @@ func TestXLSXSpectra(t *testing.T) {
 	many := withSpectra(demoReport(t, glazing.EN, glazing.EN))
 	f = openXLSX(t, many)
 	if chart := chartOf(t, f); strings.Count(chart, "<ser>") != 8 {
-		t.Errorf("%d of twelve curves are charted, want 8", strings.Count(chart, "<ser>"))
+		t.Errorf("%d of fourteen curves are charted, want 8", strings.Count(chart, "<ser>"))
 	}
-	if said := rowsOf(t, f, spectraSheet)[0][0]; !strings.Contains(said, "of the first 8 of 12 ratings") {
+	if said := rowsOf(t, f, spectraSheet)[0][0]; !strings.Contains(said, "of the first 8 of 14 ratings") {
 		t.Errorf("the sheet says %q", said)
 	}
 	for len(many.Ratings) <= mostSpectra {
