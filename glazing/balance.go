@@ -300,8 +300,8 @@ func (r *Ready) heatOfBalances(dst *Rating) {
 	for k := range dst.Gaps {
 		dst.Gaps[k] = winter.Dark.Gaps[k].GapState()
 	}
-	dst.OutsideWM2K, dst.InsideWM2K = known(winter.Dark.Outside.Total()), known(winter.Dark.Room.Total())
-	dst.OutsideGWM2K, dst.InsideGWM2K = known(summer.Lit.Outside.Total()).orNot(summer.why()), known(summer.Lit.Room.Total()).orNot(summer.why())
+	dst.OutsideWM2K, dst.InsideWM2K = known(winter.Dark.Outside.Total()).finite(), known(winter.Dark.Room.Total()).finite()
+	dst.OutsideGWM2K, dst.InsideGWM2K = known(summer.Lit.Outside.Total()).orNot(summer.why()).finite(), known(summer.Lit.Room.Total()).orNot(summer.why()).finite()
 	dst.U, dst.G = winter.U, summer.G
 	dst.SecondaryHeat = unknown(dst.G.Why)
 	if dst.G.Known {
@@ -312,9 +312,10 @@ func (r *Ready) heatOfBalances(dst *Rating) {
 
 // The conditions that a basis brings, and that which thermal stress is screened for beside them.
 const (
-	Winter  = "winter"
-	Summer  = "summer"
-	ColdSun = "cold-sun"
+	Winter   = "winter"
+	Summer   = "summer"
+	SummerNA = "summer-na" // that of na, where it is screened under another basis
+	ColdSun  = "cold-sun"
 )
 
 // standard returns a built-in condition.

@@ -276,7 +276,7 @@ func TestStressOfTheWorstCondition(t *testing.T) {
 	plain := by(Options{})
 	// All its sun, 0.762·783 W/m², would warm the outer pane by 30 K against 15 + about 5 W/(m²·K)
 	// outside alone, and by 20 K against another 10 W/(m²·K) towards the room.
-	if plain.Condition != Summer || plain.DropK < 20 || plain.DropK > 30 || math.Abs(plain.CentreC-plain.EdgeC-plain.DropK) > 1e-9 {
+	if plain.Condition != SummerNA || plain.DropK < 20 || plain.DropK > 30 || math.Abs(plain.CentreC-plain.EdgeC-plain.DropK) > 1e-9 {
 		t.Errorf("summer: %+v", plain)
 	}
 	if want := 70e3 * 9e-6 * plain.DropK; math.Abs(plain.StressMPa-want) > 1e-9 {
@@ -367,6 +367,100 @@ func TestBeam(t *testing.T) {
 		got := b.beam(tt.altitude)
 		if got.Known != (tt.want > 0) || (got.Known && math.Abs(got.Number-tt.want) > 1e-9) || (!got.Known && got.Why == "") {
 			t.Errorf("%+v: %+v", tt, got)
+		}
+	}
+}
+
+// Off upright the glass is a ceiling or nothing that ISO 7730 knows: by hand, 100/(1 + exp(2.84 −
+// 0.174·Δ)) − 5.5 of a warm ceiling, and no air falls along it.
+func TestComfortByTilt(t *testing.T) {
+	figure := func(b *Balance, r *Rating, key string) Value { return r.balanceFigure(b, key) }
+	for _, tt := range []struct {
+		tilt     float64
+		a, bb, c float64 // of the formula; 0 where there is none
+	}{{90, 3.72, 0.052, 3.5}, {62, 3.72, 0.052, 3.5}, {50, 0, 0, 0}, {45, 2.84, 0.174, 5.5}, {0, 2.84, 0.174, 5.5}, {118, 3.72, 0.052, 3.5}, {125, 0, 0, 0}} {
+		c := Condition{ID: "x", OutsideC: 45, InsideC: 25, WindMS: known(1), SunWM2: 300, TiltDeg: known(tt.tilt)}
+		r := rateOne(t, &Makeup{ID: "R", Panes: []Placed{{Pane: clearGlass(6, 0.6, 0.08)}}}, EN, Options{Conditions: []Condition{c}})
+		b := r.Balance("x")
+		warm := -figure(b, r, "comfort.asymmetry_k").Number
+		pd := figure(b, r, "comfort.asymmetry_dissatisfied_pct")
+		want := max(0, 100/(1+math.Exp(tt.a-tt.bb*warm))-tt.c)
+		if !(warm > 5) || pd.Known != (tt.a > 0) || (pd.Known && math.Abs(pd.Number-want) > 1e-9) {
+			t.Errorf("tilt %g: asymmetry %g K, %+v, want %g", tt.tilt, warm, pd, want)
+		}
+		if v := figure(b, r, "comfort.downdraught_m_s"); v.Known != (tt.tilt >= 60 && tt.tilt <= 120) {
+			t.Errorf("tilt %g: downdraught %+v", tt.tilt, v)
+		}
+	}
+}
+
+// Every basis screens the summer of na, and no sheet that is not glass.
+func TestWhatIsScreened(t *testing.T) {
+	for _, b := range Bases() {
+		var ids []string
+		for _, c := range NewMethod(b, Options{}).Screened() {
+			if c.SunWM2 == 783 {
+				ids = append(ids, c.ID)
+			}
+		}
+		want := []string{SummerNA, ColdSun}
+		if b.Name == NA.Name {
+			want[0] = Summer
+		}
+		if !slices.Equal(ids, want) {
+			t.Errorf("%s: 783 W/m² in %v, want %v", b.Name, ids, want)
+		}
+	}
+	foil := clearGlass(0.05, 0.5, 0.08)
+	foil.TauInfrared = 0.3
+	foil.Tints[0].Front, foil.Tints[0].Back = GivenEmissivity(0.1), GivenEmissivity(0.6)
+	air := gap(t, 12, map[string]float64{"air": 1})
+	r := rateOne(t, &Makeup{ID: "F", Panes: []Placed{{Pane: clearGlass(4, 0.8, 0.08)}, {Pane: foil}, {Pane: clearGlass(4, 0.8, 0.08)}}, Gaps: []Gap{air, air}}, NA, Options{})
+	for k, s := range r.Stress {
+		if (s.Why != "") != (k == 1) {
+			t.Errorf("pane %d: %+v", k+1, s)
+		}
+	}
+	for _, v := range []Value{r.OutsideWM2K, r.InsideWM2K} {
+		if !v.Known || math.IsNaN(v.Number) {
+			t.Errorf("coefficients beside opaque panes: %+v", v)
+		}
+	}
+	for _, f := range Figures() {
+		if f.Alias == "gap_radiative" {
+			if v := f.Value(r, 0); v.Known || v.Why == "" {
+				t.Errorf("radiation beside the foil: %+v", v)
+			}
+		}
+	}
+}
+
+// A vacuum is no sealed gas; a humidity above 1 is never reached; clauses are those of the basis.
+func TestSmallPrint(t *testing.T) {
+	glass := clearGlass(4, 0.8, 0.08)
+	vacuum := Gap{WidthMM: 0.2, Vacuum: &Vacuum{PressurePa: 0.1, PillarRadiusMM: 0.25, PillarPitchMM: 20}}
+	for _, tt := range []struct {
+		gaps []Gap
+		want bool
+	}{{[]Gap{vacuum}, false}, {[]Gap{vacuum, gap(t, 12, map[string]float64{"air": 1})}, false}, {[]Gap{vacuum, gap(t, 9.9, map[string]float64{"air": 1})}, true}} {
+		m := &Makeup{ID: "V", Gaps: tt.gaps}
+		for range len(tt.gaps) + 1 {
+			m.Panes = append(m.Panes, Placed{Pane: glass})
+		}
+		r := rateOne(t, m, EN, Options{})
+		if got := slices.ContainsFunc(r.Cautions, func(c Caution) bool { return c.Code == "climate_load" }); got != tt.want {
+			t.Errorf("%d gaps: caution %t", len(tt.gaps), got)
+		}
+	}
+	f := Figure{Above1: "never", Places: 2, Value: func(*Rating, int) Value { return known(1.004) }}
+	if got := f.Print(rateOne(t, &Makeup{ID: "V", Panes: []Placed{{Pane: glass}}}, EN, Options{}), 0); got != "never" {
+		t.Errorf("1.004 is printed %q", got)
+	}
+	for _, f := range Figures() {
+		if under := f.ClauseUnder(NA); (f.Alias == "u" || f.Alias == "g" || f.Alias == "nusselt") == strings.Contains(under, "EN") || f.ClauseUnder(EN) != f.Clause {
+			if f.Alias == "u" || f.Alias == "g" || f.Alias == "nusselt" {
+				t.Errorf("%s under na: %s", f.Alias, under)
+			}
 		}
 	}
 }

@@ -100,7 +100,7 @@ var cautionRules = []cautionRule{
 	{"radiant_apart", "a radiant temperature of a condition is not that of its air", conditionsWhere(func(b *Balance) bool {
 		at := b.Condition.Surroundings(b.TiltDeg)
 		return at.OutsideRadiantK != at.OutsideK || at.InsideRadiantK != at.InsideK
-	}, "Radiant temperatures differ from those of the air in %s: U there is the flux over the difference of the air temperatures, and must not be compared with that of equal ones.")},
+	}, "Radiant temperatures differ from those of the air in %s: U there is the flux over the difference of the air temperatures, and must not be compared with one where they are the same.")},
 	{"correlation_step", "the Rayleigh number of an upright gap is within 1 % of 1e4 in a condition", conditionsWhere(func(b *Balance) bool {
 		for k := range b.Lit.Sheets - 1 {
 			for _, e := range [...]*thermal.Exchange{&b.Lit.Gaps[k], &b.Dark.Gaps[k]} {
@@ -111,6 +111,7 @@ var cautionRules = []cautionRule{
 		}
 		return false
 	}, "The Rayleigh number of a gap stands at 10 000 in %s, where the correlation of upright gaps has a step of 0.5 %%: two states are possible, of which one is shown, and g of little sun may be of both.")},
+	{"beyond_correlation", "a gap is beyond what its convection correlation was made for, in a condition", beyondCorrelation},
 	{"beyond_gas_data", "a gap is colder than -60 °C or hotter than 150 °C in a condition", conditionsWhere(func(b *Balance) bool {
 		for k := range b.Lit.Sheets - 1 {
 			if e := &b.Lit.Gaps[k]; e.Rayleigh > 0 && math.Abs(celsius(e.MeanK)-45) > 105 {
@@ -147,8 +148,8 @@ var cautionRules = []cautionRule{
 			return p.HeatTreatment == Toughened && !p.HeatSoaked
 		}, "Toughened glass may break from nickel sulphide inclusions: %s is not stated to be heat soaked (EN 14179).")
 	}},
-	{"climate_load", "three panes or more, or a gap below 10 mm", when(func(r *Rating) bool {
-		return len(r.Makeup.Panes) > 2 || slices.ContainsFunc(r.Makeup.Gaps, func(g Gap) bool { return g.WidthMM < narrowGapMM })
+	{"climate_load", "two gaps with gas or more, or one below 10 mm", when(func(r *Rating) bool {
+		return gasGaps(r.Makeup) > 1 || slices.ContainsFunc(r.Makeup.Gaps, func(g Gap) bool { return g.Vacuum == nil && g.WidthMM < narrowGapMM })
 	}, "Sealed gaps load their panes when temperature, weather and altitude change; not assessed here.")},
 	{"power_failure", "a pane switches", when(func(r *Rating) bool { return r.Makeup.Tintable() },
 		"Switchable: settle which tint is held without power, and view for escape and rescue.")},
@@ -200,7 +201,11 @@ func stressCaution(all []Rating, _ int) string {
 	if parts == nil {
 		return ""
 	}
-	return "Thermal stress, a screening: the sunlit middle against the shaded edge, which is taken as the pane without sun, is " + strings.Join(parts, "; ") +
+	edge := "the pane without sun"
+	if margin := all[0].Method.stress().FrameMarginK; margin > 0 {
+		edge += fmt.Sprintf(" less %.6g K", margin)
+	}
+	return "Thermal stress, a screening: the sunlit middle against the shaded edge, which is taken as " + edge + ", is " + strings.Join(parts, "; ") +
 		". Discuss heat treatment, edge work, shadows and frame with a licensed engineer."
 }
 
@@ -215,10 +220,10 @@ func hotSurface(all []Rating, i int) string {
 	h := &all[i].hot
 	var parts []string
 	if h.touchCondition != "" && h.touchC > hotToTouchC {
-		parts = append(parts, fmt.Sprintf("the room-side surface reaches %s °C in condition %s (above 45 °C, in reach)", PrintRounded(h.touchC, 0), h.touchCondition))
+		parts = append(parts, fmt.Sprintf("the room-side surface reaches %s °C in condition %s (above 45 °C, in reach)", PrintRounded(h.touchC, 1), h.touchCondition))
 	}
 	if h.sealCondition != "" && h.sealC > hotToSealC {
-		parts = append(parts, fmt.Sprintf("pane %d reaches %s °C at a seal or an interlayer in condition %s (above 60 °C)", h.sealPane+1, PrintRounded(h.sealC, 0), h.sealCondition))
+		parts = append(parts, fmt.Sprintf("pane %d reaches %s °C at a seal or an interlayer in condition %s (above 60 °C)", h.sealPane+1, PrintRounded(h.sealC, 1), h.sealCondition))
 	}
 	if parts == nil {
 		return ""
@@ -258,13 +263,13 @@ func condensation(all []Rating, i int) string {
 // outsideCondensation says from which humidity dew forms outside in a clear calm night.
 func outsideCondensation(all []Rating, i int) string {
 	r := &all[i]
-	const worthSaying = 0.95
+	const worthSaying, humidityStep = 0.95, 0.05 // rounded, so that make-ups that are alike share the caution
 	if !(r.clearNight.humidity > 0 && r.clearNight.humidity < worthSaying) {
 		return ""
 	}
 	c := clearNight()
-	return fmt.Sprintf("In a clear calm night (outdoors %.6g °C, indoors %.6g °C, %.6g m/s, sky %s °C by Swinbank) surface 1 cools to %s °C: outside, dew forms from a humidity of %s.",
-		c.OutsideC, c.InsideC, c.WindMS.Number, PrintRounded(c.SkyC.Number, 0), PrintRounded(r.clearNight.surfaceC, 1), PrintRounded(r.clearNight.humidity, 2))
+	return fmt.Sprintf("In a clear calm night (outdoors %.6g °C, indoors %.6g °C, %.6g m/s, sky %s °C by Swinbank) surface 1 cools to about %s °C: outside, dew forms from a humidity of about %s.",
+		c.OutsideC, c.InsideC, c.WindMS.Number, PrintRounded(c.SkyC.Number, 0), PrintRounded(r.clearNight.surfaceC, 0), PrintRounded(math.Floor(r.clearNight.humidity/humidityStep)*humidityStep, 2))
 }
 
 // What makes cold glass worth a word; common practice, no source.
@@ -279,33 +284,49 @@ func coldGlass(all []Rating, i int) string {
 	var parts []string
 	for k := range r.Balances {
 		b := &r.Balances[k]
-		get := func(alias string) float64 {
-			for _, f := range consequenceFigures() {
-				if f.Alias == alias {
-					return f.Of(r, b, 0).or(0)
-				}
-			}
-			return 0
-		}
-		asymmetry := get("asymmetry")
-		if asymmetry <= 0 {
+		asymmetry := r.asymmetry(b).or(0)
+		if asymmetry <= 0 || b.Condition.Standard { // nobody sits in a basis's own conditions
 			continue
 		}
-		pd, v := r.dissatisfied(b), get("downdraught")
+		pd, v := r.dissatisfied(b), r.balanceFigure(b, "comfort.downdraught_m_s").or(0)
 		who := "beyond what ISO 7730 judges"
-		if pd.Known {
+		switch {
+		case pd.Known && pd.Number < dissatisfiedPct:
+			who = "fewer than 5 % dissatisfied"
+		case pd.Known:
 			who = PrintRounded(pd.Number, 0) + " % dissatisfied"
 		}
 		if !pd.Known || pd.Number > dissatisfiedPct || v > draughtMS {
-			parts = append(parts, fmt.Sprintf("in condition %s radiant asymmetry %s K (%s), air %s m/s near the floor",
-				b.Condition.ID, PrintRounded(asymmetry, 1), who, PrintRounded(v, 2)))
+			part := fmt.Sprintf("in condition %s radiant asymmetry about %s K (%s)", b.Condition.ID, PrintRounded(asymmetry, 0), who)
+			if v > 0 {
+				part += fmt.Sprintf(", air of about %s m/s near the floor", PrintRounded(v, 1))
+			}
+			parts = append(parts, part)
 		}
 	}
 	if parts == nil {
 		return ""
 	}
-	p := r.Method.person()
+	p := r.Method.Person()
 	return fmt.Sprintf("Cold glass, for a person %.6g m in front of %.6g × %.6g m of it: %s.", p.DistanceM, p.GlassWidthM, p.GlassHeightM, strings.Join(parts, "; "))
+}
+
+// beyondCorrelation names the conditions in which a gap is beyond what its correlation was made for
+// (ISO 15099:2003, 5.3.3, from memory): Ra 2e7 and a height of 5 widths from 60° on, Ra 1e5 and 20
+// widths below.
+func beyondCorrelation(all []Rating, i int) string {
+	gaps := all[i].Makeup.Gaps
+	return conditionsWhere(func(b *Balance) bool {
+		for k, g := range gaps {
+			e := &b.Lit.Gaps[k]
+			aspect := 1000 * b.Lit.Surroundings.HeightM / g.WidthMM
+			steep := e.AngleDeg >= 60
+			if e.Rayleigh > 0 && (steep && (e.Rayleigh > 2e7 || aspect < 5) || !steep && (e.Rayleigh > 1e5 || aspect < 20)) {
+				return true
+			}
+		}
+		return false
+	}, "A gap is wider, or its gas moves more, than its convection correlation was made for in %s (Ra to 2e7 and heights from 5 widths at 60° and more, Ra to 1e5 and heights from 20 widths below; from memory): its conductance was carried beyond.")(all, i)
 }
 
 // conditionsWhere names the conditions of the user for whose balance something holds.
@@ -322,6 +343,16 @@ func conditionsWhere(holds func(b *Balance) bool, format string) func([]Rating, 
 		}
 		return fmt.Sprintf(format, strings.Join(names, ", "))
 	}
+}
+
+// gasGaps counts the gaps with gas.
+func gasGaps(m *Makeup) (n int) {
+	for _, g := range m.Gaps {
+		if g.Vacuum == nil {
+			n++
+		}
+	}
+	return n
 }
 
 func above(v Value, limit float64) bool { return v.Known && v.Number > limit }

@@ -4,6 +4,7 @@ package glazing
 
 import (
 	"math"
+	"slices"
 	"strconv"
 	"strings"
 )
@@ -36,6 +37,8 @@ type Figure struct {
 	// their heads do not.
 	Numbering bool
 	Per       Per
+	// Above1 is printed in the place of a number above 1: of a humidity that no air can have.
+	Above1 string
 	// Condition is the id of the condition under whose balance the figure stands; "" of those of the
 	// rating itself.
 	Condition string
@@ -183,6 +186,8 @@ func thermalFigures() []Figure {
 		list = append(list, Figure{Key: "gaps.#." + g.key, Alias: g.alias, Symbol: g.symbol, Unit: g.unit, Places: g.places, Per: PerGap,
 			Clause: g.clause, Meaning: g.meaning, Value: func(r *Rating, i int) Value {
 				switch v := g.get(r, i); {
+				case math.IsNaN(v):
+					return unknown(passed)
 				case v > 0:
 					return known(v)
 				case r.Makeup.Gaps[i].Vacuum != nil && r.U.Known:
@@ -200,6 +205,20 @@ func thermalFigures() []Figure {
 		Figure{Key: "u_w_m2k", Alias: "u", Symbol: "Ug", Unit: "W/(m²·K)", BasisU: true, Column: 7, Clause: "EN 673, 5.1; ISO 10292",
 			Meaning: "U-value of the centre of the glass", Value: whole(func(r *Rating) Value { return r.U })},
 	)
+}
+
+// ClauseUnder returns where a figure is defined under a basis: that of the list, but of U and g, and
+// what goes with them, under a basis of balances.
+func (f Figure) ClauseUnder(b Basis) string {
+	if b.Balances() && f.Condition == "" {
+		switch {
+		case slices.Contains([]string{"u", "he", "hi"}, f.Alias), f.Per == PerGap && strings.HasPrefix(f.Key, "gaps."):
+			return "ISO 15099, winter"
+		case slices.Contains([]string{"g", "qi"}, f.Alias):
+			return "ISO 15099, summer"
+		}
+	}
+	return f.Clause
 }
 
 // Named reports whether a name that somebody typed is the figure's.
@@ -270,8 +289,11 @@ func (f Figure) Print(r *Rating, i int) string {
 		return f.Text(r, i)
 	}
 	v := f.Value(r, i)
-	if !v.Known {
+	switch {
+	case !v.Known:
 		return "–"
+	case f.Above1 != "" && v.Number > 1:
+		return f.Above1
 	}
 	return PrintRounded(v.Number, f.Decimals(r, v.Number))
 }

@@ -108,10 +108,13 @@ func hottest(get func(pane int, peakK float64) float64) func(*Rating, *Balance, 
 	}
 }
 
+// passed says why coefficients of radiation are unknown.
+const passed = "a sheet lets infrared through: radiation there is not of two faces alone"
+
 // finite leaves a number that is none unknown.
 func (v Value) finite() Value {
 	if v.Known && (math.IsNaN(v.Number) || math.IsInf(v.Number, 0)) {
-		return unknown("the temperatures leave it without meaning")
+		return unknown(passed)
 	}
 	return v
 }
@@ -160,7 +163,7 @@ func stateFigures() []BalanceFigure {
 			Schedule: 6, Of: lit(func(b *Balance, _ int) float64 { return celsius(b.Lit.SurfaceK[2*b.Lit.Sheets-1]) })},
 		{Figure: Figure{Key: "hottest_c", Alias: "hottest", Symbol: "θmax", Unit: "°C", Places: 1, Clause: balance, Meaning: "highest temperature in any pane"},
 			Schedule: 7, Of: hottest(func(_ int, peakK float64) float64 { return celsius(peakK) })},
-		{Figure: Figure{Key: "hottest_pane", Alias: "hottest_pane", Symbol: "pane", Places: 0, Clause: balance, Meaning: "number of the hottest pane, from outside"},
+		{Figure: Figure{Key: "hottest_pane", Numbering: true, Alias: "hottest_pane", Symbol: "pane", Places: 0, Clause: balance, Meaning: "number of the hottest pane, from outside"},
 			Schedule: 8, Of: hottest(func(pane int, _ float64) float64 { return float64(pane + 1) })},
 		{Figure: Figure{Key: "absorbed_w_m2.#", Alias: "absorbed", Symbol: "E·αe", Unit: "W/m²", Places: 0, Per: PerPane, Clause: balance, Meaning: "sun that a pane absorbs"},
 			Of: func(_ *Rating, b *Balance, i int) Value {

@@ -82,7 +82,7 @@ func NewMethod(b Basis, o Options) *Method {
 		m.own = len(m.conditions)
 	}
 	m.conditions = append(m.conditions, o.Conditions...)
-	m.screened = screenedBy(m.conditions)
+	m.screened = screenedBy(b, m.conditions)
 	return m
 }
 

@@ -24,19 +24,21 @@ type Stress struct {
 	Absorptance float64
 }
 
-// screenedBy returns the conditions for which thermal stress is screened: those with sun, and of the
-// summer and the cold sunny one what is not among them.
-func screenedBy(conditions []Condition) []Condition {
+// screenedBy returns the conditions for which thermal stress is screened: those with sun, the summer of
+// na under every basis, and the cold sunny one unless the user has one of that id.
+func screenedBy(b Basis, conditions []Condition) []Condition {
 	var list []Condition
 	for _, c := range conditions {
 		if c.SunWM2 > 0 {
 			list = append(list, c)
 		}
 	}
-	for _, c := range []Condition{conditionsNA()[1], coldSun()} {
-		if !slices.ContainsFunc(conditions, func(x Condition) bool { return x.ID == c.ID }) {
-			list = append(list, c)
-		}
+	if summer := conditionsNA()[1]; b.Name != NA.Name {
+		summer.ID = SummerNA
+		list = append(list, summer)
+	}
+	if !slices.ContainsFunc(conditions, func(x Condition) bool { return x.ID == ColdSun }) {
+		list = append(list, coldSun())
 	}
 	return list
 }
@@ -55,7 +57,11 @@ func (r *Ready) screen(x *Rating) error {
 		x.feelHeat(&b)
 		for k := range x.Stress {
 			s := &x.Stress[k]
-			if why := b.why(); why != "" {
+			why := b.why()
+			if why == "" && r.Makeup.Panes[k].Pane.infraredTau(r.States[x.State].Tints[k]) > 0 {
+				why = "pane " + r.Makeup.Panes[k].Pane.ID + " lets infrared through: it is no glass"
+			}
+			if why != "" {
 				s.Why = why
 				continue
 			}
@@ -138,8 +144,8 @@ func (r *Rating) edgeFactor(u Value) Value {
 	return known(thermal.EdgeFactor(u.Number, e.PsiWMK.Number, thermal.EdgeBandM, thermal.InsideResistanceM2KW))
 }
 
-// person returns who feels the glazing.
-func (m *Method) person() Person {
+// Person returns who feels the glazing: that of the project, or AnyPerson.
+func (m *Method) Person() Person {
 	if m.Options.Person != nil {
 		return *m.Options.Person
 	}
@@ -189,22 +195,64 @@ func (r *Rating) asymmetry(b *Balance) Value {
 	if why := b.why(); why != "" {
 		return unknown(why)
 	}
-	p := r.Method.person()
+	p := r.Method.Person()
 	view := thermal.RectangleViewFactor(p.GlassWidthM, p.GlassHeightM, p.DistanceM)
 	return known(thermal.RadiantAsymmetry(view, b.Lit.SurfaceK[2*b.Lit.Sheets-1], b.Lit.Surroundings.InsideRadiantK))
 }
 
-// dissatisfied returns the percentage whom that asymmetry disturbs, as by a wall.
+// How far from upright glazing still counts as a wall, and how far from level as a ceiling, in degrees:
+// our own choice, for ISO 7730 knows walls and ceilings only.
+const (
+	wallWithinDeg    = 30
+	ceilingWithinDeg = 45
+)
+
+// upright reports whether a balance is of glazing that counts as a wall.
+func (b *Balance) upright() bool { return math.Abs(b.TiltDeg-90) <= wallWithinDeg }
+
+// radiantSource returns what a radiant asymmetry, above 0 where the glass is cool, is judged as, or why
+// there is no formula.
+func (b *Balance) radiantSource(asymmetryK float64) (source thermal.RadiantSource, why string) {
+	cool := asymmetryK >= 0
+	switch {
+	case b.upright() && cool:
+		return thermal.CoolWall, ""
+	case b.upright():
+		return thermal.WarmWall, ""
+	case b.TiltDeg <= ceilingWithinDeg && cool:
+		return thermal.CoolCeiling, ""
+	case b.TiltDeg <= ceilingWithinDeg:
+		return thermal.WarmCeiling, ""
+	}
+	return 0, "ISO 7730 has formulas for walls and ceilings, and this tilt is neither"
+}
+
+// draughts makes the accessor of a figure of the air that falls along upright glass.
+func draughts(get func(p Person, dropK float64) float64) func(*Rating, *Balance, int) Value {
+	return func(r *Rating, b *Balance, _ int) Value {
+		switch why := b.why(); {
+		case why != "":
+			return unknown(why)
+		case !b.upright():
+			return unknown(notUpright)
+		}
+		return known(get(r.Method.Person(), b.Condition.InsideC-celsius(b.Lit.SurfaceK[2*b.Lit.Sheets-1])))
+	}
+}
+
+const notUpright = "the formula is for air that falls along upright glass"
+
+// dissatisfied returns the percentage whom that asymmetry disturbs, as by a wall or a ceiling.
 func (r *Rating) dissatisfied(b *Balance) Value {
 	v := r.asymmetry(b)
 	if !v.Known {
 		return v
 	}
-	source, size := thermal.CoolWall, v.Number
-	if size < 0 {
-		source, size = thermal.WarmWall, -size
+	source, why := b.radiantSource(v.Number)
+	if why != "" {
+		return unknown(why)
 	}
-	percent, within := thermal.AsymmetryDissatisfied(source, size)
+	percent, within := thermal.AsymmetryDissatisfied(source, math.Abs(v.Number))
 	if !within {
 		return unknown("the radiant asymmetry is beyond the range of the formula of ISO 7730")
 	}
@@ -241,7 +289,7 @@ func (r *Rating) sunOn(b *Balance, get func(thermal.SolarLoad) float64) Value {
 	case b.Condition.SunWM2 == 0:
 		return unknown("the condition has no sun")
 	}
-	p := r.Method.person()
+	p := r.Method.Person()
 	beam := b.beam(p.SunAltitudeDeg)
 	if !beam.Known {
 		return beam
@@ -258,7 +306,6 @@ func (r *Rating) sunOn(b *Balance, get func(thermal.SolarLoad) float64) Value {
 // consequenceFigures are those of moisture and comfort.
 func consequenceFigures() []BalanceFigure {
 	const moisture, comfort, sun = "EN ISO 13788", "ISO 7730", "ASHRAE 55, C"
-	roomDrop := func(b *Balance) float64 { return b.Condition.InsideC - celsius(b.Lit.SurfaceK[2*b.Lit.Sheets-1]) }
 	return []BalanceFigure{
 		{Figure: Figure{Key: "moisture.temperature_factor", Alias: "temperature_factor", Symbol: "fRsi", Places: 3, Clause: moisture, Meaning: "temperature factor of the room-side surface, without sun"},
 			Of: dark(func(_ *Rating, b *Balance) float64 {
@@ -271,17 +318,17 @@ func consequenceFigures() []BalanceFigure {
 				v.Number = celsius(v.Number)
 				return v
 			}},
-		{Figure: Figure{Key: "moisture.condensing_rh", Alias: "condensing_rh", Symbol: "φsi", Places: 2, Clause: moisture, Meaning: "room humidity at which the room-side surface begins to condense, without sun"},
+		{Figure: Figure{Key: "moisture.condensing_rh", Above1: "never", Alias: "condensing_rh", Symbol: "φsi", Places: 2, Clause: moisture, Meaning: "room humidity at which the room-side surface begins to condense, without sun"},
 			Of: dark(func(_ *Rating, b *Balance) float64 {
 				return thermal.CondensingHumidity(b.roomSideK(), b.Dark.Surroundings.InsideK)
 			})},
 		{Figure: Figure{Key: "moisture.edge_temperature_c", Alias: "edge_temperature", Symbol: "θedge", Unit: "°C", Places: 1, Clause: "estimate", Meaning: "room-side temperature at the edge, by the factor or ψ that was typed"},
 			Of: edge(func(_ *Balance, edgeK float64) float64 { return celsius(edgeK) })},
-		{Figure: Figure{Key: "moisture.edge_condensing_rh", Alias: "edge_condensing_rh", Symbol: "φedge", Places: 2, Clause: "estimate", Meaning: "room humidity at which the edge begins to condense"},
+		{Figure: Figure{Key: "moisture.edge_condensing_rh", Above1: "never", Alias: "edge_condensing_rh", Symbol: "φedge", Places: 2, Clause: "estimate", Meaning: "room humidity at which the edge begins to condense"},
 			Of: edge(func(b *Balance, edgeK float64) float64 {
 				return thermal.CondensingHumidity(edgeK, b.Dark.Surroundings.InsideK)
 			})},
-		{Figure: Figure{Key: "moisture.outside_condensing_rh", Alias: "outside_condensing_rh", Symbol: "φse", Places: 2, Clause: moisture, Meaning: "outdoor humidity at which the outside surface begins to condense, without sun"},
+		{Figure: Figure{Key: "moisture.outside_condensing_rh", Above1: "never", Alias: "outside_condensing_rh", Symbol: "φse", Places: 2, Clause: moisture, Meaning: "outdoor humidity at which the outside surface begins to condense, without sun"},
 			Of: dark(func(_ *Rating, b *Balance) float64 {
 				return thermal.CondensingHumidity(b.Dark.SurfaceK[0], b.Dark.Surroundings.OutsideK)
 			})},
@@ -292,17 +339,11 @@ func consequenceFigures() []BalanceFigure {
 				return r.dissatisfied(b)
 			}},
 		{Figure: Figure{Key: "comfort.downdraught_m_s", Alias: "downdraught", Symbol: "vf", Unit: "m/s", Places: 2, Clause: "Manz and Frank 2003", Meaning: "air speed near the floor by the cold glass"},
-			Of: func(r *Rating, b *Balance, _ int) Value {
-				p := r.Method.person()
-				return lit(func(b *Balance, _ int) float64 {
-					return thermal.ManzFrank.Velocity(p.GlassHeightM, roomDrop(b), p.DistanceM)
-				})(r, b, 0)
-			}},
+			Of: draughts(func(p Person, dropK float64) float64 {
+				return thermal.ManzFrank.Velocity(p.GlassHeightM, dropK, p.DistanceM)
+			})},
 		{Figure: Figure{Key: "comfort.downdraught_cooling_k", Alias: "downdraught_cooling", Symbol: "Δtf", Unit: "K", Places: 1, Clause: "Manz and Frank 2003", Meaning: "by how much that air is colder than the room"},
-			Of: func(r *Rating, b *Balance, _ int) Value {
-				p := r.Method.person()
-				return lit(func(b *Balance, _ int) float64 { return thermal.FloorCooling(roomDrop(b), p.DistanceM) })(r, b, 0)
-			}},
+			Of: draughts(func(p Person, dropK float64) float64 { return thermal.FloorCooling(dropK, p.DistanceM) })},
 		{Figure: Figure{Key: "comfort.sun_field_w_m2", Alias: "sun_field", Symbol: "ERF", Unit: "W/m²", Places: 1, Clause: sun, Meaning: "effective radiant field of the sun on a person"},
 			Of: func(r *Rating, b *Balance, _ int) Value {
 				return r.sunOn(b, func(l thermal.SolarLoad) float64 { return l.EffectiveRadiantFieldWM2 })

@@ -54,16 +54,12 @@ func (c *Chapter) flux(symbol, meaning, h string, coefficient, value float64, ou
 // radiated writes out the radiation between two ends, of which the given surfaces, from 0, are one or
 // both; hr names its coefficient.
 func (w *balanceWork) radiated(c *Chapter, hr string, e *thermal.Exchange, outer, inner end, surfaces ...int) {
-	if !w.opaque {
+	if math.IsNaN(e.Radiative) { // a sheet beside it passes infrared
 		formula := fmt.Sprintf("J%d − H%d of the table above", surfaces[0]+1, surfaces[0]+1)
 		if surfaces[0] == 0 {
 			formula = "H1 − J1 of the table above"
 		}
 		c.step("qr", "heat towards the inside, by radiation", formula, put(e.RadiatedWM2), e.RadiatedWM2, "W/m²", clauseRadiation)
-		if !math.IsNaN(e.Radiative) {
-			formula, numbers := differs(outer, inner)
-			c.step(hr, "the same per kelvin", "qr/("+formula+")", put(e.RadiatedWM2)+"/("+numbers+")", e.Radiative, unitCoefficient, clauseRadiation)
-		}
 		return
 	}
 	symbol := func(i int) string { return w.r.emissivitySymbol(surfaces[i]) }
@@ -206,7 +202,7 @@ func (c *Chapter) vacuum(v thermal.Vacuum) {
 		numbers += fmt.Sprintf(" + %s/(%s·%s·%s^2)", put(v.PillarHeightM), put(v.PillarWMK), put(math.Pi), put(v.PillarRadiusM))
 		c.remark("Pillars of radius a, on a square of side p, in series with the heat that narrows towards them in the glass on both sides.")
 	} else {
-		c.remark("Pillars of radius a, on a square of side p: the heat narrows towards them in the glass on both sides; their own resistance is left out, for no pillar_w_mk is given.")
+		c.remark("Pillars of radius a, on a square of side p: the heat narrows towards them in the glass on both sides; their own resistance is left out, for no pillar_conductivity_w_mk is given.")
 	}
 	pillars, gas := v.PillarConductance(), v.GasConductance()
 	c.step("hp", "of the pillars", formula+")/p^2", numbers+")/"+put(v.PillarPitchM)+"^2", pillars, unitCoefficient, clause)

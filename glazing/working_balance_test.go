@@ -50,7 +50,8 @@ func workedMakeups(t *testing.T) map[string]*Makeup {
 		"vacuum":                 of([]Gap{vacuum(unknown(""))}, Placed{Pane: film}, Placed{Pane: clear}),
 		"vacuum beside argon": of([]Gap{vacuum(known(20)), gap(t, 12, mixed)}, Placed{Pane: clear}, Placed{Pane: low, Turned: true},
 			Placed{Pane: clear}),
-		"foil": of([]Gap{gap(t, 12, air), gap(t, 12, mixed)}, Placed{Pane: clear}, Placed{Pane: foil}, Placed{Pane: clear}),
+		"foil":         of([]Gap{gap(t, 12, air), gap(t, 12, mixed)}, Placed{Pane: clear}, Placed{Pane: foil}, Placed{Pane: clear}),
+		"foil outside": of([]Gap{gap(t, 12, air)}, Placed{Pane: foil}, Placed{Pane: clear}),
 	}
 }
 
@@ -127,7 +128,7 @@ func TestWorkingOfBalances(t *testing.T) {
 		"180 − tilt, for the outer face is the warmer", "180 − tilt, for the glass is warmer than the air", "(Fsky·Tsky^4 + (1 − Fsky)·Tgr^4)^(1/4)",
 		"1/(1/(4·λ1·a) + 1/(4·λ2·a))/p^2", "1/(1/(4·λ1·a) + 1/(4·λ2·a) + s/(λp·π·a^2))/p^2", "H1 − J1 of the table above", "J2 − H2 of the table above",
 		"610.5·exp(21.875·θ/(265.5 + θ))", "237.3·L/(17.269 − L)", "265.5·L/(21.875 − L)", "typed by the user", "1 − (U + ψ/0.05)·0.13",
-		"max(0, 100/(1 + exp(3.72 + 0.052·Δtpr)) − 3.5)", "0.083·(h·(θi − θsi))^(1/2)", "0.043·(h·(θi − θsi))^(1/2)", "(0.3 − 0.034·2)·(θi − θsi)",
+		"max(0, 100/(1 + exp(3.72 − 0.052·(−Δtpr))) − 3.5)", "max(0, 100/(1 + exp(6.61 − 0.345·(Δtpr))))", "max(0, 100/(1 + exp(9.93 − 0.5·(Δtpr))))", "max(0, 100/(1 + exp(2.84 − 0.174·(−Δtpr))) − 5.5)", "0.083·(h·(θi − θsi))^(1/2)", "0.043·(h·(θi − θsi))^(1/2)", "(0.3 − 0.034·2)·(θi − θsi)",
 		"0.725·fp·fbody·τe·Eb", "(θ1 + θ2)/2 − margin of the frame", "of condition winter", "at surface 1", "at surface 2",
 	} {
 		if !seen[formula] {
@@ -415,7 +416,7 @@ func TestWorkingOfAVacuum(t *testing.T) {
 		for _, c := range chapters {
 			said += c.Note + "\n"
 		}
-		if strings.Contains(said, "which is outside "+basis.rounding+": pillars") == basis.Balances() || !strings.Contains(said, "no pillar_w_mk is given") {
+		if strings.Contains(said, "which is outside "+basis.rounding+": pillars") == basis.Balances() || !strings.Contains(said, "no pillar_conductivity_w_mk is given") {
 			t.Errorf("%s: notes of a vacuum: %s", basis.Name, said)
 		}
 	}

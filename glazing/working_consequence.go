@@ -114,7 +114,7 @@ func workComfort(r *Rating, b *Balance) Chapter {
 		c.lack("Δtpr, vf, ERF", why)
 		return c
 	}
-	p := r.Method.person()
+	p := r.Method.Person()
 	posture, from := "seated", "assumed, common practice, no source"
 	if p.Standing {
 		posture = "standing"
@@ -156,13 +156,17 @@ func (c *Chapter) asymmetry(r *Rating, b *Balance, p Person) {
 		c.lack("PDpr", dissatisfied.Why)
 		return
 	}
-	size := uneven
-	formula, numbers := "max(0, 100/(1 + exp(6.61 − 0.345·Δtpr)))", "max(0, 100/(1 + exp(6.61 − 0.345·%s)))"
-	if size < 0 {
-		size = -size
-		formula, numbers = "max(0, 100/(1 + exp(3.72 + 0.052·Δtpr)) − 3.5)", "max(0, 100/(1 + exp(3.72 − 0.052·%s)) − 3.5)"
+	source, _ := b.radiantSource(uneven)
+	terms := map[thermal.RadiantSource]struct{ as, inner, less string }{
+		thermal.CoolWall: {"a cool wall", "6.61 − 0.345·", ""}, thermal.WarmWall: {"a warm wall", "3.72 − 0.052·", " − 3.5"},
+		thermal.CoolCeiling: {"a cool ceiling", "9.93 − 0.5·", ""}, thermal.WarmCeiling: {"a warm ceiling", "2.84 − 0.174·", " − 5.5"},
+	}[source]
+	by := func(size string) string { return "max(0, 100/(1 + exp(" + terms.inner + size + "))" + terms.less + ")" }
+	sign := ""
+	if uneven < 0 {
+		sign = "−"
 	}
-	c.step("PDpr", "people dissatisfied by it, as by a wall", formula, fmt.Sprintf(numbers, put(size)), dissatisfied.Number, "%", clauseComfort)
+	c.step("PDpr", "people dissatisfied by it, as by "+terms.as, by("("+sign+"Δtpr)"), by(put(math.Abs(uneven))), dissatisfied.Number, "%", clauseComfort)
 }
 
 // downdraught writes out the air that falls along cold glass.
@@ -170,6 +174,10 @@ func (c *Chapter) downdraught(r *Rating, b *Balance, p Person) {
 	const clause = "Manz and Frank 2003"
 	inC, face := b.Condition.InsideC, celsius(b.Lit.SurfaceK[2*b.Lit.Sheets-1])
 	speed, cooling := r.balanceFigure(b, "comfort.downdraught_m_s").Number, r.balanceFigure(b, "comfort.downdraught_cooling_k").Number
+	if !b.upright() {
+		c.lack("vf, Δtf", notUpright)
+		return
+	}
 	if face >= inC {
 		c.remark("The glass is not colder than the air of the room: no air falls along it.")
 		return
@@ -204,7 +212,7 @@ func (c *Chapter) sunOn(r *Rating, b *Balance, p Person) {
 	if p.Standing {
 		area = "0.725"
 	}
-	c.remark(fmt.Sprintf("The sun of the condition is direct sun Eb, square before the glazing and %s° high, with the fifth of it that the whole sky gives; the person faces %s° away from it. fsky %s is the share of the sky seen through the glass, fbody %s that of the body struck, absorbed %s, floor %s reflected there. τe is that of normal incidence.",
+	c.remark(fmt.Sprintf("The sun of the condition is direct sun Eb, square before the glazing and %s° high, with the fifth of it that the whole sky gives; it stands %s° from where the person faces. fsky %s is the share of the sky seen through the glass, fbody %s that of the body struck, absorbed %s, floor %s reflected there. τe is that of normal incidence.",
 		plain(p.SunAltitudeDeg), plain(p.SunFromFrontDeg), plain(p.SkyShare), plain(p.BodyShare), plain(p.Absorptivity), plain(p.FloorReflectance)))
 	direct := b.beam(p.SunAltitudeDeg).Number
 	beam, tau, altitude, tilt := put(direct), put(r.Solar.Transmittance.Number), put(p.SunAltitudeDeg), put(b.TiltDeg)

@@ -9,6 +9,7 @@ import "math"
 // of the outside and of the room, in that order.
 type exchange struct {
 	n     int
+	plain [MaxSheets + 1]bool                     // whether opaque sheets alone bound a gap, the outside, the room
 	sent  [MaxSheets + 1][2*MaxSheets + 2]float64 // net flux towards the inside, in front of each sheet and behind the last
 	taken [2 * MaxSheets][2*MaxSheets + 2]float64 // net absorbed by each face
 }
@@ -18,6 +19,9 @@ func newExchange(sheets []Sheet) *exchange {
 	n := len(sheets)
 	x := &exchange{n: n}
 	faces := 2 * n
+	for g := range n + 1 {
+		x.plain[g] = (g == 0 || sheets[g-1].Transmittance == 0) && (g == n || sheets[g].Transmittance == 0)
+	}
 	// Radiosities J of the faces: J = ε E + τ·(what falls on the other face) + ρ·(what falls on it).
 	var m [2 * MaxSheets][2 * MaxSheets]float64
 	var rhs [2 * MaxSheets][2*MaxSheets + 2]float64
@@ -124,8 +128,8 @@ func (x *exchange) look(w *work) {
 	set := func(g int, to *Exchange, outerK, innerK float64) {
 		to.RadiatedWM2 = sum(&x.sent[g])
 		to.Radiative = math.NaN()
-		if d := outerK - innerK; math.Abs(d) > leastDropK {
-			to.Radiative = to.RadiatedWM2 / d
+		if x.plain[g] {
+			to.Radiative = w.s.emissivity[g] * StefanBoltzmann4 * (outerK*outerK + innerK*innerK) * (outerK + innerK)
 		}
 	}
 	last := 2*x.n - 1
@@ -135,10 +139,6 @@ func (x *exchange) look(w *work) {
 	}
 	set(x.n, &b.Room, b.SurfaceK[last], b.Surroundings.InsideRadiantK)
 }
-
-// leastDropK is the difference of two faces below which the radiation that sheets let through is not
-// made a coefficient of it.
-const leastDropK = 1e-3
 
 // step solves for the step of all temperatures: the residuals of all faces over their slopes.
 func (x *exchange) step(w *work) {

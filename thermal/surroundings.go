@@ -51,7 +51,7 @@ type Exchange struct {
 	Rayleigh     float64 // 0 where a coefficient was given, and in a vacuum
 	Nusselt      float64 // likewise
 	Convective   float64 // W/(m²·K), of gas and pillars
-	Radiative    float64 // W/(m²·K); NaN where sheets that pass infrared leave it without meaning
+	Radiative    float64 // W/(m²·K); NaN where a sheet beside it passes infrared
 	ConvectedWM2 float64
 	RadiatedWM2  float64
 	Gas          Properties // at MeanK; zero where no gas enters
