@@ -202,7 +202,7 @@ func stressCaution(all []Rating, _ int) string {
 		return ""
 	}
 	edge := "the pane without sun"
-	if margin := all[0].Method.stress().FrameMarginK; margin > 0 {
+	if margin := all[0].Method.Stress().FrameMarginK; margin > 0 {
 		edge += fmt.Sprintf(" less %.6g K", margin)
 	}
 	return "Thermal stress, a screening: the sunlit middle against the shaded edge, which is taken as " + edge + ", is " + strings.Join(parts, "; ") +

@@ -6,6 +6,7 @@ package glazing
 import (
 	"math"
 	"slices"
+	"strings"
 
 	"panewright/thermal"
 )
@@ -48,7 +49,7 @@ func screenedBy(b Basis, conditions []Condition) []Condition {
 func (r *Ready) screen(x *Rating) error {
 	x.Stress = make([]Stress, len(r.Makeup.Panes))
 	x.hot.touchCondition, x.hot.sealCondition, x.clearNight.humidity = "", "", 0
-	options := r.Method.stress()
+	options := r.Method.Stress()
 	var b Balance
 	for i := range r.Method.screened {
 		if err := r.balance(&b, x, &r.Method.screened[i]); err != nil {
@@ -137,7 +138,7 @@ func (r *Rating) edgeFactor(u Value) Value {
 	case e.TemperatureFactor.Known:
 		return e.TemperatureFactor
 	case !e.PsiWMK.Known:
-		return unknown("the make-up has no edge: with a temperature factor or a ψ")
+		return unknown("neither a temperature factor nor a ψ of the edge was given")
 	case !u.Known:
 		return u
 	}
@@ -152,13 +153,18 @@ func (m *Method) Person() Person {
 	return AnyPerson()
 }
 
-// dark makes the accessor of a number of the state without sun, in which water condenses first.
-func dark(get func(r *Rating, b *Balance) float64) func(*Rating, *Balance, int) Value {
+// dark makes the accessor of a number of the state without sun, in which water condenses first; whyNot
+// says when it is none.
+func dark(get func(r *Rating, b *Balance) float64, whyNot ...string) func(*Rating, *Balance, int) Value {
 	return func(r *Rating, b *Balance, _ int) Value {
 		if b.Why != "" {
 			return unknown(b.Why)
 		}
-		return known(get(r, b)).finite()
+		v := get(r, b)
+		if math.IsNaN(v) {
+			return unknown(strings.Join(whyNot, "; "))
+		}
+		return known(v)
 	}
 }
 
@@ -311,7 +317,7 @@ func consequenceFigures() []BalanceFigure {
 			Of: dark(func(_ *Rating, b *Balance) float64 {
 				at := &b.Dark.Surroundings
 				return thermal.TemperatureFactor(b.roomSideK(), at.OutsideK, at.InsideK)
-			})},
+			}, "indoor and outdoor air have one temperature")},
 		{Figure: Figure{Key: "moisture.dew_point_c", Alias: "dew_point", Symbol: "θd", Unit: "°C", Places: 1, Clause: moisture, Meaning: "dew or frost point of the room's air"},
 			Of: func(_ *Rating, b *Balance, _ int) Value {
 				v := b.dewPoint()

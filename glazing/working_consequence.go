@@ -234,7 +234,7 @@ func (c *Chapter) sunOn(r *Rating, b *Balance, p Person) {
 // workStress writes out the screening of every pane for thermal stress.
 func workStress(r *Rating) Chapter {
 	c := Chapter{Title: "Thermal stress, a screening"}
-	options := r.Method.stress()
+	options := r.Method.Stress()
 	var told []string // conditions
 	for k := range r.Stress {
 		s := &r.Stress[k]
@@ -285,7 +285,7 @@ func workStress(r *Rating) Chapter {
 }
 
 // stress returns how thermal stress is screened.
-func (m *Method) stress() StressScreening {
+func (m *Method) Stress() StressScreening {
 	if m.Options.Stress != nil {
 		return *m.Options.Stress
 	}

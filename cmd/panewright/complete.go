@@ -443,11 +443,15 @@ func figureNamesAbout(c *cobra.Command, args []string, word string) (out []strin
 	if alone, _, at := strings.Cut(word, "@"); at || len(out) == 0 {
 		ids := conditionIDs(c, args)
 		for _, f := range glazing.BalanceFigures() {
-			if !strings.HasPrefix(f.Alias, alone) || at && f.Alias != alone {
+			name := f.Alias
+			switch { // before @ also a symbol or a key, with the number of a place
+			case at && !f.Named(alone), !at && !strings.HasPrefix(f.Alias, alone):
 				continue
+			case at:
+				name = alone
 			}
 			for _, id := range ids {
-				out = append(out, about(f.Alias+"@"+id, f.Meaning))
+				out = append(out, about(name+"@"+id, f.Meaning))
 			}
 		}
 	}

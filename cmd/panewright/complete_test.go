@@ -59,6 +59,7 @@ func TestBashCompletes(t *testing.T) {
 		{[]string{"rate", project, "--basis", "na", "--figures", "u,temperature", "@", "su"}, "@", []string{"summer"}},
 		{[]string{"rate", project, "--basis", "na", "--figures", "hottest_p"}, "", []string{"hottest_pane@winter", "hottest_pane@summer", "hottest_pane@january-night", "hottest_pane@july-afternoon"}},
 		{[]string{"rate", project, "--figures", "u", "@", "ja"}, "@", []string{"january-night"}},
+		{[]string{"rate", project, "--figures", "θ4", "@"}, "@", []string{"january-night", "july-afternoon"}},
 	} {
 		line := "panewright"
 		for i, w := range x.words {

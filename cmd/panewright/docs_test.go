@@ -6,6 +6,7 @@ package main
 import (
 	"bytes"
 	"errors"
+	"fmt"
 	"os"
 	"os/exec"
 	"path/filepath"
@@ -287,16 +288,27 @@ func TestFiguresTopicHasBalances(t *testing.T) {
 	}
 }
 
-// The conditions and limits that the topic conditions shows are read and rated, and its table has every
-// key that the schema has.
+// The conditions, the screening, the person and the limits that the topic conditions shows are read and
+// rated, with each edge, and its table has every key that the schema has.
 func TestConditionsProject(t *testing.T) {
 	_, text, _ := strings.Cut(conditionsAbout, "thermal stress.\n\n")
 	text, _, _ = strings.Cut(text, "\n\n")
-	_, limits, _ := strings.Cut(conditionsUse, "by its key:\n\n")
-	_, limits, _ = strings.Cut(limits, "  limits:")
-	limits, _, _ = strings.Cut(limits, "\n\n")
-	content := "project: x\nbasis: na\nmakeups:\n  - {id: A1, outside_to_inside: [{pane: soda-lime-6}]}\n" +
-		strings.ReplaceAll("\n"+text+"\n  limits:"+limits+"\n", "\n  ", "\n")
+	of := func(key string) string {
+		_, text, found := strings.Cut(conditionsUse, "\n  "+key+":")
+		if text, _, _ = strings.Cut(text, "\n\n"); !found {
+			t.Errorf("the topic shows no %s", key)
+		}
+		return "\n  " + key + ":" + text
+	}
+	edges := strings.Split(of("edge"), "\n")[1:]
+	content := "project: x\nbasis: na\nmakeups:\n  - {id: A1, outside_to_inside: [{pane: soda-lime-6}]}\n"
+	for i, edge := range edges {
+		content += fmt.Sprintf("  - {id: E%d, %s, outside_to_inside: [{pane: soda-lime-6}]}\n", i, strings.TrimSpace(edge))
+	}
+	content += strings.ReplaceAll("\n"+text+of("thermal_stress")+of("comfort")+of("limits")+"\n", "\n  ", "\n")
+	if len(edges) != 2 {
+		t.Errorf("the topic shows %d edges", len(edges))
+	}
 	path := filepath.Join(t.TempDir(), "x.yaml")
 	if err := os.WriteFile(path, []byte(content), 0o644); err != nil {
 		t.Fatal(err)

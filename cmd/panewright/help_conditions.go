@@ -24,7 +24,7 @@ follows for moisture, comfort and thermal stress.
       wind_m_s: 4
     - {id: july-noon, outside_c: 33, inside_c: 25, sun_w_m2: 650}
 
-  id                        its name
+  id                        its name, none of those built in but cold-sun
   outside_c, inside_c       temperatures of the air
   outside_radiant_c         what the outside face sees; the air's when absent
   sky_c                     temperature of the sky, of which a face that looks
@@ -45,19 +45,42 @@ Conditions that are built in:
 
 const conditionsUse = `
 Under na and iso15099 U is that of winter and g that of summer, which these
-bases bring; a project may not use those two names. cold-sun is screened for
-thermal stress beside the sunny conditions, and so is the summer of na under
-every basis; a condition of the project that is called cold-sun takes its place.
-Those of a project are rated under every basis.
+bases bring. The conditions of a project are rated under every basis.
 
-A figure under a condition is named with @, or by its key:
+THERMAL STRESS is screened, under every basis, for each condition with sun, for
+the summer of na, called summer-na under the other bases, and for cold-sun. If
+the project has a condition cold-sun, with sun, the screening uses that and not
+the built-in one. How it is screened:
+
+  thermal_stress: {frame_margin_k: 5, factor: 1}
+
+  frame_margin_k            by how much the shaded edge is colder than the pane
+                            without sun; 0 when absent; widens the difference
+  factor                    k of the stress k E α ΔT, 1 when absent; moves the
+                            stress only, not how it stands to the guide value
+
+MOISTURE at the edge of the glass needs the edge of a make-up, one of:
+
+  edge: {temperature_factor: 0.62}
+  edge: {psi_w_mk: 0.05}
+
+COMFORT is that of a person, of whom the project may say any of these:
+
+  comfort: {distance_m: 1, glass_width_m: 3, glass_height_m: 2.5,
+    posture: seated, sun_altitude_deg: 45, sun_from_front_deg: 0,
+    sky_share: 0.2, body_share: 0.5, absorptivity: 0.7, floor_reflectance: 0.6}
+
+Absent, they are as here, by common practice.
+
+FIGURES under a condition are named with @, or by their keys. Which there are
+says panewright help figures.
 
   panewright rate panewright-demo/project.yaml --basis na --figures u@winter
   panewright rate panewright-demo/project.yaml --basis na \
     --figures balances.winter.u_w_m2k,temperature@summer,fRsi@winter
 
 In JSON they are in balances, a list by condition, with what was put in. A limit
-names the condition by its key:
+names the condition beside the figure:
 
   limits:
     - {figure: inside_surface, at_least: 15, condition: january-night}

@@ -37,15 +37,19 @@ of the project and stay in it, unless --files-anywhere is given.
                   infrared rows of the spectrum
                   origin: measured (when absent), modelled, invented
                   heat_treatment: annealed, heat-strengthened, toughened
+                  tau_ir: transmittance in the thermal infrared, of films
   makeups         id, title, tilt_deg, and outside_to_inside: panes (turned:,
                   tint:) and gaps (gap_mm, gas: shares that add to 1)
                   typed: {NAME: TEXT}, carried to every output and marked as
                   typed by you
-                  edge: {temperature_factor: 0.6} or {psi_w_mk: 0.05}
+                  edge: {temperature_factor: 0.6} or {psi_w_mk: 0.05}, for
+                  moisture at the edge of the glass
                   a gap has vacuum: {pressure_pa: 0.1, pillar_pitch_mm: 20,
                   pillar_radius_mm: 0.25} instead of gas
   conditions      id, outside_c, inside_c; wind_m_s, sun_w_m2, inside_rh and
                   more, for heat balances: panewright help conditions
+  comfort         who feels the glazing, and thermal_stress, how that is
+                  screened: likewise
   limits          figure; at_most or at_least, in the unit of the figure; tint:
                   clear, full, each, worst or a name; scope, basis, condition,
                   makeups; source and date; panewright check holds figures

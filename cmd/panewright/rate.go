@@ -117,7 +117,8 @@ second table says what each make-up absorbs and gives inwards, and how warm it
 gets; see panewright help conditions.
 
 JSON, CSV and XLSX have every figure with all its digits. What is not known is
-null in JSON and an empty cell elsewhere; the cautions say why.
+null in JSON and an empty cell elsewhere; the cautions say why, and explain does
+of figures under conditions.
 
 CSV and XLSX have one row a rating. The first row has the keys of the figures,
 which are their paths in JSON, with panes, gaps and surfaces counted from 1.
@@ -127,7 +128,9 @@ XLSX also has the units, editions, cautions, and a chart of the spectra.
 --figures takes keys, such as solar.g or surfaces.3.emissivity, symbols as the
 tables print them, such as τv or ε3, and the short names below. A figure of
 panes, gaps or surfaces without a number stands for all of them; in JSON its
-list is always whole. After @ stands a condition: u@winter, θ4@winter.
+list is always whole. After @ stands a condition: u@winter, θ4@winter; for those
+figures see panewright help figures, for conditions panewright help conditions.
+The short names of figures of a rating:
 
 ` + figureNames(),
 		Example: `  panewright rate panewright-demo/project.yaml

@@ -21,7 +21,7 @@ import (
 )
 
 // version is printed by --version and on every output.
-const version = "0.1.0"
+const version = "0.2.0"
 
 // The exit codes.
 const (

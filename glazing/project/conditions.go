@@ -3,17 +3,21 @@ package project
 // What heat balances and what follows from their temperatures are made for: conditions, who feels
 // the glazing, how thermal stress is screened, edges.
 
-import "panewright/glazing"
+import (
+	"strings"
 
-// balancesOf says what of a project asks for detailed heat balances, "basis na asks", or returns "".
+	"panewright/glazing"
+)
+
+// balancesOf says what of a project asks for detailed heat balances, "basis na", or returns "".
 func balancesOf(bases []glazing.Basis, s *fileSpec) string {
 	for _, b := range bases {
 		if b.Balances() {
-			return "basis " + b.Name + " asks"
+			return "basis " + b.Name
 		}
 	}
 	if len(s.Conditions) > 0 {
-		return "the conditions ask"
+		return "conditions"
 	}
 	return ""
 }
@@ -24,8 +28,13 @@ func (b *builder) conditions(list []conditionSpec) []glazing.Condition {
 	ids := map[string]position{}
 	for _, c := range list {
 		b.unique(ids, c.ID, "id", "condition")
-		if c.ID.value == glazing.Winter || c.ID.value == glazing.Summer {
-			b.fail(c.ID.at, "id", "%s is a condition of the basis; choose another name", c.ID.value)
+		b.nameOfCondition(c.ID)
+		if c.ID.value == glazing.ColdSun && c.Sun.value == 0 && !c.Faulty {
+			at := c.ID.at
+			if c.Sun.given {
+				at = c.Sun.at
+			}
+			b.fail(at, "sun_w_m2", "%s stands in the place of the built-in condition of that name, a sunny one that thermal stress is screened for: give its sun, above 0, or choose another id", c.ID.value)
 		}
 		if c.Wind.given && c.OutsideConvection.given {
 			b.fail(c.OutsideConvection.at, "outside_convection_w_m2k", "stands beside wind_m_s; give one")
@@ -39,6 +48,25 @@ func (b *builder) conditions(list []conditionSpec) []glazing.Condition {
 		})
 	}
 	return out
+}
+
+// nameOfCondition refuses the ids of the conditions that are built in, and what could be taken for one.
+// A project may have a cold-sun of its own.
+func (b *builder) nameOfCondition(id text) {
+	const none = "none" // where conditions are named, as for drawings, it stands for no condition
+	for _, x := range []struct{ name, is string }{
+		{glazing.Winter, "a condition of the basis"}, {glazing.Summer, "a condition of the basis"},
+		{glazing.SummerNA, "a built-in condition, for thermal stress"}, {glazing.ColdSun, "a built-in condition, for thermal stress"},
+		{none, "the word for no condition"},
+	} {
+		switch {
+		case !strings.EqualFold(id.value, x.name) || id.value == glazing.ColdSun:
+		case id.value == x.name:
+			b.fail(id.at, "id", "%s is %s; choose another name", id.value, x.is)
+		default:
+			b.fail(id.at, "id", "%s could be taken for %s, %s; choose another name", id.value, x.name, x.is)
+		}
+	}
 }
 
 // person returns who feels the glazing; nil where the project does not say.
@@ -100,7 +128,7 @@ func (b *builder) balanced(s *makeupSpec, m *glazing.Makeup) bool {
 		gap++
 		for k := range gas {
 			if _, err := gas[k : k+1].Fluid(); err != nil {
-				b.fail(e.Gas[gas[k].Gas].name, "gas", "%v; %s for one. Name another gas, or take that out", err, b.balances)
+				b.fail(e.Gas[gas[k].Gas].name, "gas", "%v. Name another gas, or take out %s, for which balances are made", err, b.balances)
 				return false
 			}
 		}

@@ -237,7 +237,7 @@ func TestRefusesForBalances(t *testing.T) {
 		{"colder than any air", "outside_c: -12", "outside_c: " + mark + "-120", "outside_c", []string{"-120 is below -100"}},
 		{"kelvin", "inside_c: 20,", "inside_c: " + mark + "293.15,", "inside_c", []string{"293.15 is above 100; °C is meant, not K"}},
 		{"no outdoor air", "outside_c: 5, ", "", "outside_c", []string{"is missing in a condition", "outdoor air temperature"}},
-		{"no name", "id: bare, ", "", "id", []string{"is missing in a condition", "cold-sun replaces"}},
+		{"no name", "id: bare, ", "", "id", []string{"is missing in a condition", "cold-sun, with sun, stands in the place"}},
 		{"wind below 0", "wind_m_s: 4", "wind_m_s: " + mark + "-4", "wind_m_s", []string{"-4 is below 0"}},
 		{"wind in km/h", "wind_m_s: 4", "wind_m_s: " + mark + "120", "wind_m_s", []string{"120 is above 100; m/s is meant, not km/h"}},
 		{"humidity in per cent", "inside_rh: 0.45", "inside_rh: " + mark + "45", "inside_rh", []string{"45 is above 1; fractions of one, not percent"}},
@@ -246,8 +246,14 @@ func TestRefusesForBalances(t *testing.T) {
 		{"night without sun", "sun_w_m2: 300", "sun_w_m2: " + mark + "-1", "sun_w_m2", []string{"-1 is below 0"}},
 		{"wind beside convection", "wind_m_s: 0", "wind_m_s: 0, outside_convection_w_m2k: " + mark + "8", "outside_convection_w_m2k", []string{"stands beside wind_m_s; give one"}},
 		{"condition twice", "id: bare", "id: " + mark + "still", "id", []string{`"still" is the name of another condition, in line 37`}},
-		{"cold-sun twice", "id: bare, outside_c: 5, inside_c: 19}\n  - {id: cold-sun", "id: cold-sun, outside_c: 5, inside_c: 19}\n  - {id: " + mark + "cold-sun", "id", []string{`"cold-sun" is the name of another condition, in line 38`}},
+		{"cold-sun twice", "id: bare, outside_c: 5, inside_c: 19}\n  - {id: cold-sun", "id: cold-sun, outside_c: 5, inside_c: 19, sun_w_m2: 9}\n  - {id: " + mark + "cold-sun", "id", []string{`"cold-sun" is the name of another condition, in line 38`}},
 		{"condition of a basis", "id: bare", "id: " + mark + "summer", "id", []string{"summer is a condition of the basis; choose another name"}},
+		{"condition of a basis in capitals", "id: bare", "id: " + mark + "Winter", "id", []string{"Winter could be taken for winter, a condition of the basis; choose another name"}},
+		{"condition for stress", "id: bare", "id: " + mark + "summer-na", "id", []string{"summer-na is a built-in condition, for thermal stress; choose another name"}},
+		{"cold-sun in capitals", "id: bare", "id: " + mark + "Cold-Sun", "id", []string{"Cold-Sun could be taken for cold-sun"}},
+		{"no condition", "id: bare", "id: " + mark + "none", "id", []string{"none is the word for no condition; choose another name"}},
+		{"cold-sun without sun", "wind_m_s: 0, sun_w_m2: 600", "wind_m_s: 0, sun_w_m2: " + mark + "0", "sun_w_m2", []string{"cold-sun stands in the place of the built-in condition", "a sunny one", "give its sun"}},
+		{"cold-sun of no sun", "id: cold-sun, outside_c: -5, inside_c: 22, wind_m_s: 0, sun_w_m2: 600", "id: " + mark + "cold-sun, outside_c: -5, inside_c: 22, wind_m_s: 0", "sun_w_m2", []string{"cold-sun stands in the place of the built-in condition", "give its sun"}},
 		{"unknown key", "wind_m_s: 4", mark + "wind_ms: 4", "wind_ms", []string{"unknown key in a condition", "did you mean wind_m_s?"}},
 
 		{"pillars that touch", "pillar_radius_mm: 0.25, pillar_pitch_mm: 20", "pillar_radius_mm: 0.25, pillar_pitch_mm: " + mark + "0.5", "pillar_pitch_mm", []string{"0.5 is not above 0.5, the width of a pillar"}},
@@ -312,7 +318,10 @@ func TestLimitsOfBalanceFigures(t *testing.T) {
 	}{
 		{"figure: " + mark + "inside_surface, at_least: 15", "figure", []string{`unknown figure "inside_surface"; it is one under a condition; name that with condition`}},
 		{"figure: " + mark + "inside_surface@winter, at_least: 15", "figure", []string{"write figure: inside_surface and condition: winter"}},
+		{"figure: " + mark + "light@winter, at_least: 0.5", "figure", []string{"light is not one of the figures under a condition; write figure: light"}},
+		{"figure: " + mark + "u@, at_most: 1", "figure", []string{"write figure: u, and under condition: its id"}},
 		{"figure: " + mark + "inside_sruface, at_least: 15, condition: winter", "figure", []string{"did you mean inside_surface?"}},
+		{"figure: " + mark + "hottest_pane, at_most: 2, condition: winter", "figure", []string{"hottest_pane is no figure that a limit can be set for"}},
 		{"figure: condensing_rh, at_least: " + mark + "45, condition: winter", "at_least", []string{"45 is above 1; φsi is a fraction of one, not percent"}},
 		{"figure: temperature_factor, at_least: " + mark + "70, condition: winter", "at_least", []string{"70 is above 1", "not percent"}},
 		{"figure: dew_point, at_most: " + mark + "-273.15, condition: winter", "at_most", []string{"-273.15 is not above -273.15 °C, absolute zero"}},
@@ -334,14 +343,14 @@ func TestSF6InBalances(t *testing.T) {
 	const night = "\nconditions: [{id: night, outside_c: 0, inside_c: 20}]"
 	for keys, asks := range map[string]string{
 		"basis: en": "", "basis: iso": "", "basis: [en, iso]": "",
-		"basis: na": "basis na asks", "basis: [en, iso15099]": "basis iso15099 asks", "basis: en" + night: "the conditions ask",
+		"basis: na": "basis na", "basis: [en, iso15099]": "basis iso15099", "basis: en" + night: "conditions",
 	} {
 		text, at := marked(strings.Replace(heavy, "basis: en", keys, 1))
 		if asks == "" {
 			accept(t, text, hallFiles())
 			continue
 		}
-		checkOne(t, faultsOf(text, memory(hallFiles())), at, "gas", []string{"sf6: ISO 15099 gives no properties of this gas", asks + " for one", "another gas"})
+		checkOne(t, faultsOf(text, memory(hallFiles())), at, "gas", []string{"sf6: ISO 15099 gives no properties of this gas", "Name another gas, or take out " + asks + ", for which balances are made"})
 	}
 	// A share of nothing is no gas.
 	accept(t, strings.Replace(strings.Replace(hall, filling, "gas: {air: 1, sf6: 0}", 1), "basis: en", "basis: na", 1), hallFiles())

@@ -188,7 +188,7 @@ type edgeSpec struct {
 type conditionSpec struct {
 	_ struct{} `called:"a condition"`
 	object
-	ID                text   `key:"id" need:"yes" id:"yes" doc:"name of the condition; winter and summer are those of a basis; one called cold-sun replaces the built-in cold sunny one"`
+	ID                text   `key:"id" need:"yes" id:"yes" doc:"name of the condition; winter and summer are those of a basis; one called cold-sun, with sun, stands in the place of the built-in condition of that name, for which thermal stress is screened"`
 	Outside           number `key:"outside_c" need:"yes" above:"-273.15" from:"-100" upto:"100" high:"°C is meant, not K" doc:"outdoor air temperature"`
 	OutsideRadiant    number `key:"outside_radiant_c" above:"-273.15" from:"-200" upto:"200" high:"°C is meant, not K" doc:"outdoor radiant temperature; the air's when absent"`
 	Sky               number `key:"sky_c" above:"-273.15" from:"-200" upto:"200" high:"°C is meant, not K" doc:"radiant temperature of the sky; the outdoor radiant temperature when absent"`
@@ -221,8 +221,8 @@ type comfortSpec struct {
 type stressSpec struct {
 	_ struct{} `called:"thermal stress"`
 	object
-	FrameMargin number `key:"frame_margin_k" from:"0" upto:"100" doc:"how much colder than its pane without sun the edge is, 0 when absent"`
-	Factor      number `key:"factor" above:"0" from:"0.1" upto:"10" doc:"k of the stress k E α ΔT, 1 when absent"`
+	FrameMargin number `key:"frame_margin_k" from:"0" upto:"100" doc:"how much colder than its pane without sun the edge is, 0 when absent; widens the difference that is held against the guide value, and the stress with it"`
+	Factor      number `key:"factor" above:"0" from:"0.1" upto:"10" doc:"k of the stress σ = k E α ΔT, 1 when absent; moves σ only, neither the difference nor how it stands to the guide value"`
 }
 
 type limitSpec struct {

@@ -138,7 +138,7 @@ func (r *reader) limit(s *limitSpec, known *ids) (glazing.Limit, bool) {
 		var ok bool
 		if l.Figure, l.Place, ok = figureNamed(s.Figure.value, s.Condition.value); !ok {
 			r.fail(s.Figure.at, "figure", "unknown figure %q; %s", clip(s.Figure.value), offerFigure(s.Figure.value, s.Condition.given))
-		} else if !l.Figure.Limitable() {
+		} else if !l.Figure.Limitable() || l.Figure.Numbering {
 			r.fail(s.Figure.at, "figure", "%s is no figure that a limit can be set for", clip(s.Figure.value))
 		}
 	}
@@ -219,9 +219,15 @@ func figureNamed(name, condition string) (f glazing.Figure, place int, ok bool) 
 // offers the nearest names, keys with the number that the name has.
 func offerFigure(name string, balances bool) string {
 	figure, id, at := strings.Cut(name, "@")
-	if _, _, ok := figureNamed(figure, glazing.Winter); ok && at {
+	under := slices.ContainsFunc(glazing.BalanceFigures(), func(f glazing.BalanceFigure) bool { return f.Named(figure) })
+	switch _, _, ok := figureNamed(figure, glazing.Winter); {
+	case ok && at && !under:
+		return figure + " is not one of the figures under a condition; write figure: " + figure
+	case ok && at && id == "":
+		return "write figure: " + figure + ", and under condition: its id"
+	case ok && at:
 		return "write figure: " + figure + " and condition: " + clip(id)
-	} else if ok && !balances {
+	case ok && !balances:
 		return "it is one under a condition; name that with condition"
 	}
 	place := 1
@@ -238,7 +244,9 @@ func offerFigure(name string, balances bool) string {
 	}
 	if balances {
 		for _, f := range glazing.BalanceFigures() {
-			aliases = append(aliases, f.Alias)
+			if !f.Numbering {
+				aliases = append(aliases, f.Alias)
+			}
 		}
 	}
 	if all := append(keys, aliases...); len(Nearest(name, all)) > 0 {

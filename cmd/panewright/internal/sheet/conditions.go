@@ -51,7 +51,9 @@ func (p *paper) underConditions(ratings []*glazing.Rating) (pieces []piece) {
 		stress()
 	}
 	title := "Moisture and comfort"
-	for part := range slices.Chunk(ids, consequenceConditions) {
+	parts := (len(ids) + consequenceConditions - 1) / consequenceConditions
+	for k := range parts { // about as many conditions in each
+		part := ids[k*len(ids)/parts : (k+1)*len(ids)/parts]
 		if add(title, func(w float64) *grid { return p.consequenceTable(ratings, part, w) }) {
 			title = "Moisture and comfort, further conditions"
 		}
@@ -61,26 +63,10 @@ func (p *paper) underConditions(ratings []*glazing.Rating) (pieces []piece) {
 
 const conditionsTitle = "Conditions"
 
-// conditionsSaid returns the conditions of ratings in words, and those in which any of their panes was
-// screened for thermal stress.
-func (p *paper) conditionsSaid(ratings []*glazing.Rating) (said []string) {
-	r := p.of(ratings)
-	said = r.ConditionsListed()
-	for _, rating := range ratings {
-		for _, s := range rating.Stress {
-			if s.Condition == "" || slices.ContainsFunc(said, func(line string) bool {
-				return strings.HasPrefix(line, s.Condition+":") || strings.HasPrefix(line, s.Condition+",")
-			}) {
-				continue
-			}
-			for _, c := range rating.Method.Screened() {
-				if c.ID == s.Condition {
-					said = append(said, c.ID+", screened for thermal stress: "+r.ConditionText(&c))
-				}
-			}
-		}
-	}
-	return withMinus(said)
+// conditionsSaid returns the conditions of ratings in words, and those for which their thermal stress was
+// screened.
+func (p *paper) conditionsSaid(ratings []*glazing.Rating) []string {
+	return withMinus(p.of(ratings).ConditionsListed())
 }
 
 // withMinus writes the numbers in sentences with a true minus.
@@ -229,19 +215,31 @@ func (p *paper) balanceTable(ratings []*glazing.Rating, ids []string, w float64)
 		g.named(rows, len(ratings) > 1)
 	}
 	var said []string
-	for _, f := range p.unsaid() {
-		said = append(said, f.Symbol+" "+f.Meaning)
+	for _, f := range table.BalanceColumns() {
+		s := f.Symbol + " " + f.Meaning
+		if f.Alias == "total_absorptance" {
+			s += ", among the figures at normal incidence that of each"
+		}
+		said = append(said, s)
 	}
-	g.note = strings.Join(said, "; ") + "."
+	g.say(p, strings.Join(said, "; ")+".", p.blanks(ratings))
 	return g
 }
 
-// unsaid returns the columns of the schedule of conditions whose symbols no figure of a rating has.
-func (p *paper) unsaid() []glazing.BalanceFigure {
-	return slices.DeleteFunc(table.BalanceColumns(), func(f glazing.BalanceFigure) bool {
-		return slices.ContainsFunc(p.r.Figures, func(o glazing.Figure) bool { return o.Symbol == f.Symbol && o.Condition == "" })
-	})
+// blanks says why figures are not known in the schedule of conditions of ratings.
+func (p *paper) blanks(ratings []*glazing.Rating) string {
+	r := p.of(ratings)
+	s := r.NotKnown(r.UnderConditions(table.BalanceColumns()), nil)
+	if slices.ContainsFunc(ratings, func(x *glazing.Rating) bool {
+		return slices.ContainsFunc(x.Balances, func(b glazing.Balance) bool { return b.Condition.SunWM2 == 0 })
+	}) {
+		s = strings.TrimSpace(noSun + " " + s)
+	}
+	return s
 }
+
+// noSun says why some figures have no number without sun.
+const noSun = "Without sun g, αe and qi have no meaning."
 
 // balanceSchedule lists the balances of all make-ups under a basis, condition by condition; nil where
 // there are none.
@@ -293,6 +291,7 @@ func (p *paper) balanceSchedule(ratings []*glazing.Rating) *grid {
 		g.rows = append(g.rows, append(cells, row.figures...))
 		g.leads = append(g.leads, []string{row.condition, row.rating.Makeup.ID})
 	}
+	g.say(p, p.blanks(ratings))
 	return g
 }
 

@@ -73,13 +73,14 @@ func (p *paper) stressTable(ratings []*glazing.Rating, w float64) *grid {
 	if g.cols = fitColumns(cols, g.rows, w); g.cols == nil {
 		return nil
 	}
-	g.note = drop.Symbol + " is by how much the sunlit middle is warmer than the shaded edge in the worst condition, " +
-		guide.Symbol + " the guide value for the heat treatment; discuss what is near or above it with a licensed engineer."
+	said := []string{drop.Symbol + " is by how much the sunlit middle is warmer than the shaded edge in the worst condition, " +
+		guide.Symbol + " the guide value for the heat treatment; discuss what is near or above it with a licensed engineer.", p.r.ScreeningSaid()}
 	if len(ratings[0].Balances) == 0 { // else conditions have their own place
 		for _, s := range p.conditionsSaid(ratings) {
-			g.note += " " + s + "."
+			said = append(said, s+".")
 		}
 	}
+	g.say(p, said...)
 	return g
 }
 
@@ -114,7 +115,9 @@ func fitColumns(cols []col, rows [][]string, w float64) []col {
 
 // consequenceConditions is how many conditions stand beside each other in a table of moisture and
 // comfort.
-const consequenceConditions = 6
+const consequenceConditions = 5
+
+const comfortKeys = "comfort."
 
 // consequenceTable lists what is known of moisture and comfort, a column a condition: where tints
 // differ, from the lightest to the darkest.
@@ -137,8 +140,9 @@ func (p *paper) consequenceTable(ratings []*glazing.Rating, ids []string, w floa
 		g.cols = append(g.cols, col{w: clauseW, t: clause, head: "defined in"})
 	}
 	g.cols[1].w = room
+	var shown []glazing.BalanceFigure
 	for _, f := range glazing.BalanceFigures() {
-		if !strings.HasPrefix(f.Key, "moisture.") && !strings.HasPrefix(f.Key, "comfort.") {
+		if !strings.HasPrefix(f.Key, "moisture.") && !strings.HasPrefix(f.Key, comfortKeys) {
 			continue
 		}
 		row := []string{draw.Symbol(f.Symbol), p.worded(f.Meaning)}
@@ -161,14 +165,69 @@ func (p *paper) consequenceTable(ratings []*glazing.Rating, ids []string, w floa
 			row = append(row, f.Clause)
 		}
 		if any {
-			g.rows = append(g.rows, row)
+			g.rows, shown = append(g.rows, row), append(shown, f)
 		}
 	}
 	if len(g.rows) == 0 {
 		return nil
 	}
+	all := p.conditionsOf(ratings)
+	said := make([]string, 4)
 	if lightest != darkest {
-		g.note = "From the lightest tint, " + lightest.Tint + ", to the darkest, " + darkest.Tint + ", where they differ."
+		said[0] = "From the lightest tint, " + lightest.Tint + ", to the darkest, " + darkest.Tint + ", where they differ."
 	}
+	for i, f := range shown {
+		if f.Above1 != "" && slices.ContainsFunc(g.rows[i], func(cell string) bool { return strings.Contains(cell, f.Above1) }) {
+			said[1] = table.Above1(f.Figure) + "."
+		}
+		if strings.HasPrefix(f.Key, comfortKeys) && ids[len(ids)-1] == all[len(all)-1] { // once
+			said[3] = p.of(ratings).PersonSaid()
+		}
+	}
+	r := p.of(ratings)
+	here := slices.DeleteFunc(r.UnderConditions(shown), func(c table.Choice) bool { return !slices.Contains(ids, c.Condition) })
+	said[2] = r.NotKnown(here, nil)
+	g.say(p, said...)
+	return g
+}
+
+// titled is a table that pages of text have too. Columns of names that hold nothing are left out, and a
+// name in the first that is that of the row above.
+func (p *paper) titled(t table.Titled) *grid {
+	g := &grid{height: 4.2}
+	var cols []col
+	var kept []int
+	for k, head := range t.Head {
+		if k < t.Names && !slices.ContainsFunc(t.Rows, func(row []string) bool { return row[k] != "" }) {
+			continue
+		}
+		c := col{t: textType, head: head}
+		switch {
+		case k >= t.Names:
+			c.align, c.head, c.symbol = draw.Right, draw.Symbol(head), true
+		case k == 0:
+			c.t = strongType
+		}
+		kept, cols = append(kept, k), append(cols, c)
+	}
+	for i, from := range t.Rows {
+		row := make([]string, len(kept))
+		for j, k := range kept {
+			if row[j] = from[k]; k >= t.Names {
+				row[j] = trueMinus(from[k])
+			}
+		}
+		if g.leads = append(g.leads, []string{row[0]}); i > 0 && t.Rows[i-1][0] == row[0] {
+			row[0] = ""
+		}
+		g.rows = append(g.rows, row)
+	}
+	if g.cols = fitColumns(cols, g.rows, width); g.cols == nil {
+		for k := range cols {
+			cols[k].w = width / float64(len(cols))
+		}
+		g.cols = cols
+	}
+	g.say(p, t.About, t.Note)
 	return g
 }

@@ -104,7 +104,7 @@ func (p *paper) figureTable(ratings []*glazing.Rating, first int, numbered bool,
 				g.types[[2]int{len(g.rows), len(row)}] = clause
 			}
 			unsaid = unsaid || slices.Contains(row, unknown)
-			g.rows = append(g.rows, append(row, clauseOf(f.Clause, ratings[0].Method.Basis)))
+			g.rows = append(g.rows, append(row, clauseOf(f.ClauseUnder(ratings[0].Method.Basis), ratings[0].Method.Basis)))
 		}
 	}
 	if unsaid {

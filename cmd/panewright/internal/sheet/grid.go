@@ -32,6 +32,7 @@ type grid struct {
 	leads  [][]string           // what stands in the first cells of a row that begins a page, where they are blank
 	bare   bool                 // without heads
 	note   string               // what is said below
+	marked bool                 // the note is markup
 
 	set []gridRow // as they are set
 }
@@ -178,10 +179,29 @@ func (g *grid) tall() float64 {
 	return sum
 }
 
+// noteType is the type of what is said below the table.
+func (g *grid) noteType() draw.Type {
+	t := noteType
+	t.Markup = g.marked
+	return t
+}
+
+// say adds what is said below the table, in which symbols of figures are set as such.
+func (g *grid) say(p *paper, sentences ...string) {
+	var said []string
+	for _, s := range sentences {
+		if s != "" {
+			said = append(said, p.worded(s))
+		}
+	}
+	g.note, g.marked = strings.Join(said, " "), true
+}
+
 // block returns the table under a title.
 func (g *grid) block(p *paper, x float64, title string) block {
 	w := g.width()
-	lines := draw.Wrap(g.note, w, noteType)
+	t := g.noteType()
+	lines := draw.Wrap(g.note, w, t)
 	b := block{tall: headTall + g.tall() + float64(len(lines))*noteType.Leading()}
 	if len(lines) > 0 {
 		b.tall += 1
@@ -194,7 +214,7 @@ func (g *grid) block(p *paper, x float64, title string) block {
 		for i := range g.rows {
 			y = g.draw(p.c, x, y, g.row(i), false)
 		}
-		p.c.Lines(x, y+1+noteType.CapHeight()+0.4, lines, noteType)
+		p.c.Lines(x, y+1+noteType.CapHeight()+0.4, lines, t)
 	}
 	return b
 }
@@ -218,7 +238,7 @@ func (p *paper) table(title string, g *grid) {
 		}
 	}
 	begin()
-	note := draw.Wrap(g.note, width, noteType)
+	note := draw.Wrap(g.note, width, g.noteType())
 	noteTall := 1 + float64(len(note))*noteType.Leading()
 	for i := range g.rows {
 		r := g.row(i)
@@ -253,7 +273,7 @@ func (p *paper) table(title string, g *grid) {
 	}
 	if len(note) > 0 {
 		p.room(noteTall)
-		p.c.Lines(left, p.y+1+noteType.CapHeight()+0.4, note, noteType)
+		p.c.Lines(left, p.y+1+noteType.CapHeight()+0.4, note, g.noteType())
 		p.y += noteTall
 	}
 	p.y += apart

@@ -4,7 +4,6 @@ package sheet
 // them.
 
 import (
-	"slices"
 	"strings"
 
 	"panewright/cmd/panewright/internal/draw"
@@ -161,16 +160,41 @@ func fitted(s string, w float64, t draw.Type, least float64) draw.Type {
 	return t
 }
 
-// worded returns the meaning of a figure as markup: in words that are symbols, indices stand below
-// the line.
+// worded returns a sentence as markup: in words that are symbols of figures, indices stand below the
+// line.
 func (p *paper) worded(s string) string {
 	words := strings.Split(s, " ")
 	for i, w := range words {
-		if slices.ContainsFunc(p.r.Figures, func(f glazing.Figure) bool { return f.Symbol == w && f.Condition == "" }) {
-			words[i] = draw.Symbol(w)
+		word := strings.TrimRight(w, ",;:.")
+		symbol, _, _ := strings.Cut(word, "@")
+		if p.isSymbol(strings.TrimRight(symbol, "0123456789")) {
+			words[i] = symbolAt(word) + w[len(word):]
 		} else {
 			words[i] = draw.Escape(w)
 		}
 	}
 	return strings.Join(words, " ")
+}
+
+// isSymbol reports whether a word is the symbol of a figure.
+func (p *paper) isSymbol(w string) bool {
+	if p.symbols == nil {
+		p.symbols = map[string]bool{}
+		for _, f := range p.r.Figures {
+			p.symbols[f.Symbol] = true
+		}
+		for _, f := range glazing.BalanceFigures() {
+			p.symbols[f.Symbol] = true
+		}
+	}
+	return w != "" && p.symbols[w]
+}
+
+// symbolAt writes the head of a figure as markup: its symbol, and the condition after @ as it is.
+func symbolAt(head string) string {
+	symbol, id, at := strings.Cut(head, "@")
+	if !at {
+		return draw.Symbol(symbol)
+	}
+	return draw.Symbol(symbol) + draw.Escape("@"+id)
 }

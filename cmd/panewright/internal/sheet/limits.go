@@ -30,26 +30,28 @@ func (p *paper) limits(c table.Check) {
 	p.columns(list{title: "Too close to call, or not judged", items: c.Reasons()})
 	p.columns(list{title: "On the limits", items: c.Remarked()})
 	var bases []string
-	var figures []table.Choice
+	var figures []table.Choice // whatever their place and condition
 	for i := range c.Ratings {
 		m := c.Ratings[i].Method
 		bases = add(bases, m.Basis.Name+": "+m.Editions()+".")
 	}
 	for i := range c.Results {
-		x := table.Choice{Figure: c.Results[i].Limit.Figure, Index: c.Results[i].Index}
-		if !slices.ContainsFunc(figures, func(o table.Choice) bool { return o.Path() == x.Path() }) {
+		x := table.Choice{Figure: c.Results[i].Judged}
+		x.Per, x.Condition = glazing.PerMakeup, ""
+		if !slices.ContainsFunc(figures, func(o table.Choice) bool { return o.Head() == x.Head() && o.Meaning == x.Meaning }) {
 			figures = append(figures, x)
 		}
 	}
 	p.columns(list{title: "Bases", items: bases})
-	p.key(figures)
+	p.columns(list{title: conditionsTitle, items: withMinus(c.ConditionsUsed())})
+	p.key("Symbols", "not known; the reasons stand above", figures)
 	p.inFull()
 }
 
 // limitsTable has a row a result. What does not meet its limit is in semibold, and has the accent.
 func limitsTable(c table.Check) *grid {
 	const number, value, entered, margin, result = 11.0, 15.0, 19.0, 18.0, 40.0
-	const figureMost = 34.0
+	const figureLeast = 34.0 // of one under a condition of a long name
 	g := &grid{height: 4.4, strong: map[int]bool{}, types: map[[2]int]draw.Type{}}
 	figure, idW, tintW := 13.0, 14.0, 0.0
 	for i := range c.Results {
@@ -57,9 +59,12 @@ func limitsTable(c table.Check) *grid {
 		idW = max(idW, draw.Width(x.Makeup.ID, strongType)+gridGap+2)
 		tintW = max(tintW, draw.Width(x.Tint, textType)+gridGap+2)
 	}
+	symbol := symbolType
+	symbol.Face = draw.Semibold // as of rows that do not meet
 	for _, cells := range c.Rows() {
-		figure = min(figureMost, max(figure, draw.Width(draw.Symbol(cells[1]), symbolType)+gridGap))
+		figure = max(figure, draw.Width(symbolAt(cells[1]), symbol)+gridGap+0.2)
 	}
+	figure = min(figure, max(figureLeast, width-number-value-entered-margin-result-idW-tintW))
 	rest := width - number - figure - value - entered - margin - result
 	tintW = min(tintW, rest/2)
 	idW = min(idW, rest-tintW)
@@ -84,7 +89,11 @@ func limitsTable(c table.Check) *grid {
 		for k := range cells {
 			cells[k] = strings.Replace(oneLine(cells[k]), "-", minusIn(k+1), 1)
 		}
-		row := []string{x.Makeup.ID, cells[2], cells[0], draw.Symbol(cells[1]), cells[4], cells[3], cells[5], cells[6]}
+		name := symbolAt(cells[1])
+		if s, id, under := strings.Cut(cells[1], "@"); under && draw.Width(name, symbol) > figure-gridGap {
+			name = draw.Symbol(s) + "\n@" + id
+		}
+		row := []string{x.Makeup.ID, cells[2], cells[0], name, cells[4], cells[3], cells[5], cells[6]}
 		g.leads = append(g.leads, []string{row[0]})
 		if x.Makeup == last {
 			row[0] = ""

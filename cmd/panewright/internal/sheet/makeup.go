@@ -29,6 +29,9 @@ func (p *paper) makeup(ratings []*glazing.Rating, last bool) {
 	for _, x := range rest {
 		x.across()
 	}
+	if last { // where no schedule says it
+		p.columns(list{title: differTitle, items: p.differ()})
+	}
 	if last && p.r.Project.Notes != "" {
 		p.columns(list{title: "Notes of the project", items: []string{p.r.Project.Notes}})
 	}

@@ -26,14 +26,20 @@ func (p *paper) schedule() {
 		}
 	}
 	p.columns(list{title: differTitle, items: p.differ()})
-	columns := slices.Clone(p.r.Columns())
+	p.key("Symbols", "not known; a caution says why", p.r.Columns())
 	if under {
-		for _, f := range p.unsaid() {
+		var columns []table.Choice
+		for _, f := range table.BalanceColumns() {
 			columns = append(columns, table.Choice{Figure: f.Figure})
 		}
+		p.key(table.UnderSymbolsTitle, "not known, or of no meaning without sun; else the table or a caution says why", columns)
 	}
-	p.key(columns)
 	p.table("Make-ups, from outside to inside", p.sequences())
+	for _, t := range []table.Titled{p.r.StressTable(), p.r.MoistureTable()} {
+		if len(t.Rows) > 0 {
+			p.table(t.Title, p.titled(t))
+		}
+	}
 	p.columns(list{title: conditionsTitle, items: withMinus(p.r.ConditionsListed())})
 	if s := p.r.SpectraBy(); s != "" {
 		p.columns(list{title: "Spectra", items: strings.Split(s, "; ")})
@@ -136,10 +142,10 @@ func short(s string) string {
 // oneLine keeps a text of the user's from being taken for one with a remark.
 func oneLine(s string) string { return strings.ReplaceAll(s, "\n", " ") }
 
-// key says what the symbols of figures mean.
-func (p *paper) key(choices []table.Choice) {
+// key says under a title what the symbols of figures mean, and what a dash does.
+func (p *paper) key(title, dash string, choices []table.Choice) {
 	const columns, symbolW = 3, 9.0
-	choices = append(slices.Clip(choices), table.Choice{Figure: glazing.Figure{Symbol: unknown, Meaning: "not known; a caution says why"}})
+	choices = append(slices.Clip(choices), table.Choice{Figure: glazing.Figure{Symbol: unknown, Meaning: dash}})
 	t := listType
 	t.Markup = true
 	w := (width+gutter)/columns - gutter
@@ -149,7 +155,7 @@ func (p *paper) key(choices []table.Choice) {
 		if c.Unit != "" {
 			s += ", " + c.Unit
 		}
-		symbol, said := []string{draw.Symbol(c.Head())}, draw.Wrap(s, w-symbolW, t)
+		symbol, said := []string{symbolAt(c.Head())}, draw.Wrap(s, w-symbolW, t)
 		if draw.Width(symbol[0], t) > symbolW-1 {
 			symbol = draw.Wrap(symbol[0], w, t)
 			said = append(make([]string, len(symbol)), said...)
@@ -168,7 +174,7 @@ func (p *paper) key(choices []table.Choice) {
 		h += tallOf(row)
 	}
 	p.room(h)
-	y := heading(p.c, left, p.y, width, "Symbols")
+	y := heading(p.c, left, p.y, width, title)
 	for row := range rows {
 		base := y + t.CapHeight() + 0.6
 		for i := row; i < len(cells); i += rows {

@@ -60,6 +60,8 @@ type paper struct {
 
 	cut  []fact          // what was too long for its place and is to stand in full
 	full map[string]bool // texts that stand in full
+
+	symbols map[string]bool // of figures, once they were asked for
 }
 
 // foot sets the foot of every page, once all are there.

@@ -17,7 +17,6 @@ func (p *paper) told(ratings []*glazing.Rating) (all []piece) {
 	for _, l := range []list{
 		{title: "Sources", items: sources(ratings)},
 		{title: "Typed by the user, not computed", items: typed(ratings)},
-		{title: differTitle, items: p.differ()},
 		{title: "Cautions", items: slices.Clip(r.CautionsOnce()), mark: "·"},
 	} {
 		if l.items != nil {

@@ -85,12 +85,27 @@ func (c Check) judged() (list []Choice) {
 	return list
 }
 
-// conditionsUsed returns in words the conditions that limits are for.
-func (c Check) conditionsUsed() (lines []string) {
+// ConditionsUsed returns in words the conditions that limits are for, those for which thermal stress was
+// screened among them where a limit is for that, and then how it was screened.
+func (c Check) ConditionsUsed() (lines []string) {
+	stress := false
 	for _, x := range c.conditions() {
-		if !x.screened && slices.ContainsFunc(c.Results, func(r limits.Result) bool { return r.Judged.Condition == x.ID }) {
+		if slices.ContainsFunc(c.Results, func(r limits.Result) bool {
+			if r.Rating == nil {
+				return false
+			}
+			if ofStress(r.Judged) {
+				stress = true
+				return slices.Contains(r.Rating.Method.Screened(), x.Condition)
+			}
+			b := r.Rating.Balance(r.Judged.Condition)
+			return b != nil && *b.Condition == x.Condition
+		}) {
 			lines = append(lines, c.conditionLine(x))
 		}
+	}
+	if s := c.ScreeningSaid(); stress && s != "" {
+		lines = append(lines, s)
 	}
 	return lines
 }
@@ -342,7 +357,7 @@ func CheckText(c Check) []byte {
 		writeWrapped(&b, "Basis "+x.basis+": "+x.editions, "  ")
 	}
 	c.basesDiffer(&b)
-	for i, s := range c.conditionsUsed() {
+	for i, s := range c.ConditionsUsed() {
 		if i == 0 {
 			b.WriteString("\n" + conditionsTitle + "\n")
 		}
@@ -382,7 +397,7 @@ func CheckMarkdown(c Check) []byte {
 		fmt.Fprintf(&b, "\n## Basis %s\n\n%s\n", escaped(x.basis), escaped(x.editions))
 	}
 	c.markdownDiffer(&b)
-	markdownList(&b, conditionsTitle, c.conditionsUsed())
+	markdownList(&b, conditionsTitle, c.ConditionsUsed())
 	if list := c.judged(); len(list) > 0 {
 		markdownList(&b, "Symbols", legend(list, nil))
 	}

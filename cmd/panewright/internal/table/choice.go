@@ -31,8 +31,11 @@ func (c Choice) Path() string { return strings.ReplaceAll(c.Key, "#", strconv.It
 // Head returns the symbol, with the number of the pane, gap or surface.
 func (c Choice) Head() string {
 	head := c.Symbol + c.Mark
-	if head == "" {
-		head = c.Key[strings.LastIndex(c.Key, ".")+1:]
+	if head == "" { // a fact
+		head = strings.ReplaceAll(c.Key[strings.LastIndex(c.Key, ".")+1:], "_", " ")
+		if c.Per != glazing.PerMakeup {
+			head += " "
+		}
 	}
 	if c.Per != glazing.PerMakeup {
 		head += strconv.Itoa(c.Index + 1)
@@ -151,7 +154,7 @@ func (r Report) inSheets() []Choice {
 	if r.Choices != nil {
 		return r.Choices
 	}
-	return slices.DeleteFunc(r.everything(), func(c Choice) bool { return c.Numbering })
+	return slices.DeleteFunc(r.everything(), func(c Choice) bool { return c.Numbering && c.Per != glazing.PerMakeup })
 }
 
 // Columns returns what the schedule shows: the chosen figures, or those that have a column, in
@@ -261,14 +264,24 @@ var tradeWords = map[string]string{
 func (r Report) offerFigure(name string, list []glazing.Figure) string {
 	ids := glazing.ConditionIDs(r.Ratings)
 	alone, id, at := strings.Cut(name, "@")
-	if !slices.Contains(ids, id) && slices.ContainsFunc(glazing.BalanceFigures(), func(f glazing.BalanceFigure) bool { return f.Named(alone) }) {
-		switch {
-		case len(ids) == 0:
-			return " (the ratings have no condition)"
-		case at:
-			return fmt.Sprintf(" (no condition is called %s; there are %s)", spectra.Clip(id, longestName), spectra.Clip(strings.Join(ids, ", "), 4*longestName))
-		}
+	there := spectra.Clip(strings.Join(ids, ", "), 4*longestName)
+	screened := func(x glazing.Rating) bool {
+		return slices.ContainsFunc(x.Method.Screened(), func(c glazing.Condition) bool { return c.ID == id })
+	}
+	switch under := slices.ContainsFunc(glazing.BalanceFigures(), func(f glazing.BalanceFigure) bool { return f.Named(alone) }); {
+	case under && at && slices.Contains(ids, id): // it has a number that no make-up has, or is meant otherwise
+	case under && slices.ContainsFunc(r.Ratings, screened):
+		return " (" + id + " is screened for thermal stress alone; a condition of the project has every figure)"
+	case under && len(ids) == 0:
+		return " (the ratings have no condition)"
+	case under && at && id == "":
+		return " (after @ stands a condition: " + there + ")"
+	case under && at:
+		return fmt.Sprintf(" (no condition is called %s; there are %s)", spectra.Clip(id, longestName), there)
+	case under:
 		return " (it is one under a condition: write " + alone + "@" + ids[0] + ")"
+	case at && slices.ContainsFunc(r.Figures, func(f glazing.Figure) bool { return f.Named(alone) }):
+		return " (" + alone + " is not one of the figures under a condition: write " + alone + ")"
 	}
 	near := []string{tradeWords[strings.ToLower(name)]}
 	switch {

@@ -145,6 +145,9 @@ func Compare(r Report) []byte {
 		b.WriteByte('\n')
 		writeWrapped(&b, "Condition "+id, "  ")
 		r.comparedTable(&b, comparisons, r.comparedUnder(id))
+		if s := r.notKnownUnder(id); s != "" {
+			writeWrapped(&b, s, "")
+		}
 	}
 	b.WriteByte('\n')
 	writeWrapped(&b, "The reference is "+label(&r.Ratings[0])+". "+r.differencesText(rows), "")
@@ -228,6 +231,15 @@ func (r Report) comparedUnder(id string) (list []Choice) {
 	return list
 }
 
+// notKnownUnder says why figures that a comparison shows under a condition are not known.
+func (r Report) notKnownUnder(id string) string {
+	list := r.comparedUnder(id)
+	for i := range list {
+		list[i].Condition = id
+	}
+	return r.NotKnown(list, nil)
+}
+
 // sentences returns what differs in what was put in, in words in any case.
 func sentences(c glazing.Comparison) []string {
 	if len(c.Inputs) == 0 {
@@ -281,6 +293,9 @@ func CompareMarkdown(r Report) []byte {
 	for _, id := range r.comparedConditions() {
 		fmt.Fprintf(&b, "\n### Condition %s\n\n", escaped(id))
 		figures(r.comparedUnder(id))
+		if s := r.notKnownUnder(id); s != "" {
+			fmt.Fprintf(&b, "\n%s\n", escaped(s))
+		}
 	}
 	fmt.Fprintf(&b, "\nThe reference is %s. %s\n\n## %s\n\n", escaped(label(&r.Ratings[0])), r.differencesText(rows), colourTitle)
 	colours.print(&b)
@@ -294,7 +309,7 @@ func CompareMarkdown(r Report) []byte {
 	r.markdownBuildUps(&b)
 	r.markdownConditions(&b)
 	markdownList(&b, "Symbols", legend(rows, r.Ratings))
-	markdownList(&b, underSymbolsTitle, r.balanceLegend())
+	markdownList(&b, UnderSymbolsTitle, r.BalanceLegend())
 	markdownList(&b, "Cautions", r.CautionsOnce())
 	r.markdownTrace(&b)
 	return b.Bytes()
@@ -332,6 +347,7 @@ func CompareJSON(r Report) []byte {
 	top.set(quoted(r.Ratings[0].Method.Basis.Name), "basis")
 	top.set(quoted(r.Ratings[0].Method.Editions()), "editions")
 	r.option(top.at("reference"), 0)
+	r.person(top)
 	options := top.at("options")
 	options.list = true
 	for i, c := range r.comparisons()[1:] {
@@ -366,5 +382,6 @@ func (r Report) option(n *node, i int) {
 		}
 		n.at("figures").set(value, c.Path())
 	}
+	r.screening(n, rating)
 	r.remarks(n, i)
 }

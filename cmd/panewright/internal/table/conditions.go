@@ -14,44 +14,48 @@ import (
 	"panewright/glazing"
 )
 
-// A small is a table as both text and Markdown print it.
-type small struct {
-	title string
-	about string // below the title; "" for nothing
-	head  []string
-	names int // columns that name the rows
-	rows  [][]string
+// A Titled is a table under a title, as text, Markdown and paper show it.
+type Titled struct {
+	Title string
+	About string // below the title; "" for nothing
+	Note  string // below the table; "" for nothing
+	Head  []string
+	Names int // columns that name the rows
+	Rows  [][]string
 }
 
 // namesWidth is how wide all names of a row may be, with the space after each.
 const namesWidth = 3 * (nameWidth + gutter)
 
 // print writes the table as text.
-func (t small) print(b *bytes.Buffer) {
-	if len(t.rows) == 0 {
+func (t Titled) print(b *bytes.Buffer) {
+	if len(t.Rows) == 0 {
 		return
 	}
-	widest := min(nameWidth, namesWidth/t.names-gutter)
+	widest := min(nameWidth, namesWidth/t.Names-gutter)
 	b.WriteByte('\n')
-	writeWrapped(b, t.title, "")
-	if t.about != "" {
-		writeWrapped(b, t.about, "")
+	writeWrapped(b, t.Title, "")
+	if t.About != "" {
+		writeWrapped(b, t.About, "")
 	}
 	var columns []column
-	for k, head := range t.head {
-		cells := make([]string, len(t.rows))
-		for i, row := range t.rows {
+	for k, head := range t.Head {
+		cells := make([]string, len(t.Rows))
+		for i, row := range t.Rows {
 			cells[i] = row[k]
-			if k < t.names {
+			if k < t.Names {
 				cells[i] = text.WrapHard(row[k], widest)
 			}
 		}
-		if columns = append(columns, newColumn(head, cells)); k < t.names && columns[k].blank() {
+		if columns = append(columns, newColumn(head, cells)); k < t.Names && columns[k].blank() {
 			columns[k].width = -1
 		}
 	}
-	names := slices.DeleteFunc(columns[:t.names:t.names], func(c column) bool { return c.width < 0 })
-	fold(b, names, columns[t.names:])
+	names := slices.DeleteFunc(columns[:t.Names:t.Names], func(c column) bool { return c.width < 0 })
+	fold(b, names, columns[t.Names:])
+	if t.Note != "" {
+		writeWrapped(b, t.Note, "")
+	}
 }
 
 // blank reports whether a column holds nothing.
@@ -60,15 +64,18 @@ func (c column) blank() bool {
 }
 
 // markdown writes the table as Markdown, under a title of a depth.
-func (t small) markdown(b *bytes.Buffer, depth string) {
-	if len(t.rows) == 0 {
+func (t Titled) markdown(b *bytes.Buffer, depth string) {
+	if len(t.Rows) == 0 {
 		return
 	}
-	fmt.Fprintf(b, "\n%s %s\n\n", depth, escaped(t.title))
-	if t.about != "" {
-		fmt.Fprintf(b, "%s\n\n", escaped(t.about))
+	fmt.Fprintf(b, "\n%s %s\n\n", depth, escaped(t.Title))
+	if t.About != "" {
+		fmt.Fprintf(b, "%s\n\n", escaped(t.About))
 	}
-	markdownTable{head: t.head, names: t.names, rows: t.rows}.print(b)
+	markdownTable{head: t.Head, names: t.Names, rows: t.Rows}.print(b)
+	if t.Note != "" {
+		fmt.Fprintf(b, "\n%s\n", escaped(t.Note))
+	}
 }
 
 // BalanceColumns returns the columns of the schedule of conditions.
@@ -91,16 +98,17 @@ func (r Report) under(f glazing.BalanceFigure, condition string) Choice {
 
 // balances returns the table of the ratings of a basis under its conditions and those of the user, in
 // the order of conditions, so that make-ups stand beside each other.
-func (r Report) balances(basis string) small {
-	t := small{title: "Basis " + basis + ", under conditions", head: []string{"condition", "make-up", "tint"}, names: 3}
+func (r Report) balances(basis string) Titled {
+	t := Titled{Title: "Basis " + basis + ", under conditions", Head: []string{"condition", "make-up", "tint"}, Names: 3}
 	if r.Choices != nil {
 		return t
 	}
 	columns := BalanceColumns()
 	for _, f := range columns {
-		t.head = append(t.head, f.Symbol)
+		t.Head = append(t.Head, f.Symbol)
 	}
 	of := r.ratings(basis)
+	t.Note = r.NotKnown(r.UnderConditions(columns), func(x *glazing.Rating) bool { return x.Method.Basis.Name == basis })
 	for _, id := range glazing.ConditionIDs(of) {
 		for _, m := range r.makeups() {
 			var rows [][]string
@@ -119,7 +127,7 @@ func (r Report) balances(basis string) small {
 				}
 				rows = append(rows, row)
 			}
-			t.rows = append(t.rows, t.asOne(rows)...)
+			t.Rows = append(t.Rows, t.asOne(rows)...)
 		}
 	}
 	return t
@@ -134,14 +142,14 @@ func OfSun(f glazing.BalanceFigure) bool {
 const EachTint = "each"
 
 // asOne returns the rows of the tints of a make-up as one where they do not differ.
-func (t small) asOne(rows [][]string) [][]string {
+func (t Titled) asOne(rows [][]string) [][]string {
 	for _, row := range rows {
-		if len(rows) < 2 || !slices.Equal(row[t.names:], rows[0][t.names:]) {
+		if len(rows) < 2 || !slices.Equal(row[t.Names:], rows[0][t.Names:]) {
 			return rows
 		}
 	}
 	if len(rows) > 0 {
-		rows[0][t.names-1] = EachTint
+		rows[0][t.Names-1] = EachTint
 		return rows[:1]
 	}
 	return nil
@@ -157,8 +165,8 @@ func (r Report) ratings(basis string) (list []glazing.Rating) {
 	return list
 }
 
-// balanceLegend returns what the symbols of the schedule of conditions mean; nil where there is none.
-func (r Report) balanceLegend() []string {
+// BalanceLegend returns what the symbols of the schedule of conditions mean; nil where there is none.
+func (r Report) BalanceLegend() []string {
 	if r.Choices != nil || len(glazing.ConditionIDs(r.Ratings)) == 0 {
 		return nil
 	}
@@ -173,7 +181,7 @@ func (r Report) balanceLegend() []string {
 
 // underSymbols prints what they mean.
 func (r Report) underSymbols(b *bytes.Buffer) {
-	if list := r.balanceLegend(); list != nil {
+	if list := r.BalanceLegend(); list != nil {
 		writeWrapped(b, underTitle+": "+strings.Join(list, "; ")+".", "")
 	}
 }
@@ -185,7 +193,7 @@ type namedCondition struct {
 	screened bool     // for thermal stress alone
 }
 
-// conditions returns those of the ratings, each once, and those for which the thermal stress that is
+// conditions returns those of the ratings, each once, and all for which the thermal stress that is
 // shown was screened.
 func (r Report) conditions() (list []namedCondition) {
 	note := func(c glazing.Condition, basis string, screened bool) {
@@ -207,9 +215,9 @@ func (r Report) conditions() (list []namedCondition) {
 			}
 		}
 	}
-	for _, w := range r.worstStress() {
-		for _, c := range w.rating.Method.Screened() {
-			if c.ID == w.Condition {
+	if r.stressShown() {
+		for i := range r.Ratings {
+			for _, c := range r.Ratings[i].Method.Screened() {
 				note(c, "", true)
 			}
 		}
@@ -221,6 +229,24 @@ func (r Report) conditions() (list []namedCondition) {
 func (r Report) ConditionsListed() (lines []string) {
 	for _, c := range r.conditions() {
 		lines = append(lines, r.conditionLine(c))
+	}
+	return lines
+}
+
+// further returns what stands below the conditions: whose comfort was chosen, how stress that was chosen
+// was screened, where more stands.
+func (r Report) further() (lines []string) {
+	chosen := func(is func(glazing.Figure) bool) bool {
+		return slices.ContainsFunc(r.Choices, func(c Choice) bool { return is(c.Figure) })
+	}
+	if chosen(ofComfort) {
+		lines = append(lines, r.PersonSaid())
+	}
+	if s := r.ScreeningSaid(); chosen(ofStress) && s != "" {
+		lines = append(lines, s)
+	}
+	if r.BalanceLegend() != nil {
+		lines = append(lines, r.conditionsMore())
 	}
 	return lines
 }
@@ -297,7 +323,7 @@ func (r Report) ConditionText(c *glazing.Condition) string {
 // Titles.
 const (
 	underTitle        = "Under conditions"
-	underSymbolsTitle = "Symbols, under conditions"
+	UnderSymbolsTitle = "Symbols, under conditions"
 	conditionsTitle   = "Conditions"
 )
 
@@ -309,8 +335,8 @@ func (r Report) conditionList(b *bytes.Buffer) {
 		}
 		writeWrapped(b, s, "  ")
 	}
-	if r.balanceLegend() != nil {
-		writeWrapped(b, r.conditionsMore(), "")
+	for _, s := range r.further() {
+		writeWrapped(b, s, "")
 	}
 }
 

@@ -77,12 +77,20 @@ func originsOf(m *glazing.Makeup) string {
 	return strings.Join(parts, "; ")
 }
 
-// conditionsOf returns the conditions of a rating in words.
+// conditionsOf returns the conditions of a rating in words, and those for which its thermal stress was
+// screened.
 func (r Report) conditionsOf(rating *glazing.Rating) string {
 	var parts []string
 	for i := range rating.Balances {
 		c := rating.Balances[i].Condition
 		parts = append(parts, c.ID+": "+r.ConditionText(c))
+	}
+	if r.stressShown() {
+		for _, c := range rating.Method.Screened() {
+			if rating.Balance(c.ID) == nil {
+				parts = append(parts, c.ID+", screened for thermal stress: "+r.ConditionText(&c))
+			}
+		}
 	}
 	return strings.ReplaceAll(strings.Join(parts, " | "), "\u00a0", " ")
 }

@@ -130,11 +130,16 @@ func (r Report) balanceFigures(b *bytes.Buffer, rating *glazing.Rating) {
 		c := rating.Balances[i].Condition
 		b.WriteByte('\n')
 		writeWrapped(b, "Condition "+c.ID+": "+r.ConditionText(c), "  ")
+		var here []Choice
 		for _, f := range glazing.BalanceFigures() {
 			x := r.under(f, c.ID)
 			for x.Index = range f.Count(rating) {
 				figureLine(b, x, rating)
+				here = append(here, Choice{f.At(c.ID), x.Index})
 			}
+		}
+		if s := r.NotKnown(here, func(x *glazing.Rating) bool { return x == rating }); s != "" {
+			writeWrapped(b, "  "+s, "    ")
 		}
 	}
 }

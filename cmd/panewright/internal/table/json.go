@@ -20,6 +20,7 @@ import (
 func JSON(r Report) []byte {
 	top := newNode()
 	r.said(top)
+	r.person(top)
 	ratings := top.at("ratings")
 	ratings.list = true
 	for i := range r.Ratings {
@@ -73,6 +74,7 @@ func (r Report) rating(n *node, i int) {
 	if r.Choices == nil || slices.ContainsFunc(kinds, func(f glazing.Figure) bool { return f.Condition != "" }) {
 		r.balanceList(n.at("balances"), rating, kinds)
 	}
+	r.screening(n, rating)
 	r.remarks(n, i)
 }
 
@@ -114,19 +116,63 @@ func (r Report) balanceList(n *node, rating *glazing.Rating, kinds []glazing.Fig
 			item.figure(f.WithinBalance(), f, rating)
 		}
 		if r.Choices == nil {
-			given(item, b)
+			given(item, b.Condition, b.TiltDeg)
 		}
 	}
 }
 
-// given writes what a condition puts the make-up between: null where nothing was given and nothing is
-// taken for it.
-func given(n *node, b *glazing.Balance) {
-	c := b.Condition
-	at := c.Surroundings(b.TiltDeg)
+// screening writes how thermal stress was screened: with what, and for which conditions.
+func (r Report) screening(n *node, rating *glazing.Rating) {
+	if !slices.ContainsFunc(r.kinds(), ofStress) {
+		return
+	}
+	s := rating.Method.Stress()
+	n = n.at("thermal_stress_screening")
+	n.set(figure(s.Factor), "factor")
+	n.set(figure(s.FrameMarginK), "frame_margin_k")
+	list := n.at("conditions")
+	list.list = true
+	for i, c := range rating.Method.Screened() {
+		item := list.at(strconv.Itoa(i))
+		item.set(quoted(c.ID), "condition")
+		item.set(figure(c.Tilt(rating.Makeup)), "tilt_deg")
+		given(item, &c, c.Tilt(rating.Makeup))
+	}
+}
+
+// person writes whose comfort that of the balances is.
+func (r Report) person(top *node) {
+	if !slices.ContainsFunc(r.kinds(), ofComfort) {
+		return
+	}
+	m := r.Ratings[0].Method
+	p := m.Person()
+	n := top.at("person")
+	n.set(strconv.FormatBool(m.Options.Person == nil), "assumed")
+	n.set(quoted(posture(p)), "posture")
+	for _, x := range []struct {
+		key   string
+		value float64
+	}{
+		{"distance_m", p.DistanceM}, {"glass_width_m", p.GlassWidthM}, {"glass_height_m", p.GlassHeightM},
+		{"sun_altitude_deg", p.SunAltitudeDeg}, {"sun_from_front_deg", p.SunFromFrontDeg}, {"sky_share", p.SkyShare},
+		{"body_share", p.BodyShare}, {"absorptivity", p.Absorptivity}, {"floor_reflectance", p.FloorReflectance},
+	} {
+		n.set(figure(x.value), x.key)
+	}
+}
+
+// given writes what a condition puts a make-up of a tilt between; what was not given and has nothing
+// taken for it is left out.
+func given(n *node, c *glazing.Condition, tiltDeg float64) {
+	at := c.Surroundings(tiltDeg)
 	outside, assumed := c.OutsideConvection()
 	number := func(key string, v float64) { n.set(figure(v), key) }
-	value := func(key string, v glazing.Value) { n.set(jsonValue(v), key) }
+	value := func(key string, v glazing.Value) {
+		if v.Known {
+			number(key, v.Number)
+		}
+	}
 	or := func(v glazing.Value, air float64) float64 {
 		if v.Known {
 			return v.Number

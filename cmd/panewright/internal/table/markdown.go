@@ -39,13 +39,13 @@ func Markdown(r Report) []byte {
 	}
 	r.markdownDiffer(&b)
 	r.markdownBuildUps(&b)
-	r.stressTable().markdown(&b, "##")
-	r.moistureTable().markdown(&b, "##")
+	r.StressTable().markdown(&b, "##")
+	r.MoistureTable().markdown(&b, "##")
 	r.markdownConditions(&b)
 	if len(r.Ratings) > 0 {
 		markdownList(&b, "Symbols", legend(columns, r.Ratings))
 	}
-	markdownList(&b, underSymbolsTitle, r.balanceLegend())
+	markdownList(&b, UnderSymbolsTitle, r.BalanceLegend())
 	markdownList(&b, "Cautions", r.CautionsOnce())
 	r.markdownTrace(&b)
 	return b.Bytes()
@@ -88,11 +88,7 @@ func (r Report) markdownBuildUps(b *bytes.Buffer) {
 
 // markdownConditions lists the conditions.
 func (r Report) markdownConditions(b *bytes.Buffer) {
-	lines := r.ConditionsListed()
-	if r.balanceLegend() != nil {
-		lines = append(lines, r.conditionsMore())
-	}
-	markdownList(b, conditionsTitle, lines)
+	markdownList(b, conditionsTitle, append(r.ConditionsListed(), r.further()...))
 }
 
 // markdownDiffer writes why bases differ.

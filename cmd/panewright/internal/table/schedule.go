@@ -41,8 +41,8 @@ func Schedule(r Report) []byte {
 	r.basesDiffer(&b)
 	r.buildUps(&b)
 	r.origins(&b)
-	r.stressTable().print(&b)
-	r.moistureTable().print(&b)
+	r.StressTable().print(&b)
+	r.MoistureTable().print(&b)
 	r.conditionList(&b)
 	r.symbols(&b, r.Columns())
 	r.underSymbols(&b)
@@ -261,7 +261,7 @@ func (r Report) origins(b *bytes.Buffer) {
 // legend returns what the symbols of columns mean; places that follow each other stand together.
 func legend(columns []Choice, ratings []glazing.Rating) []string {
 	var parts []string
-	blank, conditions := false, false
+	blank, conditions, never := false, false, ""
 	for len(columns) > 0 {
 		n := 1
 		for n < len(columns) && columns[n].Key == columns[0].Key && columns[n].Index == columns[0].Index+n {
@@ -283,8 +283,14 @@ func legend(columns []Choice, ratings []glazing.Rating) []string {
 		parts = append(parts, s)
 		for i := range ratings {
 			blank = blank || !last.in(&ratings[i])
+			if s := first.Above1; s != "" && first.Printed(&ratings[i]) == s {
+				never = Above1(first.Figure)
+			}
 		}
 		columns = columns[n:]
+	}
+	if never != "" {
+		parts = append(parts, never)
 	}
 	parts = append(parts, "– not known")
 	if blank {

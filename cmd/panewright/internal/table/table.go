@@ -23,7 +23,7 @@ type Report struct {
 }
 
 // siRemains is printed where figures are in inch-pound units.
-const siRemains = "Figures, and the widths of gaps in make-ups, are in inch-pound units. Coefficients, cautions, why bases differ and what differs in what was put in stay in SI."
+const siRemains = "Figures, and the widths of gaps in make-ups, are in inch-pound units. The coefficients of the basis, cautions, why bases differ and what differs in what was put in stay in SI."
 
 // bases returns the names of the bases in the order in which they occur.
 func (r Report) bases() []string {
@@ -51,9 +51,13 @@ func (r Report) editions() (list []named) {
 	return list
 }
 
-// cautions returns those of one rating, with that of a page of several bases where it applies.
+// cautions returns those of one rating, with that of a page of several bases where it applies, and why
+// figures under conditions that were chosen are not known.
 func (r Report) cautions(i int) []glazing.Caution {
 	c := r.Ratings[i].Cautions
+	for _, l := range r.lacks(r.Choices, func(x *glazing.Rating) bool { return x == &r.Ratings[i] }) {
+		c = append(c[:len(c):len(c)], glazing.Caution{Code: "missing_data", Text: "No figure for " + l.heads() + ": " + l.why + "."})
+	}
 	if len(r.bases()) > 1 {
 		c = append(c[:len(c):len(c)], glazing.MixedBasis)
 	}

@@ -7,11 +7,14 @@ import (
 	"fmt"
 	"math"
 	"regexp"
+	"slices"
 	"strconv"
 	"strings"
 	"unicode/utf16"
 
 	"github.com/xuri/excelize/v2"
+
+	"panewright/glazing"
 )
 
 const (
@@ -229,6 +232,12 @@ func (b *book) about(r Report) {
 		id, text, _ := strings.Cut(strings.ReplaceAll(s, "\u00a0", " "), ": ")
 		line("condition "+id, text)
 	}
+	if shown := r.inSheets(); slices.ContainsFunc(shown, func(c Choice) bool { return ofComfort(c.Figure) }) {
+		line("comfort", strings.ReplaceAll(r.PersonSaid(), "\u00a0", " "))
+	}
+	if r.stressShown() {
+		line("thermal stress", strings.ReplaceAll(r.ScreeningSaid(), "\u00a0", " "))
+	}
 	for _, m := range r.makeups() {
 		line("make-up "+m.ID, called(m)+": "+strings.ReplaceAll(r.buildUp(m), "\u00a0", " "))
 		for _, t := range m.Typed {
@@ -244,8 +253,8 @@ func (b *book) about(r Report) {
 		if c.Unit != "" {
 			text += ", " + c.Unit
 		}
-		if c.Clause != "" {
-			text += " (" + c.Clause + ")"
+		if s := r.clauses(c.Figure); s != "" {
+			text += " (" + s + ")"
 		}
 		line(c.Path(), text)
 	}
@@ -254,6 +263,25 @@ func (b *book) about(r Report) {
 	b.widen(aboutSheet, 1, aboutLabelWidth)
 	b.widen(aboutSheet, 2, aboutTextWidth)
 	b.printed(aboutSheet, 1)
+}
+
+// clauses returns where a figure is defined under the bases of the ratings.
+func (r Report) clauses(f glazing.Figure) string {
+	var said []string // each once, with the bases that have it
+	of := map[string][]string{}
+	for i := range r.Ratings {
+		b := r.Ratings[i].Method.Basis
+		if clause := f.ClauseUnder(b); clause != "" {
+			said, of[clause] = add(said, clause), add(of[clause], b.Name)
+		}
+	}
+	if len(said) == 1 {
+		return said[0]
+	}
+	for i, clause := range said {
+		said[i] = "under " + strings.Join(of[clause], " and ") + " " + clause
+	}
+	return strings.Join(said, "; ")
 }
 
 // Where things stand on the sheet of spectra, and how much of it there is.
