@@ -1,7 +1,7 @@
 // Package reference holds the published tables that Panewright calculates with: the weights
 // of EN 410 and ISO 9050, the CIE observers, daylight and colour samples, the reference sun of
 // ASTM G173, the gas tables of EN 673 and ISO 15099, the emissivity tables of EN 12898, and the optical
-// constants of soda-lime glass.
+// constants of soda-lime glass and of film materials.
 //
 // Each table is one file under tables/, embedded, that begins with its title, source, edition,
 // units, standing and how the figures were verified. Standing is "read" where the figures were
@@ -41,6 +41,30 @@ var (
 	SodaLimeGlass         = lazily("soda_lime_glass")        // n_clear, k_clear, … over wavelength_um
 )
 
+// Optical constants of film materials, each parsed on first use: n, k over wavelength_um.
+var (
+	NKITO                    = lazily("nk_ito")
+	NKAZO                    = lazily("nk_azo")
+	NKSilver                 = lazily("nk_silver")
+	NKGold                   = lazily("nk_gold")
+	NKCopper                 = lazily("nk_copper")
+	NKAluminium              = lazily("nk_aluminium")
+	NKChromium               = lazily("nk_chromium")
+	NKNickel                 = lazily("nk_nickel")
+	NKTitania                = lazily("nk_titania")
+	NKSilica                 = lazily("nk_silica")
+	NKSiliconNitride         = lazily("nk_silicon_nitride")
+	NKSiliconNitrideInfrared = lazily("nk_silicon_nitride_infrared")
+	NKAlumina                = lazily("nk_alumina")
+	NKAluminiumNitride       = lazily("nk_aluminium_nitride")
+	NKNiobia                 = lazily("nk_niobia")
+	NKTantala                = lazily("nk_tantala")
+	NKMagnesiumFluoride      = lazily("nk_magnesium_fluoride")
+	NKTungstenOxide          = lazily("nk_tungsten_oxide")
+	NKVanadiaCold            = lazily("nk_vanadia_cold")
+	NKVanadiaHot             = lazily("nk_vanadia_hot")
+)
+
 // Notices returns the notices of the data and code that Panewright carries, as Markdown.
 func Notices() string { return notices }
 
@@ -49,6 +73,9 @@ func All() []*Table {
 	return []*Table{
 		EN410Weights(), DamageWeights(), Daylight(), Observers(), RenderingSamples(), SolarG173(),
 		EmissivityWavelengths(), EmissivityRatio(), GasesEN673(), GasesISO15099(), SodaLimeGlass(),
+		NKITO(), NKAZO(), NKSilver(), NKGold(), NKCopper(), NKAluminium(), NKChromium(), NKNickel(),
+		NKTitania(), NKSilica(), NKSiliconNitride(), NKSiliconNitrideInfrared(), NKAlumina(), NKAluminiumNitride(),
+		NKNiobia(), NKTantala(), NKMagnesiumFluoride(), NKTungstenOxide(), NKVanadiaCold(), NKVanadiaHot(),
 	}
 }
 

@@ -1,14 +1,24 @@
-// Package film computes the optics of a pane from the optical constants of what it is made of: the
-// transmittance and reflectance of a sheet at any wavelength and angle, the spectrum that a
-// rating takes, and emissivities.
+// Package film computes the optics of a pane from what it is made of: the transmittance and
+// reflectance of a sheet, with films that interfere on either face or without, at any wavelength and
+// angle, in both polarisations; the spectrum that a rating takes; emissivities.
 //
-// Constants are N = n + ik over the vacuum wavelength, k ≥ 0 for loss. A sheet is plane-parallel,
-// in air, and too thick to interfere: light that crosses it is added by power. Angles of incidence
-// are measured from the normal, in air. Films that interfere are left out.
+// Constants are N = n + ik over the vacuum wavelength, k ≥ 0 for loss, for the time factor exp(−iωt).
+// A sheet is plane-parallel, in air, and too thick to interfere: light that crosses it is added by
+// power. Angles of incidence are measured from the normal, in air.
 //
 //	glass, _ := film.Glass("soda-lime")
 //	s := film.Sheet{Constants: glass, ThicknessMM: 6}
 //	fmt.Printf("%.4f\n", s.At(550, 60).Unpolarised().T)
+//
+// Films are coherent (stack.go, coated.go); the same sheet with a conducting oxide on its back:
+//
+//	ito, _ := film.MaterialNamed("ito")
+//	c := film.Coated{Glass: glass, ThicknessMM: 6, Back: []film.Film{{Material: ito, ThicknessNM: 150}}}
+//
+// Materials are rows with a source and a range (materials.go), models of their permittivity
+// (dispersion.go), free carriers (carriers.go) and band edges that follow them (bandedge.go). Figures
+// of merit and the screening rules of the trade stand in merit.go, beside the exact result and never
+// in its place.
 package film
 
 import "math"
