@@ -378,7 +378,7 @@ func TestComfortByTilt(t *testing.T) {
 	for _, tt := range []struct {
 		tilt     float64
 		a, bb, c float64 // of the formula; 0 where there is none
-	}{{90, 3.72, 0.052, 3.5}, {62, 3.72, 0.052, 3.5}, {50, 0, 0, 0}, {45, 2.84, 0.174, 5.5}, {0, 2.84, 0.174, 5.5}, {118, 3.72, 0.052, 3.5}, {125, 0, 0, 0}} {
+	}{{90, 3.72, 0.052, 3.5}, {60, 3.72, 0.052, 3.5}, {59.8, 0, 0, 0}, {45.2, 0, 0, 0}, {45, 2.84, 0.174, 5.5}, {0, 2.84, 0.174, 5.5}, {120, 3.72, 0.052, 3.5}, {120.2, 0, 0, 0}} {
 		c := Condition{ID: "x", OutsideC: 45, InsideC: 25, WindMS: known(1), SunWM2: 300, TiltDeg: known(tt.tilt)}
 		r := rateOne(t, &Makeup{ID: "R", Panes: []Placed{{Pane: clearGlass(6, 0.6, 0.08)}}}, EN, Options{Conditions: []Condition{c}})
 		b := r.Balance("x")
@@ -451,6 +451,15 @@ func TestSmallPrint(t *testing.T) {
 		if got := slices.ContainsFunc(r.Cautions, func(c Caution) bool { return c.Code == "climate_load" }); got != tt.want {
 			t.Errorf("%d gaps: caution %t", len(tt.gaps), got)
 		}
+	}
+	// A clear sky over 10 °C is at 0.0552·283.15^1.5 = 263.0 K (Swinbank 1963, from memory).
+	low := clearGlass(4, 0.7, 0.1)
+	low.Tints[0].Back = GivenEmissivity(0.03)
+	night := rateOne(t, &Makeup{ID: "N", Panes: []Placed{{Pane: low}, {Pane: glass}}, Gaps: []Gap{gap(t, 16, map[string]float64{"argon": 1})}}, EN, Options{})
+	if !slices.ContainsFunc(night.Cautions, func(c Caution) bool {
+		return strings.Contains(c.Text, "(outdoors 10 °C, indoors 20 °C, 1 m/s, sky -10 °C by Swinbank)")
+	}) {
+		t.Error("no clear calm night")
 	}
 	f := Figure{Above1: "never", Places: 2, Value: func(*Rating, int) Value { return known(1.004) }}
 	if got := f.Print(rateOne(t, &Makeup{ID: "V", Panes: []Placed{{Pane: glass}}}, EN, Options{}), 0); got != "never" {

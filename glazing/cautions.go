@@ -136,6 +136,8 @@ var cautionRules = []cautionRule{
 	}},
 	{"edge_estimate", "the make-up has an edge by ψ", when(func(r *Rating) bool { return r.Makeup.Edge.PsiWMK.Known },
 		"The temperature at the edge is an estimate from ψ: its heat spread over 50 mm along the edge. A factor by calculation in two dimensions is better.")},
+	{"at_angle", "an angle of incidence, for panes that are known there", angleRule("at_angle")},
+	{"angle_estimate", "an angle of incidence, with a measured coated pane", angleRule("angle_estimate")},
 	{"reflected_sun", "ρe or ρv outside above 0.15", when(func(r *Rating) bool {
 		return above(r.Solar.ReflectanceOutside, reflectedSun) || above(r.Light.ReflectanceOutside, reflectedSun)
 	}, "Reflects more than 0.15 of sun or light outwards: consider neighbours and traffic, above all where the facade is curved or inclined.")},

@@ -23,6 +23,7 @@ type Options struct {
 	Conditions  []Condition        // of the user, for which balances are made
 	Person      *Person            // who feels the glazing; nil means AnyPerson
 	Stress      *StressScreening   // nil means no margin and a factor of 1
+	AngleDeg    float64            // of incidence, up to LargestAngleDeg; 0 is normal
 }
 
 // A Method is a basis made ready to calculate: its wavelengths, weights and coefficients. It is
@@ -116,7 +117,8 @@ type Ready struct {
 	Method *Method
 	States []State
 
-	sampled  [][]optics.Pane // by pane and tint, as placed
+	sampled  [][]optics.Pane // by pane and tint, as placed; off the normal those of S
+	crossed  [][]optics.Pane // off the normal those of P, else nil
 	glass    []float64       // resistance of each pane, m²·K/W
 	prepared []prepared      // by state
 	tilted   thermal.Convection
@@ -155,6 +157,9 @@ func (m *Method) Ready(mk *Makeup) (*Ready, error) {
 	if err := mk.check(); err != nil {
 		return nil, err
 	}
+	if a := m.Options.AngleDeg; !(a >= 0 && a <= LargestAngleDeg) {
+		return nil, fmt.Errorf("an angle of incidence of %g°; it lies in 0..%d", a, LargestAngleDeg)
+	}
 	states, err := mk.States()
 	if err != nil {
 		return nil, fmt.Errorf("make-up %s: %w", mk.ID, err)
@@ -164,11 +169,19 @@ func (m *Method) Ready(mk *Makeup) (*Ready, error) {
 		vertical: thermal.ConvectionAt(90, thermal.Up),
 	}
 	for _, p := range mk.Panes {
-		var tints []optics.Pane
+		var tints, crossed []optics.Pane
 		for i := range p.Pane.Tints {
-			tints = append(tints, p.sample(i, m.grid))
+			if m.Options.AngleDeg == 0 {
+				tints = append(tints, p.sample(i, m.grid))
+				continue
+			}
+			s, other := p.sampleAt(i, m.grid, m.Options.AngleDeg)
+			tints, crossed = append(tints, s), append(crossed, other)
 		}
 		r.sampled = append(r.sampled, tints)
+		if crossed != nil {
+			r.crossed = append(r.crossed, crossed)
+		}
 		r.glass = append(r.glass, p.Pane.Resistance())
 		r.mm += p.Pane.ThicknessMM()
 		r.kg += p.Pane.MassKGM2()
@@ -420,17 +433,26 @@ type Spectra struct {
 // Spectra returns the spectra of a state at the given wavelengths, ascending, in nm.
 func (r *Ready) Spectra(state int, nm []float64) Spectra {
 	grid := spectra.Grid{NM: nm}
-	var panes []optics.Pane
+	var panes, crossed []optics.Pane
 	var t, ro, ri []spectra.Curve // what each quantity depends on
 	last := len(r.Makeup.Panes) - 1
 	for k, p := range r.Makeup.Panes {
 		tint := r.States[state].Tints[k]
-		panes = append(panes, p.sample(tint, grid))
+		if angle := r.Method.Options.AngleDeg; angle == 0 {
+			panes = append(panes, p.sample(tint, grid))
+		} else {
+			s, m := p.sampleAt(tint, grid, angle)
+			panes, crossed = append(panes, s), append(crossed, m)
+		}
 		a, b, c := p.needed(tint, k == 0, k == last)
 		t, ro, ri = append(t, a...), append(ro, b...), append(ri, c...)
 	}
-	var stack optics.Stack
+	var stack, other optics.Stack
 	stack.Combine(panes)
+	if crossed != nil {
+		other.Combine(crossed)
+		meanOf(&stack, &other)
+	}
 	within := func(values []float64, curves ...spectra.Curve) []float64 {
 		values = values[:grid.Len()]
 		from, to := reachOf(curves)
@@ -452,6 +474,9 @@ func (r *Ready) Spectra(state int, nm []float64) Spectra {
 // Editions returns the editions and coefficients of the method, as printed on every output.
 func (m *Method) Editions() string {
 	s := m.Basis.Editions
+	if m.Options.AngleDeg > 0 {
+		s += fmt.Sprintf("; light, sun and colour at %.6g° of incidence", m.Options.AngleDeg)
+	}
 	if m.Options.Sun != nil {
 		s += "; solar weighting: " + m.Options.Sun.Source + "; UV, damage and skin keep the sun of EN 410:2011"
 	}

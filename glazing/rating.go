@@ -50,6 +50,7 @@ type Rating struct {
 
 	panes    []optics.Pane
 	stack    optics.Stack
+	other    optics.Stack // of P, off the normal
 	absorbed []float64
 
 	// Filled with Stress: the hottest room-side surface and the hottest glass at a seal or interlayer,
@@ -114,6 +115,13 @@ func (r *Ready) RateInto(dst *Rating, state int) error {
 		dst.panes = append(dst.panes, r.sampled[k][s.Tints[k]])
 	}
 	dst.stack.Combine(dst.panes)
+	if r.crossed != nil {
+		for k := range n {
+			dst.panes[k] = r.crossed[k][s.Tints[k]]
+		}
+		dst.other.Combine(dst.panes)
+		meanOf(&dst.stack, &dst.other)
+	}
 	r.rateOptics(dst, &r.prepared[state].coverage)
 	return r.rateHeat(dst, state)
 }
