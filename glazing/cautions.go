@@ -62,7 +62,7 @@ var cautionRules = []cautionRule{
 	}},
 	{"invented", "a pane's spectrum is marked invented", fromPanes(InventedOrigin,
 		"Invented spectra stand behind these figures: they describe no product and must not be specified.")},
-	{"modelled", "a pane's spectrum is marked modelled", fromPanes(ModelledOrigin,
+	{"modelled", "a pane's spectrum is marked modelled, or the index of a film's material comes from a model or has something else to be known", fromPanes(ModelledOrigin,
 		"Modelled spectra stand behind these figures: they were computed, not measured.")},
 	{"emissivity_below_table", "a normal emissivity lies below the table of EN 12898", func(all []Rating, i int) string {
 		return facesWhere(&all[i], func(e Emissivity) bool {
@@ -413,7 +413,8 @@ func reasons(r *Rating, said []Caution, figures []Figure) (out []Caution) {
 var otherCodes = [][2]string{
 	{"missing_data", "a figure is not known, for a reason that no other caution names"},
 	{"missing_band", "a spectrum does not reach, or has no values in, a part of a band with 0.1 % of its weight or more: its figures are not known"},
-	{"extended", "an end was held. Of a pane's spectrum: its first or last value, for less than 0.1 % of the weight of a band, or its infrared rows to 50 µm. Of optical constants: their first value (that of built-in glass at 310 nm) down to 300 nm, or their reflectance to 50 µm"},
+	{"extended", "an end was held. Of a pane's spectrum: its first or last value, for less than 0.1 % of the weight of a band, or its infrared rows to 50 µm. Of optical constants: their first value (that of built-in glass at 310 nm) down to 300 nm, or their reflectance to 50 µm. Of a film's material: published constants, which a model carries on"},
+	{"typical", "a film material of typical figures, not of a measured film, stands behind a pane"},
 	{"interpolated", "a spectrum has no values in a part of a band with less than 0.1 % of its weight; those beside it were joined"},
 	{"set_to_bound", "values just outside 0 to 1, or shares that add to just more than 1, were set to the bound"},
 	{"coarse_steps", "a spectrum or optical constants in steps too wide for the tables of the standards"},

@@ -95,8 +95,9 @@ type Pane struct {
 	HeatTreatment HeatTreatment
 	HeatSoaked    bool
 	Origin        Origin
-	Sheet         *film.Sheet // what an uncoated pane was computed from; nil of any other
-	Tints         []Tint      // at least one; a pane that does not switch has one, with no name
+	Sheet         *film.Sheet  // what an uncoated pane was computed from; nil of any other
+	Coated        *film.Coated // what a coated pane was computed from; nil of any other
+	Tints         []Tint       // at least one; a pane that does not switch has one, with no name
 	// TauInfrared is the transmittance in the thermal infrared, if the user gave it, of a sheet
 	// that is not opaque there. EN 673 cannot treat it: with such a pane U and g are unknown.
 	TauInfrared float64
@@ -192,6 +193,9 @@ func fromNormal(normal float64) Emissivity {
 	corrected, _ := thermal.CorrectedEmissivity(normal)
 	return Emissivity{Normal: known(normal), Corrected: known(corrected), Hemispherical: unknown("the films are not known")}
 }
+
+// UnknownEmissivity is that of a face of which none is known, for a reason.
+func UnknownEmissivity(why string) Emissivity { return noEmissivity(why) }
 
 // NoEmissivity is that of a face of which nothing is known.
 func NoEmissivity() Emissivity {

@@ -38,7 +38,7 @@ const (
 func (p *Pane) atAngle(tint int) kindAtAngle {
 	t := &p.Tints[tint]
 	switch {
-	case p.Sheet != nil:
+	case p.Sheet != nil, p.Coated != nil:
 		return exactAtAngle
 	case !(t.Front.Corrected.Known && t.Front.Corrected.Number >= uncoatedEmissivity && t.Back.Corrected.Known && t.Back.Corrected.Number >= uncoatedEmissivity):
 		return estimatedAtAngle
@@ -55,6 +55,19 @@ func (p *Pane) atAngle(tint int) kindAtAngle {
 // seen from outside.
 func (p Placed) sampleAt(tint int, g spectra.Grid, angleDeg float64) (s, m optics.Pane) {
 	s, m = p.sample(tint, g), p.sample(tint, g)
+	if c := p.Pane.Coated; c != nil {
+		var both [2]film.Shares
+		c.On(g.NM).At(&both[0], &both[1], angleDeg)
+		for i, x := range []*optics.Pane{&s, &m} {
+			copy(x.T, both[i].T)
+			copy(x.Ro, both[i].RFront)
+			copy(x.Ri, both[i].RBack)
+			if p.Turned {
+				x.Ro, x.Ri = x.Ri, x.Ro
+			}
+		}
+		return s, m
+	}
 	kind := p.Pane.atAngle(tint)
 	ratio, more := film.Estimated(1, coatedCategory, angleDeg)
 	for i := range g.Len() {

@@ -87,6 +87,14 @@ func NewMethod(b Basis, o Options) *Method {
 	return m
 }
 
+// AtAngle returns the method for light and sun at an angle of incidence in degrees, up to
+// LargestAngleDeg; make-ups are refused beyond.
+func (m *Method) AtAngle(deg float64) *Method {
+	other := *m
+	other.Options.AngleDeg = deg
+	return &other
+}
+
 // WavelengthsNM returns the wavelengths on which the method combines panes; it must not be
 // written to.
 func (m *Method) WavelengthsNM() []float64 { return m.grid.NM }

@@ -152,6 +152,9 @@ var optionOffers = map[string]offer{
 	"columns":              always(layoutColumns),
 	"only":                 always(familiesAbout),
 	"conditions":           conditionsToShow,
+	"angle":                words("0\tnormal incidence", "45", "60"),
+	"at":                   words("all\tthose of the standards and of the infrared"),
+	"polarisation":         words("s\tacross the plane of incidence", "p\tin the plane of incidence", "mean\tof both"),
 }
 
 // optionEnds are the ends of the files that options name; none for files of any kind.
@@ -175,6 +178,7 @@ var argumentOffers = map[string]cobra.CompletionFunc{
 	"sheet":      projectThen(nil),
 	"compare":    projectThen(makeupsAndTints),
 	"panes":      first(paneIDs),
+	"film":       projectThen(filmPanes),
 	"spectrum":   spectrumFiles,
 	"schema":     cobra.NoFileCompletions,
 	"verify":     cobra.NoFileCompletions,

@@ -31,7 +31,8 @@ of the project and stay in it, unless --files-anywhere is given.
                     spectrum: FILE      columns of one CSV
                     spectra: {tau: FILE, rho_front: FILE, rho_back: FILE}
                     tints: a list of {tint: NAME, spectrum: FILE}
-                    glass: of the project or built in, uncoated
+                    glass: of the project or built in, and coatings: films
+                      on its faces, each a material and thickness_nm
                   emissivity_front and _back are corrected (hemispherical),
                   emissivity_normal_front and _back normal; either wins over
                   infrared rows of the spectrum

@@ -24,6 +24,7 @@ import (
 type selection struct {
 	makeups, tints, bases []string
 	filesAnywhere         bool
+	angleDeg              float64 // of incidence
 }
 
 func (o *selection) flags(c *cobra.Command) {
@@ -123,6 +124,11 @@ of figures under conditions.
 CSV and XLSX have one row a rating. The first row has the keys of the figures,
 which are their paths in JSON, with panes, gaps and surfaces counted from 1.
 XLSX also has the units, editions, cautions, and a chart of the spectra.
+
+--angle rates light, sun, colour and g off the normal; polarisations are kept
+apart to the last pane. Computed panes are exact, measured uncoated glass is
+inverted, and measured coated panes follow a published estimate, which the
+cautions say. U does not depend on it.
 ` + spreadsheetText + `
 
 --figures takes keys, such as solar.g or surfaces.3.emissivity, symbols as the
@@ -141,6 +147,7 @@ The short names of figures of a rating:
   panewright rate panewright-demo/project.yaml --basis na \
     --figures u,u@summer,temperature@summer
   panewright rate panewright-demo/project.yaml --units ip
+  panewright rate panewright-demo/project.yaml --makeup D1 --angle 60
   panewright rate panewright-demo/project.yaml -o mill.xlsx
   panewright rate panewright-demo/project.yaml -o mill.csv --separator ";" \
     --decimal-comma`,
@@ -151,6 +158,7 @@ The short names of figures of a rating:
 	}
 	o.flags(c)
 	p.flags(c, "table", "json", "csv", "xlsx", "markdown")
+	c.Flags().Float64Var(&o.angleDeg, "angle", 0, "light, sun and colour at `DEG` of incidence, 0 to 89")
 	c.Flags().StringVar(&spectra, "spectra", "", "with --as json: spectra at the wavelengths `NM,NM`, or all")
 	return c
 }
@@ -167,6 +175,9 @@ func runRate(s streams, path string, o selection, p page, spectra string) error 
 	form, err := p.form()
 	if err != nil {
 		return err
+	}
+	if !(o.angleDeg >= 0 && o.angleDeg <= glazing.LargestAngleDeg) {
+		return fmt.Errorf("--angle %g is no angle of incidence here; it lies in 0 to %d degrees", o.angleDeg, glazing.LargestAngleDeg)
 	}
 	if spectra != "" && p.as != "json" {
 		return fmt.Errorf("--spectra prints spectra in JSON; add --as json")
@@ -325,7 +336,7 @@ func rate(path string, o selection) (table.Report, error) {
 	var tints []string         // of all that was selected otherwise
 	found := map[string]bool{} // the tints asked for that there are
 	for _, b := range bases {
-		method := p.Method(b)
+		method := p.Method(b).AtAngle(o.angleDeg)
 		for _, m := range makeups {
 			ratings, err := p.RateBy(method, m)
 			if err != nil {

@@ -99,7 +99,7 @@ declaration. Local authorities and licensed practitioners decide.`,
 	root.SetUsageTemplate(usage + "{{if not .HasParent}}\nTopics, such as panewright help formats:\n" + topicList() + "\n{{end}}")
 	root.SetFlagErrorFunc(flagError)
 	root.PersistentPreRunE = func(c *cobra.Command, _ []string) error { return settle(c) }
-	root.AddCommand(newDemo(s), newRate(s), newCompare(s), newCheck(s), newExplain(s), newSection(s), newPlot(s), newSchema(s), newPanes(s), newSheet(s), newSpectrum(s), newVerify(s), newCompletion(s))
+	root.AddCommand(newDemo(s), newRate(s), newCompare(s), newCheck(s), newExplain(s), newSection(s), newPlot(s), newSchema(s), newPanes(s), newFilm(s), newSheet(s), newSpectrum(s), newVerify(s), newCompletion(s))
 	root.AddCommand(generators(s)...)
 	root.SetHelpCommand(newHelp())
 	addCompletions(root)

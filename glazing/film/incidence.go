@@ -53,3 +53,7 @@ func Estimated(panes, category, angleDeg float64) (transmittance, reflected floa
 	gamma := (5.26 + 0.06*panes) + (0.73+0.04*panes)*category
 	return 1 - float64(a*math.Pow(z, alpha)) - float64(b*math.Pow(z, beta)) - float64(c*math.Pow(z, gamma)), math.Pow(z, gamma)
 }
+
+// On takes the pane's indices at ascending wavelengths in nm, each held beyond its range, as a rating
+// needs it at an angle.
+func (c Coated) On(nm []float64) *Sampled { return c.inFilms().sampleHeld(nm) }

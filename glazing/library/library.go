@@ -84,12 +84,18 @@ func Uncoated(id string, s film.Sheet) *glazing.Pane {
 			face = glazing.ConventionalEmissivity(face.Normal.Number, hemispherical)
 		}
 	}
+	p := modelled(id, s)
+	p.Sheet, p.Tints[0].Spectrum, p.Tints[0].Front, p.Tints[0].Back = &s, m, face, face
+	return p
+}
+
+// modelled is a pane of one sheet that is computed, whose spectrum and faces are still to be told.
+func modelled(id string, s film.Sheet) *glazing.Pane {
 	return &glazing.Pane{
 		ID:            id,
 		Plies:         []glazing.Ply{{ThicknessMM: s.ThicknessMM, ConductivityWMK: glazing.GlassWMK, DensityKGM3: glazing.GlassKGM3}},
 		HeatTreatment: glazing.UnknownTreatment,
 		Origin:        glazing.ModelledOrigin,
-		Sheet:         &s,
-		Tints:         []glazing.Tint{{Spectrum: m, Source: "optical constants of " + s.Constants.Name + " glass: " + s.Constants.Source, Front: face, Back: face}},
+		Tints:         []glazing.Tint{{Source: "optical constants of " + s.Constants.Name + " glass: " + s.Constants.Source}},
 	}
 }

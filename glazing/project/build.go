@@ -20,12 +20,11 @@ import (
 type builder struct {
 	*reader
 	*fileSet
-	builtIn  map[string]*glazing.Pane // the panes of the library that make-ups use
-	reserved []string                 // ids of the library
-	balances string                   // what of the project asks for detailed heat balances, as balancesOf has it
+	builtIn  map[string]*glazing.Pane  // the panes of the library that make-ups use
+	reserved []string                  // ids of the library
+	own      map[string]*film.Material // the film materials of the project
+	balances string                    // what of the project asks for detailed heat balances, as balancesOf has it
 }
-
-const notYet = "is not in this version"
 
 func (b *builder) project(s *fileSpec) *Project {
 	p := &Project{
@@ -43,11 +42,8 @@ func (b *builder) project(s *fileSpec) *Project {
 	if s.Sun.given {
 		p.sun, p.Cautions = b.sun(s.Sun, p.Cautions)
 	}
+	b.own = b.materials(s.Materials)
 	ids := map[string]position{}
-	for _, m := range s.Materials {
-		b.unique(ids, m.ID, "id", "material")
-	}
-	ids = map[string]position{}
 	for _, g := range s.Glasses {
 		b.unique(ids, g.ID, "id", "glass or pane")
 		b.notBuiltIn(g.ID)
@@ -136,8 +132,8 @@ func (b *builder) pane(s *paneSpec, glasses map[string]glass) *glazing.Pane {
 	}
 	p := &glazing.Pane{ID: s.ID.value, Origin: glazing.MeasuredOrigin}
 	if s.modelled() {
-		if len(s.Coatings) > 0 || s.Faulty {
-			return nil // place refuses it where a make-up uses it
+		if s.Faulty {
+			return nil
 		}
 		if p = b.sheetOf(s, glasses); p == nil {
 			return nil

@@ -41,13 +41,22 @@ func FuzzProject(f *testing.F) {
 		strings.Replace(balanced, "outside_c: -12", "outside_c: -273.15", 1),
 		strings.Replace(balanced, "tau_ir: 0.02", "tau_ir: 0.24", 1),
 		strings.Replace(balanced, "psi_w_mk: 0.05", "psi_w_mk: 0, temperature_factor: 0", 1),
+		ofFilms(labITO, ofLab),
+		ofFilms(labITO, "          - {material: lab-ito, thickness_nm: 10000, sheet_resistance_ohm: 1e-300, effective_mass: 100}\n"),
+		ofFilms("  - {id: m, model: oscillators, eps_infinity: 0.1, terms: [{kind: drude, plasma_ev: 100, damping_ev: 1e-6}, {kind: tauc-lorentz, amplitude_ev: 1e5, energy_ev: 100, broadening_ev: 199.9, gap_ev: 0.0001, urbach_ev: 1}]}\n",
+			"          - {material: m, thickness_nm: 1e-300}\n          - {material: m, thickness_nm: 10000}\n"),
+		ofFilms("  - {id: m, n: 0.001, k: 1000}\n  - {id: l, nk: nk.csv}\n", "          - {material: m, thickness_nm: 10}\n          - {material: l, thickness_nm: 10}\n"),
 	} {
 		f.Add([]byte(text))
 	}
+	constants := []byte("wavelength_um,n,k\n0.3,1.5,0\n60,1.5,0.01\n")
 	spectrum, sun := []byte(spectrumOf("0.3,0.2,0.1")), []byte(hallFiles()["sun.csv"])
 	from := func(name string) ([]byte, error) {
 		if strings.Contains(name, "sun") {
 			return sun, nil
+		}
+		if strings.Contains(name, "nk") || strings.Contains(name, "deep") {
+			return constants, nil
 		}
 		return spectrum, nil
 	}

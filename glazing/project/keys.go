@@ -51,15 +51,32 @@ type surfacesSpec struct {
 type materialSpec struct {
 	_ struct{} `called:"a material"`
 	object
-	ID         text   `key:"id" need:"yes" id:"yes" doc:"name by which films use it"`
-	Model      text   `key:"model" one:"drude oscillators" doc:"kind of dispersion"`
-	Carriers   number `key:"carriers_cm3" above:"0" doc:"carrier density, 1/cm³"`
-	Mobility   number `key:"mobility_cm2_v_s" above:"0" doc:"carrier mobility, cm²/(V·s)"`
-	Mass       number `key:"effective_mass" above:"0" doc:"in electron masses"`
-	EpsInf     number `key:"eps_infinity" above:"0" doc:"high-frequency permittivity"`
-	Refraction number `key:"n" above:"0" doc:"constant refractive index"`
-	Extinction number `key:"k" from:"0" doc:"constant extinction coefficient"`
-	NK         text   `key:"nk" file:"yes" doc:"CSV of wavelength_um or wavelength_nm, n, k"`
+	ID          text       `key:"id" need:"yes" id:"yes" doc:"name by which films use it"`
+	Model       text       `key:"model" one:"drude oscillators" doc:"drude: free carriers alone; oscillators: terms, with free carriers if they are given"`
+	Carriers    number     `key:"carriers_cm3" above:"0" doc:"carrier density, 1/cm³; two of it, mobility and resistivity fix the third"`
+	Mobility    number     `key:"mobility_cm2_v_s" above:"0" doc:"carrier mobility, cm²/(V·s)"`
+	Resistivity number     `key:"resistivity_ohm_cm" above:"0" doc:"resistivity to direct current, Ω·cm"`
+	Mass        number     `key:"effective_mass" above:"0" doc:"of the carriers, in electron masses"`
+	EpsInf      number     `key:"eps_infinity" above:"0" from:"0.1" upto:"1000" doc:"high-frequency permittivity; of oscillators what is there beside their terms, 1 when absent"`
+	Terms       []termSpec `key:"terms" doc:"what oscillators add to the permittivity"`
+	Refraction  number     `key:"n" above:"0" from:"0.001" upto:"100" doc:"constant refractive index"`
+	Extinction  number     `key:"k" from:"0" upto:"1000" doc:"constant extinction coefficient, 0 when absent"`
+	NK          text       `key:"nk" file:"yes" doc:"CSV of wavelength_um or wavelength_nm, n, k"`
+}
+
+type termSpec struct {
+	_ struct{} `called:"a term"`
+	object
+	Kind       text   `key:"kind" need:"yes" one:"drude lorentz tauc-lorentz sellmeier" doc:"drude: plasma_ev, damping_ev; lorentz: strength, energy_ev, broadening_ev; tauc-lorentz: amplitude_ev, energy_ev, broadening_ev, gap_ev, urbach_ev; sellmeier: strength, resonance_nm"`
+	Plasma     number `key:"plasma_ev" above:"0" from:"0.0001" upto:"100" doc:"plasma energy without screening, eV"`
+	Damping    number `key:"damping_ev" above:"0" from:"0.000001" upto:"100" doc:"damping energy, eV"`
+	Strength   number `key:"strength" above:"0" from:"0.000001" upto:"1000000" doc:"lorentz: what the term adds to the permittivity far below its energy; sellmeier: far beyond its wavelength"`
+	Energy     number `key:"energy_ev" above:"0" from:"0.0001" upto:"100" doc:"energy of the oscillator, eV"`
+	Broadening number `key:"broadening_ev" above:"0" from:"0.000001" upto:"100" doc:"its broadening, eV"`
+	Amplitude  number `key:"amplitude_ev" above:"0" from:"0.000001" upto:"100000" doc:"amplitude of tauc-lorentz, eV"`
+	Gap        number `key:"gap_ev" above:"0" from:"0.0001" upto:"100" doc:"gap of tauc-lorentz, eV, below energy_ev"`
+	Urbach     number `key:"urbach_ev" from:"0" upto:"1" doc:"width of the tail below the gap, eV; 0 when absent, for none"`
+	Resonance  number `key:"resonance_nm" above:"0" from:"1" upto:"1000000" doc:"wavelength of the resonance of sellmeier, which has no loss: outside 300 to 50000 nm"`
 }
 
 type glassSpec struct {
@@ -124,12 +141,14 @@ type coatingSpec struct {
 type filmSpec struct {
 	_ struct{} `called:"a film"`
 	object
-	Material  text   `key:"material" need:"yes" id:"yes" doc:"a material"`
-	Thickness number `key:"thickness_nm" need:"yes" from:"0" upto:"10000" doc:"thickness"`
-	Carriers  number `key:"carriers_cm3" above:"0" doc:"carrier density instead of the material's, 1/cm³"`
-	Mobility  number `key:"mobility_cm2_v_s" above:"0" doc:"mobility instead of the material's, cm²/(V·s)"`
-	Mass      number `key:"effective_mass" above:"0" doc:"effective mass instead of the material's"`
-	EpsInf    number `key:"eps_infinity" above:"0" doc:"high-frequency permittivity instead of the material's"`
+	Material    text   `key:"material" need:"yes" id:"yes" doc:"a material of the project or a built-in one"`
+	Thickness   number `key:"thickness_nm" need:"yes" from:"0" upto:"10000" doc:"thickness; 0 leaves the film out"`
+	Carriers    number `key:"carriers_cm3" above:"0" doc:"carrier density instead of the material's, 1/cm³; two of it, mobility and a resistance fix the third"`
+	Mobility    number `key:"mobility_cm2_v_s" above:"0" doc:"mobility instead of the material's, cm²/(V·s)"`
+	Resistivity number `key:"resistivity_ohm_cm" above:"0" doc:"resistivity to direct current, Ω·cm; alone it changes the mobility"`
+	Sheet       number `key:"sheet_resistance_ohm" above:"0" doc:"the same of this film, Ω"`
+	Mass        number `key:"effective_mass" above:"0" doc:"effective mass instead of the material's"`
+	EpsInf      number `key:"eps_infinity" above:"0" doc:"high-frequency permittivity instead of the material's"`
 }
 
 type tintSpec struct {

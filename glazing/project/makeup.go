@@ -93,11 +93,7 @@ func (b *builder) place(m *glazing.Makeup, e *elementSpec, specs []paneSpec, pan
 				b.fail(e.Tint.at, "tint", "pane %s does not switch", e.Pane.value)
 			}
 		}
-	} else if i := slices.IndexFunc(specs, func(s paneSpec) bool { return s.ID.value == e.Pane.value }); i >= 0 {
-		if len(specs[i].Coatings) > 0 {
-			b.fail(e.Pane.at, "pane", "%s is modelled with coatings, which %s; give the pane a spectrum", e.Pane.value, notYet)
-		}
-	} else if !b.incomplete["id"] {
+	} else if !slices.ContainsFunc(specs, func(s paneSpec) bool { return s.ID.value == e.Pane.value }) && !b.incomplete["id"] {
 		var own []string
 		for _, s := range specs {
 			own = append(own, s.ID.value)

@@ -1,14 +1,11 @@
 package project
 
-// Panes that are computed from the optical constants of a glass.
+// Panes that are computed from the optical constants of a glass, and of films on its faces.
 
 import (
-	"bytes"
-
 	"panewright/glazing"
 	"panewright/glazing/film"
 	"panewright/glazing/library"
-	"panewright/spectra"
 )
 
 // modelled reports whether the pane is given by glass and films and not by a spectrum.
@@ -29,18 +26,8 @@ func (b *builder) glasses(list []glassSpec) map[string]glass {
 			b.incomplete["glasses"] = true
 			continue
 		}
-		content, err := b.bytesOf(s.NK)
-		if err != nil {
-			b.fail(s.NK.at, "nk", "%s: %v", clip(s.NK.value), err)
-			b.incomplete["glasses"] = true
-			continue
-		}
-		n, k, err := spectra.ReadConstantsCSV(bytes.NewReader(content), s.NK.value)
-		if err != nil {
-			if b.failed[s.NK.value] == nil { // glasses may share a file; its faults are said once
-				b.spectrumFaults(err)
-				b.failed[s.NK.value] = err
-			}
+		n, k, ok := b.constants(s.NK)
+		if !ok {
 			b.incomplete["glasses"] = true
 			continue
 		}
@@ -50,8 +37,8 @@ func (b *builder) glasses(list []glassSpec) map[string]glass {
 	return out
 }
 
-// sheetOf makes a pane of the sheet that a pane of the project names by glass; nil after reporting
-// why there is none.
+// sheetOf makes a pane of the sheet that a pane of the project names by glass, with its films; nil after
+// reporting why there is none.
 func (b *builder) sheetOf(s *paneSpec, own map[string]glass) *glazing.Pane {
 	name := s.Glass.value
 	fail := func(at position, key, format string, args ...any) *glazing.Pane {
@@ -60,6 +47,10 @@ func (b *builder) sheetOf(s *paneSpec, own map[string]glass) *glazing.Pane {
 		return nil
 	}
 	switch {
+	case len(s.Coatings) > 0 && len(s.Plies) > 0:
+		return fail(s.Coatings[0].At, "coatings", "stand beside plies; films are computed on one sheet of glass, a laminate has a spectrum")
+	case len(s.Coatings) > 0 && (s.Spectrum.given || s.Spectra != nil || len(s.Tints) > 0):
+		return fail(s.Coatings[0].At, "coatings", "stand beside a spectrum, which has its films in it; give one")
 	case !s.Glass.given:
 		return fail(s.At, "glass", "is missing: coatings stand on a glass or a pane of the library")
 	case s.Spectrum.given || s.Spectra != nil:
@@ -80,8 +71,14 @@ func (b *builder) sheetOf(s *paneSpec, own map[string]glass) *glazing.Pane {
 	switch {
 	case base != nil && s.Thickness.given:
 		return fail(s.Thickness.at, "thickness_mm", "stands beside %s, which has its own thickness; name the glass instead to choose one: %s", name, known(film.Glasses()))
-	case base != nil:
+	case base != nil && base.Sheet == nil && len(s.Coatings) > 0:
+		return fail(s.Glass.at, "glass", "%s bears films that are not known; name an uncoated pane, or a glass with thickness_mm", name)
+	case base != nil && len(s.Coatings) == 0:
 		base.ID = s.ID.value
+	case base != nil:
+		if base = b.films(s, *base.Sheet); base == nil {
+			return nil
+		}
 	case !found && !builtin:
 		if b.incomplete["glasses"] || b.incomplete["id"] {
 			b.incomplete["panes"] = true
@@ -98,7 +95,9 @@ func (b *builder) sheetOf(s *paneSpec, own map[string]glass) *glazing.Pane {
 	case !s.Thickness.given:
 		return fail(s.At, "thickness_mm", "is missing: a pane of %s has a thickness", name)
 	default:
-		base = library.Uncoated(s.ID.value, film.Sheet{Constants: of.constants, ThicknessMM: s.Thickness.value})
+		if base = b.films(s, film.Sheet{Constants: of.constants, ThicknessMM: s.Thickness.value}); base == nil {
+			return nil
+		}
 		base.Plies[0].ConductivityWMK, base.Plies[0].DensityKGM3 = of.conductivityWMK, of.densityKGM3
 	}
 	y := &base.Plies[0]

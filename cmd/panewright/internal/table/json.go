@@ -50,6 +50,9 @@ func (r Report) rating(n *node, i int) {
 	n.set(quoted(rating.Method.Basis.Name), "basis")
 	n.set(quoted(rating.Method.Editions()), "editions")
 	n.set(figure(rating.Makeup.Tilt.Degrees()), "tilt_deg")
+	if angle := rating.Method.Options.AngleDeg; angle > 0 {
+		n.set(figure(angle), "angle_deg")
+	}
 	if rating.Makeup.Title != "" {
 		n.set(quoted(rating.Makeup.Title), "title")
 	}
