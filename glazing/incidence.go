@@ -136,12 +136,16 @@ func angleCaution(r *Rating) (code, text string) {
 			inverted = append(inverted, p.Pane.ID)
 		}
 	}
+	by := ""
+	if inverted != nil {
+		by = " What " + strings.Join(inverted, ", ") + " does follows from measured shares, as of uncoated glass."
+	}
 	if estimated == nil {
-		return "at_angle", fmt.Sprintf("Light, sun and colour are for an angle of incidence of %.6g°, both polarisations alike; U is not touched by it.", angle)
+		return "at_angle", fmt.Sprintf("Light, sun and colour are for an angle of incidence of %.6g°, both polarisations alike; U is not touched by it.", angle) + by
 	}
 	text = fmt.Sprintf("At %.6g° of incidence the figures of %s, measured and coated, are an estimate (Roos and others 2001, category %d)", angle, strings.Join(estimated, ", "), coatedCategory)
 	if angle > 75 {
 		text += "; beyond 75° their second decimal means nothing"
 	}
-	return "angle_estimate", text + "."
+	return "angle_estimate", text + "." + by
 }

@@ -270,7 +270,7 @@ func (b *builder) film(s *filmSpec) (f film.Film, ok bool) {
 	name := s.Material.value
 	m := b.own[name]
 	if m == nil {
-		m, ok = film.MaterialNamed(name)
+		m, _ = film.MaterialNamed(name)
 	}
 	if m == nil {
 		if !b.incomplete["materials"] && !b.incomplete["id"] {
