@@ -139,7 +139,7 @@ func (s shelf) filmPage(pane *glazing.Pane, o filmOptions) (table.FilmPage, erro
 	view := table.FilmPage{Pane: pane, AngleDeg: o.angleDeg, Polarisation: o.polarisation}
 	stack, _ := stackOf(pane)
 	ready := stack.Ready()
-	view.Stack = inFilms(stack)
+	view.Stack = stack.InFilms()
 	bare := library.Coated(pane.ID, stack).Tints[0] // whatever the project gives
 	view.Emissivity = [2]glazing.Emissivity{bare.Front, bare.Back}
 	var err error
@@ -203,21 +203,6 @@ func filmPanes(c *cobra.Command, args []string, _ string) (out []string) {
 		}
 	}
 	return out
-}
-
-// inFilms returns the pane without films of no thickness, and with each material as it is in a film of its
-// thickness.
-func inFilms(c film.Coated) film.Coated {
-	of := func(films []film.Film) (list []film.Film) {
-		for _, f := range films {
-			if f.ThicknessNM > 0 {
-				list = append(list, film.Film{Material: f.Material.InFilm(f.ThicknessNM), ThicknessNM: f.ThicknessNM})
-			}
-		}
-		return list
-	}
-	c.Front, c.Back = of(c.Front), of(c.Back)
-	return c
 }
 
 // filmWavelengths reads the wavelengths of --at in nm, in any order, which must lie in the range of the glass

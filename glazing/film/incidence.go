@@ -56,4 +56,4 @@ func Estimated(panes, category, angleDeg float64) (transmittance, reflected floa
 
 // On takes the pane's indices at ascending wavelengths in nm, each held beyond its range, as a rating
 // needs it at an angle.
-func (c Coated) On(nm []float64) *Sampled { return c.inFilms().sampleHeld(nm) }
+func (c Coated) On(nm []float64) *Sampled { return c.InFilms().sampleHeld(nm) }

@@ -39,7 +39,7 @@ func (c Coated) Check() error {
 			}
 		}
 	}
-	c = c.inFilms()
+	c = c.InFilms()
 	if first, last := c.FirstNM(), c.LastNM(); max(first, spectra.SolarFirstNM) > min(last, spectra.SolarLastNM) {
 		return fmt.Errorf("no wavelength from %d to %d nm lies in the range of the glass and of every film: %s", spectra.SolarFirstNM, spectra.SolarLastNM, c.narrowest())
 	}
@@ -65,9 +65,9 @@ func (c Coated) Check() error {
 // Bounds of an index of which films can be computed.
 const leastIndex, mostIndex = 1e-3, 1e4
 
-// inFilms returns the pane without films of no thickness, and with materials as they are in films of the
+// InFilms returns the pane without films of no thickness, and with materials as they are in films of the
 // thicknesses of these.
-func (c Coated) inFilms() Coated {
+func (c Coated) InFilms() Coated {
 	for _, face := range [2]*[]Film{&c.Front, &c.Back} {
 		var films []Film
 		for _, f := range *face {
@@ -149,7 +149,7 @@ type Ready struct {
 // Ready takes the indices. Films of no thickness are left out, and metals whose surfaces scatter are taken as
 // they are in films of the thicknesses of these. The pane must pass Check.
 func (c Coated) Ready() *Ready {
-	c = c.inFilms()
+	c = c.InFilms()
 	r := &Ready{coated: c}
 	if len(c.Front)+len(c.Back) == 0 {
 		r.sheet = &Sheet{c.Glass, c.ThicknessMM}
